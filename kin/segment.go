@@ -1,0 +1,39 @@
+package kin
+
+// segmentGap2 is the squared distance between two segments that start d apart
+// (start of the first less start of the second), run along the unit vectors
+// u and v and have the lengths lu and lv. Closest points by clamping the
+// solution of the 2x2 system (the usual method; C. Ericson 2005, Real-Time
+// Collision Detection, 5.1.9, from memory).
+func segmentGap2(d, u, v *Vec, lu, lv float64) float64 {
+	b := u.X*v.X + u.Y*v.Y + u.Z*v.Z
+	c := u.X*d.X + u.Y*d.Y + u.Z*d.Z
+	f := v.X*d.X + v.Y*d.Y + v.Z*d.Z
+	s := 0.0
+	if den := 1 - b*b; den > 1e-12 {
+		s = clamp((b*f-c)/den, lu)
+	}
+	t := b*s + f
+	if t < 0 {
+		t = 0
+		s = clamp(-c, lu)
+	} else if t > lv {
+		t = lv
+		s = clamp(b*lv-c, lu)
+	}
+	x := d.X + s*u.X - t*v.X
+	y := d.Y + s*u.Y - t*v.Y
+	z := d.Z + s*u.Z - t*v.Z
+	return x*x + y*y + z*z
+}
+
+// clamp keeps x within [0, hi].
+func clamp(x, hi float64) float64 {
+	if x < 0 {
+		return 0
+	}
+	if x > hi {
+		return hi
+	}
+	return x
+}

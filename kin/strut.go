@@ -1,0 +1,129 @@
+package kin
+
+import (
+	"math"
+
+	"gonum.org/v1/gonum/spatial/r3"
+)
+
+// strut is a prismatic leg between a base joint and a platform joint.
+type strut struct {
+	a      Vec // base joint, base frame
+	b      Vec // R_home (platform joint - tool): R·b is r, from the tool point to the joint
+	ua, ub Vec // unit mounting axes: base axes, and platform axes turned by R_home
+}
+
+// struts is a machine all of whose legs are prismatic: the six-legged platform
+// and the planar three-leg stage.
+type struts struct {
+	frame Frame
+	leg   [6]strut
+	n     int
+	home  Vec // tool point at home, base frame
+	invLc float64
+	pairs legPairs
+}
+
+// newStruts builds the machine. Joints are given in their own plates' frames.
+func newStruts(freedoms []Freedom, base, platform []Vec, home Vec, homeRot Rot, s *Setup) *struts {
+	if len(base) != len(platform) || len(base) > 6 {
+		panic("kin: base and platform joints do not match")
+	}
+	m := &struts{
+		frame: Frame{
+			Freedoms: freedoms, Base: base, Platform: platform,
+			Home: home, HomeRot: homeRot, Tool: s.Tool, Length: s.Length,
+		},
+		n:     len(base),
+		home:  r3.Add(home, homeRot.Apply(s.Tool)),
+		invLc: 1 / s.Length,
+	}
+	for i := range base {
+		l := &m.leg[i]
+		l.a = base[i]
+		l.b = homeRot.Apply(r3.Sub(platform[i], s.Tool))
+		switch s.Axis.Kind {
+		case AxisHomeLeg:
+			l.ua = unit(r3.Sub(r3.Add(m.home, l.b), l.a))
+			l.ub = l.ua
+		case AxisPlate:
+			l.ua = Vec{Z: 1}
+			l.ub = homeRot.Apply(Vec{Z: 1})
+		case AxisVector:
+			l.ua = unit(s.Axis.Vec)
+			l.ub = homeRot.Apply(l.ua)
+		}
+	}
+	m.pairs = pairLegs(&m.leg, m.n, m.home, s.Diameter)
+	return m
+}
+
+// unit is v/|v|, or zero for a zero vector.
+func unit(v Vec) Vec {
+	n := r3.Norm(v)
+	if n == 0 {
+		return Vec{}
+	}
+	return r3.Scale(1/n, v)
+}
+
+func (m *struts) Frame() *Frame { return &m.frame }
+
+// Move is the inverse kinematics of all legs in one pass: lengths, rows of the
+// inverse Jacobian and swing chords. About 130 ns for six legs.
+func (m *struts) Move(p *Pose, s *State) {
+	r0, r1, r2, r3, r4, r5, r6, r7, r8 := p.R[0], p.R[1], p.R[2], p.R[3], p.R[4], p.R[5], p.R[6], p.R[7], p.R[8]
+	px, py, pz := m.home.X+p.P.X, m.home.Y+p.P.Y, m.home.Z+p.P.Z
+	ic := m.invLc
+	sum := 0.0
+	legs := m.leg[:m.n]
+	for i := range legs {
+		l := &legs[i]
+		rx := r0*l.b.X + r1*l.b.Y + r2*l.b.Z
+		ry := r3*l.b.X + r4*l.b.Y + r5*l.b.Z
+		rz := r6*l.b.X + r7*l.b.Y + r8*l.b.Z
+		sx, sy, sz := px+rx-l.a.X, py+ry-l.a.Y, pz+rz-l.a.Z
+		q := math.Sqrt(sx*sx + sy*sy + sz*sz)
+		il := 1 / q
+		nx, ny, nz := sx*il, sy*il, sz*il
+		sum += il
+		s.Q[i] = q
+		row := (*[6]float64)(s.J[6*i : 6*i+6])
+		row[0], row[1], row[2] = nx, ny, nz
+		row[3] = (ry*nz - rz*ny) * ic
+		row[4] = (rz*nx - rx*nz) * ic
+		row[5] = (rx*ny - ry*nx) * ic
+		dx, dy, dz := nx-l.ua.X, ny-l.ua.Y, nz-l.ua.Z
+		s.BaseChord[i] = dx*dx + dy*dy + dz*dz
+		ex := nx - (r0*l.ub.X + r1*l.ub.Y + r2*l.ub.Z)
+		ey := ny - (r3*l.ub.X + r4*l.ub.Y + r5*l.ub.Z)
+		ez := nz - (r6*l.ub.X + r7*l.ub.Y + r8*l.ub.Z)
+		s.PlatformChord[i] = ex*ex + ey*ey + ez*ez
+	}
+	s.Fail, s.Leg = Reached, -1
+	if sum-sum != 0 { // NaN, or a leg of no length
+		s.Fail = NotFinite
+		for i := range legs {
+			if x := 1 / s.Q[i]; x-x != 0 {
+				s.Leg = i
+				return
+			}
+		}
+	}
+}
+
+// Gap is the least distance of two leg axes less the leg diameter.
+func (m *struts) Gap(s *State) (gap float64, i, j int) {
+	return m.pairs.gap(&m.leg, s)
+}
+
+// Constraints of a planar machine: the force along z and the couples about x and y. A six-legged platform has none.
+func (m *struts) Constraints(_ *State, rows *[36]float64) int {
+	if len(m.frame.Freedoms) == 6 {
+		return 0
+	}
+	for i, k := range [3]int{int(Z), int(Roll), int(Pitch)} {
+		rows[6*i+k] = 1
+	}
+	return 3
+}
