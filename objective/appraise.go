@@ -1,0 +1,272 @@
+package objective
+
+import (
+	"math"
+
+	"legwright/kin"
+)
+
+// Reading is a measure's duty-wide value and what decides it.
+type Reading struct {
+	Measure *Measure
+	Value   float64 // ±Inf where it has no bound
+	Pose    *Sample // nil where no pose decides
+	Leg     int     // 0-based, -1 for none
+	Mate    int     // second leg of a pair, -1 for none
+	Case    int     // -1 for none
+}
+
+// Verdict is a limit with the value that a design has.
+type Verdict struct {
+	Name    string
+	Origin  string // key of the brief
+	Unit    Unit
+	AtLeast bool
+	Bound   float64
+	Value   float64
+	Holds   bool
+	Margin  float64 // relative to the bound; negative where it does not hold
+}
+
+// Leg is what one leg must do, over all required poses and home.
+type Leg struct {
+	Least, Home, Most        float64 // actuator coordinate
+	LeastAt, MostAt          *Sample // nil for home
+	Push, Pull, Speed        float64
+	BaseSwing, PlatformSwing float64
+}
+
+// Appraisal is the complete judgement of one design.
+type Appraisal struct {
+	Plan       *Plan
+	Values     []float64 // every dimension, sized ones included
+	Machine    kin.Machine
+	Readings   []Reading
+	Verdicts   []Verdict
+	Legs       []Leg
+	Excursions []Excursion
+	Feasible   bool
+	Notes      []string
+	Poses      int
+}
+
+// Reading is the reading of the named measure, or nil.
+func (a *Appraisal) Reading(name string) *Reading {
+	for i := range a.Readings {
+		if a.Readings[i].Measure.Name == name {
+			return &a.Readings[i]
+		}
+	}
+	return nil
+}
+
+// Tightest is the verdict with the least margin, or nil where there are no limits.
+func (a *Appraisal) Tightest() *Verdict {
+	var least *Verdict
+	for i := range a.Verdicts {
+		v := &a.Verdicts[i]
+		if least == nil || v.Margin < least.Margin {
+			least = v
+		}
+	}
+	return least
+}
+
+// gives tells whether the task has the input of a measure.
+func (t *Task) gives(key string) bool {
+	switch key {
+	case "actuator.stiffness":
+		return t.Actuator.Stiffness > 0
+	case "actuator.error":
+		return t.Actuator.Error > 0
+	case "legs.rod_diameter":
+		return t.Legs.RodDiameter > 0
+	case "legs.modulus":
+		return t.Legs.Modulus > 0
+	}
+	return true
+}
+
+// applicable lists the measures that the family has and whose inputs the task gives.
+func applicable(t *Task, f *kin.Family) []*Measure {
+	var out []*Measure
+next:
+	for _, m := range Measures() {
+		if m.Has != nil && !m.Has(f) {
+			continue
+		}
+		for _, k := range m.Inputs {
+			if !t.gives(k) {
+				continue next
+			}
+		}
+		out = append(out, m)
+	}
+	return out
+}
+
+// Appraise judges a design completely. values holds every dimension; those that
+// the plan derives from the duty are overwritten. Excursions are left to Excurse.
+// It costs some microseconds per pose.
+func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
+	a := &Appraisal{Plan: p, Values: append([]float64(nil), values...), Poses: len(t.samples)}
+	d := Design{Family: p.Family, Values: a.Values}
+	d.Machine = p.build(t, a.Values)
+	a.Machine = d.Machine
+	v := newView(t)
+	v.begin(d.Machine)
+
+	var ts []tracker
+	need := NeedMatrix | NeedEfforts | NeedRates | NeedExact
+	measures := applicable(t, p.Family)
+	for _, m := range measures {
+		if m.Scan != nil {
+			ts = append(ts, tracker{m: m})
+			need |= m.Need
+		}
+	}
+	for i := range ts {
+		ts[i].reset()
+	}
+	v.walk(0, len(t.samples), need, ts)
+	least, most := v.span()
+	p.size(&t.Actuator, least, most, a.Values)
+	a.Legs = a.legs(t, v)
+
+	share := a.cover(t, v, &d)
+	k := 0
+	for _, m := range measures {
+		r := Reading{Measure: m, Leg: -1, Mate: -1, Case: -1}
+		switch {
+		case m.Scan != nil:
+			w := &ts[k].w
+			k++
+			r.Value, r.Leg, r.Mate, r.Case = m.value(w), w.Leg, w.Mate, w.Case
+			if w.Pose >= 0 && !m.Mean {
+				r.Pose = &t.samples[w.Pose]
+			}
+		case m.Design != nil:
+			r.Value = m.Design(&d)
+		default:
+			r.Value = share
+		}
+		if math.IsNaN(r.Value) {
+			continue // an average over no pose
+		}
+		a.Readings = append(a.Readings, r)
+	}
+	a.judge(t, least, most, share, v)
+	a.notes(t, v)
+	return a
+}
+
+// legs walks the poses once more for what each leg must do.
+func (a *Appraisal) legs(t *Task, v *View) []Leg {
+	out := make([]Leg, v.n)
+	for i := range out {
+		l := &out[i]
+		l.Least, l.Most, l.Home = v.least[i], v.most[i], v.homeQ[i]
+		if k := v.leastAt[i]; k >= 0 {
+			l.LeastAt = &t.samples[k]
+		}
+		if k := v.mostAt[i]; k >= 0 {
+			l.MostAt = &t.samples[k]
+		}
+	}
+	v.keep = 0
+	for k := range t.samples {
+		s := &t.samples[k]
+		if !v.at(s, k, NeedMatrix|NeedEfforts|NeedRates) {
+			continue
+		}
+		for i := range out {
+			l := &out[i]
+			l.BaseSwing = math.Max(l.BaseSwing, swingOf(v.S.BaseChord[i]))
+			l.PlatformSwing = math.Max(l.PlatformSwing, swingOf(v.S.PlatformChord[i]))
+			for _, c := range v.active[s.Zone] {
+				l.Push = math.Max(l.Push, v.hi[c][i])
+				l.Pull = math.Max(l.Pull, -v.lo[c][i])
+				l.Speed = math.Max(l.Speed, v.rate[c][i])
+			}
+		}
+	}
+	return out
+}
+
+// cover is the share of poses at which every pose limit holds.
+func (a *Appraisal) cover(t *Task, v *View, d *Design) float64 {
+	l := newPoseLimits(t, v, a.Plan, d)
+	good := 0
+	for i := range t.samples {
+		if l.fails(&t.samples[i]) == "" {
+			good++
+		}
+	}
+	return float64(good) / float64(len(t.samples))
+}
+
+// judge fills the verdicts.
+func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
+	p := a.Plan
+	add := func(w Verdict, excess float64) {
+		w.Holds = excess <= Tolerance
+		w.Margin = -excess
+		a.Verdicts = append(a.Verdicts, w)
+	}
+	add(Verdict{Name: "coverage", Origin: "limits", AtLeast: true, Bound: t.Coverage, Value: share}, t.Coverage-share)
+	if p.least >= 0 {
+		unit := Metre
+		if p.Family.Drive == kin.Rotary {
+			unit = Radian
+		}
+		low, span := a.Values[p.least], a.Values[p.span]
+		r := t.Actuator.Reserve
+		slack := Tolerance * math.Max(math.Abs(least), math.Abs(most))
+		if !p.derived(p.least) {
+			add(Verdict{Name: "shortest needed", Origin: "dimensions." + p.Family.Dimensions[p.least].Name, Unit: unit, AtLeast: true,
+				Bound: low + r, Value: least}, (low+r-least-slack)/math.Max(span, 1e-3))
+		}
+		if !p.derived(p.span) {
+			add(Verdict{Name: "longest needed", Origin: "dimensions." + p.Family.Dimensions[p.span].Name, Unit: unit,
+				Bound: low + span - r, Value: most}, (most-low-span+r-slack)/math.Max(span, 1e-3))
+		}
+		if n := len(t.Actuator.Strokes); n > 0 && p.derived(p.span) {
+			last := t.Actuator.Strokes[n-1]
+			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: span}, (span-last)/last)
+		}
+		if !math.IsNaN(t.Actuator.DeadLength) {
+			need := t.Actuator.DeadRatio*span + t.Actuator.DeadLength
+			add(Verdict{Name: "dead length", Origin: "actuator.dead_length", Unit: unit, AtLeast: true, Bound: need, Value: low}, (need-low)/need)
+		}
+	}
+	for i := range t.Limits {
+		l := &t.Limits[i]
+		r := a.Reading(l.Measure.Name)
+		if r == nil {
+			continue
+		}
+		add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.Unit, AtLeast: l.AtLeast, Bound: l.Bound, Value: r.Value},
+			l.excess(t, r.Value))
+	}
+	if v.singular > 0 || v.homeSign == 0 {
+		add(Verdict{Name: "singular poses", Origin: "singular_below", Bound: 0, Value: float64(v.singular)}, 1)
+	}
+	a.Feasible = true
+	soft := t.Coverage < 1 || t.CoverageGoal
+	for i := range a.Verdicts {
+		w := &a.Verdicts[i]
+		if soft && pose(w) {
+			continue
+		}
+		a.Feasible = a.Feasible && w.Holds
+	}
+}
+
+// pose tells whether the verdict counts through coverage alone where coverage is below 100 %.
+func pose(w *Verdict) bool {
+	switch w.Name {
+	case "shortest needed", "longest needed", "singular poses":
+		return true
+	}
+	return w.Origin == "joints.base_swing" || w.Origin == "joints.platform_swing"
+}

@@ -1,0 +1,75 @@
+package objective
+
+import (
+	"math"
+
+	"legwright/kin"
+	"legwright/kin/linalg"
+)
+
+func conditioning() *Measure {
+	return &Measure{
+		Name: "conditioning", Unit: Ratio, Sense: Larger, Need: NeedMatrix,
+		Text:   "least ratio of the smallest to the largest singular value of the inverse Jacobian, angular columns divided by the characteristic length (1/kappa)",
+		Source: "J. K. Salisbury and J. J. Craig 1982, IJRR 1(1):4; C. Gosselin and J. Angeles 1991, ASME J. Mech. Des. 113:220 (from memory)",
+		Start:  math.Inf(1), Lost: 0, Finish: math.Sqrt,
+		Scan: func(v *View, w *Worst) {
+			if v.ratio2 < w.Value {
+				w.set(v, v.ratio2, -1, -1)
+			}
+		},
+	}
+}
+
+func meanConditioning() *Measure {
+	return &Measure{
+		Name: "mean_conditioning", Unit: Ratio, Sense: Larger, Need: NeedMatrix | NeedExact, Mean: true,
+		Text:   "the same, averaged over the volume samples of box and ellipsoid zones and all poses of files (global conditioning index)",
+		Source: "C. Gosselin and J. Angeles 1991, ASME J. Mech. Des. 113:220 (from memory)",
+		Scan: func(v *View, w *Worst) {
+			if v.pose.Volume {
+				w.Sum += math.Sqrt(v.ratio2)
+				w.Count++
+			}
+		},
+	}
+}
+
+func regularity() *Measure {
+	return &Measure{
+		Name: "regularity", Unit: Ratio, Sense: Larger, Need: NeedMatrix,
+		Text:   "least ratio of the smallest to the largest singular value of the 6×6 matrix of unit actuation and constraint wrenches",
+		Source: "S. A. Joshi and L.-W. Tsai 2002, ASME J. Mech. Des. 124:254 (from memory)",
+		Start:  math.Inf(1), Lost: 0,
+		Scan: func(v *View, w *Worst) {
+			var a, c [36]float64
+			n := copy(a[:], v.S.J[:6*v.n])
+			for i := range v.n { // unit forces; a couple of a rotary drive has no linear part
+				r := (*[6]float64)(a[6*i : 6*i+6])
+				if f := math.Sqrt(r[0]*r[0] + r[1]*r[1] + r[2]*r[2]); f > 0 {
+					for k := range r {
+						r[k] /= f
+					}
+				}
+			}
+			copy(a[n:], c[:6*v.machine.Constraints(&v.S, &c)])
+			if lo, hi := linalg.Singular(6, &a); lo < w.Value*hi {
+				w.set(v, lo/hi, -1, -1)
+			}
+		},
+	}
+}
+
+// turns tells whether machines of the family have a rotational freedom.
+func turns(f *kin.Family) bool {
+	for _, q := range f.Freedoms {
+		if q.Angular() {
+			return true
+		}
+	}
+	return false
+}
+
+// linearDrives and rotaryDrives choose families by their actuators.
+func linearDrives(f *kin.Family) bool { return f.Drive == kin.Linear }
+func rotaryDrives(f *kin.Family) bool { return f.Drive == kin.Rotary }

@@ -1,0 +1,42 @@
+package objective
+
+import (
+	"fmt"
+	"math"
+
+	"legwright/kin"
+)
+
+// notes says what the figures leave out and what looks odd.
+func (a *Appraisal) notes(t *Task, v *View) {
+	note := func(format string, args ...any) { a.Notes = append(a.Notes, fmt.Sprintf(format, args...)) }
+	if v.homeSign == 0 {
+		note("the home pose is singular: home_height, radii and angles (or home_heading) give a machine that cannot be held there")
+	}
+	for c := range t.Cases {
+		k := &t.Cases[c]
+		w := k.Angular.Largest()
+		if w == 0 {
+			continue
+		}
+		effort := 0.0
+		v.keep = 0
+		for i := range t.samples {
+			s := &t.samples[i]
+			if !k.in(s.Zone) || !v.at(s, i, NeedMatrix|NeedEfforts) {
+				continue
+			}
+			for j := range v.n {
+				effort = math.Max(effort, largest(v.lo[c][j], v.hi[c][j]))
+			}
+		}
+		left := 0.0
+		for i := range k.Loads {
+			l := &k.Loads[i]
+			left += l.Mass * w * w * norm(sub(l.Centre, t.Tool))
+		}
+		if a.Plan.Family.Drive == kin.Linear && left > 0.05*effort {
+			note("case %q: terms in ω² are left out, and mass·ω²·|r| = %.3g N is more than 5 %% of the counted leg force %.3g N", k.Name, left, effort)
+		}
+	}
+}

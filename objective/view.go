@@ -1,0 +1,217 @@
+package objective
+
+import (
+	"math"
+
+	"legwright/kin"
+	"legwright/kin/linalg"
+)
+
+// View is everything known of a machine at one pose, and the running record of
+// a walk over many poses. It is scratch for one goroutine; walking allocates nothing.
+type View struct {
+	task     *Task
+	machine  kin.Machine
+	frame    *kin.Frame
+	invLc    float64
+	n        int // legs, and freedoms
+	homeSign int
+	homeQ    [6]float64
+	demands  []demand
+	active   [][]int // cases that occur in each zone
+
+	// At the pose in work.
+	S      kin.State
+	pose   *Sample
+	index  int
+	sign   int         // of det J; 0 if it is singular to rounding
+	x      [36]float64 // 6 rows of freedoms by 6 columns of legs: inverse of J, zero where there is no freedom or leg
+	ratio2 float64     // (1/kappa)²; where it is above keep, only known to be above
+	keep   float64
+	lo, hi [][6]float64 // efforts, by case
+	rate   [][6]float64 // rates, by case
+	gap    float64
+	gapI   int
+	gapJ   int
+	six    linalg.Six
+	own    [36]float64
+	ownX   [36]float64
+
+	// Over the walk so far.
+	least, most     [6]float64 // actuator coordinates, home included
+	leastAt, mostAt [6]int
+	lost            int // poses without posture
+	singular        int // singular poses
+	singularAt      int
+	seen            int
+}
+
+// newView makes the scratch for a task.
+func newView(t *Task) *View {
+	v := &View{task: t}
+	v.demands = make([]demand, len(t.Cases))
+	v.lo = make([][6]float64, len(t.Cases))
+	v.hi = make([][6]float64, len(t.Cases))
+	v.rate = make([][6]float64, len(t.Cases))
+	v.active = make([][]int, len(t.Zones)+1)
+	for z := range t.Zones {
+		for c := range t.Cases {
+			if t.Cases[c].in(z) {
+				v.active[z] = append(v.active[z], c)
+			}
+		}
+	}
+	for c := range t.Cases {
+		v.active[len(t.Zones)] = append(v.active[len(t.Zones)], c)
+	}
+	return v
+}
+
+// begin starts a walk of a machine at home.
+func (v *View) begin(m kin.Machine) {
+	v.machine, v.frame = m, m.Frame()
+	v.invLc = 1 / v.frame.Length
+	v.n = v.frame.Legs()
+	for c := range v.demands {
+		v.demands[c].prepare(&v.task.Cases[c], v.frame)
+	}
+	v.x = [36]float64{}
+	v.gapI, v.gapJ = -1, -1
+	v.lost, v.singular, v.singularAt, v.seen = 0, 0, -1, 0
+	home := Sample{Pose: kin.NewPose(kin.Coords{})}
+	m.Move(&home.Pose, &v.S)
+	v.homeSign = 0
+	for i := range v.least {
+		v.least[i], v.most[i] = math.Inf(1), math.Inf(-1)
+		v.leastAt[i], v.mostAt[i] = -1, -1
+	}
+	if v.S.Fail != kin.Reached {
+		return
+	}
+	v.homeQ = v.S.Q
+	for i := range v.n {
+		v.least[i], v.most[i] = v.S.Q[i], v.S.Q[i]
+	}
+	v.keep = v.task.Singular * v.task.Singular
+	v.factor()
+	if v.ratio2 >= v.task.Singular*v.task.Singular {
+		v.homeSign = v.sign
+	}
+}
+
+// factor inverts J and finds its conditioning, exactly only where it is below v.keep.
+func (v *View) factor() {
+	if v.n == 6 && len(v.frame.Freedoms) == 6 {
+		v.sign = v.six.Factor(&v.S.J)
+		v.ratio2 = 0
+		if v.sign != 0 {
+			v.x = v.six.X
+			v.ratio2 = v.six.Ratio2(&v.S.J, v.keep)
+		}
+		return
+	}
+	n := v.n
+	kin.Own(v.frame.Freedoms, &v.S.J, &v.own)
+	v.sign = linalg.Inverse(n, &v.own, &v.ownX)
+	v.ratio2 = 0
+	if v.sign == 0 {
+		return
+	}
+	v.ratio2 = linalg.Ratio2(n, &v.own)
+	for k, f := range v.frame.Freedoms {
+		copy(v.x[6*int(f):6*int(f)+n], v.ownX[n*k:n*k+n])
+	}
+}
+
+// at moves to the sample and finds what need asks for. It reports false if the pose has no posture.
+func (v *View) at(s *Sample, index int, need Need) bool {
+	v.pose, v.index = s, index
+	v.machine.Move(&s.Pose, &v.S)
+	if v.S.Fail != kin.Reached {
+		return false
+	}
+	if need&NeedGap != 0 {
+		v.gap, v.gapI, v.gapJ = v.machine.Gap(&v.S)
+	}
+	if need&(NeedMatrix|NeedEfforts|NeedExact) != 0 {
+		v.factor()
+	}
+	if need&NeedEfforts != 0 {
+		for _, c := range v.active[s.Zone] {
+			if v.sign == 0 {
+				for i := range v.n {
+					v.lo[c][i], v.hi[c][i] = math.Inf(-1), math.Inf(1)
+				}
+				continue
+			}
+			v.demands[c].efforts(&s.Pose, v.task.Gravity, v.invLc, &v.x, v.n, &v.lo[c], &v.hi[c])
+		}
+	}
+	if need&NeedRates != 0 {
+		for _, c := range v.active[s.Zone] {
+			v.demands[c].rates(&v.S.J, v.n, &v.rate[c])
+		}
+	}
+	return true
+}
+
+// isSingular tells whether the pose in work is singular: 1/kappa too small, or
+// another sign of the determinant than at home.
+func (v *View) isSingular() bool {
+	return v.sign != v.homeSign || v.sign == 0 || v.ratio2 < v.task.Singular*v.task.Singular
+}
+
+// walk looks at samples[from:to] and brings the trackers up to date.
+func (v *View) walk(from, to int, need Need, ts []tracker) {
+	matrix := need&(NeedMatrix|NeedEfforts|NeedExact) != 0
+	floor := v.task.Singular * v.task.Singular
+	var cond *Worst
+	for i := range ts {
+		if ts[i].m.Name == "conditioning" {
+			cond = &ts[i].w
+		}
+	}
+	for k := from; k < to; k++ {
+		s := &v.task.samples[k]
+		v.keep = floor
+		if need&NeedExact != 0 {
+			v.keep = math.Inf(1)
+		} else if cond != nil && cond.Value > floor {
+			v.keep = cond.Value
+		}
+		v.seen++
+		if !v.at(s, k, need) {
+			v.lost++
+			for i := range ts {
+				ts[i].m.lost(v, &ts[i].w)
+			}
+			continue
+		}
+		for i := range v.n {
+			q := v.S.Q[i]
+			if q < v.least[i] {
+				v.least[i], v.leastAt[i] = q, k
+			}
+			if q > v.most[i] {
+				v.most[i], v.mostAt[i] = q, k
+			}
+		}
+		if matrix && v.isSingular() {
+			if v.singular++; v.singularAt < 0 {
+				v.singularAt = k
+			}
+		}
+		for i := range ts {
+			ts[i].m.Scan(v, &ts[i].w)
+		}
+	}
+}
+
+// span is the least and the greatest actuator coordinate so far, and the legs.
+func (v *View) span() (least, most float64) {
+	least, most = math.Inf(1), math.Inf(-1)
+	for i := range v.n {
+		least, most = math.Min(least, v.least[i]), math.Max(most, v.most[i])
+	}
+	return least, most
+}
