@@ -1,0 +1,160 @@
+// Package study reads and writes a study folder: the front, its designs and the
+// record of the run. All numbers in files with the ending .json are SI and radians.
+package study
+
+import (
+	"encoding/json"
+	"math"
+)
+
+// Format names the layout of front.json.
+const Format = "legwright-front/1"
+
+// Number is a float64 that is null in JSON where it has no bound.
+type Number float64
+
+// MarshalJSON writes null for infinite values and NaN.
+func (n Number) MarshalJSON() ([]byte, error) {
+	if f := float64(n); math.IsInf(f, 0) || math.IsNaN(f) {
+		return []byte("null"), nil
+	}
+	return json.Marshal(float64(n))
+}
+
+// UnmarshalJSON reads null as +Inf.
+func (n *Number) UnmarshalJSON(b []byte) error {
+	if string(b) == "null" {
+		*n = Number(math.Inf(1))
+		return nil
+	}
+	return json.Unmarshal(b, (*float64)(n))
+}
+
+// Front is what front.json holds.
+type Front struct {
+	Format         string             `json:"format"`
+	Program        string             `json:"program"`
+	Title          string             `json:"title"`
+	Seed           int64              `json:"seed"`
+	Status         string             `json:"status"`
+	Evaluations    int                `json:"evaluations"`
+	Feasible       int                `json:"feasible"`   // feasible designs among the evaluated
+	Population     int                `json:"population"` // that the search started with
+	Poses          int                `json:"poses"`      // sampled poses of the duty
+	Goals          []Goal             `json:"goals"`
+	Weights        map[string]float64 `json:"weights"` // of the goals, for the ranking
+	ReferencePoint []Number           `json:"reference_point"`
+	Hypervolume    Number             `json:"hypervolume"`
+	Designs        []Design           `json:"designs"` // best rank first
+	Help           *Help              `json:"infeasible,omitempty"`
+	Notes          []string           `json:"notes"` // what holds for the whole study
+}
+
+// Goal is one goal of the study.
+type Goal struct {
+	Measure string `json:"measure"`
+	Sense   string `json:"sense"` // maximise or minimise
+	Unit    string `json:"unit"`
+}
+
+// Design is one design of the front, or one that was appraised alone.
+type Design struct {
+	ID         string             `json:"id"` // 001, 002, …
+	Rank       int                `json:"rank"`
+	Score      Number             `json:"score"` // TOPSIS closeness, 0 to 1
+	Family     string             `json:"family"`
+	Feasible   bool               `json:"feasible"`
+	Dimensions map[string]Number  `json:"dimensions"`
+	Measures   map[string]Number  `json:"measures"`
+	Unbounded  map[string]bool    `json:"unbounded,omitempty"` // measures that are null
+	Worst      map[string]Worst   `json:"worst"`
+	Joints     Joints             `json:"joints"`
+	Limits     []Limit            `json:"limits"`
+	Legs       []Leg              `json:"legs"`
+	Excursions []Excursion        `json:"excursions,omitempty"`
+	Marks      []string           `json:"marks"`
+	Notes      []string           `json:"notes,omitempty"`
+}
+
+// Worst is what decides a measure.
+type Worst struct {
+	Pose *Pose  `json:"pose,omitempty"`
+	Leg  int    `json:"leg,omitempty"`  // from 1
+	Mate int    `json:"mate,omitempty"` // the other leg of a pair, from 1
+	Zone string `json:"zone,omitempty"`
+	Case string `json:"case,omitempty"`
+}
+
+// Pose is about home.
+type Pose struct {
+	X     float64 `json:"x"`
+	Y     float64 `json:"y"`
+	Z     float64 `json:"z"`
+	Roll  float64 `json:"roll"`
+	Pitch float64 `json:"pitch"`
+	Yaw   float64 `json:"yaw"`
+}
+
+// Joints are joint centres: base ones in the base frame, platform ones in the platform frame.
+type Joints struct {
+	Base     [][3]float64 `json:"base"`
+	Platform [][3]float64 `json:"platform"`
+}
+
+// Limit is a limit with the design's value.
+type Limit struct {
+	Measure string `json:"measure"`
+	Origin  string `json:"origin"` // key of the brief that states it
+	Unit    string `json:"unit"`
+	Sense   string `json:"sense"` // at_least or at_most
+	Bound   Number `json:"bound"`
+	Value   Number `json:"value"`
+	Holds   bool   `json:"holds"`
+	Margin  Number `json:"margin"` // relative to the bound
+}
+
+// Leg is what one leg must do over all required poses.
+type Leg struct {
+	Shortest      Number `json:"shortest"` // actuator coordinate: m, or rad of a crank
+	Home          Number `json:"home"`
+	Longest       Number `json:"longest"`
+	Push          Number `json:"push"` // N or N m
+	Pull          Number `json:"pull"`
+	Speed         Number `json:"speed"`
+	BaseSwing     Number `json:"base_swing"`
+	PlatformSwing Number `json:"platform_swing"`
+}
+
+// Excursion is how far one coordinate goes alone from home until a pose limit fails.
+type Excursion struct {
+	Coordinate string `json:"coordinate"`
+	Low        Number `json:"low"` // null where nothing fails
+	LowFails   string `json:"low_fails,omitempty"`
+	High       Number `json:"high"`
+	HighFails  string `json:"high_fails,omitempty"`
+}
+
+// Help is what a study without a feasible design still tells.
+type Help struct {
+	Binding     []Binding    `json:"binding"`     // constraints by how often they failed among the nearest designs
+	Nearest     []Design     `json:"nearest"`     // least violating first
+	Relaxations []Relaxation `json:"relaxations"` // single limits whose change would admit a design seen
+}
+
+// Binding is one constraint among the nearest designs.
+type Binding struct {
+	Constraint string `json:"constraint"`
+	Designs    int    `json:"designs"` // of the nearest designs, how many break it
+	Of         int    `json:"of"`
+	Least      Number `json:"least"` // the least relative excess among those that break it
+}
+
+// Relaxation is the smallest change of one limit alone that would admit a design that was met.
+type Relaxation struct {
+	Constraint string `json:"constraint"`
+	Origin     string `json:"origin"`
+	Unit       string `json:"unit"`
+	Bound      Number `json:"bound"`
+	Needed     Number `json:"needed"`
+	Design     int    `json:"design"` // index into Nearest
+}
