@@ -1,0 +1,216 @@
+package opt
+
+import (
+	"cmp"
+	"math"
+	"slices"
+)
+
+// maxShareGoals is the largest number of goals for which designs are weighed
+// by the hypervolume that they cover alone; beyond, by crowding distance.
+const maxShareGoals = 4
+
+// population is one space's designs under selection: rank, then the
+// hypervolume covered alone (SMS-EMOA: Beume, Naujoks, Emmerich 2007), with
+// constrained domination (Deb 2000).
+type population struct {
+	m     int
+	front []*genome // feasible and not dominated within the population
+	share shares    // of front, index by index; unused above maxShareGoals
+	rest  []*genome // dominated, then infeasible designs, best first
+	ref   []float64 // reference of the whole search, nil at first
+
+	beaten, unfit []*genome // scratch of selectBest
+	low, high     []float64
+	at            []float64
+}
+
+func newPopulation(goals int) *population {
+	p := &population{m: goals, low: make([]float64, goals), high: make([]float64, goals), at: make([]float64, goals)}
+	for k := range p.at {
+		p.at[k] = 1
+	}
+	p.share.reset(p.at)
+	return p
+}
+
+// ranked returns all designs, best first. The slice is dst, reused.
+func (p *population) ranked(dst []*genome) []*genome {
+	dst = append(dst[:0], p.front...)
+	for i, g := range p.front {
+		g.rank = 0
+		if p.m <= maxShareGoals {
+			g.crowd = p.share.alone[i]
+		}
+	}
+	if p.m > maxShareGoals {
+		crowding(dst)
+	}
+	slices.SortStableFunc(dst, func(a, b *genome) int { return cmp.Compare(b.crowd, a.crowd) })
+	return append(dst, p.rest...)
+}
+
+// selectBest merges newcomers and keeps the n best of all.
+func (p *population) selectBest(newcomers []*genome, n int) {
+	beaten, unfit := p.beaten[:0], p.unfit[:0]
+	for _, g := range p.rest {
+		if g.feasible() {
+			beaten = append(beaten, g)
+		} else {
+			unfit = append(unfit, g)
+		}
+	}
+	for _, g := range newcomers {
+		switch {
+		case !g.feasible():
+			unfit = append(unfit, g)
+		default:
+			beaten = p.enter(g, beaten)
+		}
+	}
+	p.scale()
+	p.reduce(n)
+	p.beaten, p.unfit = beaten, unfit
+	p.rest = p.rest[:0]
+	if need := n - len(p.front); need > 0 {
+		p.rest = p.layers(p.rest, beaten, need)
+	}
+	if need := n - len(p.front) - len(p.rest); need > 0 {
+		slices.SortStableFunc(unfit, func(a, b *genome) int { return cmp.Compare(a.violation, b.violation) })
+		for i, g := range unfit[:min(need, len(unfit))] {
+			g.rank, g.crowd = math.MaxInt32+i, 0
+			p.rest = append(p.rest, g)
+		}
+	}
+}
+
+// enter adds a feasible design to the front, or to beaten; what it beats
+// moves from the front to beaten.
+func (p *population) enter(g *genome, beaten []*genome) []*genome {
+	for i := 0; i < len(p.front); i++ {
+		switch compare(p.front[i].goals, g.goals) {
+		case -1:
+			return append(beaten, g)
+		case 1:
+			beaten = append(beaten, p.front[i])
+			p.leave(i)
+			i--
+		}
+	}
+	p.front = append(p.front, g)
+	if p.m <= maxShareGoals {
+		p.share.add(g.goals)
+	}
+	return beaten
+}
+
+// leave removes a member of the front; the last one takes its place.
+func (p *population) leave(i int) {
+	last := len(p.front) - 1
+	p.front[i] = p.front[last]
+	p.front = p.front[:last]
+	if p.m <= maxShareGoals {
+		p.share.remove(i)
+	}
+}
+
+// scale sets the reference of the shares a tenth of the front's range beyond
+// its worst values.
+func (p *population) scale() {
+	if len(p.front) == 0 || p.m > maxShareGoals {
+		return
+	}
+	copy(p.low, p.front[0].goals)
+	copy(p.high, p.front[0].goals)
+	for _, g := range p.front {
+		for k, v := range g.goals {
+			p.low[k], p.high[k] = min(p.low[k], v), max(p.high[k], v)
+		}
+	}
+	for k := range p.at {
+		p.at[k] = margin(p.low[k], p.high[k])
+	}
+	p.share.move(p.at)
+}
+
+// margin returns a value a tenth of the range beyond high, clear of it even
+// when the range is nothing.
+func margin(low, high float64) float64 {
+	if d := high - low; d > 0 && high+0.1*d > high {
+		return high + 0.1*d
+	}
+	if d := math.Abs(high); high+0.1*d > high {
+		return high + 0.1*d
+	}
+	return high + 1
+}
+
+// reduce cuts the front to n designs.
+func (p *population) reduce(n int) {
+	if p.m > maxShareGoals {
+		if len(p.front) > n {
+			crowding(p.front)
+			slices.SortStableFunc(p.front, func(a, b *genome) int { return cmp.Compare(b.crowd, a.crowd) })
+			p.front = p.front[:n]
+		}
+		return
+	}
+	for len(p.front) > n {
+		p.leave(p.share.least())
+	}
+}
+
+// layers appends the need best of the dominated designs to dst: whole layers
+// of non-dominated sorting (Deb et al. 2002), of the last one those that cover
+// most alone.
+func (p *population) layers(dst, beaten []*genome, need int) []*genome {
+	left := beaten
+	for rank := 1; need > 0 && len(left) > 0; rank++ {
+		layer := left[:0:0]
+		next := left[:0:0]
+	scan:
+		for i, g := range left {
+			for j, q := range left {
+				if c := compare(q.goals, g.goals); i != j && c == -1 && (compare(g.goals, q.goals) != -1 || j < i) {
+					next = append(next, g)
+					continue scan
+				}
+			}
+			layer = append(layer, g)
+		}
+		sub := newPopulation(p.m)
+		for _, g := range layer {
+			sub.enter(g, nil)
+		}
+		sub.scale()
+		sub.reduce(need)
+		for _, g := range sub.ranked(nil) {
+			g.rank = rank
+			dst = append(dst, g)
+			need--
+		}
+		left = next
+	}
+	return dst
+}
+
+// crowding sets crowd to the crowding distance within a set of mutually
+// non-dominated designs (Deb et al. 2002).
+func crowding(set []*genome) {
+	for _, g := range set {
+		g.crowd = 0
+	}
+	s := slices.Clone(set)
+	for k := range len(set[0].goals) {
+		slices.SortStableFunc(s, func(a, b *genome) int { return cmp.Compare(a.goals[k], b.goals[k]) })
+		n := len(s)
+		span := s[n-1].goals[k] - s[0].goals[k]
+		s[0].crowd, s[n-1].crowd = math.Inf(1), math.Inf(1)
+		if span <= 0 {
+			continue
+		}
+		for i := 1; i < n-1; i++ {
+			s[i].crowd += (s[i+1].goals[k] - s[i-1].goals[k]) / span
+		}
+	}
+}

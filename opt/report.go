@@ -1,0 +1,82 @@
+package opt
+
+import (
+	"cmp"
+	"slices"
+)
+
+const (
+	historyPoints = 100
+	historySubset = 50 // designs that stand for the archive with 4 goals or more
+)
+
+// record adds a history point.
+func (r *run) record() {
+	p := Point{Evaluations: r.evaluations, Feasible: float64(r.feasible) / float64(r.evaluations)}
+	if r.reference != nil {
+		pts := r.archive.points()
+		if len(r.reference) > 3 && len(pts) > historySubset {
+			sub := make([][]float64, 0, historySubset)
+			for _, i := range scatter(pts, historySubset) {
+				sub = append(sub, pts[i])
+			}
+			pts = sub
+		}
+		p.Hypervolume = Hypervolume(pts, r.reference)
+	}
+	r.history = append(r.history, p)
+	step := max(1, r.set.Evaluations/historyPoints)
+	for r.next <= r.evaluations {
+		r.next += step
+	}
+}
+
+// points returns the goals of all designs.
+func (a *Archive) points() [][]float64 {
+	pts := make([][]float64, len(a.designs))
+	for i, g := range a.designs {
+		pts[i] = g.goals
+	}
+	return pts
+}
+
+// outcome sums the run up.
+func (r *run) outcome() *Outcome {
+	o := &Outcome{
+		Archive: r.archive.Len(), Reference: r.reference, Evaluations: r.evaluations, Feasible: r.feasible,
+		Population: r.start, Grown: r.grown, Children: r.set.Children, Polished: r.polished,
+		Near: designs(r.misses.near), Failed: r.misses.failed, Failures: r.misses.failures,
+	}
+	for _, list := range r.misses.single {
+		o.Single = append(o.Single, designs(list))
+	}
+	if r.reference != nil {
+		all := r.archive.Designs()
+		pts := make([][]float64, len(all))
+		for i := range all {
+			pts[i] = all[i].Goals
+		}
+		var front [][]float64
+		for _, i := range pick(pts, r.set.Front, r.reference) {
+			o.Front = append(o.Front, all[i])
+			front = append(front, pts[i])
+		}
+		o.Hypervolume = Hypervolume(front, r.reference)
+		slices.SortFunc(o.Front, func(a, b Design) int {
+			return cmp.Or(slices.Compare(a.Goals, b.Goals), cmp.Compare(a.Order, b.Order))
+		})
+	}
+	if n := len(r.history); r.evaluations > 0 && (n == 0 || r.history[n-1].Evaluations < r.evaluations) {
+		r.record()
+	}
+	o.History = r.history
+	switch {
+	case r.ctx.Err() != nil && !r.spent():
+		o.Status = Interrupted
+	case r.evaluations < r.set.Evaluations:
+		o.Status = Exhausted
+	case r.feasible == 0:
+		o.Status = NoFeasible
+	}
+	return o
+}

@@ -1,0 +1,197 @@
+package opt
+
+import (
+	"context"
+	"errors"
+	"math"
+	"math/rand"
+	"slices"
+
+	"github.com/MaxHalford/eaopt"
+)
+
+// Search runs until the budget of evaluations is spent or ctx ends; in the
+// latter case evaluations under way are waited for and what was found is
+// returned with Status Interrupted and no error. An error is only returned
+// for a Problem or Settings that make no sense.
+func Search(ctx context.Context, p Problem, s Settings) (*Outcome, error) {
+	if err := p.check(); err != nil {
+		return nil, err
+	}
+	s, err := s.resolve(&p)
+	if err != nil {
+		return nil, err
+	}
+	r := newRun(ctx, &p, s)
+	defer r.ev.close()
+	err = r.evolve()
+	if err != nil && !errors.Is(err, ctx.Err()) {
+		return nil, err
+	}
+	return r.outcome(), nil
+}
+
+// run is one Search under way.
+type run struct {
+	ctx     context.Context
+	problem *Problem
+	set     Settings
+	ev      *evaluator
+	ga      *eaopt.GA
+	islands []*island
+	start   int // population per space at the start
+	grown   int // and at the end
+
+	archive     Archive
+	misses      misses
+	reference   []float64
+	worst, best []float64 // of the first feasible sample
+	evaluations int
+	feasible    int
+	polished    int
+	history     []Point
+	next        int // evaluations at the next history point
+	phase       string
+}
+
+func newRun(ctx context.Context, p *Problem, s Settings) *run {
+	r := &run{ctx: ctx, problem: p, set: s, phase: "sample"}
+	r.ev = newEvaluator(ctx, p, s.Workers)
+	r.archive.Limit = archiveLimit(s.Front, p.Goals)
+	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
+	r.reference = slices.Clone(s.Reference)
+	r.start, r.grown = sizes(p, s)
+	share, extra := s.Evaluations/len(p.Spaces), s.Evaluations%len(p.Spaces)
+	for i := range p.Spaces {
+		budget := share
+		if i < extra {
+			budget++
+		}
+		r.islands = append(r.islands, newIsland(r, i, budget))
+	}
+	return r
+}
+
+// archiveLimit bounds the cost of a newcomer.
+func archiveLimit(front, goals int) int {
+	switch {
+	case goals <= 2:
+		return max(1000, 3*front)
+	default:
+		return max(2000, 5*front)
+	}
+}
+
+// evolve lets eaopt run the generations: one population per space, which it
+// sets up, applies the model to side by side, and orders.
+func (r *run) evolve() error {
+	for _, l := range r.islands {
+		r.ev.submit(&l.pending)
+	}
+	for _, l := range r.islands {
+		r.ev.finish(&l.pending)
+		l.first = l.collect(&l.pending)
+	}
+	r.merge()
+	r.phase = "search"
+	if err := r.ctx.Err(); err != nil {
+		return err
+	}
+	ga, err := eaopt.GAConfig{
+		NPops: uint(len(r.islands)), PopSize: uint(r.start), NGenerations: math.MaxUint32, HofSize: 1,
+		Model: (*model)(r), RNG: stream(r.set.Seed, streamMain, 0, 0),
+		Callback:  func(*eaopt.GA) { r.barrier() },
+		EarlyStop: func(*eaopt.GA) bool { return r.spent() },
+	}.NewGA()
+	if err != nil {
+		return err
+	}
+	r.ga = ga
+	var sample []*genome
+	for _, l := range r.islands {
+		sample = append(sample, l.sample...)
+	}
+	err = ga.Minimize(func(*rand.Rand) eaopt.Genome { // eaopt asks for one after another, space by space
+		g := sample[0]
+		sample = sample[1:]
+		return g
+	})
+	if err != nil { // generations under way when the context ended
+		for _, l := range r.islands {
+			r.ev.finish(&l.pending)
+			l.collect(&l.pending)
+		}
+		r.merge()
+	}
+	return err
+}
+
+// spent reports that no space has anything left to do.
+func (r *run) spent() bool {
+	for _, l := range r.islands {
+		if !l.spent() {
+			return false
+		}
+	}
+	return true
+}
+
+// barrier runs between generations, on its own.
+func (r *run) barrier() {
+	r.merge()
+	if r.evaluations >= r.next {
+		r.record()
+	}
+	if r.set.Progress != nil {
+		r.set.Progress(r.progress())
+	}
+}
+
+// merge counts what the spaces have evaluated since the last time, in fixed
+// order.
+func (r *run) merge() {
+	for _, l := range r.islands {
+		for _, g := range l.fresh {
+			r.count(g)
+		}
+		l.fresh = l.fresh[:0]
+	}
+	if r.reference == nil && r.worst != nil {
+		r.reference = make([]float64, r.problem.Goals)
+		for k := range r.reference {
+			r.reference[k] = margin(r.best[k], r.worst[k])
+		}
+	}
+}
+
+// count takes one evaluated design into the books.
+func (r *run) count(g *genome) {
+	order := r.evaluations
+	r.evaluations++
+	if g.origin == originPolish {
+		r.polished++
+	}
+	if !g.feasible() {
+		r.misses.add(g, order)
+		return
+	}
+	r.feasible++
+	if r.reference == nil {
+		if r.worst == nil {
+			r.worst, r.best = slices.Clone(g.goals), slices.Clone(g.goals)
+		}
+		for k, v := range g.goals {
+			r.worst[k], r.best[k] = max(r.worst[k], v), min(r.best[k], v)
+		}
+	}
+	r.archive.add(g, order)
+}
+
+func (r *run) progress() Progress {
+	p := Progress{Evaluations: r.evaluations, Budget: r.set.Evaluations, Feasible: r.feasible,
+		Archive: r.archive.Len(), Phase: r.phase}
+	if n := len(r.history); n > 0 {
+		p.Hypervolume = r.history[n-1].Hypervolume
+	}
+	return p
+}
