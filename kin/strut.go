@@ -26,8 +26,8 @@ type struts struct {
 
 // newStruts builds the machine. Joints are given in their own plates' frames.
 func newStruts(freedoms []Freedom, base, platform []Vec, home Vec, homeRot Rot, s *Setup) *struts {
-	if len(base) != len(platform) || len(base) > 6 {
-		panic("kin: base and platform joints do not match")
+	if len(base) != len(freedoms) || len(platform) != len(freedoms) {
+		panic("kin: there must be one base joint and one platform joint for each freedom")
 	}
 	m := &struts{
 		frame: Frame{
@@ -86,7 +86,7 @@ func (m *struts) Move(p *Pose, s *State) {
 		q := math.Sqrt(sx*sx + sy*sy + sz*sz)
 		il := 1 / q
 		nx, ny, nz := sx*il, sy*il, sz*il
-		sum += il
+		sum += q * il
 		s.Q[i] = q
 		row := (*[6]float64)(s.J[6*i : 6*i+6])
 		row[0], row[1], row[2] = nx, ny, nz
@@ -101,10 +101,10 @@ func (m *struts) Move(p *Pose, s *State) {
 		s.PlatformChord[i] = ex*ex + ey*ey + ez*ez
 	}
 	s.Fail, s.Leg = Reached, -1
-	if sum-sum != 0 { // NaN, or a leg of no length
+	if sum-sum != 0 { // NaN: q·(1/q) is 1 but for a leg of no length (0·Inf), of infinite length (Inf·0) or of NaN
 		s.Fail = NotFinite
 		for i := range legs {
-			if x := 1 / s.Q[i]; x-x != 0 {
+			if x := s.Q[i] * (1 / s.Q[i]); x-x != 0 {
 				s.Leg = i
 				return
 			}
@@ -119,6 +119,7 @@ func (m *struts) Gap(s *State) (gap float64, i, j int) {
 
 // Constraints of a planar machine: the force along z and the couples about x and y. A six-legged platform has none.
 func (m *struts) Constraints(_ *State, rows *[36]float64) int {
+	*rows = [36]float64{}
 	if len(m.frame.Freedoms) == 6 {
 		return 0
 	}
