@@ -4,14 +4,18 @@ package kin
 // (start of the first less start of the second), run along the unit vectors
 // u and v and have the lengths lu and lv. Closest points by clamping the
 // solution of the 2x2 system (the usual method; C. Ericson 2005, Real-Time
-// Collision Detection, 5.1.9, from memory).
+// Collision Detection, 5.1.9, from memory). For segments parallel within 3e-8 rad
+// the system says nothing but to which end the distance falls; where such
+// segments cross, the distance may come out 3e-8 of their length too large.
 func segmentGap2(d, u, v *Vec, lu, lv float64) float64 {
 	b := u.X*v.X + u.Y*v.Y + u.Z*v.Z
 	c := u.X*d.X + u.Y*d.Y + u.Z*d.Z
 	f := v.X*d.X + v.Y*d.Y + v.Z*d.Z
-	s := 0.0
-	if den := 1 - b*b; den > 1e-12 {
-		s = clamp((b*f-c)/den, lu)
+	s, num := 0.0, b*f-c
+	if den := 1 - b*b; den > 1e-15 {
+		s = clamp(num/den, lu)
+	} else if num > 0 {
+		s = lu
 	}
 	t := b*s + f
 	if t < 0 {
