@@ -8,7 +8,9 @@ import (
 	"gonum.org/v1/gonum/spatial/r3"
 )
 
-// legPair is two legs that do not share a joint.
+// legPair is two legs that do not share a joint. Joints nearer to each other
+// than 1e-9 of the leg's length at home count as one: centres that a double
+// joint has twice, through two azimuths, differ by rounding.
 type legPair struct {
 	i, j int
 	d    Vec // base joint i less base joint j
@@ -35,7 +37,7 @@ func pairLegs(leg *[6]strut, n int, home Vec, diameter float64) legPairs {
 		for j := i + 1; j < n; j++ {
 			d := r3.Sub(leg[i].a, leg[j].a)
 			t := r3.Sub(tip(i), tip(j))
-			if r3.Norm2(d) == 0 || r3.Norm2(t) == 0 {
+			if one := 1e-18 * r3.Norm2(r3.Sub(tip(i), leg[i].a)); r3.Norm2(d) <= one || r3.Norm2(t) <= one {
 				continue // they share a joint
 			}
 			e := unit(r3.Add(d, t))
