@@ -58,7 +58,7 @@ type Frame struct {
 	Platform []Vec     // platform joint centres, platform frame
 	Home     Vec       // platform origin at home, base frame
 	HomeRot  Rot       // platform rotation at home
-	Tool     Vec       // tool point, platform frame
+	Tool     Vec       // tool point, platform frame (a planar family: in the plane of its legs)
 	Length   float64   // characteristic length Lc
 }
 

@@ -53,7 +53,7 @@ a leg drawn in completely, stroke how much longer it can become.`,
 			"J. Sefrioui and C. Gosselin 1995, Mechanism and Machine Theory 30:533 (from memory)",
 		},
 		Outright: func(j *Joints, s *Setup) Machine {
-			t := *s
+			t := planarSetup(s)
 			if t.Length == 0 {
 				t.Length = meanRadius(j.Platform)
 			}
@@ -82,7 +82,7 @@ a leg drawn in completely, stroke how much longer it can become.`,
 			a[i] = d[rprAzimuth+i] + d[rprBaseOffset+i]
 			b[i] = d[rprAzimuth+i] + d[rprPlatformOffset+i]
 		}
-		t := *s
+		t := planarSetup(s)
 		if t.Length == 0 {
 			t.Length = d[rprPlatformRadius]
 		}
@@ -90,4 +90,13 @@ a leg drawn in completely, stroke how much longer it can become.`,
 			Vec{}, RPY(0, 0, d[rprHomeHeading]), &t)
 	}
 	return f
+}
+
+// planarSetup is the setup with the tool point in the plane of the legs: its
+// height is nothing to a planar stage, and would give the rows of J parts in
+// roll and pitch, which the joints take.
+func planarSetup(s *Setup) Setup {
+	t := *s
+	t.Tool.Z = 0
+	return t
 }
