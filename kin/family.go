@@ -80,7 +80,11 @@ type Family struct {
 	Outright func(j *Joints, s *Setup) Machine
 
 	// Twin gives the dimension values of the same machine turned about z by half a
-	// turn, written with other numbers; nil if the family has no such twins.
+	// turn, its legs renumbered; nil if the family has no such twins. A pose of
+	// the one is the pose of the other with x, y, roll and pitch reversed, so that a
+	// duty of ± ranges sees no difference, provided that what is fixed to the
+	// platform or to the base (tool point, mass centres, mounting vectors, loads) lies
+	// along z or is turned too.
 	Twin func(d []float64) []float64
 }
 

@@ -87,6 +87,8 @@ leg drawn in completely, stroke how much longer it can become.`,
 			}
 			return newStruts([]Freedom{X, Y, Z, Roll, Pitch, Yaw}, j.Base, j.Platform, j.Home, j.HomeRot, &t)
 		},
+		// Legs i and i+3 are exchanged. As the machine is its own image under 120°, the
+		// twin is also the machine turned by 60°; only half a turn maps ± ranges onto themselves.
 		Twin: func(d []float64) []float64 {
 			t := append([]float64(nil), d...)
 			t[upsBaseHalfAngle] = 60*deg - d[upsBaseHalfAngle]
