@@ -59,21 +59,22 @@ type Goal struct {
 
 // Design is one design of the front, or one that was appraised alone.
 type Design struct {
-	ID         string             `json:"id"` // 001, 002, …
-	Rank       int                `json:"rank"`
-	Score      Number             `json:"score"` // TOPSIS closeness, 0 to 1
-	Family     string             `json:"family"`
-	Feasible   bool               `json:"feasible"`
-	Dimensions map[string]Number  `json:"dimensions"`
-	Measures   map[string]Number  `json:"measures"`
-	Unbounded  map[string]bool    `json:"unbounded,omitempty"` // measures that are null
-	Worst      map[string]Worst   `json:"worst"`
-	Joints     Joints             `json:"joints"`
-	Limits     []Limit            `json:"limits"`
-	Legs       []Leg              `json:"legs"`
-	Excursions []Excursion        `json:"excursions,omitempty"`
-	Marks      []string           `json:"marks"`
-	Notes      []string           `json:"notes,omitempty"`
+	ID         string            `json:"id"` // 001, 002, …
+	Rank       int               `json:"rank"`
+	Score      Number            `json:"score"` // TOPSIS closeness, 0 to 1
+	Family     string            `json:"family"`
+	Feasible   bool              `json:"feasible"`
+	Dimensions map[string]Number `json:"dimensions"`
+	Measures   map[string]Number `json:"measures"`
+	Unbounded  map[string]bool   `json:"unbounded,omitempty"` // measures that are null
+	Worst      map[string]Worst  `json:"worst"`
+	Joints     Joints            `json:"joints"`
+	Limits     []Limit           `json:"limits"`
+	Legs       []Leg             `json:"legs"`
+	Excursions []Excursion       `json:"excursions,omitempty"`
+	Marks      []string          `json:"marks"`
+	Notes      []string          `json:"notes,omitempty"`
+	Poses      int               `json:"poses,omitempty"` // required poses at which it was judged
 }
 
 // Worst is what decides a measure.
@@ -110,7 +111,9 @@ type Limit struct {
 	Bound   Number `json:"bound"`
 	Value   Number `json:"value"`
 	Holds   bool   `json:"holds"`
-	Margin  Number `json:"margin"` // relative to the bound
+	Margin  Number `json:"margin"` // relative to the bound, or to a scale of the measure where the bound is 0
+
+	Unbounded bool `json:"unbounded,omitempty"` // the value is null
 }
 
 // Leg is what one leg must do over all required poses.
@@ -123,6 +126,10 @@ type Leg struct {
 	Speed         Number `json:"speed"`
 	BaseSwing     Number `json:"base_swing"`
 	PlatformSwing Number `json:"platform_swing"`
+
+	ShortestAt *Pose           `json:"shortest_at,omitempty"` // absent where home decides
+	LongestAt  *Pose           `json:"longest_at,omitempty"`
+	Unbounded  map[string]bool `json:"unbounded,omitempty"` // fields that are null
 }
 
 // Excursion is how far one coordinate goes alone from home until a pose limit fails.
@@ -132,6 +139,8 @@ type Excursion struct {
 	LowFails   string `json:"low_fails,omitempty"`
 	High       Number `json:"high"`
 	HighFails  string `json:"high_fails,omitempty"`
+
+	Unbounded map[string]bool `json:"unbounded,omitempty"` // "low", "high": fields that are null
 }
 
 // Help is what a study without a feasible design still tells.
