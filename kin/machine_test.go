@@ -89,8 +89,13 @@ func TestSwingChords(t *testing.T) {
 		for _, kind := range []kin.AxisKind{kin.AxisHomeLeg, kin.AxisPlate, kin.AxisVector} {
 			setup := offCentre()
 			setup.Axis = kin.Axis{Kind: kind, Vec: vector}
-			for range 20 {
+			for k := range 20 {
 				m := f.Build(randomDesign(rng, f), setup)
+				if k%2 == 1 && f.Outright != nil && f.Has(kin.Roll) { // tilted at home
+					j := outright(m.Frame())
+					j.HomeRot = kin.RPY(0.2, -0.3, 0.4)
+					m = f.Outright(j, setup)
+				}
 				p, home := kin.NewPose(randomCoords(rng, f, 1.5)), atHome()
 				s, fr := moved(t, m, p), m.Frame()
 				_, rot := fr.Place(&p)

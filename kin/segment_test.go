@@ -59,6 +59,18 @@ func TestSegmentDistancesOfTheTable(t *testing.T) {
 	}
 }
 
+// Segments that cross in their middles touch, however small the angle; below
+// 3e-8 rad the ends stand for the crossing, at most that angle times their half length off.
+func TestNearlyParallelSegmentsThatCross(t *testing.T) {
+	for a, tol := range map[float64]float64{0.1: 1e-15, 1e-3: 1e-12, 1e-5: 1e-10, 5e-7: 1e-8, 1e-7: 1e-8, 1e-8: 1e-8} {
+		sin, cos := math.Sincos(a)
+		got := segmentGap(Vec{X: -0.5}, Vec{X: 0.5}, Vec{X: -0.3 * cos, Y: -0.3 * sin}, Vec{X: 0.7 * cos, Y: 0.7 * sin})
+		if got > tol {
+			t.Errorf("angle %g: %g apart", a, got)
+		}
+	}
+}
+
 // gridGap is the least distance on a grid of the two parameters and the
 // greatest distance from a grid point to any point of its cell.
 func gridGap(p1, q1, p2, q2 Vec, n int) (least, cell float64) {

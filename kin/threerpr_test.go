@@ -161,3 +161,30 @@ func TestSpatialSingularities(t *testing.T) {
 		near(t, "similar hexagons", conditioning(t, similar, moved(t, similar, p)), 0, 1e-14)
 	}
 }
+
+// The joints stand where the picture says: at the leg azimuths plus their
+// offsets, counter-clockwise, the platform's in the frame turned by the heading. 1e-15.
+func TestJointsOfThePlanarStage(t *testing.T) {
+	f := kin.FamilyNamed("3-RPR")
+	d := midRange(f)
+	const heading = 0.7
+	d[f.Index("home_heading")] = heading
+	var base, platform []float64
+	for i, azimuth := range []float64{80 * deg, 200 * deg, 350 * deg} {
+		leg := string(rune('1' + i))
+		a, b := 0.1*float64(i+1), -0.07*float64(i+2)
+		d[f.Index("base_offset_1")-3+i] = azimuth // the three azimuths come before the offsets
+		d[f.Index("base_offset_"+leg)], d[f.Index("platform_offset_"+leg)] = a, b
+		base, platform = append(base, azimuth+a), append(platform, azimuth+b+heading)
+	}
+	m := f.Build(d, &kin.Setup{})
+	p := atHome()
+	for i := range 3 {
+		a, b := joints(m.Frame(), &p, i)
+		sa, ca := math.Sincos(base[i])
+		sb, cb := math.Sincos(platform[i])
+		ra, rb := d[f.Index("base_radius")], d[f.Index("platform_radius")]
+		near(t, "base joint", r3.Norm(r3.Sub(a, kin.Vec{X: ra * ca, Y: ra * sa})), 0, 1e-15)
+		near(t, "platform joint", r3.Norm(r3.Sub(b, kin.Vec{X: rb * cb, Y: rb * sb})), 0, 1e-15)
+	}
+}
