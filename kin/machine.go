@@ -99,4 +99,8 @@ type Setup struct {
 	Axis     Axis    // mounting axes of the passive joints
 	Diameter float64 // leg diameter, for Gap
 	Length   float64 // characteristic length; 0 stands for the platform radius
+
+	// Neighbours makes Gap look only at legs that follow each other in number (and the
+	// last and the first), as simpler studies do; other legs may then meet unseen.
+	Neighbours bool
 }

@@ -29,12 +29,15 @@ type legPairs struct {
 	n        int
 }
 
-func pairLegs(leg *[6]strut, n int, home Vec, diameter float64) legPairs {
-	ps := legPairs{diameter: diameter}
+func pairLegs(leg *[6]strut, n int, home Vec, s *Setup) legPairs {
+	ps := legPairs{diameter: s.Diameter}
 	tip := func(i int) Vec { return r3.Add(home, leg[i].b) }
 	var dist [15]float64
 	for i := range n {
 		for j := i + 1; j < n; j++ {
+			if s.Neighbours && j != i+1 && j-i != n-1 {
+				continue
+			}
 			d := r3.Sub(leg[i].a, leg[j].a)
 			t := r3.Sub(tip(i), tip(j))
 			if one := 1e-18 * r3.Norm2(r3.Sub(tip(i), leg[i].a)); r3.Norm2(d) <= one || r3.Norm2(t) <= one {

@@ -54,7 +54,7 @@ func newStruts(freedoms []Freedom, base, platform []Vec, home Vec, homeRot Rot, 
 			l.ub = homeRot.Apply(l.ua)
 		}
 	}
-	m.pairs = pairLegs(&m.leg, m.n, m.home, s.Diameter)
+	m.pairs = pairLegs(&m.leg, m.n, m.home, s)
 	return m
 }
 

@@ -61,7 +61,7 @@ a leg drawn in completely, stroke how much longer it can become.`,
 		},
 	}
 	for i, a := range threeAzimuths {
-		f.Dimensions = append(f.Dimensions, Dimension{Name: "leg_azimuth_" + strconv.Itoa(i+1), Unit: Radian, Joints: true,
+		f.Dimensions = append(f.Dimensions, Dimension{Name: "leg_azimuths_" + strconv.Itoa(i+1), Unit: Radian, Joints: true,
 			Low: a, High: a, Optional: true, Default: a, Text: "azimuth of leg " + strconv.Itoa(i+1) + " from +x (written as a list of three: leg_azimuths)"})
 	}
 	for _, plate := range [2]string{"base", "platform"} {

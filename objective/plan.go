@@ -148,3 +148,10 @@ func (d *Design) dimension(name string) float64 {
 	}
 	return d.Values[i]
 }
+
+// Single gives the dimension values of a plan that leaves nothing to a search.
+func (p *Plan) Single() []float64 {
+	d := make([]float64, len(p.Specs))
+	p.Values(nil, d)
+	return d
+}
