@@ -1,0 +1,153 @@
+package study
+
+import (
+	"errors"
+	"fmt"
+	"io/fs"
+	"os"
+	"path/filepath"
+	"regexp"
+	"slices"
+)
+
+// State is what a folder holds.
+type State int
+
+// The states of a folder.
+const (
+	Empty      State = iota // nothing, or the folder is not there yet
+	Unfinished              // a study that was interrupted or is running
+	Finished                // a complete study
+	Foreign                 // something else
+)
+
+// The files of a study folder.
+const (
+	frontFile      = "front.json"
+	tableFile      = "front.csv"
+	progressFile   = "progress.csv"
+	reportFile     = "report.html"
+	checkpointFile = "checkpoint.json"
+	designsFolder  = "designs"
+)
+
+// designFile matches what Save writes under designs/, and the folders of drawings beside it.
+var designFile = regexp.MustCompile(`^[0-9]{3,}(\.(yaml|toml|json))?$`)
+
+// Inspect tells what the folder holds. A study is known by its front.json, its checkpoint or its
+// design files.
+func Inspect(dir string) (State, error) {
+	info, err := os.Stat(dir)
+	switch {
+	case errors.Is(err, fs.ErrNotExist):
+		return Empty, nil
+	case err != nil:
+		return Empty, fmt.Errorf("%s: cannot be looked at (%w); give another folder", Clean(dir), bare(err))
+	case !info.IsDir():
+		return Empty, fmt.Errorf("%s: is a file, not a folder; give another name", Clean(dir))
+	}
+	entries, err := os.ReadDir(dir)
+	if err != nil {
+		return Empty, fmt.Errorf("%s: cannot be read (%w); give another folder", Clean(dir), bare(err))
+	}
+	if len(entries) == 0 {
+		return Empty, nil
+	}
+	has := func(name string) bool {
+		return slices.ContainsFunc(entries, func(e fs.DirEntry) bool { return e.Name() == name })
+	}
+	switch {
+	case has(checkpointFile):
+		return Unfinished, nil
+	case has(frontFile):
+		if _, err := Read(dir); err != nil {
+			return Foreign, nil
+		}
+		return Finished, nil
+	case has(designsFolder):
+		names, _ := os.ReadDir(filepath.Join(dir, designsFolder))
+		if slices.ContainsFunc(names, func(e fs.DirEntry) bool { return designFile.MatchString(e.Name()) }) {
+			return Unfinished, nil
+		}
+	}
+	return Foreign, nil
+}
+
+// Folder is a study folder on disk.
+type Folder struct {
+	dir   string
+	state State // when it was opened
+}
+
+// Intent is what to do with a study that the folder holds already.
+type Intent struct {
+	Force  bool // begin anew, also over a finished one
+	Resume bool // go on with an unfinished one, leave a finished one
+}
+
+// Create opens a folder to write a study into, making it if it is not there. It refuses a folder that
+// holds other things, and a study unless the intent allows it. With Resume a finished study is no
+// error: the caller sees State() == Finished and leaves it alone.
+func Create(dir string, intent Intent) (*Folder, error) {
+	state, err := Inspect(dir)
+	if err != nil {
+		return nil, err
+	}
+	name := Clean(dir)
+	switch {
+	case state == Foreign:
+		return nil, fmt.Errorf("%s: the folder holds other files; give a new or an empty folder", name)
+	case state == Finished && !intent.Force && !intent.Resume:
+		return nil, fmt.Errorf("%s: the folder holds a finished study; give another folder, or --force to replace the study", name)
+	case state == Unfinished && !intent.Force && !intent.Resume:
+		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to go on with it, or --force to begin anew", name)
+	}
+	f := &Folder{dir: dir, state: state}
+	if state == Finished && !intent.Force {
+		return f, nil
+	}
+	if err := os.MkdirAll(dir, 0o777); err != nil {
+		return nil, fmt.Errorf("%s: the folder cannot be made (%w); give a folder that you may write to", name, bare(err))
+	}
+	if err := f.writable(); err != nil {
+		return nil, fmt.Errorf("%s: the folder cannot be written to (%w); give a folder that you may write to", name, bare(err))
+	}
+	return f, nil
+}
+
+// Open opens the folder of a study that is there.
+func Open(dir string) (*Folder, error) {
+	state, err := Inspect(dir)
+	if err != nil {
+		return nil, err
+	}
+	if state == Empty || state == Foreign {
+		return nil, fmt.Errorf("%s: there is no study; give the folder that `legwright search -o` has written", Clean(dir))
+	}
+	return &Folder{dir: dir, state: state}, nil
+}
+
+// Dir is the path of the folder.
+func (f *Folder) Dir() string { return f.dir }
+
+// State is what the folder held when it was opened.
+func (f *Folder) State() State { return f.state }
+
+// writable tries to write.
+func (f *Folder) writable() error {
+	t, err := os.CreateTemp(f.dir, ".try-*")
+	if err != nil {
+		return err
+	}
+	t.Close()
+	return os.Remove(t.Name())
+}
+
+// bare is the error of the system without the operation and the path, which the message has already.
+func bare(err error) error {
+	var p *fs.PathError
+	if errors.As(err, &p) {
+		return p.Err
+	}
+	return err
+}

@@ -1,0 +1,226 @@
+package study
+
+import (
+	"bytes"
+	"encoding/json"
+	"errors"
+	"fmt"
+	"io/fs"
+	"os"
+	"path/filepath"
+	"strings"
+
+	"legwright/opt"
+
+	"github.com/natefinch/atomic"
+)
+
+// File is a file that a brief came from or names, with the path as written and its bytes.
+type File struct {
+	Name  string
+	Bytes []byte
+}
+
+// Sources are the input of a study: the brief, and the pose files that it names with the paths that
+// it names them by.
+type Sources struct {
+	Brief File
+	Poses []File
+}
+
+// BriefName is the name of the brief's copy in the folder: brief.yaml, brief.toml or brief.json.
+func (s *Sources) BriefName() string {
+	switch strings.ToLower(filepath.Ext(s.Brief.Name)) {
+	case ".toml":
+		return "brief.toml"
+	case ".json":
+		return "brief.json"
+	}
+	return "brief.yaml"
+}
+
+// inside tells whether a pose file can be copied so that the brief's copy finds it.
+func inside(name string) bool {
+	if !filepath.IsLocal(name) {
+		return false
+	}
+	first, _, _ := strings.Cut(filepath.ToSlash(filepath.Clean(name)), "/")
+	switch first {
+	case frontFile, tableFile, progressFile, reportFile, checkpointFile, designsFolder,
+		"brief.yaml", "brief.toml", "brief.json", ".":
+		return false
+	}
+	return true
+}
+
+// Apart lists the pose files that are not copied into a study folder, because their path leads out of
+// the brief's folder or is that of another file of a study.
+func (s *Sources) Apart() []string {
+	var out []string
+	for _, p := range s.Poses {
+		if !inside(p.Name) {
+			out = append(out, p.Name)
+		}
+	}
+	return out
+}
+
+// Result is what a study folder is to hold.
+type Result struct {
+	Front   *Front
+	History []opt.Point
+	Sources Sources
+	// Encode writes a design file (YAML) that names its brief ../brief.yaml.
+	Encode func(Design) ([]byte, error)
+	// More are further files by their paths in the folder, slashes between: report.html, designs/001/hole-table.csv.
+	More []File
+	// Unfinished leaves the checkpoint where it is.
+	Unfinished bool
+}
+
+// Save writes the study: the brief as it was given with its pose files, a file for each design, the
+// tables, further files, and front.json last. What an earlier study of the folder left over is
+// removed.
+func (f *Folder) Save(r *Result) error {
+	if err := f.remove(frontFile); err != nil {
+		return err
+	}
+	if err := f.Write(r.Sources.BriefName(), r.Sources.Brief.Bytes); err != nil {
+		return err
+	}
+	for _, p := range r.Sources.Poses {
+		if inside(p.Name) {
+			if err := f.Write(filepath.ToSlash(p.Name), p.Bytes); err != nil {
+				return err
+			}
+		}
+	}
+	if err := f.saveDesigns(r); err != nil {
+		return err
+	}
+	for _, m := range r.More {
+		if err := f.Write(m.Name, m.Bytes); err != nil {
+			return err
+		}
+	}
+	var b bytes.Buffer
+	writeProgress(&b, r.History)
+	if err := f.Write(progressFile, b.Bytes()); err != nil {
+		return err
+	}
+	if err := f.SaveFront(r.Front); err != nil {
+		return err
+	}
+	if !r.Unfinished {
+		return f.RemoveCheckpoint()
+	}
+	return nil
+}
+
+// saveDesigns writes designs/ID.yaml and removes the files of ids that are no more.
+func (f *Folder) saveDesigns(r *Result) error {
+	keep := map[string]bool{}
+	for i := range r.Front.Designs {
+		d := &r.Front.Designs[i]
+		b, err := r.Encode(*d)
+		if err != nil {
+			return fmt.Errorf("design %s: %w", d.ID, err)
+		}
+		keep[d.ID+".yaml"], keep[d.ID] = true, true
+		if err := f.Write(designsFolder+"/"+d.ID+".yaml", b); err != nil {
+			return err
+		}
+	}
+	entries, err := os.ReadDir(filepath.Join(f.dir, designsFolder))
+	if err != nil {
+		return nil // no designs
+	}
+	for _, e := range entries {
+		if designFile.MatchString(e.Name()) && !keep[e.Name()] {
+			if err := os.RemoveAll(filepath.Join(f.dir, designsFolder, e.Name())); err != nil {
+				return fmt.Errorf("%s: %w", Clean(f.dir), err)
+			}
+		}
+	}
+	return nil
+}
+
+// SaveFront writes front.csv and front.json.
+func (f *Folder) SaveFront(front *Front) error {
+	var b bytes.Buffer
+	if err := WriteTable(&b, front); err != nil {
+		return err
+	}
+	if err := f.Write(tableFile, b.Bytes()); err != nil {
+		return err
+	}
+	text, err := Encode(front)
+	if err != nil {
+		return err
+	}
+	return f.Write(frontFile, text)
+}
+
+// Encode is a record as JSON: indented, keys in a fixed order, every number the shortest that reads
+// back to the same bits.
+func Encode(v any) ([]byte, error) {
+	var b bytes.Buffer
+	e := json.NewEncoder(&b)
+	e.SetEscapeHTML(false)
+	e.SetIndent("", "  ")
+	if err := e.Encode(v); err != nil {
+		return nil, err
+	}
+	return b.Bytes(), nil
+}
+
+// Write writes a file of the folder whole or not at all. The path is relative to the folder, with
+// slashes; folders on the way are made.
+func (f *Folder) Write(name string, b []byte) error {
+	if !filepath.IsLocal(filepath.FromSlash(name)) {
+		panic("study: a file outside the folder")
+	}
+	path := filepath.Join(f.dir, filepath.FromSlash(name))
+	if err := os.MkdirAll(filepath.Dir(path), 0o777); err != nil {
+		return fmt.Errorf("%s: cannot be written (%w)", Clean(path), bare(err))
+	}
+	return WriteFile(path, b)
+}
+
+// WriteFile writes a file whole or not at all. A new file may be read by whoever may read its folder.
+func WriteFile(path string, b []byte) error {
+	_, err := os.Stat(path)
+	fresh := errors.Is(err, fs.ErrNotExist)
+	if err := atomic.WriteFile(path, bytes.NewReader(b)); err != nil {
+		return fmt.Errorf("%s: cannot be written (%w); the disk may be full or the folder closed to you", Clean(path), bare(err))
+	}
+	if fresh {
+		if info, err := os.Stat(filepath.Dir(path)); err == nil {
+			return os.Chmod(path, info.Mode().Perm()&0o666)
+		}
+	}
+	return nil
+}
+
+// Checkpoint reads the checkpoint of an unfinished study; nil if there is none.
+func (f *Folder) Checkpoint() ([]byte, error) {
+	b, err := os.ReadFile(filepath.Join(f.dir, checkpointFile))
+	if errors.Is(err, fs.ErrNotExist) {
+		return nil, nil
+	}
+	return b, err
+}
+
+// SaveCheckpoint writes the checkpoint.
+func (f *Folder) SaveCheckpoint(b []byte) error { return f.Write(checkpointFile, b) }
+
+// RemoveCheckpoint removes the checkpoint if there is one.
+func (f *Folder) RemoveCheckpoint() error { return f.remove(checkpointFile) }
+
+func (f *Folder) remove(name string) error {
+	err := os.Remove(filepath.Join(f.dir, name))
+	if err != nil && !errors.Is(err, fs.ErrNotExist) {
+		return fmt.Errorf("%s: %s cannot be removed (%w)", Clean(f.dir), name, bare(err))
+	}
+	return nil
+}
