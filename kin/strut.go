@@ -70,7 +70,7 @@ func unit(v Vec) Vec {
 func (m *struts) Frame() *Frame { return &m.frame }
 
 // Move is the inverse kinematics of all legs in one pass: lengths, rows of the
-// inverse Jacobian and swing chords. About 130 ns for six legs.
+// inverse Jacobian and swing chords.
 func (m *struts) Move(p *Pose, s *State) {
 	r0, r1, r2, r3, r4, r5, r6, r7, r8 := p.R[0], p.R[1], p.R[2], p.R[3], p.R[4], p.R[5], p.R[6], p.R[7], p.R[8]
 	px, py, pz := m.home.X+p.P.X, m.home.Y+p.P.Y, m.home.Z+p.P.Z
