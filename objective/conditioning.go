@@ -9,7 +9,7 @@ import (
 
 func conditioning() *Measure {
 	return &Measure{
-		Name: "conditioning", Unit: Ratio, Sense: Larger, Need: NeedMatrix,
+		Name: "conditioning", Unit: Ratio, Sense: Larger, Most: 1, Need: NeedMatrix,
 		Text:   "least ratio of the smallest to the largest singular value of the inverse Jacobian, angular columns divided by the characteristic length (1/kappa)",
 		Source: "J. K. Salisbury and J. J. Craig 1982, IJRR 1(1):4; C. Gosselin and J. Angeles 1991, ASME J. Mech. Des. 113:220 (from memory)",
 		Start:  math.Inf(1), Lost: 0, Finish: math.Sqrt,
@@ -23,7 +23,7 @@ func conditioning() *Measure {
 
 func meanConditioning() *Measure {
 	return &Measure{
-		Name: "mean_conditioning", Unit: Ratio, Sense: Larger, Need: NeedMatrix | NeedExact, Mean: true,
+		Name: "mean_conditioning", Unit: Ratio, Sense: Larger, Most: 1, Need: NeedMatrix | NeedExact, Mean: true,
 		Text:   "the same, averaged over the volume samples of box and ellipsoid zones and all poses of files (global conditioning index)",
 		Source: "C. Gosselin and J. Angeles 1991, ASME J. Mech. Des. 113:220 (from memory)",
 		Scan: func(v *View, w *Worst) {
@@ -37,7 +37,7 @@ func meanConditioning() *Measure {
 
 func regularity() *Measure {
 	return &Measure{
-		Name: "regularity", Unit: Ratio, Sense: Larger, Need: NeedMatrix,
+		Name: "regularity", Unit: Ratio, Sense: Larger, Most: 1, Need: NeedMatrix,
 		Text:   "least ratio of the smallest to the largest singular value of the 6×6 matrix of unit actuation and constraint wrenches",
 		Source: "S. A. Joshi and L.-W. Tsai 2002, ASME J. Mech. Des. 124:254 (from memory)",
 		Start:  math.Inf(1), Lost: 0,

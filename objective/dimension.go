@@ -45,7 +45,7 @@ func footprint() *Measure {
 // coverage is computed by the walk itself.
 func coverage() *Measure {
 	return &Measure{
-		Name: "coverage", Unit: Ratio, Sense: Larger,
+		Name: "coverage", Unit: Ratio, Sense: Larger, Most: 1,
 		Text:   "share of the required poses at which every pose limit holds: reachable, actuator range less reserve, ratings, swing, not singular, and limits on measures that have a value per pose",
 		Source: "definition",
 	}

@@ -69,6 +69,7 @@ type Measure struct {
 	Sense  Sense
 	Source string
 	Inputs []string // keys of the brief without which it has no value
+	Most   float64  // the largest value that it can have; 0 for no such bound
 
 	// Has tells whether machines of the family have the measure; nil for all.
 	Has func(*kin.Family) bool
