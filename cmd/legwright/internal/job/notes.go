@@ -1,0 +1,34 @@
+package job
+
+import (
+	"fmt"
+
+	"legwright/objective"
+)
+
+// Version is the program's version.
+const Version = "0.1.0"
+
+// Program is the program's name and version as files record it.
+func Program() string { return "legwright " + Version }
+
+// Notes says what holds for the whole study: what its figures leave out, and what the brief might say better.
+func (s *Study) Notes() []string {
+	notes := []string{
+		fmt.Sprintf("every figure is the worst over %d sampled poses of the duty, not a proof for the poses between them", len(s.Task.Samples())),
+		"legs, arms and rods are massless in the efforts; payload, cables and motors are not in the clearances",
+	}
+	for _, p := range s.Plans {
+		if p.Derive {
+			least, span := p.Family.Range()
+			a, b := p.Family.Dimensions[least].Name, p.Family.Dimensions[span].Name
+			notes = append(notes, fmt.Sprintf("no goal or limit of the brief depends on where %s and %s lie in their ranges, so each %s gets the shortest that the duty needs within them; write `sized` to drop the ranges", a, b, p.Family.Name))
+		}
+	}
+	for i := range s.Task.Zones {
+		if s.Task.Zones[i].Kind == objective.Axes {
+			notes = append(notes, fmt.Sprintf("zone %q asks for each excursion alone; such excursions are not reachable together", s.Task.Zones[i].Name))
+		}
+	}
+	return notes
+}

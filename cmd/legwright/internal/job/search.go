@@ -1,0 +1,191 @@
+package job
+
+import (
+	"context"
+	"runtime"
+	"sync"
+
+	"legwright/cmd/legwright/internal/brief"
+	"legwright/cmd/legwright/internal/study"
+	"legwright/kin"
+	"legwright/objective"
+	"legwright/opt"
+)
+
+// Run is how a search is to run: the brief's own settings with those of the command line put over them.
+type Run struct {
+	Evaluations int
+	Population  int
+	Seed        int64
+	Workers     int // 0 for all processors; it never changes the result
+	Polish      float64
+	Progress    func(opt.Progress)
+}
+
+// Found is what a search found.
+type Found struct {
+	Front   *study.Front
+	History []opt.Point
+	Status  opt.Status
+}
+
+// Search runs the search and judges its front completely. When ctx ends it
+// returns what was found until then.
+func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
+	if r.Workers <= 0 {
+		r.Workers = runtime.GOMAXPROCS(0)
+	}
+	out, err := opt.Search(ctx, s.problem(r.Workers), opt.Settings{
+		Evaluations: r.Evaluations,
+		Population:  r.Population,
+		Seed:        uint64(r.Seed),
+		Workers:     r.Workers,
+		Front:       s.Brief.Search.Front,
+		Reference:   s.reference(),
+		Polish:      r.Polish,
+		Progress:    r.Progress,
+	})
+	if err != nil {
+		return nil, err
+	}
+	f := &study.Front{
+		Format: study.Format, Program: Program(), Title: s.Brief.Title, Seed: r.Seed,
+		Status: out.Status.String(), Evaluations: out.Evaluations, Feasible: out.Feasible, Population: out.Population,
+		Poses: len(s.Task.Samples()), Hypervolume: study.Number(out.Hypervolume),
+		Weights: s.Brief.Ranking.Weights,
+		Notes:   s.Notes(),
+	}
+	for i, g := range s.Task.Goals {
+		v := study.Goal{Measure: g.Measure.Name, Sense: "minimise", Unit: MeasureKind(g.Measure).SI()}
+		if g.Maximise {
+			v.Sense = "maximise"
+		}
+		f.Goals = append(f.Goals, v)
+		if out.Reference != nil {
+			f.ReferencePoint = append(f.ReferencePoint, study.Number(s.turn(i, out.Reference[i])))
+		}
+	}
+	f.Designs = s.records(s.appraise(out.Front, r.Workers))
+	if len(f.Designs) == 0 {
+		f.Help = s.help(out, r.Workers)
+	}
+	study.Rank(f, f.Weights)
+	return &Found{Front: f, History: out.History, Status: out.Status}, nil
+}
+
+// turn changes between a goal as the search sees it, to be minimised, and the measure's value.
+func (s *Study) turn(goal int, v float64) float64 {
+	if s.Task.Goals[goal].Maximise {
+		return -v
+	}
+	return v
+}
+
+// reference is the brief's reference point as the search sees it, nil if it gives none.
+func (s *Study) reference() []float64 {
+	given := s.Brief.Search.Reference
+	if given == nil {
+		return nil
+	}
+	out := make([]float64, len(s.Task.Goals))
+	for i, g := range s.Task.Goals {
+		out[i] = s.turn(i, given[g.Measure.Name])
+	}
+	return out
+}
+
+// problem makes the search problem, with scratch for each worker and family.
+func (s *Study) problem(workers int) opt.Problem {
+	p := opt.Problem{Goals: len(s.Task.Goals), Limits: len(s.Task.Constraints())}
+	for _, plan := range s.Plans {
+		p.Spaces = append(p.Spaces, space(plan))
+	}
+	screens := make([][]*objective.Screen, workers)
+	scores := make([]objective.Score, workers)
+	for w := range screens {
+		for _, plan := range s.Plans {
+			screens[w] = append(screens[w], objective.NewScreen(s.Task, plan))
+		}
+	}
+	p.Evaluate = func(worker, space int, x []float64, r *opt.Result) {
+		score := &scores[worker]
+		screens[worker][space].Judge(x, score)
+		copy(r.Goals, score.Goals)
+		copy(r.Excess, score.Excess)
+		r.Violation = score.Violation
+	}
+	return p
+}
+
+// space is the search space of a plan. A family with nothing to vary has a single design.
+func space(p *objective.Plan) opt.Space {
+	s := opt.Space{Name: p.Family.Name}
+	for _, i := range p.Free() {
+		d, sp := &p.Family.Dimensions[i], &p.Specs[i]
+		v := opt.Var{Name: d.Name}
+		switch sp.Kind {
+		case objective.Range:
+			v.Kind, v.Low, v.High = opt.Real, sp.Low, sp.High
+		case objective.Steps:
+			v.Kind, v.Levels = opt.Ordered, sp.Levels
+		case objective.Choices:
+			v.Kind, v.Levels = opt.Ordered, len(sp.Values)
+			if d.Unit == kin.Sign {
+				v.Kind = opt.Choice
+			}
+		}
+		s.Vars = append(s.Vars, v)
+	}
+	if len(s.Vars) == 0 {
+		s.Vars = []opt.Var{{Name: "nothing varies", Kind: opt.Choice, Levels: 1}}
+	}
+	return s
+}
+
+// appraise judges designs of the search completely, side by side; the order is kept.
+func (s *Study) appraise(ds []opt.Design, workers int) []*objective.Appraisal {
+	out := make([]*objective.Appraisal, len(ds))
+	var wg sync.WaitGroup
+	next := make(chan int)
+	for range max(1, workers) {
+		wg.Go(func() {
+			for i := range next {
+				out[i] = s.oneOfTwins(objective.Appraise(s.Task, s.Plans[ds[i].Space], s.values(&ds[i])))
+			}
+		})
+	}
+	for i := range ds {
+		next <- i
+	}
+	close(next)
+	wg.Wait()
+	return out
+}
+
+// records turns appraisals into records, each design once.
+func (s *Study) records(as []*objective.Appraisal) []study.Design {
+	var out []study.Design
+next:
+	for i, a := range as {
+		for _, b := range as[:i] {
+			if same(a, b) {
+				continue next
+			}
+		}
+		out = append(out, study.FromAppraisal(s.Task, a))
+	}
+	return out
+}
+
+// values are the dimensions of a design of the search; sized ones are NaN.
+func (s *Study) values(d *opt.Design) []float64 {
+	p := s.Plans[d.Space]
+	v := make([]float64, len(p.Specs))
+	p.Values(d.X, v)
+	return v
+}
+
+// Settings are the brief's own settings of the search.
+func Settings(b *brief.Brief) Run {
+	return Run{Evaluations: b.Search.Evaluations, Population: b.Search.Population, Seed: b.Search.Seed}
+}

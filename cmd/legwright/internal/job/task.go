@@ -1,0 +1,185 @@
+package job
+
+import (
+	"math"
+
+	"legwright/cmd/legwright/internal/brief"
+	"legwright/kin"
+	"legwright/objective"
+)
+
+// Study is a brief made ready to be worked on.
+type Study struct {
+	Brief *brief.Brief
+	Task  *objective.Task
+	Plans []*objective.Plan // one for each family of the brief
+
+	halfTurn bool // half a turn about z leaves the task unchanged
+}
+
+// New makes the study of a brief. Faults that only show with the kinematics are brief.Faults.
+func New(b *brief.Brief) (*Study, error) {
+	s := &Study{Brief: b, Task: task(b)}
+	faults := impossible(b)
+	for i := range b.Families {
+		f := kin.FamilyNamed(b.Families[i].Name)
+		s.Plans = append(s.Plans, objective.NewPlan(s.Task, f, specs(f, &b.Families[i])))
+		faults = append(faults, singularEverywhere(b, &b.Families[i])...)
+	}
+	if err := faults.Err(); err != nil {
+		return nil, err
+	}
+	s.Task.Prepare()
+	s.halfTurn = s.Task.HalfTurn()
+	return s, nil
+}
+
+// task is everything of the brief but the dimensions.
+func task(b *brief.Brief) *objective.Task {
+	rotary := len(b.Families) > 0 && kin.FamilyNamed(b.Families[0].Name).Drive == kin.Rotary
+	t := &objective.Task{
+		Tool:     vec(b.Tool),
+		Gravity:  vec(b.Gravity),
+		Actuator: actuator(&b.Actuator, rotary),
+		Joints:   objective.Joints{Axis: axis(&b.Joints.Axis), Stiffness: b.Joints.Stiffness},
+		Legs: objective.Legs{Diameter: b.Legs.Diameter, RodDiameter: b.Legs.RodDiameter,
+			Modulus: b.Legs.Modulus, EndFixity: b.Legs.EndFixity},
+		Singular: b.SingularBelow,
+		Coverage: 1,
+	}
+	switch b.CharacteristicLength.Kind {
+	case "value":
+		t.Rule, t.Length = objective.LengthGiven, b.CharacteristicLength.Value
+	case "platform_radius":
+		t.Rule = objective.LengthOfPlatform
+	}
+	at := map[string]int{}
+	for i := range b.Duty.Zones {
+		z := &b.Duty.Zones[i]
+		at[z.Name] = i
+		t.Zones = append(t.Zones, zone(z))
+	}
+	for i := range b.Duty.Cases {
+		t.Cases = append(t.Cases, loadCase(&b.Duty.Cases[i], at))
+	}
+	measure := map[string]*objective.Measure{}
+	for _, m := range objective.Measures() {
+		measure[m.Name] = m
+	}
+	limited := false
+	for _, l := range b.Limits {
+		if l.Measure == "coverage" {
+			t.Coverage, limited = l.Bound, true
+			continue
+		}
+		t.Limits = append(t.Limits, objective.Limit{Measure: measure[l.Measure], AtLeast: l.AtLeast, Bound: l.Bound, Origin: "limits"})
+	}
+	for _, g := range b.Goals {
+		t.Goals = append(t.Goals, objective.Goal{Measure: measure[g.Measure], Maximise: g.Sense == brief.Maximise})
+		if g.Measure == "coverage" {
+			t.CoverageGoal = true
+			if !limited {
+				t.Coverage = 0
+			}
+		}
+	}
+	most := func(name, origin string, bound float64) {
+		if bound > 0 {
+			t.Limits = append(t.Limits, objective.Limit{Measure: measure[name], Bound: bound, Origin: origin})
+		}
+	}
+	most("base_swing", "joints.base_swing", b.Joints.BaseSwing)
+	most("platform_swing", "joints.platform_swing", b.Joints.PlatformSwing)
+	most("push_force", "actuator.push", b.Actuator.Push)
+	most("pull_force", "actuator.pull", b.Actuator.Pull)
+	most("motor_torque", "actuator.torque", b.Actuator.Torque)
+	most("leg_speed", "actuator.speed", b.Actuator.Speed)
+	most("motor_speed", "actuator.speed", b.Actuator.TurnSpeed)
+	most("leg_power", "actuator.power", b.Actuator.Power)
+	return t
+}
+
+func actuator(a *brief.Actuator, rotary bool) objective.Actuator {
+	out := objective.Actuator{
+		DeadLength: math.NaN(), DeadRatio: a.DeadRatio, Reserve: a.Reserve,
+		Strokes: a.Strokes, Stiffness: a.Stiffness, Error: a.Error,
+	}
+	if a.DeadLength != nil {
+		out.DeadLength = *a.DeadLength
+	}
+	if rotary {
+		out.Reserve, out.Stiffness, out.Error = a.TurnReserve, a.TurnStiffness, a.TurnError
+	}
+	return out
+}
+
+func axis(a *brief.Axis) kin.Axis {
+	switch a.Kind {
+	case "plate":
+		return kin.Axis{Kind: kin.AxisPlate}
+	case "vector":
+		return kin.Axis{Kind: kin.AxisVector, Vec: vec(a.Vector)}
+	}
+	return kin.Axis{Kind: kin.AxisHomeLeg}
+}
+
+// axisSamples is the number of poses along each excursion of a zone that gives axes and no samples.
+const axisSamples = 25
+
+func zone(z *brief.Zone) objective.Zone {
+	out := objective.Zone{Name: z.Name, Samples: z.Samples}
+	for _, r := range z.Ranges {
+		out.Low[r.Index], out.High[r.Index] = r.Low, r.High
+	}
+	switch z.Shape {
+	case brief.Box:
+		out.Kind = objective.Box
+	case brief.Axes:
+		out.Kind = objective.Axes
+		out.Samples = axisSamples
+		if z.Samples > 0 && len(z.Ranges) > 0 {
+			out.Samples = max(2, min(axisSamples, z.Samples/len(z.Ranges)))
+		}
+	case brief.Ellipsoid:
+		out.Kind = objective.Ellipsoid
+	case brief.Recorded:
+		out.Kind = objective.Listed
+		for _, p := range z.Poses {
+			out.Poses = append(out.Poses, kin.Coords(p))
+		}
+	}
+	return out
+}
+
+func loadCase(c *brief.Case, zones map[string]int) objective.Case {
+	out := objective.Case{Name: c.Name, Linear: set(&c.Speeds.Linear), Angular: set(&c.Speeds.Angular)}
+	for _, z := range c.Zones {
+		out.Zones = append(out.Zones, zones[z])
+	}
+	for i := range c.Loads {
+		l := &c.Loads[i]
+		o := objective.Load{
+			Name: l.Name, Mass: l.Mass, Centre: vec(l.Centre), Inertia: l.Inertia,
+			Linear: set(&l.Acceleration.Linear), Angular: set(&l.Acceleration.Angular), AtTool: l.Acceleration.AtTool,
+			Force: vec(l.Force), ForceSpread: vec(l.ForceSpread),
+			Moment: vec(l.Moment), MomentSpread: vec(l.MomentSpread),
+		}
+		if l.At != nil {
+			o.At, o.Off = vec(*l.At), true
+		}
+		out.Loads = append(out.Loads, o)
+	}
+	return out
+}
+
+func set(s *brief.Set) objective.Set {
+	switch s.Kind {
+	case brief.BallSet:
+		return objective.Set{Kind: objective.AnyWay, Radius: s.Radius}
+	case brief.BoxSet:
+		return objective.Set{Kind: objective.PerAxis, Half: vec(s.Half)}
+	}
+	return objective.Set{}
+}
+
+func vec(a [3]float64) kin.Vec { return kin.Vec{X: a[0], Y: a[1], Z: a[2]} }
