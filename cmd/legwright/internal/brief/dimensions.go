@@ -56,11 +56,16 @@ func (r *reader) dimensions(n *node, fs families) (out []Family) {
 		r.family(n, anyFamily(r.known)) // the family is at fault: check what can be checked
 		return nil
 	}
-	if !fs.perName {
+	_, nested := n.child(fs.names[0])
+	if len(fs.names) == 1 && !(fs.perName && nested) {
 		return []Family{r.family(n, r.families[0])}
 	}
 	example := fmt.Sprintf("the dimensions of each family: %s: {…}", strings.Join(fs.names, ": {…}, "))
 	if !r.isMapping(n, example) {
+		return nil
+	}
+	if first := n.entries[0].name; !nested && slices.Contains(dimensionNames(anyFamily(r.known)), first) {
+		r.refuse(n, first+" stands under no family", "write "+example)
 		return nil
 	}
 	excused := r.strangers(n, fs.names)
@@ -93,6 +98,10 @@ func anyFamily(k *Known) *KnownFamily {
 func (r *reader) family(n *node, f *KnownFamily) Family {
 	out := Family{Name: f.Name}
 	if !r.isMapping(n, "the dimensions: "+strings.Join(dimensionNames(f), ", ")) {
+		return out
+	}
+	if v, ok := n.child(f.Name); ok {
+		r.fault(v.key, v.path, "the only family needs no key of its own", "write its dimensions directly under "+n.path)
 		return out
 	}
 	excused := r.strangers(n, dimensionNames(f))

@@ -26,6 +26,7 @@ type jsonParser struct {
 	file string
 	data []byte
 	d    *json.Decoder
+	from int // where the token begins that was asked for last
 }
 
 // fault gives a syntax error its place.
@@ -38,7 +39,7 @@ func (p *jsonParser) fault(err error) error {
 	var syntax *json.SyntaxError
 	switch {
 	case errors.As(err, &syntax):
-		offset = int(syntax.Offset) - 1
+		offset = max(int(syntax.Offset)-1, p.from)
 	case errors.Is(err, io.EOF), errors.Is(err, io.ErrUnexpectedEOF):
 		offset, what = len(p.data), "the file ends too early"
 	}
@@ -51,6 +52,7 @@ func (p *jsonParser) next() (json.Token, Position, error) {
 	for from < len(p.data) && bytes.IndexByte([]byte(" \t\r\n,:"), p.data[from]) >= 0 {
 		from++
 	}
+	p.from = from
 	t, err := p.d.Token()
 	return t, position(p.file, p.data, from), err
 }

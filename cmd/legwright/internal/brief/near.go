@@ -9,7 +9,7 @@ import (
 func near(word string, names []string) string {
 	best, least := "", 1+max(2, min(len(word), 40)/3)
 	for _, n := range names {
-		if d := distance(strings.ToLower(word), strings.ToLower(n)); d < least && d < max(len(n), 2) {
+		if d := distance(strings.ToLower(word), strings.ToLower(n)); d < least && d < max(len(n), len(word)) {
 			best, least = n, d
 		}
 	}

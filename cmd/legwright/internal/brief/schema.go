@@ -2,6 +2,7 @@ package brief
 
 import (
 	"fmt"
+	"strings"
 
 	"legwright/cmd/legwright/internal/units"
 )
@@ -138,7 +139,7 @@ func readGravity(r *reader, n *node) any {
 const platformRadius = "platform_radius"
 
 func readCharacteristicLength(r *reader, n *node) any {
-	if n.shape != text || !nearWord(n.text) {
+	if n.shape != text || blank(n.text) || strings.ContainsAny(n.text, "0123456789") {
 		if v, _, ok := r.quantity(n, units.Length); ok && r.signed(n, v, aboveZero) {
 			return Length{"value", v}
 		}
@@ -156,9 +157,6 @@ func readCharacteristicLength(r *reader, n *node) any {
 	}
 	return Length{Kind: s}
 }
-
-// nearWord tells a word from a quantity.
-func nearWord(s string) bool { return near(s, []string{platformRadius, "duty"}) != "" }
 
 // deadLength is what of the actuator a leg must hold beside its stroke.
 type deadLength struct {

@@ -15,6 +15,9 @@ func (e *Error) Error() string { return e.Problem + "; " + e.Remedy }
 
 var number = regexp.MustCompile(`^[+-]?([0-9]+\.?[0-9]*|\.[0-9]+)([eE][+-]?[0-9]+)?`)
 
+// based is a number in hexadecimal, octal or binary.
+var based = regexp.MustCompile(`^[+-]?0[xXoObB][0-9a-fA-F]`)
+
 // maxText bounds what a quantity may be long, so that error texts stay readable.
 const maxText = 100
 
@@ -26,7 +29,7 @@ func Parse(text string, allowed ...Kind) (float64, Kind, error) {
 	}
 	t := strings.TrimSpace(text)
 	if len(t) > maxText {
-		return 0, 0, &Error{"the text is too long for a quantity", "write " + samples(allowed)}
+		return 0, 0, &Error{"the text is too long for a quantity", "write one such as " + samples(allowed)}
 	}
 	num := number.FindString(t)
 	symbol := strings.TrimSpace(t[len(num):])
@@ -51,13 +54,15 @@ func shape(t, num, symbol string, allowed []Kind) error {
 	low := strings.ToLower(strings.TrimLeft(t, "+-. "))
 	switch {
 	case num == "" && (strings.HasPrefix(low, "inf") || strings.HasPrefix(low, "nan")):
-		return &Error{fmt.Sprintf("%q is not a finite number", t), "write " + samples(allowed)}
+		return &Error{fmt.Sprintf("%q is not a finite number", t), "write one such as " + samples(allowed)}
 	case num == "":
-		return &Error{fmt.Sprintf("%q is not a quantity", t), "write " + samples(allowed)}
+		return &Error{fmt.Sprintf("%q is not a quantity", t), "write one such as " + samples(allowed)}
 	case strings.HasPrefix(symbol, ",") && len(symbol) > 1 && symbol[1] >= '0' && symbol[1] <= '9':
 		return &Error{fmt.Sprintf("%q has a comma in its number", t), "write a decimal point: " + strings.Replace(t, ",", ".", 1)}
 	case symbol != "" && symbol[0] >= '0' && symbol[0] <= '9':
 		return &Error{fmt.Sprintf("%q has two numbers", t), "write one number without blanks, then its unit"}
+	case based.MatchString(t):
+		return &Error{fmt.Sprintf("%s is not a decimal number", t), "write one such as " + samples(allowed)}
 	case strings.HasPrefix(symbol, "_"):
 		return &Error{fmt.Sprintf("%q has an underscore in its number", t), "write the digits without it"}
 	}

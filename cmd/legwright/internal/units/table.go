@@ -42,6 +42,7 @@ var table = [...]Unit{
 	{Inertia, "g m2", -3, 1},
 
 	{Force, "N", 0, 1},
+	{Force, "mN", -3, 1},
 	{Force, "kN", 3, 1},
 	{Force, "MN", 6, 1},
 
