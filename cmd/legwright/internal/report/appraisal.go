@@ -145,7 +145,7 @@ func (s *sheet) excursions(d *study.Design) {
 		return
 	}
 	s.heading("Single excursions from home, each alone: they are not reachable together")
-	cols := []column{{head: "", left: true}, {head: "from"}, {head: "to"}, {head: "unit", left: true}, {head: "ends below by", left: true}, {head: "ends above by", left: true}}
+	cols := []column{{head: "", left: true}, {head: "from"}, {head: "to"}, {head: "unit", left: true}, {head: "low end set by", left: true}, {head: "high end set by", left: true}}
 	for i := range d.Excursions {
 		e := &d.Excursions[i]
 		c := coordinate(e.Coordinate)

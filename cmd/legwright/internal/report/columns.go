@@ -32,7 +32,7 @@ func (d *designs) figures(name string, keep int, s scale, of func(*study.Design)
 			values[i] = float64(v)
 		}
 	}
-	return column{name: name, head: words(name), unit: s.unit(), cells: s.column(values), keep: keep}
+	return column{name: name, head: words(name), unit: s.unit(), cells: s.column(values, fewDigits), keep: keep}
 }
 
 func (d *designs) measure(name string, keep int) column {
@@ -76,7 +76,7 @@ func (d *designs) tightest(keep int) column {
 		}
 		return ""
 	})
-	c.head = "tightest limit"
+	c.head = "tightest\nlimit"
 	return c
 }
 

@@ -3,6 +3,7 @@ package report
 import (
 	"math"
 	"strconv"
+	"strings"
 
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
@@ -50,7 +51,24 @@ func (c scale) number(si float64, digits int) string {
 	case math.IsNaN(si):
 		return "none"
 	}
-	return units.Digits(c.in(si), digits)
+	v := c.in(si)
+	if most := c.finest(); v != 0 && most >= 0 {
+		lead := int(math.Floor(math.Log10(math.Abs(v))))
+		digits = max(min(digits, lead+1+most), 1)
+	}
+	return units.Digits(v, digits)
+}
+
+// finest is the number of decimals beyond which a quantity means nothing to a designer (0.1 µm, 3.6″),
+// -1 for any.
+func (c scale) finest() int {
+	switch c.kind {
+	case units.Length:
+		return 4
+	case units.Angle:
+		return 3
+	}
+	return -1
 }
 
 // text shows an SI value with its unit.
@@ -71,9 +89,9 @@ const (
 	manyDigits = 5
 )
 
-// column shows values with the same number of decimals: four significant digits of the largest, more
-// (to six) where the values differ too little to be told apart by that.
-func (c scale) column(values []float64) []string {
+// column shows values with the same number of decimals: so many significant digits of the largest,
+// two more at most where the values differ too little to be told apart by that.
+func (c scale) column(values []float64, digits int) []string {
 	most, low, high := 0.0, math.Inf(1), math.Inf(-1)
 	for _, v := range values {
 		if v = c.in(v); !math.IsInf(v, 0) && !math.IsNaN(v) {
@@ -84,10 +102,10 @@ func (c scale) column(values []float64) []string {
 	decimals := 0
 	if most > 0 {
 		lead := int(math.Floor(math.Log10(most)))
-		decimals = fewDigits - 1 - lead
-		if high > low {
+		decimals = digits - 1 - lead
+		if high-low > 1e-9*most {
 			fine := 1 - int(math.Floor(math.Log10(high-low)))
-			decimals = min(max(decimals, fine), 5-lead)
+			decimals = min(max(decimals, fine), digits+1-lead)
 		}
 		decimals = min(max(decimals, 0), 12)
 	}
@@ -97,7 +115,7 @@ func (c scale) column(values []float64) []string {
 		switch {
 		case math.IsNaN(v):
 		case math.IsInf(v, 0):
-			out[i] = c.number(values[i], fewDigits)
+			out[i] = c.number(values[i], digits)
 		default:
 			out[i] = fixed(v, decimals)
 		}
@@ -128,9 +146,21 @@ func margin(l *study.Limit) string {
 			v = -v
 		}
 		c := limitScale(l.Measure, l.Unit)
-		return signed(c.number(v, 3)) + " " + c.unit()
+		return strings.TrimSpace(signed(coarse(c.in(v))) + " " + c.unit())
 	}
 	return signed(units.Digits(100*float64(l.Margin), 2)) + " %"
+}
+
+// coarse shows a number with three digits but not more than two decimals, one digit if it is smaller.
+func coarse(v float64) string {
+	a := math.Abs(v)
+	switch {
+	case a < 0.01:
+		return units.Digits(v, 1)
+	case a < 10:
+		return fixed(v, 2)
+	}
+	return units.Digits(v, 3)
 }
 
 // signed puts a plus before numbers above zero.

@@ -3,14 +3,17 @@ package report
 import (
 	"fmt"
 	"io"
+	"slices"
 	"strings"
 
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 )
 
-// shown is how many designs the first screen has.
-const shown = 7
+const (
+	shown      = 7  // designs of the first screen
+	marksWidth = 18 // columns for the marks: "best conditioning,"
+)
 
 // FirstScreen draws what one needs to choose a design: a few that differ, what a step along the front
 // costs, and what the figures leave out. A front without designs is drawn by Infeasible.
@@ -35,22 +38,28 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 		}
 		return strings.Join(out, ", ")
 	})
-	marks.most = 20
+	marks.most = marksWidth
 	cols := []column{d.id(), marks}
 	if len(families(f)) > 1 {
-		cols = append(cols, d.text("family", 60, func(r *study.Design) string { return r.Family }))
+		cols = append(cols, d.text("family", 0, func(r *study.Design) string { return r.Family }))
 	}
-	for i, g := range f.Goals {
-		cols = append(cols, d.measure(g.Measure, 100-i))
+	for _, g := range f.Goals {
+		cols = append(cols, d.measure(g.Measure, 0))
 	}
-	cols = append(cols, d.tightest(50), d.margin(50))
-	for i, m := range []string{"push_force", "pull_force", "motor_torque", "footprint", "home_height"} {
+	cols = append(cols, d.tightest(0), d.margin(0))
+	needs := []column{d.id(), d.strokeUsed(0)}
+	for _, m := range []string{"push_force", "pull_force", "motor_torque", "footprint", "home_height"} {
 		if d.has(m) && !goal(f, m) {
-			cols = append(cols, d.measure(m, 40-i))
+			needs = append(needs, d.measure(m, 0))
 		}
 	}
-	cols = append(cols, d.strokeUsed(45))
-	s.without(s.grid(cols))
+	if all := append(slices.Clone(cols), needs[1:]...); fits(all, s.Width) {
+		s.blocks(all)
+	} else {
+		s.blocks(cols)
+		s.gap()
+		s.blocks(needs)
+	}
 	if d.limited() {
 		s.say(margins)
 	}
@@ -60,8 +69,9 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	if p.Dir != "" {
 		dir := quote(p.Dir)
 		s.gap()
-		s.item(fmt.Sprintf("all designs in order: legwright rank %s --top %d", dir, len(f.Designs)))
-		s.item(fmt.Sprintf("one design with every worst pose: legwright appraise %s", quote(p.Dir+"/designs/"+f.Designs[0].ID+".yaml")))
+		s.item(fmt.Sprintf("all designs in order: %s", together(fmt.Sprintf("legwright rank %s --top %d", dir, len(f.Designs)))))
+		s.item(fmt.Sprintf("other weights: %s", together(fmt.Sprintf("legwright rank %s --weight %s=2", dir, study.Clean(f.Goals[0].Measure)))))
+		s.item(fmt.Sprintf("one design with every worst pose: %s", together("legwright appraise "+quote(p.Dir+"/designs/"+f.Designs[0].ID+".yaml"))))
 	}
 	return s.to(w)
 }
@@ -97,7 +107,7 @@ func (s *sheet) title(f *study.Front) {
 	}
 	s.say(fmt.Sprintf("%s. Seed %d, %d sampled poses.", line, f.Seed, f.Poses))
 	if f.Status != "" && f.Status != "budget spent" && len(f.Designs) > 0 {
-		s.say("The search ended early or otherwise: " + f.Status + ".")
+		s.say("The search ended otherwise than by its budget: " + f.Status + ".")
 	}
 	var goals []string
 	for _, g := range f.Goals {

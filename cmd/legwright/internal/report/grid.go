@@ -18,13 +18,8 @@ type column struct {
 	most  int  // columns to which text is folded, 0 for no folding
 }
 
-// words breaks a long name at its underscores into lines.
-func words(name string) string {
-	if len(name) <= 9 {
-		return name
-	}
-	return strings.ReplaceAll(name, "_", " \n")
-}
+// words breaks a name at its underscores into lines.
+func words(name string) string { return strings.ReplaceAll(name, "_", "\n") }
 
 // grid draws columns side by side in the width that there is, and tells which were left out.
 func (s *sheet) grid(cols []column) (leftOut []string) {
@@ -42,6 +37,29 @@ func (s *sheet) grid(cols []column) (leftOut []string) {
 		}
 		leftOut = append([]string{cols[at].name}, leftOut...)
 		cols = append(append([]column(nil), cols[:at]...), cols[at+1:]...)
+	}
+}
+
+// fits tells whether the columns fit side by side.
+func fits(cols []column, width int) bool {
+	_, w := draw(cols)
+	return w <= width
+}
+
+// blocks draws columns side by side, those for which there is no room in further grids below that
+// repeat the first column. Nothing is left out.
+func (s *sheet) blocks(cols []column) {
+	for first := true; len(cols) > 1 || first; first = false {
+		n := len(cols)
+		for n > 2 && !fits(cols[:n], s.Width) {
+			n--
+		}
+		if !first {
+			s.gap()
+		}
+		drawn, _ := draw(cols[:n])
+		s.b.WriteString(drawn + "\n")
+		cols = append([]column{cols[0]}, cols[n:]...)
 	}
 }
 

@@ -171,10 +171,10 @@ func (s *sheet) advice(h *study.Help) {
 		for _, a := range hints {
 			if a.limit == b.Constraint && !told[a.try] && len(told) < 4 {
 				told[a.try] = true
-				s.item(a.try + " (" + study.Clean(b.Constraint) + ")")
+				s.item(study.Clean(b.Constraint) + ": " + a.try)
 			}
 		}
 	}
-	s.item("wider ranges under dimensions, and more evaluations, since what was not met may still exist")
+	s.item("in general: wider ranges under dimensions, and more evaluations, since what was not met may still exist")
 	s.gap()
 }

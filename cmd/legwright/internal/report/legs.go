@@ -1,6 +1,7 @@
 package report
 
 import (
+	"math"
 	"strconv"
 
 	"legwright/cmd/legwright/internal/study"
@@ -62,19 +63,34 @@ func (s *sheet) poses(g *gazetteer) {
 	names := []string{"x", "y", "z", "roll", "pitch", "yaw"}
 	for k, n := range names {
 		c := coordinate(n)
-		col := column{head: n, unit: c.unit()}
+		values := make([]float64, len(g.poses))
 		moves := false
-		for _, p := range g.poses {
+		for i, p := range g.poses {
 			v := [6]float64{p.X, p.Y, p.Z, p.Roll, p.Pitch, p.Yaw}[k]
 			moves = moves || v != 0
-			col.cells = append(col.cells, fixed(c.in(v), 2))
+			values[i] = c.in(v)
 		}
 		if moves {
-			cols = append(cols, col)
+			cols = append(cols, column{head: n, unit: c.unit(), cells: short(values)})
 		}
 	}
 	s.grid(cols)
 	s.gap()
+}
+
+// short shows numbers with as many decimals as they need, two at most, the same for all.
+func short(values []float64) []string {
+	decimals := 0
+	for _, v := range values {
+		for decimals < 2 && math.Abs(v-math.Round(v*math.Pow10(decimals))/math.Pow10(decimals)) > 1e-9 {
+			decimals++
+		}
+	}
+	out := make([]string, len(values))
+	for i, v := range values {
+		out[i] = fixed(v, decimals)
+	}
+	return out
 }
 
 // legs draws what each leg must do.
@@ -96,26 +112,26 @@ func (s *sheet) legs(d *study.Design, g *gazetteer) {
 		shortAt.cells = append(shortAt.cells, g.orHome(d.Legs[i].ShortestAt))
 		longAt.cells = append(longAt.cells, g.orHome(d.Legs[i].LongestAt))
 	}
-	of := func(name string, k units.Kind, field func(*study.Leg) study.Number) column {
+	of := func(name string, k units.Kind, digits int, field func(*study.Leg) study.Number) column {
 		c := scale{kind: k}
 		col := column{head: words(name), unit: c.unit()}
 		values := make([]float64, len(d.Legs))
 		for i := range d.Legs {
 			values[i] = float64(field(&d.Legs[i]))
 		}
-		col.cells = c.column(values)
+		col.cells = c.column(values, digits)
 		return col
 	}
-	s.grid([]column{
+	s.blocks([]column{
 		number,
-		of(names[0], q, func(l *study.Leg) study.Number { return l.Shortest }), shortAt,
-		of("home", q, func(l *study.Leg) study.Number { return l.Home }),
-		of(names[1], q, func(l *study.Leg) study.Number { return l.Longest }), longAt,
-		of(names[2], effort, func(l *study.Leg) study.Number { return l.Push }),
-		of(pull, effort, func(l *study.Leg) study.Number { return l.Pull }),
-		of("speed", rate, func(l *study.Leg) study.Number { return l.Speed }),
-		of("base_swing", units.Angle, func(l *study.Leg) study.Number { return l.BaseSwing }),
-		of("platform_swing", units.Angle, func(l *study.Leg) study.Number { return l.PlatformSwing }),
+		of(names[0], q, manyDigits, func(l *study.Leg) study.Number { return l.Shortest }), shortAt,
+		of("home", q, manyDigits, func(l *study.Leg) study.Number { return l.Home }),
+		of(names[1], q, manyDigits, func(l *study.Leg) study.Number { return l.Longest }), longAt,
+		of(names[2], effort, fewDigits, func(l *study.Leg) study.Number { return l.Push }),
+		of(pull, effort, fewDigits, func(l *study.Leg) study.Number { return l.Pull }),
+		of("speed", rate, fewDigits, func(l *study.Leg) study.Number { return l.Speed }),
+		of("base_swing", units.Angle, fewDigits, func(l *study.Leg) study.Number { return l.BaseSwing }),
+		of("platform_swing", units.Angle, fewDigits, func(l *study.Leg) study.Number { return l.PlatformSwing }),
 	})
 	s.gap()
 }

@@ -94,11 +94,18 @@ func (s *sheet) paint(t string, c text.Color) string {
 	return c.EscapeSeq() + t + text.Reset.EscapeSeq()
 }
 
+// nbsp keeps the words on both sides of it in one line.
+const nbsp = "\u00a0"
+
+// together keeps a text in one line.
+func together(t string) string { return strings.ReplaceAll(t, " ", nbsp) }
+
 // fold breaks text between words into lines of at most width columns.
 func fold(t string, width int, first, rest string) []string {
 	var lines []string
 	line, empty := first, true
-	for _, word := range strings.Fields(t) {
+	for _, word := range strings.FieldsFunc(t, func(r rune) bool { return r == ' ' }) {
+		word = strings.ReplaceAll(word, nbsp, " ")
 		if !empty && text.StringWidth(line)+1+text.StringWidth(word) > width {
 			lines = append(lines, line)
 			line, empty = rest, true

@@ -35,6 +35,7 @@ func (s *sheet) steps(f *study.Front) {
 		return
 	}
 	s.heading(fmt.Sprintf("What a step along the front costs, from the knee (%s)", f.Designs[from].ID))
+	s.say("The knee is the compromise from which a gain in one goal begins to cost much in the others.")
 	for _, l := range lines {
 		s.item(l)
 	}
@@ -61,8 +62,13 @@ func stepLines(f *study.Front, from int) []string {
 				}
 			}
 		}
-		if !found {
-			tell(nearest(all, a, -1), a)
+		if found {
+			continue
+		}
+		if st := nearest(all, a, -1); st != nil {
+			tell(st, a)
+		} else if best := f.Marked(study.MarkBest(f.Goals[a].Measure)); best >= 0 {
+			lines = append(lines, little(f, from, best, f.Goals[a].Measure))
 		}
 	}
 	return lines
@@ -137,6 +143,15 @@ func nearest(all []step, a, b int) *step {
 	return best
 }
 
+// little says that a goal cannot be made much better than it is.
+func little(f *study.Front, from, best int, measure string) string {
+	if best == from {
+		return study.Clean(measure) + ": no design has better than this"
+	}
+	a, b := &f.Designs[from], &f.Designs[best]
+	return fmt.Sprintf("%s is near its best: design %s has %s", study.Clean(measure), b.ID, change(measure, a, b))
+}
+
 // words says what the step gains in a goal, what it costs, and what else it changes.
 func (st *step) words(f *study.Front, from, gained int) string {
 	a, b := &f.Designs[from], &f.Designs[st.to]
@@ -176,17 +191,17 @@ func change(measure string, a, b *study.Design) string {
 	if v < u {
 		word = "less"
 	}
-	both := c.column([]float64{u, v})
+	both := c.column([]float64{u, v}, fewDigits)
 	span := both[0] + " to " + both[1]
 	if c.unit() != "" {
 		span += " " + c.unit()
 	}
-	amount := c.text(math.Abs(v-u), 2)
+	amount := c.text(math.Abs(v-u), 3)
 	if c.percent {
 		amount = c.number(math.Abs(v-u), 2) + " points"
 	}
 	if c.kind != units.Length && c.kind != units.Angle && !c.percent && u != 0 {
 		amount = units.Digits(100*math.Abs(v-u)/math.Abs(u), 2) + " %"
 	}
-	return fmt.Sprintf("%s %s %s (%s)", amount, word, study.Clean(measure), span)
+	return fmt.Sprintf("%s %s %s (%s)", together(amount), word, study.Clean(measure), together(span))
 }

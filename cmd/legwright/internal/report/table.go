@@ -26,7 +26,7 @@ func Table(w io.Writer, f *study.Front, top int, p Page) error {
 		d.rows = append(d.rows, &f.Designs[i])
 	}
 	marks := d.text("marks", 48, func(r *study.Design) string { return strings.Join(r.Marks, ", ") })
-	marks.most = 20
+	marks.most = marksWidth
 	cols := []column{d.rank(), d.id(), d.score(47)}
 	if len(families(f)) > 1 {
 		cols = append(cols, d.text("family", 60, func(r *study.Design) string { return r.Family }))
