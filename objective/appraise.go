@@ -232,7 +232,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		}
 		if n := len(t.Actuator.Strokes); n > 0 && p.derived(p.span) {
 			last := t.Actuator.Strokes[n-1]
-			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: span}, (span-last)/last)
+			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: most + r - low}, (most+r-low-last)/last)
 		}
 		if !math.IsNaN(t.Actuator.DeadLength) {
 			need := t.Actuator.DeadRatio*span + t.Actuator.DeadLength

@@ -12,12 +12,18 @@ const Version = "0.1.0"
 // Program is the program's name and version as files record it.
 func Program() string { return "legwright " + Version }
 
-// Notes says what holds for the whole study: what its figures leave out, and what the brief might say better.
+// Notes says what holds for the whole study: what its figures leave out, and its Hints.
 func (s *Study) Notes() []string {
 	notes := []string{
 		fmt.Sprintf("every figure is the worst over %d sampled poses of the duty, not a proof for the poses between them", len(s.Task.Samples())),
 		"legs, arms and rods are massless in the efforts; payload, cables and motors are not in the clearances",
 	}
+	return append(notes, s.Hints()...)
+}
+
+// Hints says what the brief might say better.
+func (s *Study) Hints() []string {
+	var notes []string
 	for _, p := range s.Plans {
 		if p.Derive {
 			least, span := p.Family.Range()

@@ -2,6 +2,7 @@ package job
 
 import (
 	"context"
+	"fmt"
 	"runtime"
 	"sync"
 
@@ -188,4 +189,10 @@ func (s *Study) values(d *opt.Design) []float64 {
 // Settings are the brief's own settings of the search.
 func Settings(b *brief.Brief) Run {
 	return Run{Evaluations: b.Search.Evaluations, Population: b.Search.Population, Seed: b.Search.Seed}
+}
+
+// Checkpoint marks a folder as that of an unfinished study. The search itself has no state to go on
+// from: the same seed leads it to the same designs.
+func Checkpoint(f *Found) []byte {
+	return fmt.Appendf(nil, "{\"program\": %q, \"seed\": %d, \"evaluations\": %d}\n", Program(), f.Front.Seed, f.Front.Evaluations)
 }

@@ -1,0 +1,60 @@
+package main
+
+import (
+	"bytes"
+
+	"github.com/spf13/cobra"
+
+	"legwright/cmd/legwright/internal/job"
+	"legwright/cmd/legwright/internal/report"
+	"legwright/cmd/legwright/internal/study"
+	"legwright/objective"
+)
+
+func newAppraise(c *common) *cobra.Command {
+	var briefFile, posesFile string
+	cmd := &cobra.Command{
+		Use:   "appraise DESIGN",
+		Short: "every measure of one geometry, with the pose, leg and case that decide it",
+		Long: `appraise judges the design file against its brief: every measure, every limit with
+its margin, what each leg must do, and how far each coordinate goes alone. It exits
+with 3 if a limit does not hold.`,
+		Args: cobra.ExactArgs(1),
+		RunE: func(_ *cobra.Command, args []string) error {
+			s, plan, err := job.Design(args[0], briefFile)
+			if err != nil {
+				return inputError{err}
+			}
+			values := plan.Single()
+			a := objective.Appraise(s.Task, plan, values)
+			a.Excursions = objective.Excurse(s.Task, a)
+			a.Notes = append(s.Notes(), a.Notes...)
+			if posesFile != "" {
+				var b bytes.Buffer
+				if err := study.WritePoses(&b, s.Task, a); err != nil {
+					return err
+				}
+				if err := study.WriteFile(posesFile, b.Bytes()); err != nil {
+					return inputError{err}
+				}
+				c.hint("wrote %d poses to %s", a.Poses, posesFile)
+			}
+			d := study.FromAppraisal(s.Task, a)
+			if c.json {
+				err = printJSON(c.out, d)
+			} else {
+				err = report.Appraisal(c.out, &d, report.PageOf(c.out))
+			}
+			if err != nil {
+				return err
+			}
+			if !a.Feasible {
+				return status(exitLimit)
+			}
+			return nil
+		},
+	}
+	cmd.Flags().StringVar(&briefFile, "brief", "", "brief to judge by, in place of the one that the design file names")
+	cmd.Flags().StringVar(&posesFile, "poses", "", "write what the design does at every pose to a CSV `file`")
+	return cmd
+}

@@ -1,0 +1,177 @@
+package job
+
+import (
+	"fmt"
+	"math"
+
+	"legwright/cmd/legwright/internal/brief"
+	"legwright/cmd/legwright/internal/study"
+	"legwright/kin"
+	"legwright/objective"
+)
+
+// Design reads a design file and the brief to judge it by: briefFile, or the one that the design names.
+// The plan leaves nothing open but an actuator range that the file leaves out and the brief sizes.
+func Design(file, briefFile string) (*Study, *objective.Plan, error) {
+	d, err := brief.LoadDesign(file, *Known())
+	if err != nil {
+		return nil, nil, err
+	}
+	if briefFile == "" {
+		briefFile = d.BriefFile()
+	}
+	if briefFile == "" {
+		return nil, nil, brief.Faults{d.Fault("", "names no brief", "write brief: FILE in it, or give one with --brief")}
+	}
+	b, err := brief.Load(briefFile, *Known())
+	if err != nil {
+		return nil, nil, err
+	}
+	s, err := New(b)
+	if err != nil {
+		return nil, nil, err
+	}
+	p, err := s.plan(d)
+	return s, p, err
+}
+
+// plan is the plan of a single design under the study's brief.
+func (s *Study) plan(d *brief.Design) (*objective.Plan, error) {
+	var of *objective.Plan
+	for _, p := range s.Plans {
+		if p.Family.Name == d.Family {
+			of = p
+		}
+	}
+	f := kin.FamilyNamed(d.Family)
+	values, missing := dimensionValues(f, d)
+	specs := make([]objective.Spec, len(values))
+	var faults brief.Faults
+	for i, v := range values {
+		dim := &f.Dimensions[i]
+		specs[i] = objective.Spec{Kind: objective.Fixed, Values: []float64{v}}
+		switch {
+		case !missing[i] || d.Joints != nil && dim.Joints:
+		case dim.Role != kin.Shape && of != nil && (of.Specs[i].Kind == objective.Sized || of.Derive):
+			specs[i] = of.Specs[i]
+			specs[i].Kind = objective.Sized
+		default:
+			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+DimensionKind(dim.Unit).Sample()))
+		}
+	}
+	joints, err := outright(d)
+	if err != nil {
+		return nil, err
+	}
+	if joints != nil && d.Home == nil {
+		faults = append(faults, d.Fault("joints", "joints are given outright, but not where the platform is at home", "write home: [x, y, z, roll, pitch, yaw]"))
+	}
+	if err := faults.Err(); err != nil {
+		return nil, err
+	}
+	p := objective.NewPlan(s.Task, f, specs)
+	p.Joints = joints
+	return p, nil
+}
+
+// dimensionValues puts a design's dimensions into the family's order; missing tells which have neither value nor default.
+func dimensionValues(f *kin.Family, d *brief.Design) (values []float64, missing []bool) {
+	given := d.Values()
+	values, missing = make([]float64, len(f.Dimensions)), make([]bool, len(f.Dimensions))
+	for i := range f.Dimensions {
+		dim := &f.Dimensions[i]
+		v, ok := given[dim.Name]
+		switch {
+		case ok:
+			values[i] = v
+		case dim.Optional:
+			values[i] = dim.Default
+		default:
+			values[i], missing[i] = math.NaN(), true
+		}
+	}
+	return values, missing
+}
+
+// outright gives the joints of a design file, or nil.
+func outright(d *brief.Design) (*kin.Joints, error) {
+	if d.Joints == nil {
+		return nil, nil
+	}
+	j := &kin.Joints{HomeRot: kin.Identity()}
+	f := kin.FamilyNamed(d.Family)
+	for _, p := range d.Joints.Base {
+		j.Base = append(j.Base, vec(p))
+	}
+	for _, p := range d.Joints.Platform {
+		j.Platform = append(j.Platform, vec(p))
+	}
+	if len(j.Base) != f.Legs || len(j.Platform) != f.Legs {
+		return nil, brief.Faults{d.Fault("joints", fmt.Sprintf("%d base and %d platform joints", len(j.Base), len(j.Platform)),
+			fmt.Sprintf("write %d of each", f.Legs))}
+	}
+	if !f.Has(kin.Z) && !f.Has(kin.Roll) {
+		for i := range j.Base {
+			if j.Base[i].Z != 0 || j.Platform[i].Z != 0 {
+				return nil, brief.Faults{d.Fault("joints", "the joints of a planar machine lie in its plane", "write 0 mm for z")}
+			}
+		}
+	}
+	if h := d.Home; h != nil {
+		j.Home = kin.Vec{X: h[0], Y: h[1], Z: h[2]}
+		j.HomeRot = kin.RPY(h[3], h[4], h[5])
+	}
+	return j, nil
+}
+
+// Machine builds the machine of a design file for forward kinematics alone: it
+// needs no brief, no actuator range and, with joints outright, no home.
+func Machine(file string) (kin.Machine, *kin.Family, error) {
+	d, err := brief.LoadDesign(file, *Known())
+	if err != nil {
+		return nil, nil, err
+	}
+	f := kin.FamilyNamed(d.Family)
+	joints, err := outright(d)
+	if err != nil {
+		return nil, nil, err
+	}
+	var setup kin.Setup
+	if joints != nil {
+		return f.Outright(joints, &setup), f, nil
+	}
+	values, missing := dimensionValues(f, d)
+	var faults brief.Faults
+	for i, m := range missing {
+		if dim := &f.Dimensions[i]; m && dim.Role == kin.Shape {
+			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+DimensionKind(dim.Unit).Sample()))
+		}
+	}
+	if err := faults.Err(); err != nil {
+		return nil, nil, err
+	}
+	return f.Build(values, &setup), f, nil
+}
+
+// EncodeDesign writes the design file of a record. briefFile is the path of the brief from there.
+func EncodeDesign(r study.Design, briefFile string) []byte {
+	f := kin.FamilyNamed(r.Family)
+	d := &brief.Design{Brief: briefFile, ID: r.ID, Family: r.Family}
+	for i := range f.Dimensions {
+		dim := &f.Dimensions[i]
+		v, ok := r.Dimensions[dim.Name]
+		if !ok {
+			continue
+		}
+		name, _, listed := eachOf(dim.Name)
+		if n := len(d.Dimensions); listed && n > 0 && d.Dimensions[n-1].Name == name {
+			d.Dimensions[n-1].Values = append(d.Dimensions[n-1].Values, float64(v))
+			continue
+		}
+		if !listed {
+			name = dim.Name
+		}
+		d.Dimensions = append(d.Dimensions, brief.DesignDimension{Name: name, Kind: DimensionKind(dim.Unit), Values: []float64{float64(v)}})
+	}
+	return d.Encode()
+}

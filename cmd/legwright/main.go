@@ -1,0 +1,114 @@
+// Command legwright sizes parallel robots: a brief says what the machine must do
+// and which dimensions may vary, a search finds the geometries of which none is
+// beaten by another in every goal, and the other commands judge, rank and read them.
+package main
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"io"
+	"os"
+	"os/signal"
+	"syscall"
+
+	"github.com/spf13/cobra"
+
+	"legwright/cmd/legwright/internal/job"
+)
+
+// Exit statuses, as the README documents them.
+const (
+	exitDone        = 0
+	exitInternal    = 1
+	exitInput       = 2
+	exitLimit       = 3
+	exitInterrupted = 130
+)
+
+// status is an outcome that is no error of the program: everything was printed already.
+type status int
+
+func (s status) Error() string { return fmt.Sprintf("exit status %d", int(s)) }
+
+// inputError marks what is wrong with files, flags and folders.
+type inputError struct{ error }
+
+func (e inputError) Unwrap() error { return e.error }
+
+func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
+
+// run is main with its surroundings given, for tests.
+func run(args []string, stdout, stderr io.Writer) int {
+	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM)
+	defer stop()
+	root := newRoot(stdout, stderr)
+	root.SetArgs(args)
+	err := root.ExecuteContext(ctx)
+	var s status
+	var in inputError
+	switch {
+	case err == nil:
+		return exitDone
+	case errors.As(err, &s):
+		return int(s)
+	case errors.As(err, &in):
+		fmt.Fprintln(stderr, err)
+		return exitInput
+	}
+	fmt.Fprintln(stderr, "legwright:", err)
+	return exitInternal
+}
+
+// common are the flags that every command has.
+type common struct {
+	json, quiet bool
+	out, err    io.Writer
+}
+
+func newRoot(stdout, stderr io.Writer) *cobra.Command {
+	c := &common{out: stdout, err: stderr}
+	root := &cobra.Command{
+		Use:   "legwright",
+		Short: "size parallel robots: from a duty to dimensions",
+		Long: `legwright sizes closed-chain machines. A brief states the poses to be reached,
+the loads and speeds, the actuators and joints that can be had, which dimensions
+may vary and what counts as better. The search gives a ranked set of geometries of
+which none is beaten by another in every goal.
+
+It is a geometry study, not a safety assessment: README, "What it is not".`,
+		Version:           job.Version,
+		SilenceErrors:     true,
+		SilenceUsage:      true,
+		CompletionOptions: cobra.CompletionOptions{HiddenDefaultCmd: true},
+		Args:              cobra.NoArgs,
+		RunE:              func(cmd *cobra.Command, _ []string) error { return cmd.Help() },
+	}
+	root.SetOut(stdout)
+	root.SetErr(stderr)
+	root.PersistentFlags().BoolVar(&c.json, "json", false, "print JSON in SI units and radians on standard output, and nothing else there")
+	root.PersistentFlags().BoolVar(&c.quiet, "quiet", false, "no progress, hints or warnings on standard error")
+	root.SetFlagErrorFunc(func(cmd *cobra.Command, err error) error {
+		return inputError{fmt.Errorf("%w; see legwright help %s", err, cmd.Name())}
+	})
+	root.AddCommand(
+		newSearch(c), newRank(c), newAppraise(c), newLocate(c), newFamilies(c), newStarter(c),
+	)
+	for _, cmd := range root.Commands() {
+		args := cmd.Args
+		cmd.Args = func(cmd *cobra.Command, a []string) error {
+			if err := args(cmd, a); err != nil {
+				return inputError{fmt.Errorf("legwright %s: %w; usage: %s", cmd.Name(), err, cmd.UseLine())}
+			}
+			return nil
+		}
+	}
+	return root
+}
+
+// hint writes a line for people on standard error.
+func (c *common) hint(format string, args ...any) {
+	if !c.quiet {
+		fmt.Fprintf(c.err, format+"\n", args...)
+	}
+}
