@@ -126,6 +126,7 @@ func (l *island) join(kids []*genome) {
 	for _, g := range kids {
 		g.young = true
 	}
+	l.pop.ref = l.run.reference
 	l.pop.selectBest(append(kids, l.guests...), l.size())
 	l.guests = nil
 	l.ranked = l.pop.ranked(l.ranked)
@@ -135,7 +136,8 @@ func (l *island) join(kids []*genome) {
 	}
 }
 
-// size returns how many designs the population may hold now.
+// size returns how many designs the population may hold now: it grows in step
+// with the evaluations, small first to get to the front, large then to fill it.
 func (l *island) size() int {
 	r := l.run
 	spent := float64(l.budget-l.left) / float64(l.budget)

@@ -119,7 +119,9 @@ func (b *breeder) tournament() *genome {
 
 func (b *breeder) any() *genome { return b.parents[b.rng.Intn(len(b.parents))] }
 
-func (b *breeder) rate() float64 { return 1 / float64(max(1, len(b.dom.free))) }
+// rate is the probability that mutation changes a coordinate after another
+// operator did its work: half a coordinate per child in the mean.
+func (b *breeder) rate() float64 { return 0.5 / float64(max(1, len(b.dom.free))) }
 
 // cross appends two children of crossover and mutation.
 func (b *breeder) cross(op int) {

@@ -114,8 +114,10 @@ func (p *population) leave(i int) {
 	}
 }
 
-// scale sets the reference of the shares a tenth of the front's range beyond
-// its worst values.
+// scale sets the reference of the shares: that of the search, so that the
+// designs at the rim of the front weigh what they weigh in the end; but at
+// least a tenth and at most ten times the front's range beyond its worst
+// values, since a reference out there would leave the rim only.
 func (p *population) scale() {
 	if len(p.front) == 0 || p.m > maxShareGoals {
 		return
@@ -129,6 +131,10 @@ func (p *population) scale() {
 	}
 	for k := range p.at {
 		p.at[k] = margin(p.low[k], p.high[k])
+		if p.ref != nil {
+			far := p.high[k] + 10*(p.high[k]-p.low[k])
+			p.at[k] = max(p.at[k], min(p.ref[k], far))
+		}
 	}
 	p.share.move(p.at)
 }
@@ -179,6 +185,7 @@ func (p *population) layers(dst, beaten []*genome, need int) []*genome {
 			layer = append(layer, g)
 		}
 		sub := newPopulation(p.m)
+		sub.ref = p.ref
 		for _, g := range layer {
 			sub.enter(g, nil)
 		}

@@ -60,7 +60,7 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	r.archive.Limit = archiveLimit(s.Front, p.Goals)
 	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
 	r.reference = slices.Clone(s.Reference)
-	r.start, r.grown = sizes(p, s)
+	r.start, r.grown = sizes(p, &s)
 	share, extra := s.Evaluations/len(p.Spaces), s.Evaluations%len(p.Spaces)
 	for i := range p.Spaces {
 		budget := share
