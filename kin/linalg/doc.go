@@ -23,4 +23,4 @@
 // last bit on every processor.
 package linalg
 
-//go:generate go run ./gen -o six_generated.go
+//go:generate go run ./gen -o gram_generated.go

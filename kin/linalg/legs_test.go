@@ -82,6 +82,15 @@ func legMatrices(machines, poses int, size float64) [][36]float64 {
 	return out
 }
 
+// rowDot returns the scalar product of rows p and q of w.
+func rowDot(n int, w *[36]float64, p, q int) float64 {
+	sum := 0.0
+	for k := range n {
+		sum += w[n*p+k] * w[n*q+k]
+	}
+	return sum
+}
+
 // orthogonal returns a random orthogonal matrix of order n, by Gram-Schmidt
 // done twice.
 func orthogonal(rng *rand.Rand, n int) (q [36]float64) {

@@ -31,7 +31,7 @@ func SingularValues(n int, a *[36]float64, out *[6]float64) {
 	}
 	orthogonaliseRows(n, &w)
 	for i := range n {
-		out[i] = math.Ldexp(math.Sqrt(rowDot(n, &w, i, i)), exp)
+		out[i] = math.Ldexp(rowLength(n, &w, i), exp)
 	}
 	for i := 1; i < n; i++ { // insertion sort, descending
 		for k := i; k > 0 && out[k] > out[k-1]; k-- {
@@ -49,8 +49,10 @@ func normalised(n int, a *[36]float64) (w [36]float64, exp int, ok bool) {
 		return w, 0, false
 	}
 	_, exp = math.Frexp(top)
+	// Two factors: a single one would overflow for subnormal matrices.
+	f, g := math.Ldexp(1, -exp/2), math.Ldexp(1, exp/2-exp)
 	for i := range n * n {
-		w[i] = math.Ldexp(a[i], -exp)
+		w[i] = a[i] * f * g
 	}
 	return w, exp, true
 }
@@ -90,7 +92,15 @@ func orthogonaliseRows(n int, w *[36]float64) {
 // nothing, if they are already orthogonal to rounding.
 func turnRows(n int, w *[36]float64, p, q int) bool {
 	const orthogonal = 1e-31 // cos² of the angle, (1.4 eps)²
-	pp, qq, pq := rowDot(n, w, p, p), rowDot(n, w, q, q), rowDot(n, w, p, q)
+	x, y := w[n*p:n*p+n], w[n*q:n*q+n]
+	y = y[:len(x)]
+	pp, qq, pq := 0.0, 0.0, 0.0
+	for k, xk := range x {
+		yk := y[k]
+		pp += float64(xk * xk)
+		qq += float64(yk * yk)
+		pq += float64(xk * yk)
+	}
 	if !(pq*pq > orthogonal*pp*qq) {
 		return false
 	}
@@ -101,19 +111,19 @@ func turnRows(n int, w *[36]float64, p, q int) bool {
 	}
 	c := 1 / math.Sqrt(1+float64(t*t))
 	s := c * t
-	for k := range n {
-		x, y := w[n*p+k], w[n*q+k]
-		w[n*p+k] = float64(c*x) - float64(s*y)
-		w[n*q+k] = float64(s*x) + float64(c*y)
+	for k, xk := range x {
+		yk := y[k]
+		x[k] = float64(c*xk) - float64(s*yk)
+		y[k] = float64(s*xk) + float64(c*yk)
 	}
 	return true
 }
 
-// rowDot returns the scalar product of rows p and q of w.
-func rowDot(n int, w *[36]float64, p, q int) float64 {
+// rowLength returns the Euclidean length of row p of w.
+func rowLength(n int, w *[36]float64, p int) float64 {
 	sum := 0.0
-	for k := range n {
-		sum += float64(w[n*p+k] * w[n*q+k])
+	for _, v := range w[n*p : n*p+n] {
+		sum += float64(v * v)
 	}
-	return sum
+	return math.Sqrt(sum)
 }

@@ -1,48 +1,81 @@
 package linalg
 
-import "math"
-
-// Six holds what one pose needs of an inverse Jacobian J of order six: its
-// inverse and the sign of its determinant. The zero value is ready for use; one
-// Six serves one goroutine, for any number of poses.
+// Six holds what one pose needs of an inverse Jacobian J of order six. The zero
+// value is ready for use; one Six serves one goroutine, for any number of poses.
 type Six struct {
-	X [36]float64 // inverse of J, row-major
+	// X is the inverse of J, row-major: what [Six.Factor] found last.
+	X [36]float64
 }
 
 // Factor inverts j into s.X and returns the sign of the determinant of j: +1,
 // -1, or 0 when j is singular to rounding or not finite; s.X is then not to be
-// used.
+// used. The relative error of the inverse is below 3e-13 times the condition
+// number of j.
 //
-// Method: Gauss-Jordan elimination by 3x3 blocks without pivoting, in straight
-// lines; when a guard says that this could cost accuracy, [Inverse].
+// Method: Gauss-Jordan elimination without pivoting; where its pivots differ so
+// much that this would cost accuracy, [Inverse]. Cost: about 0.11 µs, seldom
+// 0.7 µs.
 func (s *Six) Factor(j *[36]float64) int {
+	det, spread := sweep(j, &s.X)
+	if spread <= spreadMax {
+		if det > 0 {
+			return 1
+		}
+		if det < 0 {
+			return -1
+		}
+	}
 	return Inverse(6, j, &s.X)
 }
 
-// Ratio2 returns (σmin/σmax)² of j. 1/κ, its root, has a relative error below
-// 1e-9 for 1/κ down to 1e-6. If bounds prove the ratio to be above keep, such a
-// bound, itself above keep, is returned early: the least ratio over a set of
-// poses, with keep the least so far, is the same to the last bit as with keep 2,
-// which asks for the ratio itself.
+// Ratio2 returns (σmin/σmax)² of j, as [Ratio2Six] does.
 func (s *Six) Ratio2(j *[36]float64, keep float64) float64 {
 	return Ratio2Six(j, keep)
 }
 
-// Ratio2Six is [Six.Ratio2] for callers that need no inverse.
+// Ratio2Six returns (σmin/σmax)² of the matrix j of order six. The relative
+// error of its root, 1/κ, is below 1e-9 for 1/κ down to 1e-6. It returns 0 for a
+// matrix that is zero or not finite.
+//
+// If bounds prove the ratio above keep, such a bound, itself above keep, may be
+// returned early. With the least ratio so far as keep, the least ratio over a
+// set of matrices comes out the same to the last bit as without, in half the
+// time. A keep above 1 always gives the ratio itself.
 //
 // Method: Gram matrix J Jᵀ, Householder tridiagonalisation, Laguerre's
-// iteration from both ends; if that falls short of the accuracy, one-sided
-// Jacobi.
+// iteration from both ends. Where the Gram matrix has lost too many digits, the
+// same for the inverse, from above; beyond 1/κ = 1e-5, one-sided Jacobi. Cost:
+// about 0.32 µs, then 1.2 µs, then 6 µs.
 func Ratio2Six(j *[36]float64, keep float64) float64 {
+	var g [36]float64
 	var t tridiagonal
-	tridiagonalise(j, &t)
+	gram(j, &g)
+	tridiagonalise(&g, &t)
 	if ratio, ok := t.extremes(keep); ok {
 		return ratio
 	}
-	return ratio2Jacobi(6, j)
+	return ratio2Ill(j, &t)
 }
 
-// withSign returns the magnitude of x with the sign of s; x is not negative.
-func withSign(x, s float64) float64 {
-	return math.Float64frombits(math.Float64bits(x) | math.Float64bits(s)&(1<<63))
+// inverseRatioMin is the squared ratio down to which the inverse serves to find
+// the smallest singular value: its error, some eps times the condition number,
+// is there below 1e-10.
+const inverseRatioMin = 1e-10
+
+// ratio2Ill is the squared ratio of an ill-conditioned matrix j, whose Gram
+// matrix t no longer shows the smallest singular value: that is the reciprocal
+// of the largest one of the inverse.
+func ratio2Ill(j *[36]float64, t *tridiagonal) float64 {
+	var x, g [36]float64
+	var tx tridiagonal
+	if Inverse(6, j, &x) != 0 {
+		gram(&x, &g)
+		tridiagonalise(&g, &tx)
+		hi, okJ := t.largest()
+		inv, okX := tx.largest()
+		if ratio := 1 / (hi * inv); okJ && okX && ratio > inverseRatioMin {
+			return ratio
+		}
+	}
+	return ratio2Jacobi(6, j)
 }

@@ -12,11 +12,11 @@ func TestCommitted(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	got, err := os.ReadFile("../six_generated.go")
+	got, err := os.ReadFile("../gram_generated.go")
 	if err != nil {
 		t.Fatal(err)
 	}
 	if !bytes.Equal(got, want) {
-		t.Error("six_generated.go is not what this generator writes; run go generate in kin/linalg")
+		t.Error("gram_generated.go is not what this generator writes; run go generate in kin/linalg")
 	}
 }
