@@ -251,7 +251,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 	if v.singular > 0 || v.homeSign == 0 {
 		add(Verdict{Name: "singular poses", Origin: "singular_below", Bound: 0, Value: float64(v.singular)}, 1)
 	}
-	a.Feasible = true
+	a.Feasible = least <= most // else there is no posture, not even at home
 	soft := t.Coverage < 1 || t.CoverageGoal
 	for i := range a.Verdicts {
 		w := &a.Verdicts[i]

@@ -16,6 +16,7 @@ type Screen struct {
 	limitAt  []int // for each limit its tracker in all, -1 for a design's own, -2 for coverage
 	goalAt   []int
 	geoLimit []bool // the limit can be judged without the inverse Jacobian
+	late     []bool // the limit can be judged only after all poses: further ones may mend it
 	soft     bool   // pose limits count through coverage alone
 	exact    bool   // coverage is wanted exactly
 }
@@ -97,6 +98,7 @@ func NewScreen(t *Task, p *Plan) *Screen {
 	for i := range t.Limits {
 		m := t.Limits[i].Measure
 		s.geoLimit = append(s.geoLimit, m.Scan == nil || m.Need&^NeedGap == 0)
+		s.late = append(s.late, m.Mean || mends(&t.Limits[i]))
 	}
 	for i := range s.all {
 		s.allNeed |= s.all[i].m.Need
@@ -162,6 +164,22 @@ func (s *Screen) Judge(x []float64, r *Score) {
 	}
 }
 
+// mends tells whether a limit on a sized dimension can come to hold as more poses
+// are seen: leg_min then falls and the stroke grows, leg_max may do either as
+// both are rounded to steps or to stock.
+func mends(l *Limit) bool {
+	switch l.Measure.Name {
+	case "leg_min":
+		return !l.AtLeast
+	case "stroke":
+		return l.AtLeast
+	}
+	return l.Measure.Name == "leg_max"
+}
+
+// whole tells whether the walk has seen all poses.
+func (s *Screen) whole() bool { return s.v.seen == len(s.task.samples) }
+
 // Values are the dimension values of the design judged last, sized ones included.
 func (s *Screen) Values() []float64 { return s.d.Values }
 
@@ -175,18 +193,21 @@ func (s *Screen) resolve() []float64 {
 // geometry fills the excess of what needs no inverse Jacobian and gives its sum.
 func (s *Screen) geometry(r *Score, ts []tracker) float64 {
 	t := s.task
-	s.resolve()
-	least, most := s.v.span()
 	share := 0.0
 	if s.v.seen > 0 {
 		share = float64(s.v.lost) / float64(s.v.seen)
 	}
 	r.Excess[conReach] = share
+	least, most := s.v.span()
+	if least > most { // no posture, not even at home: there is nothing to size by
+		return share
+	}
+	s.resolve()
 	r.Excess[conRange] = s.plan.rangeExcess(&t.Actuator, least, most, s.d.Values)
 	r.Excess[conDead] = s.plan.deadExcess(&t.Actuator, s.d.Values)
 	sum := positive(r.Excess[conReach]) + positive(r.Excess[conRange]) + positive(r.Excess[conDead])
 	for i := range t.Limits {
-		if !s.geoLimit[i] {
+		if !s.geoLimit[i] || s.late[i] && !s.whole() {
 			continue
 		}
 		l := &t.Limits[i]
@@ -232,7 +253,7 @@ func (s *Screen) judge(r *Score) float64 {
 	}
 	sum += r.Excess[conSingular]
 	for i := range t.Limits {
-		if k := s.limitAt[i]; k >= 0 && !s.geoLimit[i] {
+		if k := s.limitAt[i]; k >= 0 && !s.geoLimit[i] && (!s.late[i] || s.whole()) {
 			l := &t.Limits[i]
 			r.Excess[firstLimit+i] = slack(l.excess(t, l.Measure.value(&s.all[k].w)))
 			sum += positive(r.Excess[firstLimit+i])
@@ -243,6 +264,9 @@ func (s *Screen) judge(r *Score) float64 {
 
 // cover puts the exact coverage in place of the pose limits that count through it alone.
 func (s *Screen) cover(r *Score) {
+	if least, most := s.v.span(); least > most {
+		return // conReach tells it
+	}
 	share := s.coverage()
 	r.Excess[conReach], r.Excess[conRange], r.Excess[conSingular] = 0, 0, 0
 	for i := range s.task.Limits {

@@ -35,6 +35,7 @@ type View struct {
 	gapJ   int
 	six    linalg.Six
 	own    [36]float64
+	tie    [36]float64
 	ownX   [36]float64
 
 	// Over the walk so far.
@@ -79,6 +80,7 @@ func (v *View) begin(m kin.Machine) {
 	v.gapI, v.gapJ = -1, -1
 	v.lost, v.singular, v.singularAt, v.seen = 0, 0, -1, 0
 	home := Sample{Pose: kin.NewPose(kin.Coords{})}
+	v.pose, v.index = &home, -1
 	m.Move(&home.Pose, &v.S)
 	v.homeSign = 0
 	for i := range v.least {
@@ -118,8 +120,27 @@ func (v *View) factor() {
 		return
 	}
 	v.ratio2 = linalg.Ratio2(n, &v.own)
+	if v.frame.Tied {
+		v.untie()
+		return
+	}
 	for k, f := range v.frame.Freedoms {
 		copy(v.x[6*int(f):6*int(f)+n], v.ownX[n*k:n*k+n])
+	}
+}
+
+// untie spreads the inverse over all six freedoms of a family whose other freedoms follow from its own.
+func (v *View) untie() {
+	n := v.n
+	v.machine.Tie(&v.pose.Pose, &v.tie)
+	v.x = [36]float64{}
+	for r := range 6 {
+		for k := range n {
+			t := v.tie[6*r+k]
+			for i := range n {
+				v.x[6*r+i] += t * v.ownX[n*k+i]
+			}
+		}
 	}
 }
 
