@@ -24,15 +24,15 @@ func closeness(values [][]float64, maximise []bool, weights []float64) []float64
 	for j := range best {
 		best[j], worst[j] = math.Inf(-1), math.Inf(1)
 		for _, row := range values {
-			best[j], worst[j] = math.Max(best[j], row[j]*scale[j]), math.Min(worst[j], row[j]*scale[j])
+			best[j], worst[j] = math.Max(best[j], float64(row[j]*scale[j])), math.Min(worst[j], float64(row[j]*scale[j]))
 		}
 	}
 	out := make([]float64, len(values))
 	for i, row := range values {
 		up, down := 0.0, 0.0
 		for j, v := range row {
-			up = math.Hypot(up, best[j]-v*scale[j])
-			down = math.Hypot(down, v*scale[j]-worst[j])
+			up = math.Hypot(up, best[j]-float64(v*scale[j]))
+			down = math.Hypot(down, float64(v*scale[j])-worst[j])
 		}
 		out[i] = 1
 		if up+down > 0 {

@@ -26,6 +26,10 @@ func Rank(f *Front, weights map[string]float64) {
 		maximise[i] = g.Sense == Maximise
 	}
 	values := f.goalValues()
+	for i := range f.Designs {
+		f.Designs[i].Score = 0
+	}
+	sort.Stable(&byScore{f, values, maximise}) // so that the order given changes no last digit
 	for i, s := range closeness(values, maximise, w) {
 		f.Designs[i].Score = Number(s)
 	}
