@@ -47,7 +47,7 @@ func Locate(m Machine, q []float64, from Pose) (Posture, bool) {
 	res := residual(m, &here, &s, q)
 	out := func(k int, ok bool) (Posture, bool) {
 		p := Posture{Pose: here, Residual: res, Steps: k}
-		p.Origin, p.Rot = f.Place(&here)
+		p.Origin, p.Rot = m.Place(&here)
 		if s.Fail == Reached {
 			p.Determinant = Determinant(m, &s)
 		}

@@ -8,12 +8,14 @@ const (
 	Reached    Fail = iota // the pose has a posture in the machine's working mode
 	OutOfReach             // a leg cannot reach its joint
 	NotFinite              // a coordinate or a dimension is NaN or infinite
+	Stopped                // a passive part is beyond its stop; State.What names it
 )
 
 // State is what Machine.Move finds at one pose.
 type State struct {
 	Fail Fail
-	Leg  int // the leg that failed, or -1
+	Leg  int    // the leg that failed, or -1
+	What string // the passive part at its stop, for Stopped
 
 	// Q are the actuator coordinates: leg lengths or slider positions in metres, crank angles in radians.
 	Q [6]float64
@@ -49,6 +51,20 @@ type Machine interface {
 	// posture in s, one row of six each, and tells how many: 6 less the number of
 	// freedoms. A force is [u, (r×u)/Lc], a couple [0, m].
 	Constraints(s *State, rows *[36]float64) int
+
+	// Place gives the platform's origin and rotation in the base frame at the pose p.
+	Place(p *Pose) (origin Vec, rot Rot)
+
+	// Serial is how far the posture in s is from a serial singularity: the least over
+	// the legs of the cosine between the force that the leg's rod can carry and the
+	// way that its drive moves the rod's end. It is 1 for prismatic legs, 0 where a
+	// crank and its rod are in line and the platform loses a freedom.
+	Serial(s *State) float64
+
+	// Tie fills t with the 6×6 matrix that maps the family's own freedoms (columns, as
+	// in Frame.Freedoms) to the twist (v, Lc·ω) of the tool point at the pose p, for
+	// families whose other freedoms follow from their own; Frame.Tied tells which.
+	Tie(p *Pose, t *[36]float64)
 }
 
 // Frame is what every machine tells of itself.
@@ -60,6 +76,7 @@ type Frame struct {
 	HomeRot  Rot       // platform rotation at home
 	Tool     Vec       // tool point, platform frame (a planar family: in the plane of its legs)
 	Length   float64   // characteristic length Lc
+	Tied     bool      // the other freedoms move with the family's own ones: see Machine.Tie
 }
 
 // Legs is the number of legs, each with one actuator.

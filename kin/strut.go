@@ -128,3 +128,12 @@ func (m *struts) Constraints(_ *State, rows *[36]float64) int {
 	}
 	return 3
 }
+
+// Place is that of the frame.
+func (m *struts) Place(p *Pose) (Vec, Rot) { return m.frame.Place(p) }
+
+// Serial is 1: the drive moves along the leg.
+func (m *struts) Serial(*State) float64 { return 1 }
+
+// Tie is not wanted: the freedoms are free of each other.
+func (m *struts) Tie(*Pose, *[36]float64) { panic("kin: freedoms are not tied") }
