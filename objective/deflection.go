@@ -136,7 +136,7 @@ func generators(d *demand, p *kin.Pose, inv float64, f func(kind SetKind, radius
 		push := func(a kin.Vec) [6]float64 { return at(kin.Vec{X: m * a.X, Y: m * a.Y, Z: m * a.Z}, b.r) }
 		span(&b.l.Linear, push)
 		inertia := turned(&p.R, &b.inertia)
-		span(&b.l.Angular, func(a kin.Vec) [6]float64 {
+		span(&b.angular, func(a kin.Vec) [6]float64 {
 			t := &inertia
 			w := [6]float64{0, 0, 0,
 				(t[0]*a.X + t[3]*a.Y + t[4]*a.Z) * inv,

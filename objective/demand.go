@@ -26,7 +26,7 @@ type body struct {
 	l       *Load
 	centre  kin.Vec    // from the tool point
 	inertia [6]float64 // xx, yy, zz, xy, xz, yz
-	turns   bool       // angular acceleration counts
+	angular Set        // angular accelerations that the platform can follow
 	r       kin.Vec    // at the pose in work: from the tool point to the mass centre, base axes
 }
 
@@ -48,7 +48,7 @@ func (d *demand) prepare(c *Case, f *kin.Frame) {
 				l:       l,
 				centre:  f.HomeRot.Apply(sub(l.Centre, f.Tool)),
 				inertia: turned(&f.HomeRot, &l.Inertia),
-				turns:   l.Angular.Kind != None,
+				angular: followed(l.Angular, f.Freedoms),
 			})
 		}
 		d.w0[3] -= l.Moment.X * inv
@@ -136,7 +136,7 @@ func (b *body) reach(p *kin.Pose, a, bb, c, e, f, h float64) float64 {
 	uy := m * (bb + h*b.r.X - e*b.r.Z)
 	uz := m * (c + e*b.r.Y - f*b.r.X)
 	half := b.l.Linear.reach(ux, uy, uz)
-	if !b.turns {
+	if b.angular.Kind == None {
 		return half
 	}
 	y := p.R.Unapply(kin.Vec{X: e, Y: f, Z: h})
@@ -146,7 +146,7 @@ func (b *body) reach(p *kin.Pose, a, bb, c, e, f, h float64) float64 {
 		Y: t[3]*y.X + t[1]*y.Y + t[5]*y.Z,
 		Z: t[4]*y.X + t[5]*y.Y + t[2]*y.Z,
 	}
-	if b.l.Angular.Kind == PerAxis || b.l.AtTool {
+	if b.angular.Kind == PerAxis || b.l.AtTool {
 		v = p.R.Apply(v)
 	}
 	if b.l.AtTool {
@@ -154,7 +154,7 @@ func (b *body) reach(p *kin.Pose, a, bb, c, e, f, h float64) float64 {
 		v.Y += b.r.Z*ux - b.r.X*uz
 		v.Z += b.r.X*uy - b.r.Y*ux
 	}
-	return half + b.l.Angular.reach(v.X, v.Y, v.Z)
+	return half + b.angular.reach(v.X, v.Y, v.Z)
 }
 
 // rates fills the largest rate of each leg over the case's speeds.
@@ -166,6 +166,24 @@ func (d *demand) rates(j *[36]float64, n int, out *[6]float64) {
 		r := (*[6]float64)(j[6*i : 6*i+6])
 		out[i] = d.linear.reach(r[0], r[1], r[2]) + d.spin.reach(r[3], r[4], r[5])
 	}
+}
+
+// followed is what of a set of angular accelerations a platform with the freedoms
+// can follow: one that turns about z alone, only that component; one that cannot turn, nothing.
+func followed(s Set, freedoms []kin.Freedom) Set {
+	angular := 0
+	for _, q := range freedoms {
+		if q.Angular() {
+			angular++
+		}
+	}
+	switch {
+	case s.Kind == None || angular == 0:
+		return Set{}
+	case angular == 1: // yaw
+		return Set{Kind: PerAxis, Half: kin.Vec{Z: s.reach(0, 0, 1)}}
+	}
+	return s
 }
 
 // abs is the absolute value.
