@@ -15,7 +15,7 @@ type island struct {
 	breed   breeder
 	sample  []*genome // the first designs, as eaopt gets them
 	first   []*genome // those of them that were evaluated
-	pending batch     // children being evaluated
+	pending *batch    // children being evaluated
 	fresh   []*genome // evaluated, not yet merged
 	guests  []*genome // polished designs that want to join
 	left    int       // evaluations not yet given out
@@ -26,7 +26,7 @@ type island struct {
 
 func newIsland(r *run, index, budget int) *island {
 	p := r.problem
-	l := &island{run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals), left: budget, budget: budget}
+	l := &island{pending: new(batch), run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals), left: budget, budget: budget}
 	rng := stream(r.set.Seed, streamSample, index, 0)
 	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, budget)}
 	for k := range l.breed.share {
@@ -102,18 +102,18 @@ func (l *island) generation(pop *eaopt.Population) error {
 		l.join(l.first)
 		l.first = nil
 	}
-	var next batch
+	next := new(batch)
 	if n := min(r.set.Children, l.left); n > 0 && !l.done {
 		l.breed.parents = l.ranked
 		next.designs = l.breed.breed(n)
 		l.left -= len(next.designs)
 		l.done = len(next.designs) == 0
 	}
-	r.ev.submit(&next)
-	r.ev.finish(&l.pending)
-	kids := l.collect(&l.pending)
+	r.ev.submit(next)
+	r.ev.finish(l.pending)
+	kids := l.collect(l.pending)
 	l.join(kids)
-	l.pending.designs = next.designs
+	l.pending = next
 	l.publish(pop, at)
 	return nil
 }

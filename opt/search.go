@@ -86,11 +86,11 @@ func archiveLimit(front, goals int) int {
 // sets up, applies the model to side by side, and orders.
 func (r *run) evolve() error {
 	for _, l := range r.islands {
-		r.ev.submit(&l.pending)
+		r.ev.submit(l.pending)
 	}
 	for _, l := range r.islands {
-		r.ev.finish(&l.pending)
-		l.first = l.collect(&l.pending)
+		r.ev.finish(l.pending)
+		l.first = l.collect(l.pending)
 	}
 	r.merge()
 	r.phase = "search"
@@ -118,8 +118,8 @@ func (r *run) evolve() error {
 	})
 	if err != nil { // generations under way when the context ended
 		for _, l := range r.islands {
-			r.ev.finish(&l.pending)
-			l.collect(&l.pending)
+			r.ev.finish(l.pending)
+			l.collect(l.pending)
 		}
 		r.merge()
 	}
