@@ -32,7 +32,7 @@ func (d *designs) figures(name string, keep int, s scale, of func(*study.Design)
 			values[i] = float64(v)
 		}
 	}
-	return column{name: name, head: words(name), unit: s.unit(), cells: s.column(values, fewDigits), keep: keep}
+	return column{name: name, head: words(name), unit: s.unit(), cells: s.apart(values), keep: keep}
 }
 
 func (d *designs) measure(name string, keep int) column {

@@ -89,23 +89,27 @@ const (
 	manyDigits = 5
 )
 
+// apart shows values of several designs with the same number of decimals: four significant digits of
+// the largest, two more at most where the values differ too little to be told apart by that.
+func (c scale) apart(values []float64) []string { return c.column(values, fewDigits, fewDigits+2) }
+
 // column shows values with the same number of decimals: so many significant digits of the largest,
-// two more at most where the values differ too little to be told apart by that.
-func (c scale) column(values []float64, digits int) []string {
-	most, low, high := 0.0, math.Inf(1), math.Inf(-1)
+// as many as most where the values differ too little to be told apart by that.
+func (c scale) column(values []float64, digits, most int) []string {
+	largest, low, high := 0.0, math.Inf(1), math.Inf(-1)
 	for _, v := range values {
 		if v = c.in(v); !math.IsInf(v, 0) && !math.IsNaN(v) {
-			most = math.Max(most, math.Abs(v))
+			largest = math.Max(largest, math.Abs(v))
 			low, high = math.Min(low, v), math.Max(high, v)
 		}
 	}
 	decimals := 0
-	if most > 0 {
-		lead := int(math.Floor(math.Log10(most)))
+	if largest > 0 {
+		lead := int(math.Floor(math.Log10(largest)))
 		decimals = digits - 1 - lead
-		if high-low > 1e-9*most {
+		if high-low > 1e-9*largest {
 			fine := 1 - int(math.Floor(math.Log10(high-low)))
-			decimals = min(max(decimals, fine), digits+1-lead)
+			decimals = min(max(decimals, fine), most-1-lead)
 		}
 		decimals = min(max(decimals, 0), 12)
 	}
@@ -148,17 +152,19 @@ func margin(l *study.Limit) string {
 		c := limitScale(l.Measure, l.Unit)
 		return strings.TrimSpace(signed(coarse(c.in(v))) + " " + c.unit())
 	}
-	return signed(units.Digits(100*float64(l.Margin), 2)) + " %"
+	share := 100 * float64(l.Margin)
+	if t := coarse(share); t != "0" || l.Holds {
+		return signed(t) + " %"
+	}
+	return units.Digits(share, 1) + " %" // fails by very little
 }
 
-// coarse shows a number with three digits but not more than two decimals, one digit if it is smaller.
+// coarse shows a number with two or three digits and two decimals at most.
 func coarse(v float64) string {
-	a := math.Abs(v)
-	switch {
-	case a < 0.01:
-		return units.Digits(v, 1)
-	case a < 10:
-		return fixed(v, 2)
+	if s := fixed(v, 2); math.Abs(v) < 10 && s != "0.00" {
+		return s
+	} else if s == "0.00" {
+		return "0"
 	}
 	return units.Digits(v, 3)
 }

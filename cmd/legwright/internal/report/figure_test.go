@@ -23,7 +23,7 @@ func TestColumnDecimals(t *testing.T) {
 		{"all zero", []float64{0, 0}, []string{"0", "0"}},
 		{"unbounded and absent", []float64{math.Inf(1), math.NaN(), 0.25}, []string{"inf", "", "250.0"}},
 	} {
-		if got := mm.column(c.values, fewDigits); !slices.Equal(got, c.want) {
+		if got := mm.apart(c.values); !slices.Equal(got, c.want) {
 			t.Errorf("%s: got %q, want %q", c.why, got, c.want)
 		}
 	}
@@ -38,6 +38,8 @@ func TestMargin(t *testing.T) {
 	}{
 		{"share of the bound", study.Limit{Measure: "base_swing", Unit: "rad", Bound: 1, Value: 0.75, Margin: 0.25, Holds: true}, "+25 %"},
 		{"fails", study.Limit{Measure: "base_swing", Unit: "rad", Bound: 1, Value: 1.5, Margin: -0.5}, "-50 %"},
+		{"hardly any room", study.Limit{Measure: "dead length", Unit: "m", Bound: 1, Value: 1, Margin: 2e-9, Holds: true}, "0 %"},
+		{"fails by little", study.Limit{Measure: "dead length", Unit: "m", Bound: 1, Value: 1, Margin: -2.1e-7}, "-0.00002 %"},
 		{"bound 0, at least", study.Limit{Measure: "leg_clearance", Unit: "m", Sense: study.AtLeast, Value: 0.0042, Margin: 0.1, Holds: true}, "+4.20 mm"},
 		{"bound 0, at most", study.Limit{Measure: "parasitic_motion", Unit: "m", Sense: study.AtMost, Value: 0.0042, Margin: -0.1}, "-4.20 mm"},
 		{"bound 0, touching", study.Limit{Measure: "leg_clearance", Unit: "m", Sense: study.AtLeast, Holds: true}, "0 mm"},

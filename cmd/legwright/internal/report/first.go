@@ -107,7 +107,7 @@ func (s *sheet) title(f *study.Front) {
 	}
 	s.say(fmt.Sprintf("%s. Seed %d, %d sampled poses.", line, f.Seed, f.Poses))
 	if f.Status != "" && f.Status != "budget spent" && len(f.Designs) > 0 {
-		s.say("The search ended otherwise than by its budget: " + f.Status + ".")
+		s.say("Ended early: " + f.Status + ".")
 	}
 	var goals []string
 	for _, g := range f.Goals {

@@ -24,8 +24,9 @@ func Infeasible(w io.Writer, f *study.Front, p Page) error {
 	s.gap()
 	if h := f.Help; h != nil {
 		s.binding(h)
-		s.relaxations(h)
-		s.nearest(h)
+		number, first := numbers(h.Nearest)
+		s.relaxations(h, number)
+		s.nearest(h, first)
 		s.advice(h)
 	}
 	s.leftOut(f.Poses, f.Notes)
@@ -52,11 +53,11 @@ func (s *sheet) binding(h *study.Help) {
 	s.gap()
 }
 
-func (s *sheet) relaxations(h *study.Help) {
+func (s *sheet) relaxations(h *study.Help, number []int) {
 	s.heading("What would be enough: one limit changed, all others kept")
 	some := false
 	for _, r := range h.Relaxations {
-		if t := relaxed(&r); t != "" {
+		if t := relaxed(&r, number[r.Design]); t != "" {
 			s.item(t)
 			some = true
 		}
@@ -67,15 +68,29 @@ func (s *sheet) relaxations(h *study.Help) {
 	s.gap()
 }
 
-// relaxed says in words how far a limit has to give way, "" where it cannot.
-func relaxed(r *study.Relaxation) string {
+// numbers gives each of the nearest designs a number from 1, the same one to designs that would be
+// shown with the same figures, and the first design of each number.
+func numbers(near []study.Design) (number, first []int) {
+	seen := map[string]int{}
+	for i := range near {
+		t := inWords(&near[i])
+		if seen[t] == 0 {
+			first = append(first, i)
+			seen[t] = len(first)
+		}
+		number = append(number, seen[t])
+	}
+	return number, first
+}
+
+// relaxed says in words how far a limit has to give way so that design n would do, "" where it cannot.
+func relaxed(r *study.Relaxation, n int) string {
 	c := limitScale(r.Constraint, r.Unit)
 	bound, needed := float64(r.Bound), float64(r.Needed)
 	if math.IsInf(needed, 0) || math.IsNaN(needed) {
 		return ""
 	}
 	by := c.text(math.Abs(needed-bound), 3)
-	n := r.Design + 1
 	key := study.Clean(r.Origin)
 	name := study.Clean(r.Constraint)
 	switch r.Constraint {
@@ -105,17 +120,17 @@ func relaxed(r *study.Relaxation) string {
 		name, where, word, c.text(needed, manyDigits), c.text(bound, manyDigits), n, by)
 }
 
-func (s *sheet) nearest(h *study.Help) {
-	if len(h.Nearest) == 0 {
+func (s *sheet) nearest(h *study.Help, first []int) {
+	if len(first) == 0 {
 		return
 	}
 	s.heading("The designs that came nearest")
 	cols := []column{
 		{head: "design"}, {head: "limit it breaks", left: true}, {head: "value"}, {head: "wanted", left: true}, {head: "margin"},
 	}
-	for i := range h.Nearest {
+	for n, i := range first {
 		d := &h.Nearest[i]
-		number := strconv.Itoa(i + 1)
+		number := strconv.Itoa(n + 1)
 		for k := range d.Limits {
 			l := &d.Limits[k]
 			if l.Holds {
@@ -129,8 +144,8 @@ func (s *sheet) nearest(h *study.Help) {
 		}
 	}
 	s.grid(cols)
-	for i := range h.Nearest {
-		s.item(fmt.Sprintf("design %d: %s", i+1, inWords(&h.Nearest[i])))
+	for n, i := range first {
+		s.item(fmt.Sprintf("design %d: %s", n+1, inWords(&h.Nearest[i])))
 	}
 	s.gap()
 }

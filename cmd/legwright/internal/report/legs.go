@@ -119,7 +119,7 @@ func (s *sheet) legs(d *study.Design, g *gazetteer) {
 		for i := range d.Legs {
 			values[i] = float64(field(&d.Legs[i]))
 		}
-		col.cells = c.column(values, digits)
+		col.cells = c.column(values, digits, digits)
 		return col
 	}
 	s.blocks([]column{

@@ -191,7 +191,7 @@ func change(measure string, a, b *study.Design) string {
 	if v < u {
 		word = "less"
 	}
-	both := c.column([]float64{u, v}, fewDigits)
+	both := c.apart([]float64{u, v})
 	span := both[0] + " to " + both[1]
 	if c.unit() != "" {
 		span += " " + c.unit()
