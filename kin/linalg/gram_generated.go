@@ -73,7 +73,7 @@ func tridiagonalise(g *[36]float64, t *tridiagonal) {
 	a = ((float64(g10*r10) + float64(g20*r20)) + (float64(g30*r30) + float64(g40*r40))) + float64(g50*r50)
 	t.d[1] = a * is
 	m = isigma * beta * (a + float64(sigma*r10))
-	h = 0.5 * beta * beta * (a + float64(sigma*(float64(2*r10)+float64(sigma*g11))))
+	h = beta * (0.5 * (a + float64(sigma*(float64(2*r10)+float64(sigma*g11))))) * beta
 	w20 := float64(beta*(r20+float64(sigma*g21))) - float64(h*g20)
 	w30 := float64(beta*(r30+float64(sigma*g31))) - float64(h*g30)
 	w40 := float64(beta*(r40+float64(sigma*g41))) - float64(h*g40)
@@ -106,7 +106,7 @@ func tridiagonalise(g *[36]float64, t *tridiagonal) {
 	a = (float64(g21*r21) + float64(g31*r31)) + (float64(g41*r41) + float64(g51*r51))
 	t.d[2] = a * is
 	m = isigma * beta * (a + float64(sigma*r21))
-	h = 0.5 * beta * beta * (a + float64(sigma*(float64(2*r21)+float64(sigma*g22))))
+	h = beta * (0.5 * (a + float64(sigma*(float64(2*r21)+float64(sigma*g22))))) * beta
 	w31 := float64(beta*(r31+float64(sigma*g32))) - float64(h*g31)
 	w41 := float64(beta*(r41+float64(sigma*g42))) - float64(h*g41)
 	w51 := float64(beta*(r51+float64(sigma*g52))) - float64(h*g51)
@@ -132,7 +132,7 @@ func tridiagonalise(g *[36]float64, t *tridiagonal) {
 	a = (float64(g32*r32) + float64(g42*r42)) + float64(g52*r52)
 	t.d[3] = a * is
 	m = isigma * beta * (a + float64(sigma*r32))
-	h = 0.5 * beta * beta * (a + float64(sigma*(float64(2*r32)+float64(sigma*g33))))
+	h = beta * (0.5 * (a + float64(sigma*(float64(2*r32)+float64(sigma*g33))))) * beta
 	w42 := float64(beta*(r42+float64(sigma*g43))) - float64(h*g42)
 	w52 := float64(beta*(r52+float64(sigma*g53))) - float64(h*g52)
 	g43 = float64(r42*isigma) + tiny - float64(m*g42)

@@ -19,6 +19,11 @@ const (
 	// passes 1e-9 of it at a squared ratio of about 2.5e-7.
 	ratioMin = 1e-6
 
+	// isotropic is the ratio above which all eigenvalues lie so close together
+	// that the roots in Laguerre's steps from afar are rounding errors, and the
+	// steps may pass their goal by that much.
+	isotropic = 1 - 1e-4
+
 	// stepTol is the wanted relative error of the eigenvalues. Simple roots
 	// reach it with much to spare. At double roots, which symmetric poses have,
 	// convergence is linear and may end with 20 times as much.
@@ -35,12 +40,12 @@ const (
 
 	// tiny stands in for a column that is zero below the diagonal, where a
 	// reflection has no direction.
-	tiny = 1e-100
+	tiny = 1e-80
 )
 
 // extremes returns the ratio of the smallest to the largest eigenvalue, or, if
 // bounds prove it above keep, such a bound. ok is false if rounding errors hide
-// the smallest eigenvalue.
+// the smallest eigenvalue, or the differences between all of them.
 //
 // Laguerre's iteration runs from both outer ends. All roots are real, so each
 // step stays on its side of the root, and x/y rises to the ratio from below
@@ -49,7 +54,9 @@ func (t *tridiagonal) extremes(keep float64) (ratio float64, ok bool) {
 	if !(t.trace > traceMin && t.trace < traceMax) {
 		return 0, false
 	}
-	keep *= keepMargin
+	if keep *= keepMargin; keep > isotropic {
+		keep = math.Inf(1)
+	}
 
 	// First step of the lower end, from 0. Rounding errors that put an
 	// eigenvalue below 0 show here, as wrong signs.
@@ -83,7 +90,7 @@ func (t *tridiagonal) extremes(keep float64) (ratio float64, ok bool) {
 		// first step tells nothing of that.
 		x4, y4 := stepX*stepX*(stepX*stepX), stepY*stepY*(stepY*stepY)
 		if it > 0 && x4 <= stepTol*x*(lastX*lastX*lastX) && y4 <= stepTol*y*(lastY*lastY*lastY) {
-			return x / y, x > ratioMin*y
+			return x / y, x > ratioMin*y && x < isotropic*y
 		}
 		lastX, lastY = stepX, stepY
 	}

@@ -85,7 +85,7 @@ func reflect(w *writer, k int) {
 	w.line("a = %s", dot(x, r))
 	w.line("t.d[%d] = a * is", lo)
 	w.line("m = isigma * beta * (a + %s)", product("sigma", r[0]))
-	w.line("h = 0.5 * beta * beta * (a + float64(sigma*(float64(2*%s) + %s)))", r[0], product("sigma", element(lo, lo)))
+	w.line("h = beta * (0.5 * (a + float64(sigma*(float64(2*%s)+%s)))) * beta", r[0], product("sigma", element(lo, lo)))
 	for i := 1; i < n; i++ {
 		w.line("w%d%d := %s - %s", lo+i, k, product("beta", "("+r[i]+" + "+product("sigma", element(lo+i, lo))+")"), product("h", x[i]))
 	}
