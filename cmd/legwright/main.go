@@ -36,6 +36,11 @@ type inputError struct{ error }
 
 func (e inputError) Unwrap() error { return e.error }
 
+// failure marks what went wrong while a command ran, as against a command line that makes no sense.
+type failure struct{ error }
+
+func (f failure) Unwrap() error { return f.error }
+
 func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
 
 // run is main with its surroundings given, for tests.
@@ -47,17 +52,18 @@ func run(args []string, stdout, stderr io.Writer) int {
 	err := root.ExecuteContext(ctx)
 	var s status
 	var in inputError
+	var ran failure
 	switch {
 	case err == nil:
 		return exitDone
 	case errors.As(err, &s):
 		return int(s)
-	case errors.As(err, &in):
-		fmt.Fprintln(stderr, err)
-		return exitInput
+	case errors.As(err, &ran) && !errors.As(err, &in):
+		fmt.Fprintln(stderr, "legwright:", err)
+		return exitInternal
 	}
-	fmt.Fprintln(stderr, "legwright:", err)
-	return exitInternal
+	fmt.Fprintln(stderr, err) // a file, a flag, or a command that there is not
+	return exitInput
 }
 
 // common are the flags that every command has.
@@ -95,7 +101,13 @@ It is a geometry study, not a safety assessment: README, "What it is not".`,
 		newSearch(c), newRank(c), newAppraise(c), newLocate(c), newFamilies(c), newStarter(c),
 	)
 	for _, cmd := range root.Commands() {
-		args := cmd.Args
+		args, work := cmd.Args, cmd.RunE
+		cmd.RunE = func(cmd *cobra.Command, a []string) error {
+			if err := work(cmd, a); err != nil {
+				return failure{err}
+			}
+			return nil
+		}
 		cmd.Args = func(cmd *cobra.Command, a []string) error {
 			if err := args(cmd, a); err != nil {
 				return inputError{fmt.Errorf("legwright %s: %w; usage: %s", cmd.Name(), err, cmd.UseLine())}

@@ -112,6 +112,9 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		c.hint("%s holds a finished study; nothing to do", dir)
 		return nil
 	}
+	for _, name := range sources.Apart() {
+		c.hint("note: pose file %s is not copied into %s, because its path leads out of the brief's folder; the study does not stand alone", name, dir)
+	}
 	for _, n := range s.Hints() {
 		c.hint("note: %s", n)
 	}

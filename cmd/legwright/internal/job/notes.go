@@ -3,6 +3,7 @@ package job
 import (
 	"fmt"
 
+	"legwright/cmd/legwright/internal/study"
 	"legwright/objective"
 )
 
@@ -14,11 +15,7 @@ func Program() string { return "legwright " + Version }
 
 // Notes says what holds for the whole study: what its figures leave out, and its Hints.
 func (s *Study) Notes() []string {
-	notes := []string{
-		fmt.Sprintf("every figure is the worst over %d sampled poses of the duty, not a proof for the poses between them", len(s.Task.Samples())),
-		"legs, arms and rods are massless in the efforts; payload, cables and motors are not in the clearances",
-	}
-	return append(notes, s.Hints()...)
+	return append(study.LeftOut(len(s.Task.Samples())), s.Hints()...)
 }
 
 // Hints says what the brief might say better.

@@ -105,7 +105,7 @@ func (d *designs) strokeUsed(keep int) column {
 // has tells whether any of the designs has the measure.
 func (d *designs) has(measure string) bool {
 	for _, r := range d.rows {
-		if _, ok := r.Measures[measure]; ok {
+		if v, ok := r.Measures[measure]; ok && (v != 0 || measure != "home_height") { // planar stages have no height
 			return true
 		}
 	}

@@ -65,7 +65,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	}
 	s.gap()
 	s.steps(f)
-	s.leftOut(f.Poses, f.Notes)
+	s.leftOut(f.Poses, f.Notes, study.Caution)
 	if p.Dir != "" {
 		dir := quote(p.Dir)
 		s.gap()
@@ -105,7 +105,7 @@ func (s *sheet) title(f *study.Front) {
 	if fam := families(f); len(fam) > 0 {
 		line += " (" + strings.Join(fam, ", ") + ")"
 	}
-	s.say(fmt.Sprintf("%s. Seed %d, %d sampled poses.", line, f.Seed, f.Poses))
+	s.say(fmt.Sprintf("%s. Seed %d, population %d, %d sampled poses.", line, f.Seed, f.Population, f.Poses))
 	if f.Status != "" && f.Status != "budget spent" && len(f.Designs) > 0 {
 		s.say("Ended early: " + f.Status + ".")
 	}

@@ -29,7 +29,7 @@ func Infeasible(w io.Writer, f *study.Front, p Page) error {
 		s.nearest(h, first)
 		s.advice(h)
 	}
-	s.leftOut(f.Poses, f.Notes)
+	s.leftOut(f.Poses, f.Notes, study.Caution)
 	return s.to(w)
 }
 

@@ -120,7 +120,7 @@ func fold(t string, width int, first, rest string) []string {
 }
 
 // leftOut writes the notes of a record, what its figures leave out, and the caution.
-func (s *sheet) leftOut(poses int, notes []string) {
+func (s *sheet) leftOut(poses int, notes []string, caution string) {
 	standing := study.LeftOut(poses)
 	if len(notes) > 0 {
 		shown := false
@@ -141,7 +141,7 @@ func (s *sheet) leftOut(poses int, notes []string) {
 	for _, n := range standing {
 		s.item(n)
 	}
-	s.say(study.Caution)
+	s.say(caution)
 }
 
 func among(t string, list []string) bool {

@@ -14,3 +14,6 @@ func LeftOut(poses int) []string {
 
 // Caution is what a reader of figures must not take them for.
 const Caution = "This is a study of geometry, not an assessment of safety; see README."
+
+// FullCaution is the caution where results are shown in full.
+const FullCaution = "A study of geometry, not an assessment of safety. Legs crush and shear; a platform may fall, run away or reach a singular pose when power, brake, sensor or control fails. Before building: machinery risk assessment, functional safety of the control system, emergency stop, guarding and minimum gaps, electrical, hydraulic and lifting rules where they apply, the rules for rides, simulators or passenger devices where people are aboard, industrial-robot safety, local codes, and sign-off by a competent licensed engineer."

@@ -1,0 +1,68 @@
+package main
+
+import (
+	"errors"
+	"flag"
+	"os"
+	"os/exec"
+	"strconv"
+	"testing"
+
+	"github.com/rogpeppe/go-internal/testscript"
+)
+
+var update = flag.Bool("update", false, "write the expected texts again")
+
+func TestMain(m *testing.M) {
+	testscript.Main(m, map[string]func(){"legwright": main})
+}
+
+// Each file under testdata/script is one story of commands. `rc N COMMAND…` runs a
+// command that must end with status N.
+func TestScripts(t *testing.T) {
+	testscript.Run(t, testscript.Params{
+		Dir:           "testdata/script",
+		UpdateScripts: *update,
+		Setup: func(e *testscript.Env) error {
+			e.Setenv("NO_COLOR", "1")
+			return nil
+		},
+		Cmds: map[string]func(*testscript.TestScript, bool, []string){
+			"rc": func(ts *testscript.TestScript, neg bool, args []string) {
+				if neg || len(args) < 2 {
+					ts.Fatalf("usage: rc STATUS COMMAND [ARG]…")
+				}
+				want, err := strconv.Atoi(args[0])
+				ts.Check(err)
+				err = ts.Exec(args[1], args[2:]...)
+				got := 0
+				var exit *exec.ExitError
+				if errors.As(err, &exit) {
+					got = exit.ExitCode()
+				} else if err != nil {
+					ts.Fatalf("%v", err)
+				}
+				if got != want {
+					ts.Fatalf("status %d, want %d\n%s%s", got, want, ts.ReadFile("stdout"), ts.ReadFile("stderr"))
+				}
+			},
+		},
+	})
+}
+
+// The embedded examples are those under testdata/briefs.
+func TestExamplesAreInTestdata(t *testing.T) {
+	for _, name := range []string{"tilt-table.yaml", "gauge-stage.yaml"} {
+		a, err := os.ReadFile("example/" + name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		b, err := os.ReadFile("../../testdata/briefs/" + name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if string(a) != string(b) {
+			t.Errorf("example/%s and testdata/briefs/%s differ", name, name)
+		}
+	}
+}
