@@ -210,7 +210,9 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 	p := a.Plan
 	add := func(w Verdict, excess float64) {
 		w.Holds = excess <= Tolerance
-		w.Margin = -excess
+		if w.Margin = -excess; w.Holds && math.Abs(excess) < 1e-6 {
+			w.Margin = 0 // met exactly, as sized dimensions are
+		}
 		a.Verdicts = append(a.Verdicts, w)
 	}
 	add(Verdict{Name: "coverage", Origin: "limits", AtLeast: true, Bound: t.Coverage, Value: share}, t.Coverage-share)

@@ -112,6 +112,9 @@ func (c scale) column(values []float64, digits, most int) []string {
 			decimals = min(max(decimals, fine), most-1-lead)
 		}
 		decimals = min(max(decimals, 0), 12)
+		if most := c.finest(); most >= 0 {
+			decimals = min(decimals, most)
+		}
 	}
 	out := make([]string, len(values))
 	for i, v := range values {
