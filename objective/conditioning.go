@@ -24,7 +24,7 @@ func conditioning() *Measure {
 func meanConditioning() *Measure {
 	return &Measure{
 		Name: "mean_conditioning", Unit: Ratio, Sense: Larger, Most: 1, Need: NeedMatrix | NeedExact, Mean: true,
-		Text:   "the same, averaged over the volume samples of box and ellipsoid zones and all poses of files (global conditioning index)",
+		Text:   "conditioning averaged over the volume samples of box and ellipsoid zones and all poses of files, over all poses where there are none of these (global conditioning index)",
 		Source: "C. Gosselin and J. Angeles 1991, ASME J. Mech. Des. 113:220 (from memory)",
 		Scan: func(v *View, w *Worst) {
 			if v.pose.Volume {

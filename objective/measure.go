@@ -108,7 +108,9 @@ func (m *Measure) value(w *Worst) float64 {
 // lost records a pose that cannot be reached.
 func (m *Measure) lost(v *View, w *Worst) {
 	if m.Mean {
-		w.Count++
+		if v.pose.Volume {
+			w.Count++
+		}
 		return
 	}
 	if (m.Sense == Larger && m.Lost < w.Value) || (m.Sense != Larger && m.Lost > w.Value) {

@@ -21,8 +21,10 @@ type Sample struct {
 // move (first coordinate slowest, low end first), the centre, then Sobol points
 // from number 2 on, since 0 and 1 repeat a corner and the centre. Ellipsoid: the
 // centre, the ends of its axes, then Sobol points turned into directions by the
-// normal quantile, by turns on the surface and inside. Axes: evenly spaced, ends
-// included. Listed: as given.
+// normal quantile, the first half of them on the surface, the others inside (not
+// by turns: points of even and of odd number lie in different halves of the
+// second dimension). Axes: evenly spaced, ends included, fixed coordinates kept.
+// A zone in which nothing moves is one pose. Listed: as given.
 func sampleZone(z *Zone, number int) []Sample {
 	var out []Sample
 	add := func(c kin.Coords, volume bool) {
@@ -30,6 +32,10 @@ func sampleZone(z *Zone, number int) []Sample {
 	}
 	moving := z.moving()
 	k := len(moving)
+	if k == 0 && z.Kind != Listed {
+		add(z.centre(), false)
+		return out
+	}
 	switch z.Kind {
 	case Box:
 		for n := range 1 << k {
@@ -40,9 +46,6 @@ func sampleZone(z *Zone, number int) []Sample {
 				}
 			}
 			add(c, false)
-		}
-		if k == 0 {
-			break
 		}
 		add(z.centre(), false)
 		cube(z.Samples-len(out), k, func(u []float64) {
@@ -61,10 +64,11 @@ func sampleZone(z *Zone, number int) []Sample {
 				add(c, false)
 			}
 		}
-		inside := false
-		cube(z.Samples-len(out), k+1, func(u []float64) {
+		free := z.Samples - len(out)
+		surface := len(out) + free - free/2
+		cube(free, k+1, func(u []float64) {
 			c := z.centre()
-			radius := 1.0
+			radius, inside := 1.0, len(out) >= surface
 			if inside {
 				radius = math.Pow(u[k], 1/float64(k))
 			}
@@ -80,13 +84,12 @@ func sampleZone(z *Zone, number int) []Sample {
 				}
 			}
 			add(c, inside)
-			inside = !inside
 		})
 	case Axes:
 		for _, q := range moving {
 			n := max(z.Samples, 2)
 			for i := range n {
-				var c kin.Coords
+				c := z.fixed()
 				c[q] = z.Low[q] + (z.High[q]-z.Low[q])*float64(i)/float64(n-1)
 				if i == n-1 {
 					c[q] = z.High[q]

@@ -2,6 +2,7 @@ package objective
 
 import (
 	"math"
+	"slices"
 
 	"legwright/kin"
 )
@@ -89,6 +90,11 @@ func (t *Task) Prepare() {
 	t.samples = nil
 	for i := range t.Zones {
 		t.samples = append(t.samples, sampleZone(&t.Zones[i], i)...)
+	}
+	if !slices.ContainsFunc(t.samples, func(s Sample) bool { return s.Volume }) {
+		for i := range t.samples { // axes, corners or single poses alone: the average is over them
+			t.samples[i].Volume = true
+		}
 	}
 	t.scouts = arrange(t.samples, len(t.Zones))
 	if t.Rule == LengthFromDuty {

@@ -8,7 +8,7 @@ type ZoneKind int
 // The shapes of zones.
 const (
 	Box       ZoneKind = iota // all coordinates at once, each within its range
-	Axes                      // each coordinate alone, the others at home
+	Axes                      // each coordinate alone, the others at home or where the zone fixes them
 	Ellipsoid                 // all at once, within the ellipsoid whose axes are the ranges
 	Listed                    // poses given outright
 )
@@ -24,9 +24,12 @@ type Zone struct {
 
 // MinSamples is the least number of samples that the zone's shape needs: the
 // corners and the centre of a box, the ends of an ellipsoid's axes and its centre,
-// the two ends of an excursion.
+// the two ends of an excursion; one pose where nothing moves.
 func (z *Zone) MinSamples() int {
 	k := len(z.moving())
+	if k == 0 && z.Kind != Listed {
+		return 1
+	}
 	switch z.Kind {
 	case Box:
 		return 1<<k + 1
@@ -47,6 +50,17 @@ func (z *Zone) moving() []int {
 		}
 	}
 	return out
+}
+
+// fixed is home, but for the coordinates that the zone fixes elsewhere.
+func (z *Zone) fixed() kin.Coords {
+	var c kin.Coords
+	for k := range c {
+		if z.Low[k] == z.High[k] {
+			c[k] = z.Low[k]
+		}
+	}
+	return c
 }
 
 // centre is the middle of the ranges.
