@@ -95,6 +95,25 @@ func TestSingularMatrices(t *testing.T) {
 	}
 }
 
+// Two singular values below rounding: the determinant of the Gram matrix has any
+// sign, and an iteration that trusted it would find a larger eigenvalue.
+func TestTwoSmallSingularValues(t *testing.T) {
+	rng := rand.New(rand.NewPCG(35, 36))
+	for _, small := range []float64{1e-7, 1e-8, 1e-9, 1e-12, 1e-17} {
+		for range 2000 {
+			for n := 3; n <= 6; n += 3 {
+				s := [6]float64{1, 0.7, 0.5, 0.2, small, small}
+				s[n-1], s[n-2] = small, small
+				a := withSingularValues(rng, n, s)
+				// The elements are rounded: 6 eps of σmax is not to be told from 0.
+				if got := math.Sqrt(Ratio2(n, &a)); math.Abs(got-small) > 1e-15 {
+					t.Errorf("n %d: 1/κ = %v, want %v", n, got, small)
+				}
+			}
+		}
+	}
+}
+
 func TestNotFinite(t *testing.T) {
 	rng := rand.New(rand.NewPCG(31, 32))
 	for _, bad := range []float64{math.NaN(), math.Inf(1), math.Inf(-1)} {

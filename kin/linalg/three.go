@@ -69,7 +69,13 @@ func (t *tridiagonalThree) extremes(trace float64) (ratio float64, ok bool) {
 	}
 	lastX, lastY := x, y
 	for it := range iterationMax {
-		stepX, stepY := max(t.step(x), 0), max(-t.step(y), 0)
+		stepX, stepY := t.step(x), -t.step(y)
+		if !(stepX > 0) {
+			stepX = 0
+		}
+		if !(stepY > 0) {
+			stepY = 0
+		}
 		x += stepX
 		y -= stepY
 		x4, y4 := stepX*stepX*(stepX*stepX), stepY*stepY*(stepY*stepY)
