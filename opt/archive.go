@@ -47,20 +47,18 @@ func (a *Archive) add(g *genome, order int) bool {
 	if !g.feasible() {
 		return false
 	}
-	m := len(g.goals)
-	a.m = m
-	for i := 0; i < len(a.designs); i++ {
-		q := a.goals[i*m : i*m+m : i*m+m]
-		switch compare(q, g.goals) {
+	a.m = len(g.goals)
+	for i := 0; ; {
+		var r int
+		switch i, r = related(a.goals, g.goals, i); r {
 		case -1: // brought forward: it is likely to beat the next one, too
-			if j := i / 2; j < i {
-				a.swap(i, j)
-			}
+			a.swap(i, i/2)
 			return false
 		case 1:
 			a.drop(i)
-			i--
+			continue
 		}
+		break
 	}
 	a.designs = append(a.designs, g)
 	a.orders = append(a.orders, order)

@@ -1,24 +1,10 @@
 package opt
 
+import "math"
+
 // compare relates two goal vectors, all minimised: -1 if a dominates b or
 // equals it, 1 if b dominates a, 0 if neither beats the other.
 func compare(a, b []float64) int {
-	if len(a) == 3 && len(b) == 3 {
-		a0, a1, a2 := a[0], a[1], a[2]
-		b0, b1, b2 := b[0], b[1], b[2]
-		if a0 <= b0 {
-			if a1 <= b1 && a2 <= b2 {
-				return -1
-			}
-			if a0 < b0 {
-				return 0
-			}
-		}
-		if b1 <= a1 && b2 <= a2 {
-			return 1
-		}
-		return 0
-	}
 	le, ge := true, true
 	for k, v := range a {
 		if w := b[k]; v > w {
@@ -38,4 +24,45 @@ func compare(a, b []float64) int {
 		return 1
 	}
 	return 0
+}
+
+// related returns the first point at or after index from that beats p or is
+// beaten by it, and compare's word on the two; len(set)/len(p) and 0 if there
+// is none. The points lie in set one after another. All values are finite.
+//
+// Which goals are better is a coin toss for points of a front, so the usual
+// cases look at signs of differences instead of branching.
+func related(set []float64, p []float64, from int) (at, relation int) {
+	m := len(p)
+	switch m {
+	case 2:
+		p0, p1 := p[0], p[1]
+		for i := 2 * from; i+1 < len(set); i += 2 {
+			q0, q1 := set[i], set[i+1]
+			if int64(math.Float64bits(p0-q0)|math.Float64bits(p1-q1)) >= 0 {
+				return i / 2, -1
+			}
+			if int64(math.Float64bits(q0-p0)|math.Float64bits(q1-p1)) >= 0 {
+				return i / 2, 1
+			}
+		}
+	case 3:
+		p0, p1, p2 := p[0], p[1], p[2]
+		for i := 3 * from; i+2 < len(set); i += 3 {
+			q0, q1, q2 := set[i], set[i+1], set[i+2]
+			if int64(math.Float64bits(p0-q0)|math.Float64bits(p1-q1)|math.Float64bits(p2-q2)) >= 0 {
+				return i / 3, -1
+			}
+			if int64(math.Float64bits(q0-p0)|math.Float64bits(q1-p1)|math.Float64bits(q2-p2)) >= 0 {
+				return i / 3, 1
+			}
+		}
+	default:
+		for i := m * from; i < len(set); i += m {
+			if r := compare(set[i:i+m], p); r != 0 {
+				return i / m, r
+			}
+		}
+	}
+	return len(set) / m, 0
 }

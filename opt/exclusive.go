@@ -1,6 +1,9 @@
 package opt
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // shares keeps a set of mutually non-dominated points with the hypervolume
 // that each of them covers alone, up to date under insertion and removal.
@@ -10,89 +13,108 @@ import "math"
 // than p in every goal but k (ref[k] if there are none). Only points q < u cut
 // into that box, so a newcomer q changes p's volume only if q < u, and the
 // loss of q only if q <= u. Few points are touched by each step.
+//
+// Points are kept in ascending order of their last goal, the direction of the
+// sweeps.
 type shares struct {
+	m     int
+	plain bool // keep points and corners only, no volumes
 	ref   []float64
-	pts   [][]float64
-	upper [][]float64 // corner of the box that holds all p covers alone
-	alone []float64   // hypervolume that p covers alone
+	pts   []float64 // m numbers per point, one after another
+	upper []float64 // likewise: corners of the boxes, the points themselves where alone is 0
+	alone []float64 // hypervolume that a point covers alone
 
-	vol  volume
-	flat []float64
-	lim  [][]float64
-	free [][]float64 // corners to use again
+	vol   volume
+	solid []xyz
+	flat  []float64
+	lim   [][]float64
+	gone  []float64
 }
 
 // reset empties the set and takes a new reference.
 func (s *shares) reset(ref []float64) {
+	s.m = len(ref)
 	s.ref = append(s.ref[:0], ref...)
-	s.free = append(s.free, s.upper...)
 	s.pts, s.upper, s.alone = s.pts[:0], s.upper[:0], s.alone[:0]
 }
 
-// fill replaces the set by pts.
-func (s *shares) fill(pts [][]float64, ref []float64) {
-	s.reset(ref)
-	for _, p := range pts {
-		s.push(p)
-	}
-	for i := range s.pts {
-		s.alone[i] = s.volume(i)
-	}
-}
+// len returns the number of points.
+func (s *shares) len() int { return len(s.alone) }
 
-func (s *shares) push(p []float64) {
-	var u []float64
-	if n := len(s.free); n > 0 {
-		u, s.free = s.free[n-1], s.free[:n-1]
-	} else {
-		u = make([]float64, len(s.ref))
-	}
-	s.pts = append(s.pts, p)
-	s.upper = append(s.upper, u)
-	s.alone = append(s.alone, 0)
-}
+// point and corner are views.
+func (s *shares) point(i int) []float64  { return s.pts[i*s.m : (i+1)*s.m : (i+1)*s.m] }
+func (s *shares) corner(i int) []float64 { return s.upper[i*s.m : (i+1)*s.m : (i+1)*s.m] }
 
-// add inserts p as the last point. Every point of the set has to be
-// non-dominated by p and the other way round.
-func (s *shares) add(p []float64) {
-	s.push(p)
-	last := len(s.pts) - 1
-	s.alone[last] = s.volume(last)
-	for i := range last {
-		if below(p, s.upper[i]) {
-			s.alone[i] = s.volume(i)
+// add inserts p and returns its index. No point of the set may beat p or be
+// beaten by it.
+func (s *shares) add(p []float64) int {
+	m, n := s.m, s.len()
+	i := n
+	for i > 0 && s.pts[i*m-1] > p[m-1] {
+		i--
+	}
+	s.pts = slices.Insert(s.pts, i*m, p...)
+	s.upper = slices.Insert(s.upper, i*m, s.ref...)
+	s.alone = slices.Insert(s.alone, i, 0)
+	if s.plain {
+		return i
+	}
+	for j := next(s.upper, p, 0, true); j <= n; j = next(s.upper, p, j+1, true) {
+		if j != i {
+			s.update(j)
 		}
 	}
+	s.update(i)
+	return i
 }
 
-// remove drops point i; the last point takes its place.
+// remove drops point i.
 func (s *shares) remove(i int) {
-	q, last := s.pts[i], len(s.pts)-1
-	s.free = append(s.free, s.upper[i])
-	s.pts[i], s.upper[i], s.alone[i] = s.pts[last], s.upper[last], s.alone[last]
-	s.pts, s.upper, s.alone = s.pts[:last], s.upper[:last], s.alone[:last]
-	for j, u := range s.upper {
-		if within(q, u) {
-			s.alone[j] = s.volume(j)
+	m := s.m
+	s.gone = append(s.gone[:0], s.point(i)...)
+	s.pts = slices.Delete(s.pts, i*m, (i+1)*m)
+	s.upper = slices.Delete(s.upper, i*m, (i+1)*m)
+	s.alone = slices.Delete(s.alone, i, i+1)
+	if s.plain {
+		return
+	}
+	n := s.len()
+	for j := next(s.upper, s.gone, 0, false); j < n; j = next(s.upper, s.gone, j+1, false) {
+		loosen(s.corner(j), s.gone, s.ref)
+		s.update(j)
+	}
+}
+
+// loosen raises corner u to where it may reach without q.
+func loosen(u, q, ref []float64) {
+	for k, v := range q {
+		if u[k] == v {
+			u[k] = ref[k]
 		}
 	}
 }
 
 // move changes the reference; only points that reach up to it are touched.
 func (s *shares) move(ref []float64) {
-	var changed bool
-	old := s.ref
+	s.gone = append(s.gone[:0], s.ref...)
+	old := s.gone
+	same := true
 	for k, r := range ref {
-		changed = changed || r != old[k]
+		same = same && r == old[k]
 	}
-	if !changed {
+	if same {
 		return
 	}
-	s.ref = append([]float64(nil), ref...)
-	for i, u := range s.upper {
+	copy(s.ref, ref)
+	if s.plain {
+		return
+	}
+	for i := range s.alone {
+		u := s.corner(i)
 		for k, r := range ref {
 			if r != old[k] && (u[k] == old[k] || u[k] > r || s.alone[i] == 0) {
-				s.alone[i] = s.volume(i)
+				copy(u, ref)
+				s.update(i)
 				break
 			}
 		}
@@ -111,6 +133,30 @@ func (s *shares) least() int {
 	return b
 }
 
+// next returns the first corner at or after index from that is beyond q: in
+// every coordinate greater if strict, at least equal otherwise. It returns the
+// number of corners if there is none.
+func next(corners, q []float64, from int, strict bool) int {
+	m := len(q)
+	if m == 3 {
+		q0, q1, q2 := q[0], q[1], q[2]
+		for i := 3 * from; i+2 < len(corners); i += 3 {
+			u0, u1, u2 := corners[i], corners[i+1], corners[i+2]
+			if int64(math.Float64bits(u0-q0)|math.Float64bits(u1-q1)|math.Float64bits(u2-q2)) >= 0 &&
+				(!strict || q0 < u0 && q1 < u1 && q2 < u2) {
+				return i / 3
+			}
+		}
+		return len(corners) / 3
+	}
+	for i := m * from; i < len(corners); i += m {
+		if u := corners[i : i+m]; within(q, u) && (!strict || below(q, u)) {
+			return i / m
+		}
+	}
+	return len(corners) / m
+}
+
 // within reports q <= u in every coordinate.
 func within(q, u []float64) bool {
 	for k, v := range u {
@@ -121,69 +167,46 @@ func within(q, u []float64) bool {
 	return true
 }
 
-// volume computes what point i covers alone, and its corner.
-func (s *shares) volume(i int) float64 { return s.gain(s.pts[i], i, s.upper[i]) }
+// update computes what point i covers alone, and its corner, which must not be
+// too low before.
+func (s *shares) update(i int) { s.alone[i] = s.gain(s.point(i), i, s.corner(i)) }
 
 // gain computes what p covers that no point of the set but the one at skip
-// (-1 for none) covers, and leaves p's corner in u. It is 0 for a point that
-// is dominated.
+// (-1 for none) covers, and lowers u to p's corner; the nearer u is to it
+// before, the less work. The gain is 0, and u is p, for a point that is beaten
+// or beyond the reference.
 func (s *shares) gain(p []float64, skip int, u []float64) float64 {
-	copy(u, s.ref)
-	if !s.corner(p, skip, u) || !below(p, u) {
+	if s.m == 3 {
+		return s.gain3(xyz(p), skip, (*xyz)(u))
+	}
+	if !s.bound(p, skip, u) || !below(p, u) {
 		copy(u, p)
 		return 0
 	}
-	m := len(u)
-	if m <= 2 { // nothing but its neighbours cuts into a plane box
+	if s.m <= 2 { // nothing but its neighbours cuts into a plane box
 		return box(p, u)
 	}
 	flat, lim := s.flat[:0], s.lim[:0]
-	for j, q := range s.pts {
+	for j := range s.alone {
+		q := s.point(j)
 		if j == skip || !below(q, u) {
 			continue
 		}
 		at := len(flat)
-		for k := range m {
+		for k := range u {
 			flat = append(flat, max(p[k], q[k]))
 		}
-		lim = append(lim, flat[at:len(flat):len(flat)])
+		lim = insert(lim, flat[at:len(flat):len(flat)])
 	}
 	s.flat, s.lim = flat, lim
-	if m > 3 {
-		keep := lim[:0:0]
-		for _, q := range lim {
-			keep = insert(keep, q)
-		}
-		lim = keep
-	}
-	return math.Max(0, box(p, u)-s.vol.sweep(lim, u))
+	return max(0, box(p, u)-s.vol.sweep(lim, u))
 }
 
-// corner lowers u to the corner of p's box; it returns false if p is
-// dominated or equalled.
-func (s *shares) corner(p []float64, skip int, u []float64) bool {
-	if len(p) == 3 {
-		p0, p1, p2 := p[0], p[1], p[2]
-		u0, u1, u2 := u[0], u[1], u[2]
-		for j, q := range s.pts {
-			q0, q1, q2 := q[0], q[1], q[2]
-			if q0 <= p0 {
-				if q1 <= p1 {
-					if q2 < u2 && j != skip {
-						u2 = q2
-					}
-				} else if q2 <= p2 && q1 < u1 {
-					u1 = q1
-				}
-			} else if q1 <= p1 && q2 <= p2 && q0 < u0 {
-				u0 = q0
-			}
-		}
-		u[0], u[1], u[2] = u0, u1, u2
-		return u2 > p2
-	}
-	for j, q := range s.pts {
-		if j == skip {
+// bound lowers u to the corner of p's box; it returns false if p is beaten.
+func (s *shares) bound(p []float64, skip int, u []float64) bool {
+	for j := range s.alone {
+		q := s.point(j)
+		if j == skip || !below(q, u) {
 			continue
 		}
 		worse, at := 0, 0
@@ -199,8 +222,49 @@ func (s *shares) corner(p []float64, skip int, u []float64) bool {
 		case 0:
 			return false
 		case 1:
-			u[at] = min(u[at], q[at])
+			u[at] = q[at]
 		}
 	}
 	return true
+}
+
+// gain3 is gain for three goals.
+func (s *shares) gain3(p xyz, skip int, u *xyz) float64 {
+	p0, p1, p2 := p[0], p[1], p[2]
+	u0, u1, u2 := u[0], u[1], u[2]
+	pts, lim := s.pts, s.solid[:0]
+	for i := 0; i+2 < len(pts); i += 3 {
+		q0, q1, q2 := pts[i], pts[i+1], pts[i+2]
+		if q2 >= u2 {
+			break
+		}
+		if q0 >= u0 || q1 >= u1 || i == 3*skip {
+			continue
+		}
+		switch {
+		case q0 <= p0 && q1 <= p1:
+			u2 = q2
+		case q0 <= p0 && q2 <= p2:
+			u1 = q1
+		case q1 <= p1 && q2 <= p2:
+			u0 = q0
+		default:
+			lim = append(lim, xyz{q0, q1, q2})
+		}
+	}
+	s.solid = lim
+	if !(p0 < u0 && p1 < u1 && p2 < u2) {
+		*u = p
+		return 0
+	}
+	n := 0
+	for _, q := range lim {
+		if q[0] < u0 && q[1] < u1 && q[2] < u2 {
+			lim[n] = xyz{max(p0, q[0]), max(p1, q[1]), max(p2, q[2])}
+			n++
+		}
+	}
+	lim = lim[:n]
+	*u = xyz{u0, u1, u2}
+	return max(0, (u0-p0)*(u1-p1)*(u2-p2)-s.vol.rise(lim, *u))
 }

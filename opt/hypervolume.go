@@ -21,7 +21,8 @@ func Hypervolume(pts [][]float64, ref []float64) float64 {
 
 // volume computes hypervolumes; its scratch is reused from call to call.
 type volume struct {
-	levels []level // one per dimension above 2
+	levels []level // one per dimension
+	solid  []xyz
 	stairs []step
 }
 
@@ -30,6 +31,9 @@ type level struct {
 	pts  [][]float64
 	flat []float64
 }
+
+// xyz is a point of three goals.
+type xyz [3]float64
 
 // step is a corner of the two-dimensional staircase.
 type step struct{ x, y float64 }
@@ -86,7 +90,11 @@ func (v *volume) sweep(pts [][]float64, ref []float64) float64 {
 	case 2:
 		return sweep2(pts, ref)
 	case 3:
-		return v.sweep3(pts, ref)
+		v.solid = v.solid[:0]
+		for _, p := range pts {
+			v.solid = append(v.solid, xyz(p))
+		}
+		return v.sweep3(v.solid, xyz(ref))
 	}
 	return v.slice(pts, ref)
 }
@@ -105,21 +113,30 @@ func sweep2(pts [][]float64, ref []float64) float64 {
 	v, y := 0.0, ref[1]
 	for _, p := range pts {
 		if p[1] < y {
-			v += (ref[0] - p[0]) * (y - p[1])
+			v += float64((ref[0] - p[0]) * (y - p[1]))
 			y = p[1]
 		}
 	}
 	return v
 }
 
-// sweep3 goes up the third goal and keeps the staircase of the first two,
-// x ascending and y descending, with its area.
-func (v *volume) sweep3(pts [][]float64, ref []float64) float64 {
-	slices.SortFunc(pts, func(a, b []float64) int { return cmp.Compare(a[2], b[2]) })
+// sweep3 goes up the third goal. It sorts pts in place.
+func (v *volume) sweep3(pts []xyz, ref xyz) float64 {
+	slices.SortFunc(pts, func(a, b xyz) int { return cmp.Compare(a[2], b[2]) })
+	return v.rise(pts, ref)
+}
+
+// rise is sweep3 for sorted points. It keeps the staircase of the first two
+// goals, x ascending and y descending, with its area.
+func (v *volume) rise(pts []xyz, ref xyz) float64 {
+	if len(pts) == 0 {
+		return 0
+	}
 	st := v.stairs[:0]
 	area, sum, z := 0.0, 0.0, pts[0][2]
-	for _, p := range pts {
-		sum += area * (p[2] - z)
+	for i := range pts {
+		p := &pts[i]
+		sum += float64(area * (p[2] - z))
 		z = p[2]
 		x, y := p[0], p[1]
 		lo, hi := 0, len(st) // first step with st.x > x
@@ -147,7 +164,7 @@ func (v *volume) sweep3(pts [][]float64, ref []float64) float64 {
 		to := from
 		left, high := x, top
 		for to < len(st) && st[to].y >= y {
-			area += (st[to].x - left) * (high - y)
+			area += float64((st[to].x - left) * (high - y))
 			left, high = st[to].x, st[to].y
 			to++
 		}
@@ -155,11 +172,18 @@ func (v *volume) sweep3(pts [][]float64, ref []float64) float64 {
 		if to < len(st) {
 			right = st[to].x
 		}
-		area += (right - left) * (high - y)
-		st = slices.Replace(st, from, to, step{x, y})
+		area += float64((right - left) * (high - y))
+		switch {
+		case to == from:
+			st = append(st, step{})
+			copy(st[from+1:], st[from:])
+		case to > from+1:
+			st = st[:from+1+copy(st[from+1:], st[to:])]
+		}
+		st[from] = step{x, y}
 	}
 	v.stairs = st
-	return sum + area*(ref[2]-z)
+	return sum + float64(area*(ref[2]-z))
 }
 
 // slice sums what each point adds to those better in the last goal. Seen from
@@ -181,7 +205,7 @@ func (v *volume) slice(pts [][]float64, ref []float64) float64 {
 			lim = insert(lim, flat[at:len(flat):len(flat)])
 		}
 		lv.flat, lv.pts = flat, lim
-		sum += (ref[m] - p[m]) * (box(p[:m], ref[:m]) - v.sweep(lim, ref[:m]))
+		sum += float64((ref[m] - p[m]) * (box(p[:m], ref[:m]) - v.sweep(lim, ref[:m])))
 	}
 	return sum
 }

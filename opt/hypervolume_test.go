@@ -3,6 +3,7 @@ package opt
 import (
 	"math"
 	"math/rand/v2"
+	"slices"
 	"testing"
 )
 
@@ -116,13 +117,13 @@ func TestSharesFollowTheSet(t *testing.T) {
 				ref = append([]float64(nil), ref...)
 				ref[r.IntN(m)] = 1 + 0.5*r.Float64()
 				s.move(ref)
-			case len(s.pts) > 1 && r.IntN(3) == 0:
-				s.remove(r.IntN(len(s.pts)))
+			case s.len() > 1 && r.IntN(3) == 0:
+				s.remove(r.IntN(s.len()))
 			default:
 				p := randomSet(r, 1, m, it%2 == 0)[0]
 				dominated := false
-				for i := len(s.pts) - 1; i >= 0; i-- {
-					switch compare(s.pts[i], p) {
+				for i := s.len() - 1; i >= 0; i-- {
+					switch compare(s.point(i), p) {
 					case -1:
 						dominated = true
 					case 1:
@@ -133,16 +134,15 @@ func TestSharesFollowTheSet(t *testing.T) {
 					s.add(p)
 				}
 			}
-			all := Hypervolume(s.pts, ref)
-			for i := range s.pts {
-				var rest [][]float64
-				for j, q := range s.pts {
-					if j != i {
-						rest = append(rest, q)
-					}
-				}
+			var set [][]float64
+			for i := range s.len() {
+				set = append(set, s.point(i))
+			}
+			all := Hypervolume(set, ref)
+			for i := range set {
+				rest := slices.Delete(slices.Clone(set), i, i+1)
 				if want := all - Hypervolume(rest, ref); math.Abs(want-s.alone[i]) > 1e-12 {
-					t.Fatalf("%d goals, step %d: point %d of %v covers %v alone, want %v", m, step, i, s.pts, s.alone[i], want)
+					t.Fatalf("%d goals, step %d: point %d of %v covers %v alone, want %v", m, step, i, set, s.alone[i], want)
 				}
 			}
 		}

@@ -21,17 +21,20 @@ func pick(pts [][]float64, k int, ref []float64) []int {
 	if len(ref) > maxShareGoals {
 		return scatter(pts, k)
 	}
-	p := picker{pts: pts}
+	p := picker{pts: pts, m: len(ref), gains: make([]float64, len(pts)), stale: make([]bool, len(pts))}
 	p.chosen.reset(ref)
-	p.gains = make([]float64, len(pts))
-	p.upper = make([][]float64, len(pts))
-	flat := make([]float64, len(pts)*len(ref))
+	p.upper = make([]float64, len(pts)*p.m)
 	for i := range pts {
-		p.upper[i] = flat[i*len(ref) : (i+1)*len(ref)]
+		copy(p.corner(i), ref)
 		p.update(i)
 	}
 	for len(p.index) < k {
-		p.take(p.best())
+		p.take(p.best(), true)
+	}
+	for i, old := range p.stale {
+		if old && p.gains[i] >= 0 {
+			p.update(i)
+		}
 	}
 	p.exchange()
 	return p.index
@@ -39,73 +42,105 @@ func pick(pts [][]float64, k int, ref []float64) []int {
 
 // picker grows and improves a selection.
 type picker struct {
+	m      int
 	pts    [][]float64
 	chosen shares
-	index  []int       // of the chosen points, in the order of chosen.pts
-	gains  []float64   // what each point would add; -1 once chosen
-	upper  [][]float64 // corner of the box that holds this gain
+	index  []int     // of the chosen points, in the order of chosen
+	gains  []float64 // what each point would add; -1 once chosen
+	stale  []bool    // the gain may have become less since it was computed
+	upper  []float64 // corners of the boxes that hold these gains
 }
 
-func (p *picker) update(i int) { p.gains[i] = p.chosen.gain(p.pts[i], -1, p.upper[i]) }
+func (p *picker) corner(i int) []float64 { return p.upper[i*p.m : (i+1)*p.m : (i+1)*p.m] }
 
-// best returns the point outside that adds most, the first of equals.
+func (p *picker) update(i int) {
+	p.gains[i] = p.chosen.gain(p.pts[i], -1, p.corner(i))
+	p.stale[i] = false
+}
+
+// best returns the point outside that adds most, the first of equals. Gains
+// only become less while points are taken, so it is enough that the greatest
+// one is fresh.
 func (p *picker) best() int {
-	b := 0
-	for i, g := range p.gains {
-		if g > p.gains[b] {
-			b = i
+	for {
+		b := 0
+		for i, g := range p.gains {
+			if g > p.gains[b] {
+				b = i
+			}
 		}
+		if !p.stale[b] {
+			return b
+		}
+		p.update(b)
 	}
-	return b
 }
 
-func (p *picker) take(i int) {
-	p.chosen.add(p.pts[i])
-	p.index = append(p.index, i)
-	p.gains[i] = -1
-	for j, u := range p.upper {
-		if p.gains[j] > 0 && below(p.pts[i], u) {
+// take moves point i into the selection.
+func (p *picker) take(i int, lazy bool) {
+	p.index = slices.Insert(p.index, p.chosen.add(p.pts[i]), i)
+	p.gains[i], p.stale[i] = -1, false
+	for j := next(p.upper, p.pts[i], 0, true); j < len(p.pts); j = next(p.upper, p.pts[i], j+1, true) {
+		switch {
+		case p.gains[j] < 0:
+		case lazy:
+			p.stale[j] = true
+		default:
 			p.update(j)
 		}
 	}
 }
 
+// leave takes the c-th chosen point out again.
 func (p *picker) leave(c int) {
 	i := p.index[c]
-	last := len(p.index) - 1
-	p.index[c] = p.index[last]
-	p.index = p.index[:last]
+	p.index = slices.Delete(p.index, c, c+1)
 	p.chosen.remove(c)
-	p.gains[i] = 0
-	for j, g := range p.gains {
-		// A gain of 0 has no box to tell by: what covered j may have been i.
-		if g >= 0 && (g == 0 || within(p.pts[i], p.upper[j])) {
+	copy(p.corner(i), p.chosen.ref)
+	p.update(i)
+	for j := next(p.upper, p.pts[i], 0, false); j < len(p.pts); j = next(p.upper, p.pts[i], j+1, false) {
+		if p.gains[j] >= 0 && j != i {
+			loosen(p.corner(j), p.pts[i], p.chosen.ref)
 			p.update(j)
 		}
 	}
 }
 
-// exchange swaps single points until a whole round brings nothing.
+// exchange swaps single points until no swap pays. A point is tried again
+// only after something in its neighbourhood has changed.
 func (p *picker) exchange() {
 	const rounds = 20
+	settled := make([]bool, len(p.pts))
 	for range rounds {
 		swapped := false
 		for _, i := range slices.Clone(p.index) {
+			if settled[i] {
+				continue
+			}
 			c := slices.Index(p.index, i)
 			lost := p.chosen.alone[c]
 			p.leave(c)
 			b := p.best()
-			if p.gains[b] > lost*(1+1e-9) {
-				swapped = true
-			} else {
+			if p.gains[b] <= lost*(1+1e-9) {
 				b = i
+			} else {
+				swapped = true
+				for _, j := range p.index {
+					settled[j] = settled[j] && !p.near(j, i) && !p.near(j, b)
+				}
 			}
-			p.take(b)
+			p.take(b, false)
+			settled[b] = true
 		}
 		if !swapped {
 			return
 		}
 	}
+}
+
+// near reports whether the box of chosen point j reaches to point i.
+func (p *picker) near(j, i int) bool {
+	return within(p.pts[i], p.chosen.corner(slices.Index(p.index, j)))
 }
 
 // scatter chooses k points that are far from each other: the best in each

@@ -16,7 +16,7 @@ const maxShareGoals = 4
 type population struct {
 	m     int
 	front []*genome // feasible and not dominated within the population
-	share shares    // of front, index by index; unused above maxShareGoals
+	share shares    // of front, index by index; plain above maxShareGoals
 	rest  []*genome // dominated, then infeasible designs, best first
 	ref   []float64 // reference of the whole search, nil at first
 
@@ -31,6 +31,7 @@ func newPopulation(goals int) *population {
 		p.at[k] = 1
 	}
 	p.share.reset(p.at)
+	p.share.plain = goals > maxShareGoals
 	return p
 }
 
@@ -39,11 +40,9 @@ func (p *population) ranked(dst []*genome) []*genome {
 	dst = append(dst[:0], p.front...)
 	for i, g := range p.front {
 		g.rank = 0
-		if p.m <= maxShareGoals {
-			g.crowd = p.share.alone[i]
-		}
+		g.crowd = p.share.alone[i]
 	}
-	if p.m > maxShareGoals {
+	if p.share.plain && len(dst) > 0 {
 		crowding(dst)
 	}
 	slices.SortStableFunc(dst, func(a, b *genome) int { return cmp.Compare(b.crowd, a.crowd) })
@@ -87,31 +86,26 @@ func (p *population) selectBest(newcomers []*genome, n int) {
 // enter adds a feasible design to the front, or to beaten; what it beats
 // moves from the front to beaten.
 func (p *population) enter(g *genome, beaten []*genome) []*genome {
-	for i := 0; i < len(p.front); i++ {
-		switch compare(p.front[i].goals, g.goals) {
+	for i := 0; ; {
+		var r int
+		switch i, r = related(p.share.pts, g.goals, i); r {
 		case -1:
 			return append(beaten, g)
 		case 1:
 			beaten = append(beaten, p.front[i])
 			p.leave(i)
-			i--
+			continue
 		}
+		break
 	}
-	p.front = append(p.front, g)
-	if p.m <= maxShareGoals {
-		p.share.add(g.goals)
-	}
+	p.front = slices.Insert(p.front, p.share.add(g.goals), g)
 	return beaten
 }
 
-// leave removes a member of the front; the last one takes its place.
+// leave removes a member of the front.
 func (p *population) leave(i int) {
-	last := len(p.front) - 1
-	p.front[i] = p.front[last]
-	p.front = p.front[:last]
-	if p.m <= maxShareGoals {
-		p.share.remove(i)
-	}
+	p.front = slices.Delete(p.front, i, i+1)
+	p.share.remove(i)
 }
 
 // scale sets the reference of the shares: that of the search, so that the
@@ -119,7 +113,7 @@ func (p *population) leave(i int) {
 // least a tenth and at most ten times the front's range beyond its worst
 // values, since a reference out there would leave the rim only.
 func (p *population) scale() {
-	if len(p.front) == 0 || p.m > maxShareGoals {
+	if len(p.front) == 0 {
 		return
 	}
 	copy(p.low, p.front[0].goals)
@@ -153,13 +147,13 @@ func margin(low, high float64) float64 {
 
 // reduce cuts the front to n designs.
 func (p *population) reduce(n int) {
-	if p.m > maxShareGoals {
-		if len(p.front) > n {
-			crowding(p.front)
-			slices.SortStableFunc(p.front, func(a, b *genome) int { return cmp.Compare(b.crowd, a.crowd) })
-			p.front = p.front[:n]
+	if p.share.plain && len(p.front) > n {
+		crowding(p.front)
+		byCrowd := slices.Clone(p.front)
+		slices.SortStableFunc(byCrowd, func(a, b *genome) int { return cmp.Compare(a.crowd, b.crowd) })
+		for _, g := range byCrowd[:len(byCrowd)-n] {
+			p.leave(slices.Index(p.front, g))
 		}
-		return
 	}
 	for len(p.front) > n {
 		p.leave(p.share.least())

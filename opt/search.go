@@ -57,7 +57,7 @@ type run struct {
 func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	r := &run{ctx: ctx, problem: p, set: s, phase: "sample"}
 	r.ev = newEvaluator(ctx, p, s.Workers)
-	r.archive.Limit = archiveLimit(s.Front, p.Goals)
+	r.archive.Limit = archiveLimit(s.Front)
 	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
 	r.reference = slices.Clone(s.Reference)
 	r.start, r.grown = sizes(p, &s)
@@ -72,15 +72,9 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	return r
 }
 
-// archiveLimit bounds the cost of a newcomer.
-func archiveLimit(front, goals int) int {
-	switch {
-	case goals <= 2:
-		return max(1000, 3*front)
-	default:
-		return max(2000, 5*front)
-	}
-}
+// archiveLimit bounds what a newcomer costs: enough designs that the choice of
+// the front loses nothing that shows.
+func archiveLimit(front int) int { return max(1000, 5*front) }
 
 // evolve lets eaopt run the generations: one population per space, which it
 // sets up, applies the model to side by side, and orders.
