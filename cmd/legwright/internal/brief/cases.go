@@ -8,7 +8,7 @@ import (
 	"legwright/cmd/legwright/internal/units"
 )
 
-const maxCases = 10_000
+const maxCases = 1000 // also of loads in a case
 
 // caseKeys are the keys of a case.
 func caseKeys() []key {
@@ -29,7 +29,7 @@ func readCases(r *reader, n *node) any {
 	var cases []Case
 	seen := map[string]bool{}
 	for i, item := range items {
-		c := Case{Name: fmt.Sprintf("case %d", i+1), Speeds: still}
+		c := Case{Name: fmt.Sprintf("case %d", i+1), Speeds: still()}
 		m := r.mapping(item, caseKeys())
 		take(m, "name", &c.Name)
 		take(m, "loads", &c.Loads)
@@ -58,12 +58,19 @@ func readCaseZones(r *reader, n *node) any {
 	}
 	slices.Sort(all)
 	var out []string
-	for _, item := range r.items(n, "a list of zone names") {
+	items := r.items(n, "a list of zone names")
+	if len(items) > len(all) {
+		r.refuse(n, fmt.Sprintf("has %d names for %d zones", len(items), len(all)), "name each zone once")
+		return nil
+	}
+	for _, item := range items {
 		name, ok := r.oneOf(item, "zone", all)
 		if ok && slices.Contains(out, name) {
 			r.refuse(item, fmt.Sprintf("%q is given twice", name), "name each zone once")
 		}
-		out = append(out, name)
+		if ok {
+			out = append(out, name)
+		}
 	}
 	return out
 }
@@ -92,7 +99,7 @@ func readLoads(r *reader, n *node) any {
 	}
 	var loads []CaseLoad
 	for i, item := range items {
-		l := CaseLoad{Name: fmt.Sprintf("load %d", i+1), Acceleration: Acceleration{Linear: none, Angular: none}}
+		l := CaseLoad{Name: fmt.Sprintf("load %d", i+1), Acceleration: Acceleration{Linear: none(), Angular: none()}}
 		m := r.mapping(item, loadKeys())
 		take(m, "name", &l.Name)
 		take(m, "mass", &l.Mass)
@@ -180,10 +187,9 @@ func possible(t [6]float64) bool {
 		min(xx*yy-xy*xy, xx*zz-xz*xz, yy*zz-yz*yz, det) >= -rounding
 }
 
-var (
-	none  = Set{Kind: NoSet}
-	still = Speeds{Linear: none, Angular: none}
-)
+func none() Set { return Set{Kind: NoSet} }
+
+func still() Speeds { return Speeds{Linear: none(), Angular: none()} }
 
 func accelerationKeys() []key {
 	return []key{
@@ -198,7 +204,7 @@ func accelerationKeys() []key {
 
 func readAcceleration(r *reader, n *node) any {
 	m := r.mapping(n, accelerationKeys())
-	a := Acceleration{Linear: none, Angular: none}
+	a := Acceleration{Linear: none(), Angular: none()}
 	take(m, "linear", &a.Linear)
 	take(m, "angular", &a.Angular)
 	take(m, "at", &a.AtTool)
@@ -217,7 +223,7 @@ func speedKeys() []key {
 
 func readSpeeds(r *reader, n *node) any {
 	m := r.mapping(n, speedKeys())
-	s := still
+	s := still()
 	take(m, "linear", &s.Linear)
 	take(m, "angular", &s.Angular)
 	if m != nil {
@@ -260,7 +266,7 @@ func readSet(k units.Kind) func(*reader, *node) any {
 			case !ok:
 				return nil
 			case half == [3]float64{}:
-				return none
+				return none()
 			}
 			return Set{Kind: BoxSet, Half: half}
 		}
@@ -269,7 +275,7 @@ func readSet(k units.Kind) func(*reader, *node) any {
 		case !ok || !r.signed(n, v, notNegative):
 			return nil
 		case v == 0:
-			return none
+			return none()
 		}
 		return Set{Kind: BallSet, Radius: v}
 	}

@@ -190,7 +190,7 @@ func (r *reader) designDimensions(n *node, f *KnownFamily, o outright) (out []De
 				out = append(out, DesignDimension{d.Name, d.Kind, values})
 			}
 		case instead == nil && !d.Optional && !excused[d.Name]:
-			r.missing(n, d.Name)
+			r.lacks(n, d.Name, d.Name+": "+d.Kind.Sample())
 		}
 	}
 	return out

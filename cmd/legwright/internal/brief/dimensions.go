@@ -113,7 +113,7 @@ func (r *reader) family(n *node, f *KnownFamily) Family {
 				out.Dimensions = append(out.Dimensions, dim)
 			}
 		} else if !d.Optional && !excused[d.Name] {
-			r.missing(n, d.Name)
+			r.lacks(n, d.Name, d.Name+": "+d.Kind.Sample())
 		}
 	}
 	return out

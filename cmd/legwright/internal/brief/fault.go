@@ -3,6 +3,7 @@ package brief
 import (
 	"cmp"
 	"fmt"
+	"math"
 	"slices"
 	"strings"
 )
@@ -21,6 +22,14 @@ func (p Position) String() string {
 		return p.File
 	}
 	return fmt.Sprintf("%s:%d:%d", p.File, p.Line, p.Column)
+}
+
+// order is the line for sorting.
+func (p Position) order() int {
+	if p.Line == 0 {
+		return math.MaxInt
+	}
+	return p.Line
 }
 
 // Fault is one thing wrong with a file.
@@ -57,7 +66,8 @@ func (fs Faults) Error() string {
 	return strings.Join(lines, "\n")
 }
 
-// Sort orders the faults by file and place: the first file named stays first.
+// Sort orders the faults by file and place: the first file named stays first, and what concerns a
+// file as a whole comes after its lines.
 func (fs Faults) Sort() {
 	files := map[string]int{}
 	for _, f := range fs {
@@ -68,7 +78,7 @@ func (fs Faults) Sort() {
 	slices.SortStableFunc(fs, func(a, b Fault) int {
 		return cmp.Or(
 			cmp.Compare(files[a.At.File], files[b.At.File]),
-			cmp.Compare(a.At.Line, b.At.Line),
+			cmp.Compare(a.At.order(), b.At.order()),
 			cmp.Compare(a.At.Column, b.At.Column),
 		)
 	})

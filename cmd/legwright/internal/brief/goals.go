@@ -122,7 +122,12 @@ func limitKeys() []key {
 
 func readLimits(r *reader, n *node) any {
 	var limits []Limit
-	for _, item := range r.items(n, "a list of limits: [{measure: coverage, at_least: 100 %}]") {
+	items := r.items(n, "a list of limits: [{measure: coverage, at_least: 100 %}]")
+	if most := 2 * len(r.known.Measures); len(items) > most {
+		r.refuse(n, fmt.Sprintf("has %d limits, more than two for each measure", len(items)), "keep one at_least and one at_most for each measure")
+		return nil
+	}
+	for _, item := range items {
 		m := r.mapping(item, limitKeys())
 		if m == nil {
 			continue
@@ -149,6 +154,7 @@ func readLimits(r *reader, n *node) any {
 			continue
 		}
 		l := Limit{measure.Name, least, bound, measure.Kind}
+		r.possibleBound(low, l, measure)
 		r.clash(low, l, limits)
 		limits = append(limits, l)
 	}
@@ -159,6 +165,13 @@ func readLimits(r *reader, n *node) any {
 func (r *reader) anyQuantity(n *node) {
 	if n.shape != text && n.shape != number || n.shape == text && blank(n.text) {
 		r.wrong(n, "a bound, such as 3 kN")
+	}
+}
+
+// possibleBound refuses a bound beyond what a share can be.
+func (r *reader) possibleBound(n *node, l Limit, m *KnownMeasure) {
+	if m.Share && (l.Bound < 0 || l.Bound > 1) {
+		r.refuse(n, fmt.Sprintf("%s lies from 0 to 1, never at %s", l.Measure, n.text), "write a bound from 0 to 1, or from 0 % to 100 %")
 	}
 }
 

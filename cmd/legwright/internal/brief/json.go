@@ -9,7 +9,7 @@ import (
 
 // parseJSON reads one JSON value.
 func parseJSON(file string, data []byte) (*node, error) {
-	p := &jsonParser{file: file, data: data, d: json.NewDecoder(bytes.NewReader(data))}
+	p := &jsonParser{data: data, locator: locator{file: file, data: data}, d: json.NewDecoder(bytes.NewReader(data))}
 	p.d.UseNumber()
 	n, err := p.value(0)
 	if err != nil {
@@ -17,16 +17,16 @@ func parseJSON(file string, data []byte) (*node, error) {
 	}
 	end := int(p.d.InputOffset())
 	if rest := bytes.TrimLeft(data[end:], " \t\r\n"); len(rest) > 0 {
-		return nil, Fault{position(file, data, len(data)-len(rest)), "", "something follows the end of the value", "keep one value in a file"}
+		return nil, Fault{p.locator.at(len(data) - len(rest)), "", "something follows the end of the value", "keep one value in a file"}
 	}
 	return n, nil
 }
 
 type jsonParser struct {
-	file string
-	data []byte
-	d    *json.Decoder
-	from int // where the token begins that was asked for last
+	data    []byte
+	locator locator
+	d       *json.Decoder
+	from    int // where the token begins that was asked for last
 }
 
 // fault gives a syntax error its place.
@@ -43,7 +43,7 @@ func (p *jsonParser) fault(err error) error {
 	case errors.Is(err, io.EOF), errors.Is(err, io.ErrUnexpectedEOF):
 		offset, what = len(p.data), "the file ends too early"
 	}
-	return Fault{position(p.file, p.data, offset), "", "not readable as JSON: " + what, "check commas, brackets and quotes around here"}
+	return Fault{p.locator.at(offset), "", "not readable as JSON: " + what, "check commas, brackets and quotes around here"}
 }
 
 // next gives the next token and where it begins.
@@ -54,7 +54,7 @@ func (p *jsonParser) next() (json.Token, Position, error) {
 	}
 	p.from = from
 	t, err := p.d.Token()
-	return t, position(p.file, p.data, from), err
+	return t, p.locator.at(from), err
 }
 
 func (p *jsonParser) value(depth int) (*node, error) {

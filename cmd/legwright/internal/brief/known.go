@@ -50,6 +50,7 @@ type KnownMeasure struct {
 	Kind     units.Kind
 	Sense    Sense    // the way in which it is better; "" if either may be wanted
 	Families []string // that have it; nil: all
+	Share    bool     // lies from 0 to 1
 	Needs    []string // keys of the brief without which it has no value, as "actuator.stiffness"
 }
 

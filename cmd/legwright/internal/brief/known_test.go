@@ -40,7 +40,7 @@ func known() Known {
 				length("shoulder_radius"), length("arm"), length("rod"), placed(length("home_height"), PlacesHome)}},
 		},
 		Measures: []KnownMeasure{
-			{Name: "coverage", Kind: units.Ratio, Sense: Maximise},
+			{Name: "coverage", Kind: units.Ratio, Sense: Maximise, Share: true},
 			{Name: "conditioning", Kind: units.Ratio, Sense: Maximise},
 			{Name: "leg_force", Kind: units.Force, Sense: Minimise, Families: []string{"6-UPS", "6-PUS", "3-RPR"}},
 			{Name: "motor_torque", Kind: units.Torque, Sense: Minimise, Families: []string{"6-RUS", "delta"}},

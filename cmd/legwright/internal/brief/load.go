@@ -73,7 +73,7 @@ func (r *reader) through(file string, data []byte, read func(*node) map[string]a
 	case errors.As(err, &f):
 		return Faults{f}
 	case len(r.faults) > 0:
-		return r.faults.Err()
+		return r.err()
 	case err != nil:
 		return fmt.Errorf("brief: %s: %w", file, err)
 	}

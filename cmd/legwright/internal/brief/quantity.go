@@ -16,11 +16,11 @@ func (r *reader) quantity(n *node, kinds ...units.Kind) (float64, units.Kind, bo
 		r.wrong(n, "a "+kinds[0].String()+", such as "+kinds[0].Sample())
 		return 0, 0, false
 	}
-	if bare && n.shape == text && plainNumber.MatchString(n.text) {
+	if bare && n.shape == text && units.IsNumber(n.text) {
 		r.refuse(n, fmt.Sprintf("%q is text", n.text), "write the number without quotes")
 		return 0, 0, false
 	}
-	if bare && n.shape == number && !plainNumber.MatchString(n.text) {
+	if bare && n.shape == number && !units.IsNumber(n.text) {
 		r.refuse(n, fmt.Sprintf("%s is not a finite decimal number", short(n.text)), "write "+kinds[0].Sample())
 		return 0, 0, false
 	}
@@ -40,8 +40,6 @@ func (r *reader) quantity(n *node, kinds ...units.Kind) (float64, units.Kind, bo
 	}
 	return v, k, true
 }
-
-var plainNumber = regexp.MustCompile(`^[+-]?([0-9]+\.?[0-9]*|\.[0-9]+)([eE][+-]?[0-9]+)?$`)
 
 func blank(s string) bool {
 	for _, c := range s {

@@ -5,7 +5,7 @@ import (
 	"strings"
 )
 
-// maxFaults bounds how many faults are collected; the last one then says so.
+// maxFaults bounds how many faults are told; the others are counted.
 const maxFaults = 500
 
 // reader checks a tree against tables of keys and collects values and faults.
@@ -13,6 +13,7 @@ type reader struct {
 	known  *Known
 	places places
 	faults Faults
+	more   int // faults beyond the bound
 
 	families []*KnownFamily  // of the file, as far as known
 	zones    map[string]bool // names of all zones, faulty ones included
@@ -48,9 +49,22 @@ func newReader(file string, known *Known) *reader {
 }
 
 func (r *reader) fault(at Position, path, problem, remedy string) {
-	if len(r.faults) < maxFaults {
-		r.faults = append(r.faults, Fault{at, path, problem, remedy})
+	if r.full() {
+		r.more++
+		return
 	}
+	r.faults = append(r.faults, Fault{at, path, problem, remedy})
+}
+
+// full reports whether further faults are only counted.
+func (r *reader) full() bool { return len(r.faults) >= maxFaults }
+
+// err is all the faults, nil if there are none.
+func (r *reader) err() error {
+	if r.more > 0 {
+		r.faults = append(r.faults, Fault{Position{File: r.places.file}, "", fmt.Sprintf("%d more faults follow", r.more), "mend these first"})
+	}
+	return r.faults.Err()
 }
 
 // refuse notes a fault of the value.
@@ -175,6 +189,10 @@ func (r *reader) strangers(n *node, names []string) map[string]bool {
 		if contains(names, e.name) {
 			continue
 		}
+		if r.full() {
+			r.more++
+			continue
+		}
 		if c := near(e.name, names); c != "" {
 			excused[c] = true
 		}
@@ -195,12 +213,15 @@ func contains(names []string, name string) bool {
 }
 
 // missing notes that the mapping lacks a key.
-func (r *reader) missing(n *node, name string) {
+func (r *reader) missing(n *node, name string) { r.lacks(n, name, name) }
+
+// lacks notes that the mapping lacks a key, with what to add.
+func (r *reader) lacks(n *node, name, add string) {
 	path := name
 	if n.path != "" {
 		path = n.path + "." + name
 	}
-	r.fault(n.key, path, "is missing", "add "+name)
+	r.fault(n.key, path, "is missing", "add "+add)
 }
 
 // items checks that the value is a list that is not empty.
@@ -229,6 +250,10 @@ func (r *reader) oneOf(n *node, what string, names []string) (string, bool) {
 	s, ok := r.word(n, "one of "+strings.Join(names, ", "))
 	if !ok {
 		return "", false
+	}
+	if !contains(names, s) && r.full() {
+		r.more++
+		return s, false
 	}
 	if !contains(names, s) {
 		r.refuse(n, fmt.Sprintf("unknown %s %q", what, short(s)), suggest(s, names))

@@ -166,6 +166,8 @@ var refused = []struct {
 	{"limit unit", "goals:", "limits: [{measure: footprint, at_most: 2 N}]\ngoals:", `N is a unit of force, not of length`},
 	{"limit twice", "goals:", "limits: [{measure: footprint, at_most: 2 m}, {measure: footprint, at_most: 3 m}]\ngoals:", `footprint already has this bound`},
 	{"limits that clash", "goals:", "limits: [{measure: stroke, at_most: 2 m}, {measure: stroke, at_least: 3 m}]\ngoals:", `no value of stroke holds this and the other bound`},
+	{"impossible limit", "goals:", "limits: [{measure: coverage, at_least: 120 %}]\ngoals:", `b.yaml:4:40: limits[0].at_least: coverage lies from 0 to 1, never at 120 %`},
+	{"many limits", "goals:", "limits: [" + strings.Repeat("{measure: footprint, at_most: 2 m}, ", 30) + "]\ngoals:", `has 30 limits, more than two for each measure`},
 	{"weight of no goal", "goals:", "ranking: {weights: {footprint: 1}}\ngoals:", `ranking.weights.footprint: footprint is no goal`},
 	{"weight misspelt", "goals:", "ranking: {weights: {conditionning: 1}}\ngoals:", `unknown measure "conditionning"; did you mean conditioning?`},
 	{"negative weight", "goals:", "ranking: {weights: {conditioning: -1}}\ngoals:", `-1 is below 0`},

@@ -1,7 +1,9 @@
 package brief
 
 import (
+	"bytes"
 	"errors"
+	"fmt"
 	"slices"
 	"strings"
 
@@ -15,17 +17,23 @@ func parseTOML(file string, data []byte) (*node, error) {
 		return nil, tooDeep(position(file, data, at))
 	}
 	top := Position{file, 1, 1}
-	var all map[string]any
-	invalid := toml.Unmarshal(data, &all) // the library's own verdict, dates and escapes included
-	t := &tomlParser{file: file, data: data, root: &node{shape: mapping, key: top, at: top}}
-	t.current, t.headed = t.root, map[*node]bool{}
+	t := &tomlParser{
+		data:    data,
+		locator: locator{file: file, data: data},
+		root:    &node{shape: mapping, key: top, at: top},
+		headed:  map[*node]bool{},
+		child:   map[childKey]*node{},
+	}
+	t.current = t.root
 	t.p.Reset(data)
-	for t.p.NextExpression() {
+	for t.large == nil && t.p.NextExpression() {
 		t.expression(t.p.Expression())
 	}
-	if t.deep != nil {
-		return nil, *t.deep
+	if t.large != nil {
+		return nil, *t.large
 	}
+	var all map[string]any
+	invalid := toml.Unmarshal(data, &all) // the library's own verdict, dates and escapes included
 	if t.p.Error() == nil && repeats(t.root) {
 		return t.root, nil // the reader of the mapping names every key given twice, with its place
 	}
@@ -33,12 +41,21 @@ func parseTOML(file string, data []byte) (*node, error) {
 	if errors.As(invalid, &de) {
 		line, column := de.Position()
 		what := strings.TrimPrefix(de.Error(), "toml: ")
-		return nil, Fault{Position{file, line, column}, "", "not readable as TOML: " + what, `check brackets and quotes (quantities are strings: "650 mm")`}
+		return nil, Fault{inCharacters(file, data, line, column), "", "not readable as TOML: " + what, `check brackets and quotes (quantities are strings: "650 mm")`}
 	}
 	if invalid != nil {
 		return nil, Fault{top, "", "not readable as TOML: " + invalid.Error(), "give each table and key once"}
 	}
 	return t.root, nil
+}
+
+// inCharacters gives the position of a column in bytes.
+func inCharacters(file string, data []byte, line, column int) Position {
+	offset := 0
+	for range line - 1 {
+		offset += bytes.IndexByte(data[offset:], '\n') + 1
+	}
+	return position(file, data, offset+column-1)
 }
 
 // repeats reports whether a mapping of the tree has a key twice.
@@ -52,6 +69,9 @@ func repeats(n *node) bool {
 	}
 	return slices.ContainsFunc(n.items, repeats)
 }
+
+// maxKeys bounds the keys and headers of a document; go-toml looks through the earlier ones at each.
+const maxKeys = 10_000
 
 // brackets finds nesting that would only exhaust the stack; brackets within strings count too,
 // which no sensible title notices.
@@ -73,14 +93,30 @@ func brackets(data []byte) (offset int, deep bool) {
 
 // tomlParser builds the tree from the expressions of the document in order.
 type tomlParser struct {
-	file    string
 	data    []byte
+	locator locator
 	p       unstable.Parser
 	root    *node
 	current *node          // table that keys go to
 	headed  map[*node]bool // tables that a header or a value has closed
-	cursor  int            // end of the last token read
-	deep    *Fault         // the first value that lies too deep
+	child   map[childKey]*node
+	cursor  int    // end of the last token read
+	keyed   int    // keys so far
+	large   *Fault // where the document grows too large or deep
+}
+
+// childKey finds the first value of a key in a table.
+type childKey struct {
+	in   *node
+	name string
+}
+
+// add puts a value into a table.
+func (t *tomlParser) add(in *node, name string, v *node) {
+	in.entries = append(in.entries, entry{name, v})
+	if _, ok := t.child[childKey{in, name}]; !ok {
+		t.child[childKey{in, name}] = v
+	}
 }
 
 func (t *tomlParser) expression(e *unstable.Node) {
@@ -98,11 +134,11 @@ func (t *tomlParser) header(e *unstable.Node) {
 	keys := t.keys(e)
 	for i, k := range keys {
 		last := i == len(keys)-1
-		next, ok := at.child(k.name)
+		next, ok := t.child[childKey{at, k.name}]
 		switch {
 		case !ok && last && e.Kind == unstable.ArrayTable:
 			next = &node{shape: list, key: k.at, at: k.at}
-			at.entries = append(at.entries, entry{k.name, next})
+			t.add(at, k.name, next)
 			ok = true
 		case !ok:
 			next = t.table(at, k)
@@ -129,7 +165,7 @@ func (t *tomlParser) header(e *unstable.Node) {
 // table adds a new table under the key.
 func (t *tomlParser) table(in *node, k tomlKey) *node {
 	n := &node{shape: mapping, key: k.at, at: k.at}
-	in.entries = append(in.entries, entry{k.name, n})
+	t.add(in, k.name, n)
 	return n
 }
 
@@ -143,7 +179,14 @@ func (t *tomlParser) keys(e *unstable.Node) (ks []tomlKey) {
 	for it := e.Key(); it.Next(); {
 		raw := it.Node().Raw
 		t.cursor = int(raw.Offset + raw.Length)
-		ks = append(ks, tomlKey{string(it.Node().Data), position(t.file, t.data, int(raw.Offset))})
+		ks = append(ks, tomlKey{string(it.Node().Data), t.locator.at(int(raw.Offset))})
+		if len(ks) > maxDepth && t.large == nil {
+			f := tooDeep(ks[0].at)
+			t.large = &f
+		}
+	}
+	if t.keyed++; t.keyed > maxKeys && t.large == nil {
+		t.large = &Fault{ks[0].at, "", fmt.Sprintf("more than %d keys", maxKeys), "give recorded poses as a CSV file of their own"}
 	}
 	return ks
 }
@@ -151,7 +194,7 @@ func (t *tomlParser) keys(e *unstable.Node) (ks []tomlKey) {
 func (t *tomlParser) keyValue(in *node, e *unstable.Node, depth int) {
 	keys := t.keys(e)
 	for _, k := range keys[:len(keys)-1] {
-		next, ok := in.child(k.name)
+		next, ok := t.child[childKey{in, k.name}]
 		if !ok || next.shape != mapping || t.headed[next] {
 			next = t.table(in, k)
 		}
@@ -160,18 +203,18 @@ func (t *tomlParser) keyValue(in *node, e *unstable.Node, depth int) {
 	k := keys[len(keys)-1]
 	v := t.value(e.Value(), depth+1)
 	v.key = k.at
-	in.entries = append(in.entries, entry{k.name, v})
+	t.add(in, k.name, v)
 }
 
 // value reads a value, which begins at the next byte that is neither blank, comment nor separator:
 // the parser itself keeps no place for lists.
 func (t *tomlParser) value(e *unstable.Node, depth int) *node {
 	t.skip()
-	at := position(t.file, t.data, t.cursor)
+	at := t.locator.at(t.cursor)
 	n := &node{at: at, key: at, text: string(e.Data)}
-	if depth > maxDepth && t.deep == nil {
+	if depth > maxDepth && t.large == nil {
 		f := tooDeep(at)
-		t.deep = &f
+		t.large = &f
 	}
 	switch e.Kind {
 	case unstable.String:

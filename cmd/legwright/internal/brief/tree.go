@@ -132,11 +132,36 @@ func firstBad(data []byte) int {
 	return -1
 }
 
-// position gives line and column of a byte.
+// locator turns byte offsets into positions. It goes on from the last one, so that a file read from
+// front to back costs no more than one pass.
+type locator struct {
+	file         string
+	data         []byte
+	offset       int
+	line, column int // of offset, from 0
+}
+
+// at gives line and column of a byte.
+func (l *locator) at(offset int) Position {
+	offset = min(max(offset, 0), len(l.data))
+	if offset < l.offset {
+		l.offset, l.line, l.column = 0, 0, 0
+	}
+	passed := l.data[l.offset:offset]
+	if i := bytes.LastIndexByte(passed, '\n'); i >= 0 {
+		l.line += bytes.Count(passed, []byte("\n"))
+		l.column = 0
+		passed = passed[i+1:]
+	}
+	l.column += utf8.RuneCount(passed)
+	l.offset = offset
+	return Position{l.file, l.line + 1, l.column + 1}
+}
+
+// position gives line and column of one byte.
 func position(file string, data []byte, offset int) Position {
-	offset = min(max(offset, 0), len(data))
-	start := bytes.LastIndexByte(data[:offset], '\n') + 1
-	return Position{file, 1 + bytes.Count(data[:start], []byte("\n")), 1 + utf8.RuneCount(data[start:offset])}
+	l := locator{file: file, data: data}
+	return l.at(offset)
 }
 
 func tooDeep(at Position) Fault {

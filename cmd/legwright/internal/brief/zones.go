@@ -10,7 +10,7 @@ import (
 
 const (
 	maxPoses       = 1_000_000 // of all zones
-	maxZones       = 10_000
+	maxZones       = 1000
 	defaultSamples = 500
 )
 

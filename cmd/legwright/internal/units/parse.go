@@ -13,8 +13,6 @@ type Error struct{ Problem, Remedy string }
 
 func (e *Error) Error() string { return e.Problem + "; " + e.Remedy }
 
-var number = regexp.MustCompile(`^[+-]?([0-9]+\.?[0-9]*|\.[0-9]+)([eE][+-]?[0-9]+)?`)
-
 // based is a number in hexadecimal, octal or binary.
 var based = regexp.MustCompile(`^[+-]?0[xXoObB][0-9a-fA-F]`)
 
@@ -31,7 +29,7 @@ func Parse(text string, allowed ...Kind) (float64, Kind, error) {
 	if len(t) > maxText {
 		return 0, 0, &Error{"the text is too long for a quantity", "write one such as " + samples(allowed)}
 	}
-	num := number.FindString(t)
+	num := t[:numeral(t)]
 	symbol := strings.TrimSpace(t[len(num):])
 	if err := shape(t, num, symbol, allowed); err != nil {
 		return 0, 0, err
@@ -115,7 +113,7 @@ func words(ks []Kind) string {
 
 // Parse reads a bare decimal number as that many of the unit, in SI. The error is an *Error.
 func (u Unit) Parse(num string) (float64, error) {
-	if n := number.FindString(num); n == "" || n != num {
+	if !IsNumber(num) {
 		return 0, &Error{fmt.Sprintf("%q is not a finite number", num), "write a decimal number"}
 	}
 	mantissa, exp := strings.ToLower(num), 0

@@ -79,6 +79,19 @@ func TestParse(t *testing.T) {
 	}
 }
 
+func TestIsNumber(t *testing.T) {
+	for _, s := range []string{"0", "-1", "+1.", ".5", "1.5e-3", "2E+7", "007"} {
+		if !IsNumber(s) {
+			t.Errorf("%q is a number", s)
+		}
+	}
+	for _, s := range []string{"", "+", ".", "-.", "e5", "1e", "1e+", "1.2.3", "0x1", "1_0", "inf", "NaN", " 1", "1 "} {
+		if IsNumber(s) {
+			t.Errorf("%q is no number", s)
+		}
+	}
+}
+
 // A decimal number in a decimal unit is the float64 nearest to the quantity.
 func TestParseNearest(t *testing.T) {
 	for text, want := range map[string]float64{"0.3 mm": 0.0003, "1234.567 mm": 1.234567, "0.1 um": 1e-7, "70.7 kN": 70700, "14.3 %": 0.143, "3.3 N/um": 3.3e6} {
