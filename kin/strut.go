@@ -72,38 +72,40 @@ func (m *struts) Frame() *Frame { return &m.frame }
 // Move is the inverse kinematics of all legs in one pass: lengths, rows of the
 // inverse Jacobian and swing chords.
 func (m *struts) Move(p *Pose, s *State) {
-	r0, r1, r2, r3, r4, r5, r6, r7, r8 := p.R[0], p.R[1], p.R[2], p.R[3], p.R[4], p.R[5], p.R[6], p.R[7], p.R[8]
+	r := &p.R
 	px, py, pz := m.home.X+p.P.X, m.home.Y+p.P.Y, m.home.Z+p.P.Z
-	ic := m.invLc
 	sum := 0.0
-	legs := m.leg[:m.n]
-	for i := range legs {
-		l := &legs[i]
-		rx := r0*l.b.X + r1*l.b.Y + r2*l.b.Z
-		ry := r3*l.b.X + r4*l.b.Y + r5*l.b.Z
-		rz := r6*l.b.X + r7*l.b.Y + r8*l.b.Z
+	for i := range m.leg {
+		if i >= m.n {
+			break
+		}
+		l := &m.leg[i]
+		rx := r[0]*l.b.X + r[1]*l.b.Y + r[2]*l.b.Z
+		ry := r[3]*l.b.X + r[4]*l.b.Y + r[5]*l.b.Z
+		rz := r[6]*l.b.X + r[7]*l.b.Y + r[8]*l.b.Z
 		sx, sy, sz := px+rx-l.a.X, py+ry-l.a.Y, pz+rz-l.a.Z
 		q := math.Sqrt(sx*sx + sy*sy + sz*sz)
 		il := 1 / q
 		nx, ny, nz := sx*il, sy*il, sz*il
 		sum += q * il
 		s.Q[i] = q
+		il = m.invLc
 		row := (*[6]float64)(s.J[6*i : 6*i+6])
 		row[0], row[1], row[2] = nx, ny, nz
-		row[3] = (ry*nz - rz*ny) * ic
-		row[4] = (rz*nx - rx*nz) * ic
-		row[5] = (rx*ny - ry*nx) * ic
+		row[3] = (ry*nz - rz*ny) * il
+		row[4] = (rz*nx - rx*nz) * il
+		row[5] = (rx*ny - ry*nx) * il
 		dx, dy, dz := nx-l.ua.X, ny-l.ua.Y, nz-l.ua.Z
 		s.BaseChord[i] = dx*dx + dy*dy + dz*dz
-		ex := nx - (r0*l.ub.X + r1*l.ub.Y + r2*l.ub.Z)
-		ey := ny - (r3*l.ub.X + r4*l.ub.Y + r5*l.ub.Z)
-		ez := nz - (r6*l.ub.X + r7*l.ub.Y + r8*l.ub.Z)
+		ex := nx - (r[0]*l.ub.X + r[1]*l.ub.Y + r[2]*l.ub.Z)
+		ey := ny - (r[3]*l.ub.X + r[4]*l.ub.Y + r[5]*l.ub.Z)
+		ez := nz - (r[6]*l.ub.X + r[7]*l.ub.Y + r[8]*l.ub.Z)
 		s.PlatformChord[i] = ex*ex + ey*ey + ez*ez
 	}
 	s.Fail, s.Leg = Reached, -1
 	if sum-sum != 0 { // NaN: q·(1/q) is 1 but for a leg of no length (0·Inf), of infinite length (Inf·0) or of NaN
 		s.Fail = NotFinite
-		for i := range legs {
+		for i := range m.n {
 			if x := s.Q[i] * (1 / s.Q[i]); x-x != 0 {
 				s.Leg = i
 				return
