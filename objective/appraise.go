@@ -223,7 +223,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		}
 		low, span := a.Values[p.least], a.Values[p.span]
 		r := t.Actuator.Reserve
-		slack := Tolerance * math.Max(math.Abs(least), math.Abs(most))
+		slack := p.rangeSlack(a.Values)
 		if !p.derived(p.least) {
 			add(Verdict{Name: "shortest needed", Origin: "dimensions." + p.Family.Dimensions[p.least].Name, Unit: unit, AtLeast: true,
 				Bound: low + r, Value: least}, (low+r-least-slack)/math.Max(span, 1e-3))
@@ -232,7 +232,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 			add(Verdict{Name: "longest needed", Origin: "dimensions." + p.Family.Dimensions[p.span].Name, Unit: unit,
 				Bound: low + span - r, Value: most}, (most-low-span+r-slack)/math.Max(span, 1e-3))
 		}
-		if n := len(t.Actuator.Strokes); n > 0 && p.derived(p.span) {
+		if n := len(t.Actuator.Strokes); n > 0 && p.Specs[p.span].Kind == Sized {
 			last := t.Actuator.Strokes[n-1]
 			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: most + r - low}, (most+r-low-last)/last)
 		}

@@ -34,9 +34,9 @@ type Plan struct {
 	Specs  []Spec      // in the order of Family.Dimensions
 	Joints *kin.Joints // nil unless given outright
 
-	// Derive is set when the actuator range is given as ranges or steps that no goal
-	// or limit speaks of: the least travel is then derived for each design, within
-	// them, rather than searched.
+	// Derive is set when the actuator range is given as ranges or steps and no goal
+	// or limit could be served by anything but the longest leg_min and the shortest
+	// stroke: these are then derived for each design, within them, rather than searched.
 	Derive bool
 
 	least, span int // places of the dimensions that bound the actuator range
@@ -61,13 +61,19 @@ func searched(s *Spec) bool {
 // ordered tells whether a value can be derived within the specification.
 func ordered(s *Spec) bool { return s.Kind != Choices }
 
-// speaksOfRange tells whether a goal or limit is about the actuator range itself.
+// speaksOfRange tells whether a goal is about the actuator range itself, or a limit
+// on it may hold for another range than the one that deriving gives.
 func (t *Task) speaksOfRange() bool {
 	about := func(m *Measure) bool {
 		return m.Name == "stroke" || m.Name == "leg_min" || m.Name == "leg_max" || m.Name == "coverage"
 	}
 	for i := range t.Goals {
 		if about(t.Goals[i].Measure) {
+			return true
+		}
+	}
+	for i := range t.Limits {
+		if mends(&t.Limits[i]) {
 			return true
 		}
 	}

@@ -164,9 +164,9 @@ func (s *Screen) Judge(x []float64, r *Score) {
 	}
 }
 
-// mends tells whether a limit on a sized dimension can come to hold as more poses
-// are seen: leg_min then falls and the stroke grows, leg_max may do either as
-// both are rounded to steps or to stock.
+// mends tells whether a limit on the actuator range can come to hold as leg_min falls
+// and the stroke grows, as they do while more poses are seen; leg_max may go
+// either way, as both are rounded to steps or to stock.
 func mends(l *Limit) bool {
 	switch l.Measure.Name {
 	case "leg_min":

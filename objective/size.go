@@ -59,10 +59,17 @@ func (p *Plan) rangeExcess(a *Actuator, least, most float64, d []float64) float6
 	}
 	low, span := d[p.least], d[p.span]
 	e := math.Max(low+a.Reserve-least, most-(low+span-a.Reserve))
-	if slack := Tolerance * math.Max(math.Abs(least), math.Abs(most)); e <= slack {
+	if e <= p.rangeSlack(d) {
 		return math.Min(e, 0)
 	}
 	return e / math.Max(span, 1e-3)
+}
+
+// rangeSlack is how far a coordinate may leave the range by rounding. It depends on the range
+// alone, so that single poses and the whole duty are judged alike.
+func (p *Plan) rangeSlack(d []float64) float64 {
+	low, span := d[p.least], d[p.span]
+	return Tolerance * math.Max(math.Abs(low), math.Abs(low+span))
 }
 
 // deadExcess is how far the least coordinate falls short of the actuator's dead
@@ -71,7 +78,7 @@ func (p *Plan) deadExcess(a *Actuator, d []float64) float64 {
 	if p.least < 0 {
 		return 0
 	}
-	if len(a.Strokes) > 0 && p.derived(p.span) {
+	if len(a.Strokes) > 0 && p.Specs[p.span].Kind == Sized {
 		if last := a.Strokes[len(a.Strokes)-1]; d[p.span] > last*(1+Tolerance) {
 			return (d[p.span] - last) / last
 		}
