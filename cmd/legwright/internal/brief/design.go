@@ -100,7 +100,7 @@ func (d *Design) Fault(path, problem, remedy string) Fault {
 // designKeys are the keys of a design file, in the order in which they are read.
 func designKeys() []key {
 	return []key{
-		{name: "brief", read: readName},
+		{name: "brief", read: readPath},
 		{name: "id", read: readName},
 		{name: "title", read: readTitle},
 		{name: "family", need: true, read: readOneFamily},
@@ -109,6 +109,14 @@ func designKeys() []key {
 		{name: "home", read: readHome},
 		{name: "rails", read: readRails},
 	}
+}
+
+// readPath reads the path of a file.
+func readPath(r *reader, n *node) any {
+	if s, ok := r.word(n, "the path of a file"); ok {
+		return s
+	}
+	return nil
 }
 
 // readOneFamily reads the family of a design.
