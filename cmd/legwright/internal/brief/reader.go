@@ -186,11 +186,13 @@ func (r *reader) strangers(n *node, names []string) map[string]bool {
 		twice := seen[folded]
 		seen[folded] = true
 		r.places.at[e.value.path] = e.value.key
-		if contains(names, e.name) {
+		switch {
+		case contains(names, e.name):
 			continue
-		}
-		if r.full() {
-			r.more++
+		case r.full(): // spare the search for near names
+			if !twice {
+				r.more++
+			}
 			continue
 		}
 		if c := near(e.name, names); c != "" {
