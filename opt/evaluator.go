@@ -82,6 +82,13 @@ func (e *evaluator) finish(b *batch) {
 	}
 }
 
+// one evaluates a single design and waits for it.
+func (e *evaluator) one(g *genome) {
+	b := batch{designs: []*genome{g}}
+	e.submit(&b)
+	e.finish(&b)
+}
+
 // run evaluates g unless that was done before or the context has ended.
 func (e *evaluator) run(worker int, g *genome) {
 	if g.done || e.ctx.Err() != nil {

@@ -51,6 +51,8 @@ type run struct {
 	polished    int
 	history     []Point
 	next        int // evaluations at the next history point
+	rounds      int // of polish, done
+	aimed       int // polish jobs done
 	phase       string
 }
 
@@ -87,7 +89,6 @@ func (r *run) evolve() error {
 		l.first = l.collect(l.pending)
 	}
 	r.merge()
-	r.phase = "search"
 	if err := r.ctx.Err(); err != nil {
 		return err
 	}
@@ -132,7 +133,9 @@ func (r *run) spent() bool {
 
 // barrier runs between generations, on its own.
 func (r *run) barrier() {
+	r.phase = "search"
 	r.merge()
+	r.polish()
 	if r.evaluations >= r.next {
 		r.record()
 	}
