@@ -40,12 +40,16 @@ func jointSpacing() *Measure {
 	}
 }
 
+// spacing leaves out joints nearer than 1e-9 of the plate's size: a double joint
+// reached through two azimuths differs by rounding.
 func spacing(joints []kin.Vec) float64 {
-	least := inf
+	size, least := 0.0, inf
+	for _, a := range joints {
+		size = math.Max(size, norm(a))
+	}
 	for i, a := range joints {
 		for _, b := range joints[i+1:] {
-			d := sub(a, b)
-			if l := math.Sqrt(d.X*d.X + d.Y*d.Y + d.Z*d.Z); l > 0 && l < least {
+			if l := norm(sub(a, b)); l > 1e-9*size && l < least {
 				least = l
 			}
 		}

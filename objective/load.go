@@ -42,6 +42,14 @@ func (s *Set) Largest() float64 {
 	return math.Max(s.Half.X, math.Max(s.Half.Y, s.Half.Z))
 }
 
+// farthest is the largest norm of a vector of the set.
+func (s *Set) farthest() float64 {
+	if s.Kind == AnyWay {
+		return s.Radius
+	}
+	return norm(s.Half)
+}
+
 // Load is one thing that the actuators must carry, move or resist.
 type Load struct {
 	Name string

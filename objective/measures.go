@@ -31,3 +31,13 @@ func Measures() []*Measure {
 		homeHeight(),
 	}
 }
+
+// MeasureNamed is the measure of that name, or nil.
+func MeasureNamed(name string) *Measure {
+	for _, m := range Measures() {
+		if m.Name == name {
+			return m
+		}
+	}
+	return nil
+}

@@ -15,7 +15,8 @@ func (a *Appraisal) notes(t *Task, v *View) {
 	}
 	for c := range t.Cases {
 		k := &t.Cases[c]
-		w := k.Angular.Largest()
+		spin := followed(k.Angular, a.Machine.Frame().Freedoms)
+		w := spin.farthest()
 		if w == 0 {
 			continue
 		}
@@ -33,7 +34,11 @@ func (a *Appraisal) notes(t *Task, v *View) {
 		left := 0.0
 		for i := range k.Loads {
 			l := &k.Loads[i]
-			left += l.Mass * w * w * norm(sub(l.Centre, t.Tool))
+			r := sub(l.Centre, t.Tool)
+			if !a.Plan.Family.Has(kin.Roll) {
+				r.Z = 0 // distance from the axis of turning
+			}
+			left += l.Mass * w * w * norm(r)
 		}
 		if a.Plan.Family.Drive == kin.Linear && left > 0.05*effort {
 			note("case %q: terms in ω² are left out, and mass·ω²·|r| = %.3g N is more than 5 %% of the counted leg force %.3g N", k.Name, left, effort)
