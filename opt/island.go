@@ -28,7 +28,7 @@ func newIsland(r *run, index, budget int) *island {
 	p := r.problem
 	l := &island{pending: new(batch), run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals), left: budget, budget: budget}
 	rng := stream(r.set.Seed, streamSample, index, 0)
-	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, budget)}
+	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, min(budget, 1<<16))}
 	for k := range l.breed.share {
 		l.breed.share[k] = 1.0 / bred
 	}

@@ -1,9 +1,6 @@
 package opt
 
-import (
-	"cmp"
-	"slices"
-)
+import "slices"
 
 const (
 	historyPoints = 100
@@ -56,15 +53,14 @@ func (r *run) outcome() *Outcome {
 		for i := range all {
 			pts[i] = all[i].Goals
 		}
+		chosen := pick(pts, r.set.Front, r.reference)
+		slices.Sort(chosen) // the archive's order: by goals
 		var front [][]float64
-		for _, i := range pick(pts, r.set.Front, r.reference) {
+		for _, i := range chosen {
 			o.Front = append(o.Front, all[i])
 			front = append(front, pts[i])
 		}
 		o.Hypervolume = Hypervolume(front, r.reference)
-		slices.SortFunc(o.Front, func(a, b Design) int {
-			return cmp.Or(slices.Compare(a.Goals, b.Goals), cmp.Compare(a.Order, b.Order))
-		})
 	}
 	if n := len(r.history); r.evaluations > 0 && (n == 0 || r.history[n-1].Evaluations < r.evaluations) {
 		r.record()
