@@ -172,7 +172,7 @@ func (r *reader) design(n *node) map[string]any {
 	}
 	f := r.families[0]
 	if !given {
-		if slices.ContainsFunc(f.Dimensions, func(d KnownDimension) bool { return !d.Optional && o.replaces(d.Places) == nil }) {
+		if slices.ContainsFunc(f.Dimensions, func(d KnownDimension) bool { return !d.Optional && !d.Sizable && o.replaces(d.Places) == nil }) {
 			r.missing(n, "dimensions")
 		}
 		return m
@@ -197,7 +197,7 @@ func (r *reader) designDimensions(n *node, f *KnownFamily, o outright) (out []De
 			if values := r.designValues(v, d); values != nil {
 				out = append(out, DesignDimension{d.Name, d.Kind, values})
 			}
-		case instead == nil && !d.Optional && !excused[d.Name]:
+		case instead == nil && !d.Optional && !d.Sizable && !excused[d.Name]: // the brief may size it; locate needs no range
 			r.lacks(n, d.Name, d.Name+": "+d.Kind.Sample())
 		}
 	}

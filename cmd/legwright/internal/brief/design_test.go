@@ -63,7 +63,7 @@ func TestDesignRefused(t *testing.T) {
 		{"range", slider, "base_radius: 500 mm", "base_radius: [500 mm, 600 mm]", "a design has one value for each dimension"},
 		{"sized", slider, "travel: 300 mm", "travel: sized", "dimensions.travel: a design has one value"},
 		{"no unit", slider, "travel: 300 mm", "travel: 300", "dimensions.travel: 300 has no unit"},
-		{"dimension missing", slider, ", travel: 300 mm", "", "dimensions.travel: is missing"},
+		{"dimension missing", slider, ", rod_length: 1 m", "", "dimensions.rod_length: is missing"},
 		{"misspelt", slider, "rod_length", "rod_lenght", `unknown key "rod_lenght"; did you mean rod_length?`},
 		{"joints twice", pushed, "home_heading", "base_radius: 1 m, home_heading", "d.yaml:2:14: dimensions.base_radius: joints on line 3 gives it outright; leave one of them out"},
 		{"home twice", pushed, "joints:", "home: [0 m, 0 m, 0 m, 0 deg, 0 deg, 9 deg]\njoints:", "dimensions.home_heading: home on line 3 gives it outright"},

@@ -19,7 +19,7 @@ func Known() *brief.Known {
 		k.Families = append(k.Families, knownFamily(f))
 	}
 	for _, m := range objective.Measures() {
-		km := brief.KnownMeasure{Name: m.Name, Kind: MeasureKind(m), Needs: m.Inputs}
+		km := brief.KnownMeasure{Name: m.Name, Kind: MeasureKind(m), Needs: m.Inputs, Share: m.Most == 1}
 		switch m.Sense {
 		case objective.Larger:
 			km.Sense = brief.Maximise

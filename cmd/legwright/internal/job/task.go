@@ -62,20 +62,16 @@ func task(b *brief.Brief) *objective.Task {
 	for i := range b.Duty.Cases {
 		t.Cases = append(t.Cases, loadCase(&b.Duty.Cases[i], at))
 	}
-	measure := map[string]*objective.Measure{}
-	for _, m := range objective.Measures() {
-		measure[m.Name] = m
-	}
 	limited := false
 	for _, l := range b.Limits {
 		if l.Measure == "coverage" {
 			t.Coverage, limited = l.Bound, true
 			continue
 		}
-		t.Limits = append(t.Limits, objective.Limit{Measure: measure[l.Measure], AtLeast: l.AtLeast, Bound: l.Bound, Origin: "limits"})
+		t.Limits = append(t.Limits, objective.Limit{Measure: objective.MeasureNamed(l.Measure), AtLeast: l.AtLeast, Bound: l.Bound, Origin: "limits"})
 	}
 	for _, g := range b.Goals {
-		t.Goals = append(t.Goals, objective.Goal{Measure: measure[g.Measure], Maximise: g.Sense == brief.Maximise})
+		t.Goals = append(t.Goals, objective.Goal{Measure: objective.MeasureNamed(g.Measure), Maximise: g.Sense == brief.Maximise})
 		if g.Measure == "coverage" {
 			t.CoverageGoal = true
 			if !limited {
@@ -85,7 +81,7 @@ func task(b *brief.Brief) *objective.Task {
 	}
 	most := func(name, origin string, bound float64) {
 		if bound > 0 {
-			t.Limits = append(t.Limits, objective.Limit{Measure: measure[name], Bound: bound, Origin: origin})
+			t.Limits = append(t.Limits, objective.Limit{Measure: objective.MeasureNamed(name), Bound: bound, Origin: origin})
 		}
 	}
 	most("base_swing", "joints.base_swing", b.Joints.BaseSwing)
