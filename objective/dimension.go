@@ -29,9 +29,12 @@ func legMax() *Measure {
 }
 
 func homeHeight() *Measure {
-	return own("home_height", "height of the platform origin above the base origin at home", nil,
+	return own("home_height", "height of the platform origin above the base origin at home", rises,
 		func(d *Design) float64 { return d.Machine.Frame().Home.Z })
 }
+
+// rises tells whether machines of the family move along z.
+func rises(f *kin.Family) bool { return f.Has(kin.Z) }
 
 func footprint() *Measure {
 	return &Measure{
