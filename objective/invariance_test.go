@@ -41,7 +41,7 @@ func listedTask(rng *rand.Rand, f *kin.Family, set func(*rand.Rand, float64) Set
 
 // The order of the rows of a pose file changes no measure and no leg: bit by bit, averages included.
 func TestOrderOfRows(t *testing.T) {
-	eachFamily(t, func(t *testing.T, f *kin.Family) {
+	everyFamily(t, func(t *testing.T, f *kin.Family) {
 		rng := seeded(41)
 		for range 5 {
 			task := listedTask(rng, f, anyWay)
