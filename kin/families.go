@@ -4,7 +4,11 @@ package kin
 func Families() []*Family {
 	return []*Family{
 		sixUPS(),
+		sixRUS(),
+		sixPUS(),
 		threeRPR(),
+		delta(),
+		linearDelta(),
 	}
 }
 

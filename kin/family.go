@@ -46,6 +46,18 @@ type Joints struct {
 	Base, Platform []Vec // base frame, platform frame (m)
 	Home           Vec   // platform origin at home, base frame
 	HomeRot        Rot   // platform rotation at home
+
+	// Rails take the place of Base for families with carriages.
+	Rails []Rail
+
+	// Values are the family's dimension values, in the order of Dimensions, of which those that
+	// do not place joints (rod length, working mode) are read. Families of prismatic legs read none.
+	Values []float64
+}
+
+// Rail is the line on which a carriage moves. Its coordinate is 0 at Point and grows along Direction.
+type Rail struct {
+	Point, Direction Vec // base frame; Direction of any length but zero
 }
 
 // Starter is a duty for which the family's usual ranges hold good designs.
@@ -69,6 +81,7 @@ type Family struct {
 	Freedoms   []Freedom
 	Legs       int
 	Drive      Drive
+	Free       int // actuators, the last ones, that the dimensions of the roles Least and Span do not bound
 	Dimensions []Dimension
 	Starter    Starter
 	Sources    []string

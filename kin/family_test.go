@@ -140,10 +140,14 @@ func TestFrames(t *testing.T) {
 				near(t, "default characteristic length", f.Build(d, &kin.Setup{}).Frame().Length, d[i], 0)
 				for k, b := range fr.Platform {
 					near(t, "platform radius", math.Hypot(b.X, b.Y), d[i], 1e-15)
-					near(t, "base radius", math.Hypot(fr.Base[k].X, fr.Base[k].Y), d[f.Index("base_radius")], 1e-15)
+					for _, name := range []string{"base_radius", "shoulder_radius", "rail_radius"} {
+						if i := f.Index(name); i >= 0 {
+							near(t, name, math.Hypot(fr.Base[k].X, fr.Base[k].Y), d[i], 1e-15)
+						}
+					}
 				}
 				if f.Outright != nil {
-					m := f.Outright(outright(fr), &kin.Setup{})
+					m := f.Outright(outright(f, d, f.Build(d, offCentre())), &kin.Setup{})
 					near(t, "characteristic length of joints given outright", m.Frame().Length, d[i], 1e-15)
 				}
 			}

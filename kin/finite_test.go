@@ -49,11 +49,13 @@ func TestNotFinite(t *testing.T) {
 // A leg whose two joints coincide has no direction: Move names that leg.
 func TestLegOfNoLength(t *testing.T) {
 	for _, f := range kin.Families() {
-		if f.Outright == nil {
+		d := midRange(f)
+		m := f.Build(d, offCentre())
+		if f.Outright == nil || !prismatic(m) {
 			continue
 		}
 		for leg := range f.Legs {
-			j := outright(f.Build(midRange(f), offCentre()).Frame())
+			j := outright(f, d, m)
 			j.Home, j.HomeRot = kin.Vec{}, kin.Identity()
 			j.Base[leg] = kin.Vec{X: 0.5, Y: 0.125} // sums of powers of two are exact
 			j.Platform[leg] = kin.Vec{X: 0.75, Y: 0.125}

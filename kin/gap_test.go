@@ -71,11 +71,11 @@ func checkGap(t *testing.T, m kin.Machine, p kin.Pose, diameter float64) {
 }
 
 func TestGapAgainstBruteForce(t *testing.T) {
-	eachMachine(t, 300, func(t *testing.T, _ *rand.Rand, f *kin.Family, m kin.Machine, p kin.Pose) {
-		if f.Drive != kin.Linear {
+	eachMachine(t, 300, func(t *testing.T, _ *rand.Rand, x trial) {
+		if !prismatic(x.m) {
 			t.Skip("not a family of prismatic legs")
 		}
-		checkGap(t, m, p, offCentre().Diameter)
+		checkGap(t, x.m, x.p, offCentre().Diameter)
 	})
 }
 

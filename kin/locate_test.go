@@ -3,6 +3,7 @@ package kin_test
 import (
 	"math"
 	"math/rand/v2"
+	"slices"
 	"testing"
 
 	"legwright/kin"
@@ -122,14 +123,19 @@ func TestSixModesOfThePlanarStage(t *testing.T) {
 // not close to singular at the pose. 1e-9. The convergence rule is kept.
 func TestLocateInvertsMove(t *testing.T) {
 	tried := 0
-	eachMachine(t, 100, func(t *testing.T, rng *rand.Rand, f *kin.Family, m kin.Machine, p kin.Pose) {
+	eachMachine(t, 100, func(t *testing.T, rng *rand.Rand, x trial) {
+		f, m, p := x.f, x.m, x.p
 		s := moved(t, m, p)
 		if conditioning(t, m, s) < 0.01 {
 			return
 		}
 		tried++
 		q := s.Q[:f.Legs]
-		got, ok := kin.Locate(m, q, beside(rng, f.Freedoms, p, 0.02))
+		from := beside(rng, f.Freedoms, p, 0.02)
+		for !reaches(m, from) { // a leg of a drive and a rod may not
+			from = beside(rng, f.Freedoms, p, 0.02)
+		}
+		got, ok := kin.Locate(m, q, from)
 		if !ok {
 			t.Errorf("not located: residual %g after %d steps", got.Residual, got.Steps)
 			return
@@ -170,19 +176,25 @@ func TestLocateFailsHonestly(t *testing.T) {
 		far := kin.NewPose(kin.Coords{kin.X: nan})
 		turned := atHome()
 		turned.R[4] = nan
-		for name, c := range map[string]struct {
+		type try struct {
 			q    []float64
 			from kin.Pose
-		}{
-			"a leg of 10 m":      {with(0, 10), atHome()},
-			"a leg of -1 m":      {with(0, -1), atHome()},
-			"a leg of no length": {with(f.Legs-1, 0), atHome()},
-			"a NaN length":       {with(1, nan), atHome()},
-			"an infinite length": {with(1, inf), atHome()},
-			"a NaN start":        {q, far},
-			"a NaN rotation":     {q, turned},
-			"an infinite start":  {q, kin.NewPose(kin.Coords{kin.Y: inf})},
-		} {
+		}
+		tries := map[string]try{
+			"a leg of 10 m or 10 rad": {with(0, 10), atHome()},
+			"a NaN coordinate":        {with(1, nan), atHome()},
+			"an infinite coordinate":  {with(1, inf), atHome()},
+			"a NaN start":             {q, far},
+			"an infinite start":       {q, kin.NewPose(kin.Coords{kin.Y: inf})},
+		}
+		if prismatic(m) {
+			tries["a leg of -1 m"] = try{with(0, -1), atHome()}
+			tries["a leg of no length"] = try{with(f.Legs-1, 0), atHome()}
+		}
+		if slices.ContainsFunc(f.Freedoms, kin.Freedom.Angular) { // others do not look at the rotation
+			tries["a NaN rotation"] = try{q, turned}
+		}
+		for name, c := range tries {
 			p, ok := kin.Locate(m, c.q, c.from)
 			if ok {
 				t.Errorf("%s, %s: located with residual %g", f.Name, name, p.Residual)

@@ -29,8 +29,13 @@ type State struct {
 
 	// BaseChord and PlatformChord are the squared distances between the unit vector
 	// along the leg and the joint's mounting axis, 2-2cos(swing): exact near zero,
-	// where a cosine loses half its digits.
+	// where a cosine loses half its digits. Where a drive and a rod make a leg, the
+	// joint at the drive is measured in the drive's own frame (see rods.go).
 	BaseChord, PlatformChord [6]float64
+
+	// End and Rod are set for legs of a drive and a rod: where the rod leaves the crank
+	// or the carriage, base frame, and the unit vector along the rod to the platform.
+	End, Rod [6]Vec
 }
 
 // Machine is one geometry of some family.
@@ -70,8 +75,10 @@ type Machine interface {
 // Frame is what every machine tells of itself.
 type Frame struct {
 	Freedoms []Freedom // the family's own, in the order of Coords
-	Base     []Vec     // base joint centres, base frame
+	Base     []Vec     // base joint centres, base frame: also crank pivots, and rails where their coordinate is 0
 	Platform []Vec     // platform joint centres, platform frame
+	Rods     []float64 // lengths of the legs' rods; nil for prismatic legs, which are as long as their coordinate
+	Rails    []Vec     // unit directions of the rails, which start in Base; nil without rails
 	Home     Vec       // platform origin at home, base frame
 	HomeRot  Rot       // platform rotation at home
 	Tool     Vec       // tool point, platform frame (a planar family: in the plane of its legs)
@@ -114,7 +121,8 @@ const (
 type Setup struct {
 	Tool     Vec     // tool point, platform frame
 	Axis     Axis    // mounting axes of the passive joints
-	Diameter float64 // leg diameter, for Gap
+	Diameter float64 // leg diameter, for Gap; of the rods where drives and rods make the legs
+	Crank    float64 // diameter of cranks and arms, for Gap; 0 stands for Diameter
 	Length   float64 // characteristic length; 0 stands for the platform radius
 
 	// Neighbours makes Gap look only at legs that follow each other in number (and the

@@ -1,19 +1,12 @@
 package kin
 
-import "strconv"
-
 // The places of the dimensions of 3-RPR.
 const (
 	rprBaseRadius = iota
 	rprPlatformRadius
 	rprHomeHeading
-	rprAzimuth        // three of them
-	rprBaseOffset     = rprAzimuth + 3
-	rprPlatformOffset = rprBaseOffset + 3
+	rprAzimuth // three of them, then three base offsets and three platform offsets
 )
-
-// threeAzimuths are the azimuths of three-leg families unless a brief says otherwise.
-var threeAzimuths = [3]float64{90 * deg, 210 * deg, 330 * deg}
 
 func threeRPR() *Family {
 	f := &Family{
@@ -60,16 +53,8 @@ a leg drawn in completely, stroke how much longer it can become.`,
 			return newStruts([]Freedom{X, Y, Yaw}, j.Base, j.Platform, j.Home, j.HomeRot, &t)
 		},
 	}
-	for i, a := range threeAzimuths {
-		f.Dimensions = append(f.Dimensions, Dimension{Name: "leg_azimuths_" + strconv.Itoa(i+1), Unit: Radian, Joints: true,
-			Low: a, High: a, Optional: true, Default: a, Text: "azimuth of leg " + strconv.Itoa(i+1) + " from +x (written as a list of three: leg_azimuths)"})
-	}
-	for _, plate := range [2]string{"base", "platform"} {
-		for i := range 3 {
-			f.Dimensions = append(f.Dimensions, Dimension{Name: plate + "_offset_" + strconv.Itoa(i+1), Unit: Radian, Joints: true,
-				Optional: true, Text: "angle by which the " + plate + " joint of leg " + strconv.Itoa(i+1) + " stands off its azimuth, counter-clockwise"})
-		}
-	}
+	f.Dimensions = append(f.Dimensions, legAzimuths()...)
+	f.Dimensions = append(f.Dimensions, jointOffsets()...)
 	f.Dimensions = append(f.Dimensions,
 		Dimension{Name: "leg_min", Unit: Metre, Role: Least, Low: 0.1, High: 0.6,
 			Text: "distance between the joint centres of a leg when drawn in completely"},
@@ -77,16 +62,12 @@ a leg drawn in completely, stroke how much longer it can become.`,
 			Text: "travel of a leg between its two end stops"})
 	freedoms := f.Freedoms
 	f.Build = func(d []float64, s *Setup) Machine {
-		var a, b [3]float64
-		for i := range 3 {
-			a[i] = d[rprAzimuth+i] + d[rprBaseOffset+i]
-			b[i] = d[rprAzimuth+i] + d[rprPlatformOffset+i]
-		}
+		a, b := stageAzimuths(d[rprAzimuth:])
 		t := planarSetup(s)
 		if t.Length == 0 {
 			t.Length = d[rprPlatformRadius]
 		}
-		return newStruts(freedoms, onCircle(d[rprBaseRadius], a[:]), onCircle(d[rprPlatformRadius], b[:]),
+		return newStruts(freedoms, onCircle(d[rprBaseRadius], a), onCircle(d[rprPlatformRadius], b),
 			Vec{}, RPY(0, 0, d[rprHomeHeading]), &t)
 	}
 	return f

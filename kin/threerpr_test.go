@@ -138,9 +138,10 @@ func TestSimilarTrianglesAreSingularEverywhere(t *testing.T) {
 // where the singularity is not of the architecture.
 func TestSpatialSingularities(t *testing.T) {
 	six := kin.FamilyNamed("6-UPS")
-	fr := six.Build(sound(six), &kin.Setup{}).Frame()
+	built := six.Build(sound(six), &kin.Setup{})
+	fr := built.Frame()
 	moveOff := kin.NewPose(kin.Coords{0.1, 0.07, 0.05, 0.3, -0.2, 0.25})
-	parallel, meeting := outright(fr), outright(fr)
+	parallel, meeting := outright(six, sound(six), built), outright(six, sound(six), built)
 	point := kin.Vec{X: 0.1, Y: -0.2, Z: 2}
 	rng := seeded(15)
 	for i, a := range fr.Base {
