@@ -176,7 +176,7 @@ func TestFrontIsAFront(t *testing.T) {
 // The number of workers and of processors never changes a bit.
 func TestWorkersDoNotMatter(t *testing.T) {
 	for name, p := range battery() {
-		s := opt.Settings{Evaluations: 1200, Front: 50, Seed: 11, Polish: 0.2}
+		s := opt.Settings{Evaluations: 800, Front: 50, Seed: 11, Polish: 0.2}
 		var want *opt.Outcome
 		for _, c := range [][2]int{{1, 1}, {1, 4}, {2, 1}, {2, 2}, {8, 3}, {8, 2}} {
 			old := runtime.GOMAXPROCS(c[1])

@@ -22,7 +22,8 @@ func Hypervolume(pts [][]float64, ref []float64) float64 {
 // volume computes hypervolumes; its scratch is reused from call to call.
 type volume struct {
 	levels []level // one per dimension
-	solid  []xyz
+	solid  []xyz   // as seen from a point
+	base   []xyz   // of slice4
 	stairs []step
 }
 
@@ -95,6 +96,9 @@ func (v *volume) sweep(pts [][]float64, ref []float64) float64 {
 			v.solid = append(v.solid, xyz(p))
 		}
 		return v.sweep3(v.solid, xyz(ref))
+	}
+	if len(ref) == 4 {
+		return v.slice4(pts, ref)
 	}
 	return v.slice(pts, ref)
 }
@@ -207,6 +211,39 @@ func (v *volume) slice(pts [][]float64, ref []float64) float64 {
 		lv.flat, lv.pts = flat, lim
 		sum += float64((ref[m] - p[m]) * (box(p[:m], ref[:m]) - v.sweep(lim, ref[:m])))
 	}
+	return sum
+}
+
+// slice4 is slice for four goals. The points met so far stand in ascending
+// order of the third goal, and stay so as seen from a point: no sorting.
+func (v *volume) slice4(pts [][]float64, ref []float64) float64 {
+	slices.SortFunc(pts, func(a, b []float64) int { return cmp.Compare(a[3], b[3]) })
+	base, r := v.base[:0], xyz(ref)
+	sum := 0.0
+	for _, q := range pts {
+		p := xyz(q)
+		solid, at := v.solid[:0], 0
+		for i, b := range base {
+			solid = append(solid, xyz{max(p[0], b[0]), max(p[1], b[1]), max(p[2], b[2])})
+			if b[2] <= p[2] {
+				at = i + 1
+			}
+		}
+		v.solid = solid
+		area := box(p[:], r[:]) - v.rise(solid, r)
+		if area <= 0 {
+			continue
+		}
+		sum += float64((ref[3] - q[3]) * area)
+		keep := base[:at]
+		for _, b := range base[at:] { // what p beats is of no more use
+			if b[0] < p[0] || b[1] < p[1] {
+				keep = append(keep, b)
+			}
+		}
+		base = slices.Insert(keep, at, p)
+	}
+	v.base = base
 	return sum
 }
 

@@ -7,9 +7,10 @@ import (
 
 // pick returns the indices of at most k of the mutually non-dominated pts
 // that cover much hypervolume up to ref: greedily the point that adds most
-// (within 1-1/e of the best, Nemhauser, Wolsey, Fisher 1978), then, while it
-// pays, a chosen point is replaced by the one that adds most without it. With
-// more than 4 goals the points are spread instead, see scatter.
+// (within 1-1/e of the best, Nemhauser, Wolsey, Fisher 1978), then, with up to
+// 3 goals and while it pays, a chosen point is replaced by the one that adds
+// most without it. With more than 4 goals the points are spread instead, see
+// scatter.
 func pick(pts [][]float64, k int, ref []float64) []int {
 	if len(pts) <= k {
 		all := make([]int, len(pts))
@@ -31,12 +32,9 @@ func pick(pts [][]float64, k int, ref []float64) []int {
 	for len(p.index) < k {
 		p.take(p.best(), true)
 	}
-	for i, old := range p.stale {
-		if old && p.gains[i] >= 0 {
-			p.update(i)
-		}
+	if len(ref) <= 3 {
+		p.exchange()
 	}
-	p.exchange()
 	return p.index
 }
 
@@ -110,6 +108,11 @@ func (p *picker) leave(c int) {
 // only after something in its neighbourhood has changed.
 func (p *picker) exchange() {
 	const rounds = 20
+	for i, old := range p.stale {
+		if old && p.gains[i] >= 0 {
+			p.update(i)
+		}
+	}
 	settled := make([]bool, len(p.pts))
 	for range rounds {
 		swapped := false

@@ -1,6 +1,7 @@
 package opt
 
 import (
+	"cmp"
 	"math"
 	"slices"
 	"sync"
@@ -136,18 +137,23 @@ func (r *run) aims(pts [][]float64, low, high []float64) []aim {
 	return append(out, rims[min(len(rims), len(out)/2):]...)
 }
 
-// gaps returns the points with most room around, the one with most first.
+// gaps returns points of the inner front with most room around, the one with
+// most first: what they cover alone among a few points that stand for all.
 func (r *run) gaps(pts [][]float64) []int {
+	chosen := scatter(pts, min(len(pts), polishSpread))
 	if len(r.reference) > maxShareGoals {
-		return scatter(pts, min(len(pts), polishSpread))
+		return chosen
 	}
+	slices.SortFunc(chosen, func(a, b int) int {
+		m := len(r.reference) - 1
+		return cmp.Or(cmp.Compare(pts[a][m], pts[b][m]), cmp.Compare(a, b))
+	})
 	var s shares
 	s.reset(r.reference)
-	var chosen []int
-	for _, i := range pick(pts, polishSpread, r.reference) {
-		chosen = slices.Insert(chosen, s.add(pts[i]), i)
-	}
 	room := make(map[int]float64, len(chosen))
+	for _, i := range chosen {
+		s.add(pts[i]) // in ascending order of the last goal: index for index
+	}
 	var inner []int
 	for j, i := range chosen {
 		rim := false
@@ -158,14 +164,6 @@ func (r *run) gaps(pts [][]float64) []int {
 			inner = append(inner, i)
 		}
 	}
-	slices.SortStableFunc(inner, func(a, b int) int {
-		switch {
-		case room[a] > room[b]:
-			return -1
-		case room[a] < room[b]:
-			return 1
-		}
-		return 0
-	})
+	slices.SortStableFunc(inner, func(a, b int) int { return cmp.Compare(room[b], room[a]) })
 	return inner
 }

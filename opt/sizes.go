@@ -9,6 +9,7 @@ func sizes(p *Problem, s *Settings) (start, grown int) {
 	const (
 		usual = 30
 		cost  = 33 // evaluations per variable, design and dimension of the front
+		most4 = 60 // volumes of four goals are dear
 	)
 	budget := s.Evaluations / len(p.Spaces)
 	vars := 1
@@ -21,5 +22,8 @@ func sizes(p *Problem, s *Settings) (start, grown int) {
 	}
 	start = min(start, budget)
 	grown = min(s.Front, budget/vars*max(1, p.Goals-1)/cost)
+	if p.Goals == maxShareGoals {
+		grown = min(grown, most4)
+	}
 	return start, max(start, grown)
 }
