@@ -110,9 +110,9 @@ func rotation(q [4]float64) kin.Rot {
 	}
 }
 
-// between is the distance of two placements: of the positions, and the angle of the relative
+// distance is the distance of two placements: of the positions, and the angle of the relative
 // rotation times the length, combined as the root of the sum of squares.
-func between(p, q kin.Vec, r, s *kin.Rot, length float64) float64 {
+func distance(p, q kin.Vec, r, s *kin.Rot, length float64) float64 {
 	rel := times(r, s)
 	return math.Hypot(r3.Norm(r3.Sub(p, q)), length*r3.Norm(rotationVector(&rel)))
 }

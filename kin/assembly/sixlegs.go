@@ -12,14 +12,14 @@ import (
 
 // The rules by which the ends of the 40 paths are judged. A point has length 1, and lengths are over the machine's size.
 const (
-	attempts        = 5     // sets of paths at most, each from another start
-	samePoint       = 1e-7  // angle of two ends that are one
-	infiniteRegular = 1e-12 // |e·e| of a regular end at infinity
-	infiniteLimit   = 1e-7  // the same of an end found as a limit
-	realRegular     = 1e-6  // imaginary part of a regular end that may be real: the real corrector decides
-	realLimit       = 1e-4  // the same of an end found as a limit
-	nearby          = 1e-3  // how far the real corrector may move
-	sameMode        = 1e-6  // distance of two modes that are one
+	attempts      = 5     // sets of paths at most, each from another start
+	samePoint     = 1e-7  // angle of two ends that are one
+	infinite      = 1e-12 // |e·e| of a regular end at infinity
+	infiniteLimit = 1e-7  // the same of an end found as a limit
+	realRegular   = 1e-6  // imaginary part of a regular end that may be real: the real corrector decides
+	realLimit     = 1e-4  // the same of an end found as a limit
+	nearby        = 1e-3  // how far the real corrector may move
+	sameMode      = 1e-6  // distance of two modes that are one
 )
 
 // SixLegs finds all assembly modes of a six-legged platform from its joints (base
@@ -33,12 +33,15 @@ const (
 // If a path is lost, or two paths end at one simple solution, or the ends are not
 // closed under conjugation, all are run again from another start, five times at most;
 // what then is missing is counted as Lost. Other seeds choose other starts, a
-// check on the result; seed 0 is the fastest. The cost is about 0.1 s on one core.
+// check on the result; seed 0 is the fastest. The cost is some 0.05 s on one core
+// for a general platform, several times that for one with solutions at infinity.
 //
-// Platforms with joints in planes, or that share joints, have fewer solutions (16 for 6-3
-// and 3-3 layouts): the others are counted as Infinite. At a singular posture, or on
-// a curve of postures that the locked drives leave free, solutions are
-// Singular: a real one among them is given as found, a point of the curve.
+// Special platforms have fewer solutions, the others being counted as Infinite: those
+// of the family 6-UPS have 28, those with three platform joints (6-3, 3-3) 16. A solution
+// farther away than some 10⁵ of the machine's size counts as infinite too; no real one is.
+// At a singular posture, or where the locked drives leave the platform a curve of postures (at
+// every pose of similar hexagons, for one), solutions are Singular: a real one
+// among them is given as found, which of a curve is a point, and may be none.
 //
 // The determinant is that of the rows [n, (R b)×n], n along the leg from base to platform.
 func SixLegs(base, platform [6]kin.Vec, length [6]float64, seed uint64) Result {
@@ -63,7 +66,7 @@ func SixLegs(base, platform [6]kin.Vec, length [6]float64, seed uint64) Result {
 			out.Infinite, out.Singular, out.Lost = c.Infinite, c.Singular, missing
 		}
 		out.Modes = h.merge(out.Modes, ends)
-		if out.Lost == 0 && c.Lost == 0 && conjugate(k, simple) {
+		if out.Lost == 0 && conjugate(k, simple) {
 			break
 		}
 	}
@@ -78,11 +81,10 @@ func atInfinity(e *end) bool {
 	for _, z := range e.x[:4] {
 		ee += z * z
 	}
-	limit := infiniteLimit
-	if e.outcome == regular {
-		limit = infiniteRegular
+	if e.outcome == singular {
+		return cmplx.Abs(ee) < infiniteLimit
 	}
-	return cmplx.Abs(ee) < limit
+	return cmplx.Abs(ee) < infinite
 }
 
 // count tells how many ends are of which sort; a regular end met twice counts as lost the second time.
@@ -188,7 +190,7 @@ func (h *hexapod) merge(modes []Mode, ends []end) []Mode {
 		}
 		known := false
 		for j := range modes {
-			known = known || between(m.Origin, modes[j].Origin, &m.Rot, &modes[j].Rot, h.size) < sameMode*h.size
+			known = known || distance(m.Origin, modes[j].Origin, &m.Rot, &modes[j].Rot, h.size) < sameMode*h.size
 		}
 		if !known {
 			modes = append(modes, m)
@@ -228,5 +230,5 @@ func (h *hexapod) real(e *end) (Mode, bool) {
 	p = r3.Scale(h.size/(re[0]*re[0]+r3.Norm2(q)), p)
 	origin := r3.Sub(r3.Add(p, h.baseMean), rot.Apply(h.platMean))
 	m, ok := h.correct(origin, rot)
-	return m, ok && between(m.Origin, origin, &m.Rot, &rot, h.size) < nearby*h.size
+	return m, ok && distance(m.Origin, origin, &m.Rot, &rot, h.size) < nearby*h.size
 }

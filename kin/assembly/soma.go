@@ -85,17 +85,30 @@ func (s *soma) at(t complex128, x *point, w *workspace) {
 		squareRate := f.square - g.square
 		square := g.square + tau*squareRate
 
-		// q = d + e b − a e
-		q0 := d0 - less.dot(e)
-		q := d.plus(e0, less).plus(1, e.cross(sum))
-		w.f[i] = 0.5 * (q0*q0 + q.dot(q) - square*ee)
+		// u = e b − a e, q = d + u
+		u0 := -less.dot(e)
+		u := e.cross(sum).plus(e0, less)
+		q0, q := d0+u0, d.plus(1, u)
+		w.f[i] = d0*u0 + d.dot(u) + 0.5*(u0*u0+u.dot(u)-square*ee)
 		qe := sum.cross(q).plus(-q0, less).plus(-square, e)
 		w.lu.a[i] = [order]complex128{
 			q.dot(less) - square*e0, qe[0], qe[1], qe[2],
-			q0, q[0], q[1], q[2],
+			u0, u[0], u[1], u[2],
 		}
-		qr := e.cross(sumRate).plus(e0, lessRate)
-		w.ft[i] = rate * (q.dot(qr) - q0*lessRate.dot(e) - 0.5*squareRate*ee)
+		ur := e.cross(sumRate).plus(e0, lessRate)
+		w.ft[i] = rate * (q.dot(ur) - q0*lessRate.dot(e) - 0.5*squareRate*ee)
+	}
+	for i := 1; i < 6; i++ {
+		w.f[i] -= w.f[0]
+		w.ft[i] -= w.ft[0]
+		for k := range w.lu.a[i] {
+			w.lu.a[i][k] -= w.lu.a[0][k]
+		}
+	}
+	w.f[0] += 0.5 * (d0*d0 + d.dot(d))
+	w.lu.a[0][4] += d0
+	for k := range 3 {
+		w.lu.a[0][5+k] += d[k]
 	}
 	w.f[6] = e0*d0 + e.dot(d)
 	w.ft[6] = 0
