@@ -9,7 +9,8 @@ import (
 // drive moves the end c(q) of a rod of fixed length, whose other end is the
 // platform joint P: a crank, c = at + length (cos q e1 + sin q e2), or a carriage on
 // a rail, c = at + q e1. The loop |P - c(q)| = rod has two solutions, the working
-// modes; its derivative is u·dP = u·c'(q) dq with u the unit vector along the rod.
+// modes; its derivative is u·dP = u·c'(q) dq with u the unit vector along the rod,
+// in which |u·c'(q)| is the root in q's formula, over the rod, times |c'(q)|.
 type drive struct {
 	crank      bool
 	at         Vec     // pivot, or where the rail's coordinate is 0
@@ -20,8 +21,8 @@ type drive struct {
 	zero       float64 // crank angle at home, in (-π, π]
 
 	invRod float64
-	k, k0  float64 // crank: e1·w cos + e2·w sin = k w² + k0 closes the loop, w from the pivot to the platform joint
-	rod2   float64
+	k, k0  float64 // 1/(2 length), (length² - rod²)/(2 length)
+	lever  float64 // rod/length
 }
 
 // newCrank is a crank that turns from e1 towards e2, both unit vectors at right
@@ -30,7 +31,7 @@ type drive struct {
 func newCrank(pivot, e1, e2 Vec, length, rod, mode float64) drive {
 	return drive{
 		crank: true, at: pivot, e1: e1, e2: e2, e3: r3.Cross(e1, e2), length: length, rod: rod, mode: sign(mode),
-		invRod: 1 / rod, k: 1 / (2 * length), k0: (length*length - rod*rod) / (2 * length),
+		invRod: 1 / rod, k: 1 / (2 * length), k0: (length*length - rod*rod) / (2 * length), lever: rod / length,
 	}
 }
 
@@ -40,7 +41,7 @@ func newCrank(pivot, e1, e2 Vec, length, rod, mode float64) drive {
 func newCarriage(r Rail, short Vec, rod, mode float64) drive {
 	return drive{
 		at: r.Point, e1: unit(r.Direction), e3: short, length: 1, rod: rod, mode: sign(mode),
-		invRod: 1 / rod, rod2: rod * rod,
+		invRod: 1 / rod,
 	}
 }
 
@@ -52,66 +53,93 @@ func sign(x float64) float64 {
 	return 1
 }
 
-// closure is a solution of the loop.
-type closure struct {
-	q    float64
-	rate float64 // 1/(u·c'(q))
-	end  Vec     // c(q), base frame
-	u    Vec     // unit vector along the rod, base frame
-	own  Vec     // the same in the drive's own frame: (along, across, axis) of a crank, base axes for a carriage
-	room float64 // square of the distance by which the loop closes; not positive, or NaN, where it does not
+// closures are the solutions of all legs' loops at one pose.
+type closures struct {
+	w    [6]Vec     // given: from drive.at to the platform joint
+	rate [6]float64 // 1/(u·c'(q))
 }
 
-// close solves the loop for a platform joint that lies w off the point `at`. It
-// reports false where the rod is too short or too long. The very edge of reach,
-// where the drive cannot move the rod's end along the rod, counts as out of reach.
-// Crank angles lie within half a turn of the angle at home.
-func (d *drive) close(w *Vec, o *closure) bool {
-	w2 := w.X*w.X + w.Y*w.Y + w.Z*w.Z
-	a := w.X*d.e1.X + w.Y*d.e1.Y + w.Z*d.e1.Z
-	if !d.crank {
-		o.room = d.rod2 - (w2 - a*a)
-		if !(o.room > 0) {
-			return false
+// close solves the loops of all legs: Q, End, Rod and BaseChord of s, and the rates.
+// It reports false, and why in s, where a rod is too short or too long. The very edge
+// of reach, where the drive cannot move the rod's end along the rod, counts as out of reach.
+func (m *rods) close(c *closures, s *State) bool {
+	if m.leg[0].crank {
+		return m.turn(c, s)
+	}
+	return m.slide(c, s)
+}
+
+// turn is close for cranks. With a and b the components of w in the crank's plane,
+// a cos q + b sin q = c, c = (w² + length² - rod²)/(2 length). Angles lie within half a
+// turn of the angle at home.
+func (m *rods) turn(c *closures, s *State) bool {
+	for i := range m.leg {
+		if i >= m.n {
+			break
 		}
-		h := d.mode * math.Sqrt(o.room)
-		q := a + h
-		o.q, o.rate = q, -d.rod/h
-		x, y, z := q*d.e1.X, q*d.e1.Y, q*d.e1.Z
-		o.end = Vec{X: d.at.X + x, Y: d.at.Y + y, Z: d.at.Z + z}
-		o.u = Vec{X: (w.X - x) * d.invRod, Y: (w.Y - y) * d.invRod, Z: (w.Z - z) * d.invRod}
-		o.own = o.u
-		return true
+		l, w := &m.leg[i], &c.w[i]
+		a := w.X*l.e1.X + w.Y*l.e1.Y + w.Z*l.e1.Z
+		b := w.X*l.e2.X + w.Y*l.e2.Y + w.Z*l.e2.Z
+		k := l.k*(w.X*w.X+w.Y*w.Y+w.Z*w.Z) + l.k0
+		rho2 := a*a + b*b
+		room := rho2 - k*k
+		if !(room > 0) {
+			return s.unreached(i, room)
+		}
+		h := l.mode * math.Sqrt(room)
+		inv := 1 / (rho2 * h)
+		c.rate[i] = l.lever * rho2 * inv
+		inv *= h
+		cos, sin := (a*k+b*h)*inv, (b*k-a*h)*inv
+		s.Q[i] = l.zero + angle(cos, sin)
+		cos *= l.length
+		sin *= l.length
+		x, y, z := cos*l.e1.X+sin*l.e2.X, cos*l.e1.Y+sin*l.e2.Y, cos*l.e1.Z+sin*l.e2.Z
+		s.End[i] = Vec{X: l.at.X + x, Y: l.at.Y + y, Z: l.at.Z + z}
+		s.Rod[i] = Vec{X: (w.X - x) * l.invRod, Y: (w.Y - y) * l.invRod, Z: (w.Z - z) * l.invRod}
+		// the rod in the crank's frame: along the crank, across it, along its axis
+		dx, dy := (k-l.length)*l.invRod-l.ua.X, h*l.invRod-l.ua.Y
+		dz := (w.X*l.e3.X+w.Y*l.e3.Y+w.Z*l.e3.Z)*l.invRod - l.ua.Z
+		s.BaseChord[i] = dx*dx + dy*dy + dz*dz
 	}
-	b := w.X*d.e2.X + w.Y*d.e2.Y + w.Z*d.e2.Z
-	c := d.k*w2 + d.k0
-	rho2 := a*a + b*b
-	o.room = rho2 - c*c
-	if !(o.room > 0) {
-		return false
-	}
-	h := d.mode * math.Sqrt(o.room)
-	inv := 1 / rho2
-	cos, sin := (a*c+b*h)*inv, (b*c-a*h)*inv
-	o.q, o.rate = d.zero+math.Atan2(sin, cos), d.rod/(d.length*h)
-	cos, sin = d.length*cos, d.length*sin
-	x, y, z := cos*d.e1.X+sin*d.e2.X, cos*d.e1.Y+sin*d.e2.Y, cos*d.e1.Z+sin*d.e2.Z
-	o.end = Vec{X: d.at.X + x, Y: d.at.Y + y, Z: d.at.Z + z}
-	o.u = Vec{X: (w.X - x) * d.invRod, Y: (w.Y - y) * d.invRod, Z: (w.Z - z) * d.invRod}
-	o.own = Vec{X: (c - d.length) * d.invRod, Y: h * d.invRod, Z: (w.X*d.e3.X + w.Y*d.e3.Y + w.Z*d.e3.Z) * d.invRod}
 	return true
 }
 
-// settle makes the posture o, found at home, the one from which crank angles are
-// counted without a jump: e1 and e2 turn with the crank.
-func (d *drive) settle(o *closure) {
+// slide is close for carriages: with a the component of w along the rail, q = a ± √(rod² - w² + a²).
+func (m *rods) slide(c *closures, s *State) bool {
+	for i := range m.leg {
+		if i >= m.n {
+			break
+		}
+		l, w := &m.leg[i], &c.w[i]
+		a := w.X*l.e1.X + w.Y*l.e1.Y + w.Z*l.e1.Z
+		room := l.rod*l.rod - (w.X*w.X + w.Y*w.Y + w.Z*w.Z - a*a)
+		if !(room > 0) {
+			return s.unreached(i, room)
+		}
+		h := l.mode * math.Sqrt(room)
+		q := a + h
+		s.Q[i], c.rate[i] = q, -l.rod/h
+		x, y, z := q*l.e1.X, q*l.e1.Y, q*l.e1.Z
+		s.End[i] = Vec{X: l.at.X + x, Y: l.at.Y + y, Z: l.at.Z + z}
+		x, y, z = (w.X-x)*l.invRod, (w.Y-y)*l.invRod, (w.Z-z)*l.invRod
+		s.Rod[i] = Vec{X: x, Y: y, Z: z}
+		x, y, z = x-l.ua.X, y-l.ua.Y, z-l.ua.Z
+		s.BaseChord[i] = x*x + y*y + z*z
+	}
+	return true
+}
+
+// settle makes the posture s at home the one from which crank angles are counted
+// without a jump: e1 and e2 turn with the crank.
+func (d *drive) settle(q float64, end Vec) {
 	if !d.crank {
 		return
 	}
-	d.zero = o.q
+	d.zero = q
 	if d.zero <= -math.Pi { // the same angle
 		d.zero = math.Pi
 	}
-	d.e1 = r3.Scale(1/d.length, r3.Sub(o.end, d.at))
+	d.e1 = r3.Scale(1/d.length, r3.Sub(end, d.at))
 	d.e2 = r3.Cross(d.e3, d.e1)
 }

@@ -16,6 +16,7 @@ type linkPair struct {
 	e      Vec
 	bi, bj float64 // pivots on e
 	oi, oj float64 // half the parallelograms' widths on e
+	si, sj float64 // 1 where the side of leg i, j points away from the other leg, else -1
 	cranks bool    // the cranks share no pivot
 	rods   bool    // the rods share no joint
 }
@@ -69,7 +70,9 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 				rods:   ps.twin || tip > small,
 			}
 			p.bi, p.bj = r3.Dot(p.e, a.at), r3.Dot(p.e, b.at)
-			p.oi, p.oj = math.Abs(r3.Dot(p.e, ps.side[i])), math.Abs(r3.Dot(p.e, ps.side[j]))
+			p.oi, p.oj = r3.Dot(p.e, ps.side[i]), -r3.Dot(p.e, ps.side[j])
+			p.si, p.sj = sign(p.oi), sign(p.oj)
+			p.oi, p.oj = math.Abs(p.oi), math.Abs(p.oj)
 			if !p.rods && !a.crank {
 				continue
 			}
@@ -89,107 +92,117 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 	return sorted
 }
 
-// link is a straight part: it runs from `from` along the unit vector `way`.
-type link struct {
-	from, way Vec
-	length    float64
-}
+// nearest is the least distance met so far: free is that between surfaces.
+type nearest struct{ free float64 }
 
-// within is the lesser of best and the distance between the surfaces of two links.
-func within(best float64, a, b *link, thick float64) float64 {
-	d := Vec{X: a.from.X - b.from.X, Y: a.from.Y - b.from.Y, Z: a.from.Z - b.from.Z}
-	if g := math.Sqrt(segmentGap2(&d, &a.way, &b.way, a.length, b.length)) - thick; g < best {
-		return g
+// see looks at two links that start d apart, run along the unit vectors u and v, and
+// whose thickness takes `thick` off the distance of their axes.
+func (n *nearest) see(d, u, v *Vec, lu, lv, thick float64) bool {
+	d2 := segmentGap2(d, u, v, lu, lv)
+	if reach := n.free + thick; reach < 0 || d2 >= reach*reach {
+		return false
 	}
-	return best
+	n.free = math.Sqrt(d2) - thick
+	return true
 }
 
 // gap looks at the pairs in order and skips those whose bound shows that they cannot be the least.
 func (ps *linkPairs) gap(m *rods, s *State) (gap float64, i, j int) {
-	var arm, rod [6]link
-	legs := m.leg[:m.n]
-	for k := range legs {
-		l := &legs[k]
-		rod[k] = link{from: s.End[k], way: s.Rod[k], length: l.rod}
-		if l.crank {
-			inv := 1 / l.length
-			arm[k] = link{from: l.at, length: l.length, way: Vec{
-				X: (s.End[k].X - l.at.X) * inv, Y: (s.End[k].Y - l.at.Y) * inv, Z: (s.End[k].Z - l.at.Z) * inv}}
-		}
-	}
-	best := math.Inf(1)
+	n := nearest{free: math.Inf(1)}
 	i, j = -1, -1
+	crank := m.leg[0].crank
 	for k := range ps.pair[:ps.n] {
 		p := &ps.pair[k]
-		a, b := &rod[p.i], &rod[p.j]
-		// on e: the least of leg i's rod and crank, the greatest of leg j's
-		ei, ej := p.e.X*a.from.X+p.e.Y*a.from.Y+p.e.Z*a.from.Z, p.e.X*b.from.X+p.e.Y*b.from.Y+p.e.Z*b.from.Z
-		ti := ei + a.length*(p.e.X*a.way.X+p.e.Y*a.way.Y+p.e.Z*a.way.Z)
-		tj := ej + b.length*(p.e.X*b.way.X+p.e.Y*b.way.Y+p.e.Z*b.way.Z)
+		a, b := &m.leg[p.i], &m.leg[p.j]
+		ea, eb, ua, ub := &s.End[p.i], &s.End[p.j], &s.Rod[p.i], &s.Rod[p.j]
+		// on e: the least of leg i's rods and crank, the greatest of leg j's
+		ei, ej := p.e.X*ea.X+p.e.Y*ea.Y+p.e.Z*ea.Z, p.e.X*eb.X+p.e.Y*eb.Y+p.e.Z*eb.Z
+		ti := ei + a.rod*(p.e.X*ua.X+p.e.Y*ua.Y+p.e.Z*ua.Z)
+		tj := ej + b.rod*(p.e.X*ub.X+p.e.Y*ub.Y+p.e.Z*ub.Z)
 		ri, rj := lesser(ei, ti)-p.oi, greater(ej, tj)+p.oj
 		ci, cj := ri, rj
-		crank := legs[p.i].crank
 		if crank {
 			ci, cj = lesser(p.bi, ei), greater(p.bj, ej)
 		}
-		if lesser(ci, ri)-greater(cj, rj)-ps.thick >= best {
+		if lesser(ci, ri)-greater(cj, rj)-ps.thick >= n.free {
 			continue
 		}
-		was := best
-		if p.rods && ri-rj-ps.rodRod < best {
-			best = ps.rodsOf(best, p, a, b)
+		closer := false
+		if p.rods && ri-rj-ps.rodRod < n.free {
+			closer = ps.rodsOf(&n, p, m, s, ri, rj)
 		}
-		if crank {
-			if ci-rj-ps.crankRod < best {
-				best = ps.crankAndRods(best, &arm[p.i], b, p.j)
+		if crank && (ci-rj-ps.crankRod < n.free || ri-cj-ps.crankRod < n.free || p.cranks && ci-cj-ps.crankCrank < n.free) {
+			ca, cb := a.along(ea), b.along(eb)
+			if ci-rj-ps.crankRod < n.free && ps.crankAndRods(&n, a, &ca, b, s, p.j) {
+				closer = true
 			}
-			if ri-cj-ps.crankRod < best {
-				best = ps.crankAndRods(best, &arm[p.j], a, p.i)
+			if ri-cj-ps.crankRod < n.free && ps.crankAndRods(&n, b, &cb, a, s, p.i) {
+				closer = true
 			}
-			if p.cranks && ci-cj-ps.crankCrank < best {
-				best = within(best, &arm[p.i], &arm[p.j], ps.crankCrank)
+			if p.cranks && ci-cj-ps.crankCrank < n.free {
+				d := Vec{X: a.at.X - b.at.X, Y: a.at.Y - b.at.Y, Z: a.at.Z - b.at.Z}
+				if n.see(&d, &ca, &cb, a.length, b.length, ps.crankCrank) {
+					closer = true
+				}
 			}
 		}
-		if best < was {
+		if closer {
 			i, j = p.i, p.j
 		}
 	}
-	return best, i, j
+	return n.free, i, j
 }
 
-// rodsOf is the least distance between the rods of two legs.
-func (ps *linkPairs) rodsOf(best float64, p *linkPair, a, b *link) float64 {
+// along is the unit vector along the crank whose end is given.
+func (d *drive) along(end *Vec) Vec {
+	inv := 1 / d.length
+	return Vec{X: (end.X - d.at.X) * inv, Y: (end.Y - d.at.Y) * inv, Z: (end.Z - d.at.Z) * inv}
+}
+
+// rodsOf looks at the rods of two legs, whose least and greatest projections are ri and rj: of parallelograms at the two
+// rods first that lie nearer on e, and at the others if their own bounds let them be nearer.
+func (ps *linkPairs) rodsOf(n *nearest, p *linkPair, m *rods, s *State, ri, rj float64) bool {
+	a, b := &s.End[p.i], &s.End[p.j]
+	la, lb := m.leg[p.i].rod, m.leg[p.j].rod
+	d := Vec{X: a.X - b.X, Y: a.Y - b.Y, Z: a.Z - b.Z}
 	if !ps.twin {
-		return within(best, a, b, ps.rodRod)
+		return n.see(&d, &s.Rod[p.i], &s.Rod[p.j], la, lb, ps.rodRod)
 	}
-	for _, x := range a.pair(&ps.side[p.i]) {
-		best = ps.crankOrRod(best, &x, b, p.j, ps.rodRod)
+	closer := false
+	for k := range 4 {
+		// side points away from the other leg: the near rod is at -side
+		x, y, low := -1., -1., ri-rj-ps.rodRod
+		if k&1 != 0 {
+			x, low = 1, low+2*p.oi
+		}
+		if k&2 != 0 {
+			y, low = 1, low+2*p.oj
+		}
+		if low >= n.free {
+			continue
+		}
+		x *= p.si
+		y *= p.sj
+		o, q := &ps.side[p.i], &ps.side[p.j]
+		g := Vec{X: d.X + x*o.X - y*q.X, Y: d.Y + x*o.Y - y*q.Y, Z: d.Z + x*o.Z - y*q.Z}
+		if n.see(&g, &s.Rod[p.i], &s.Rod[p.j], la, lb, ps.rodRod) {
+			closer = true
+		}
 	}
-	return best
+	return closer
 }
 
-// crankAndRods is the least distance between a crank and the rods of another leg.
-func (ps *linkPairs) crankAndRods(best float64, crank, rod *link, leg int) float64 {
+// crankAndRods looks at the crank of one leg, which runs along c, and the rods of the other, which is number leg.
+func (ps *linkPairs) crankAndRods(n *nearest, crank *rodLeg, c *Vec, rod *rodLeg, s *State, leg int) bool {
+	e := &s.End[leg]
+	d := Vec{X: crank.at.X - e.X, Y: crank.at.Y - e.Y, Z: crank.at.Z - e.Z}
 	if !ps.twin {
-		return within(best, crank, rod, ps.crankRod)
+		return n.see(&d, c, &s.Rod[leg], crank.length, rod.rod, ps.crankRod)
 	}
-	return ps.crankOrRod(best, crank, rod, leg, ps.crankRod)
-}
-
-// crankOrRod is the least distance between a link and the two rods of a parallelogram.
-func (ps *linkPairs) crankOrRod(best float64, a, rod *link, leg int, thick float64) float64 {
-	for _, y := range rod.pair(&ps.side[leg]) {
-		best = within(best, a, &y, thick)
-	}
-	return best
-}
-
-// pair is the two rods of the parallelogram whose middle line is l.
-func (l *link) pair(side *Vec) [2]link {
-	x, y := *l, *l
-	x.from = Vec{X: l.from.X + side.X, Y: l.from.Y + side.Y, Z: l.from.Z + side.Z}
-	y.from = Vec{X: l.from.X - side.X, Y: l.from.Y - side.Y, Z: l.from.Z - side.Z}
-	return [2]link{x, y}
+	o := &ps.side[leg]
+	x, y := Vec{X: d.X + o.X, Y: d.Y + o.Y, Z: d.Z + o.Z}, Vec{X: d.X - o.X, Y: d.Y - o.Y, Z: d.Z - o.Z}
+	closer := n.see(&x, c, &s.Rod[leg], crank.length, rod.rod, ps.crankRod)
+	return n.see(&y, c, &s.Rod[leg], crank.length, rod.rod, ps.crankRod) || closer
 }
 
 func lesser(a, b float64) float64 {

@@ -54,8 +54,8 @@ func newRods(freedoms []Freedom, drives []drive, platform []Vec, home Vec, homeR
 		if !l.crank {
 			m.frame.Rails = append(m.frame.Rails, l.e1)
 		}
-		m.mount(l, homeRot, &s.Axis)
 	}
+	m.mount(homeRot, &s.Axis)
 	if wrong-wrong != 0 {
 		m.leg[0].b.X = math.NaN()
 	}
@@ -63,29 +63,42 @@ func newRods(freedoms []Freedom, drives []drive, platform []Vec, home Vec, homeR
 	return m
 }
 
-// mount finds the leg's posture at home and the mounting axes of its joints.
-func (m *rods) mount(l *rodLeg, homeRot Rot, axis *Axis) {
-	var o closure
-	w := r3.Sub(r3.Add(m.home, l.b), l.at)
-	if l.close(&w, &o) {
-		l.settle(&o)
-	}
-	across := Vec{Y: 1}
-	if !l.crank {
-		across = Vec{Z: 1}
-	}
-	switch axis.Kind {
-	case AxisHomeLeg:
-		l.ua, l.ub = o.own, o.u
-	case AxisPlate:
-		l.ua, l.ub = across, homeRot.Apply(Vec{Z: 1})
-	case AxisVector:
-		v := unit(axis.Vec)
-		l.ua, l.ub = v, homeRot.Apply(v)
-		if l.crank {
-			l.ua = Vec{X: r3.Dot(v, l.e1), Y: r3.Dot(v, l.e2), Z: r3.Dot(v, l.e3)}
+// mount finds the postures at home and the mounting axes of the legs' joints. A leg
+// that cannot reach home counts its angle from 0 and has no axis there.
+func (m *rods) mount(homeRot Rot, axis *Axis) {
+	for i := range m.leg[:m.n] {
+		l := &m.leg[i]
+		var (
+			c closures
+			s State
+			o = rods{n: 1, leg: [6]rodLeg{*l}}
+		)
+		c.w[0] = r3.Sub(r3.Add(m.home, l.b), l.at)
+		if o.close(&c, &s) {
+			l.settle(s.Q[0], s.End[0])
+		}
+		switch axis.Kind {
+		case AxisHomeLeg:
+			l.ua, l.ub = l.own(s.Rod[0]), s.Rod[0]
+		case AxisPlate:
+			l.ua, l.ub = Vec{Z: 1}, homeRot.Apply(Vec{Z: 1})
+			if l.crank {
+				l.ua = Vec{Y: 1}
+			}
+		case AxisVector:
+			v := unit(axis.Vec)
+			l.ua, l.ub = l.own(v), homeRot.Apply(v)
 		}
 	}
+}
+
+// own is the vector v, given in base axes at home, in the drive's own frame: along a
+// crank, across it and along its axis; base axes for a carriage.
+func (d *drive) own(v Vec) Vec {
+	if !d.crank {
+		return v
+	}
+	return Vec{X: r3.Dot(v, d.e1), Y: r3.Dot(v, d.e2), Z: r3.Dot(v, d.e3)}
 }
 
 func (m *rods) Frame() *Frame { return &m.frame }
@@ -109,10 +122,11 @@ func (m *rods) Serial(s *State) float64 {
 // Gap is the least distance between the surfaces of the links of two legs.
 func (m *rods) Gap(s *State) (gap float64, i, j int) { return m.links.gap(m, s) }
 
-// unreached says why leg i has no posture.
-func (s *State) unreached(i int, room float64) {
+// unreached says why the loop of leg i does not close, and gives false.
+func (s *State) unreached(i int, room float64) bool {
 	s.Fail, s.Leg = OutOfReach, i
 	if room-room != 0 {
 		s.Fail = NotFinite
 	}
+	return false
 }

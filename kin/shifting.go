@@ -47,32 +47,32 @@ func (m *shiftingRods) Move(p *Pose, s *State) {
 
 // shift moves the platform by d from home.
 func (m *shiftingRods) shift(d *Vec, s *State) {
-	var o closure
+	var c closures
 	for i := range m.leg {
 		if i >= m.n {
 			break
 		}
-		l := &m.leg[i]
-		w := Vec{X: m.off[i].X + d.X, Y: m.off[i].Y + d.Y, Z: m.off[i].Z + d.Z}
-		if !l.close(&w, &o) {
-			s.unreached(i, o.room)
-			return
+		o := &m.off[i]
+		c.w[i] = Vec{X: o.X + d.X, Y: o.Y + d.Y, Z: o.Z + d.Z}
+	}
+	if !m.close(&c, s) {
+		return
+	}
+	for i := range m.leg {
+		if i >= m.n {
+			break
 		}
-		s.Q[i], s.End[i], s.Rod[i] = o.q, o.end, o.u
-		u := o.u
+		l, u, g := &m.leg[i], &s.Rod[i], c.rate[i]
 		row := (*[6]float64)(s.J[6*i : 6*i+6])
-		row[0], row[1], row[2] = u.X*o.rate, u.Y*o.rate, u.Z*o.rate
+		row[0], row[1], row[2] = u.X*g, u.Y*g, u.Z*g
 		row[3], row[4], row[5] = 0, 0, 0
 		if m.parallel {
-			x := u.X*l.e3.X + u.Y*l.e3.Y + u.Z*l.e3.Z // sine of the swing
-			c := planeChord(x)
-			s.BaseChord[i], s.PlatformChord[i] = c, c
+			chord := planeChord(u.X*l.e3.X + u.Y*l.e3.Y + u.Z*l.e3.Z)
+			s.BaseChord[i], s.PlatformChord[i] = chord, chord
 			continue
 		}
-		dx, dy, dz := o.own.X-l.ua.X, o.own.Y-l.ua.Y, o.own.Z-l.ua.Z
-		s.BaseChord[i] = dx*dx + dy*dy + dz*dz
-		dx, dy, dz = u.X-l.ub.X, u.Y-l.ub.Y, u.Z-l.ub.Z
-		s.PlatformChord[i] = dx*dx + dy*dy + dz*dz
+		x, y, z := u.X-l.ub.X, u.Y-l.ub.Y, u.Z-l.ub.Z
+		s.PlatformChord[i] = x*x + y*y + z*z
 	}
 	s.Fail, s.Leg = Reached, -1
 }
