@@ -114,6 +114,7 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	d.Machine = p.build(t, a.Values)
 	a.Machine = d.Machine
 	v := newView(t)
+	v.free = p.Family.Free
 	v.begin(d.Machine)
 
 	var ts []tracker
@@ -151,7 +152,10 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 			r.Value = share
 		}
 		if math.IsNaN(r.Value) {
-			continue // an average over no pose
+			if m.Mean {
+				continue // an average over no pose
+			}
+			r.Value = inf // of a range that no pose has sized
 		}
 		a.Readings = append(a.Readings, r)
 	}

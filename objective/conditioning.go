@@ -4,7 +4,6 @@ import (
 	"math"
 
 	"legwright/kin"
-	"legwright/kin/linalg"
 )
 
 func conditioning() *Measure {
@@ -42,20 +41,8 @@ func regularity() *Measure {
 		Source: "S. A. Joshi and L.-W. Tsai 2002, ASME J. Mech. Des. 124:254 (from memory)",
 		Start:  math.Inf(1), Lost: 0,
 		Scan: func(v *View, w *Worst) {
-			var a [36]float64
-			n := copy(a[:], v.S.J[:6*v.n])
-			for i := range v.n { // unit forces; a couple of a rotary drive has no linear part
-				r := (*[6]float64)(a[6*i : 6*i+6])
-				if f := math.Sqrt(r[0]*r[0] + r[1]*r[1] + r[2]*r[2]); f > 0 {
-					for k := range r {
-						r[k] /= f
-					}
-				}
-			}
-			k := v.machine.Constraints(&v.S, &v.own) // scratch of the view: a local array would go to the heap
-			copy(a[n:], v.own[:6*k])
-			if lo, hi := linalg.Singular(6, &a); lo < w.Value*hi {
-				w.set(v, lo/hi, -1, -1)
+			if r := v.whole(); r < w.Value {
+				w.set(v, r, -1, -1)
 			}
 		},
 	}

@@ -36,15 +36,6 @@ func homeHeight() *Measure {
 // rises tells whether machines of the family move along z.
 func rises(f *kin.Family) bool { return f.Has(kin.Z) }
 
-func footprint() *Measure {
-	return &Measure{
-		Name: "footprint", Unit: Metre, Sense: Smaller,
-		Text:   "diameter of the smallest circle in plan that holds the base joints",
-		Source: "smallest enclosing circle through two or three points (common practice, no source)",
-		Design: func(d *Design) float64 { return enclosing(d.Machine.Frame().Base) },
-	}
-}
-
 // coverage is computed by the walk itself.
 func coverage() *Measure {
 	return &Measure{

@@ -24,6 +24,7 @@ const (
 // of five times the longest leg; a failure narrower than that may be stepped over.
 func Excurse(t *Task, a *Appraisal) []Excursion {
 	v := newView(t)
+	v.free = a.Plan.Family.Free
 	v.begin(a.Machine)
 	d := Design{Family: a.Plan.Family, Values: a.Values, Machine: a.Machine}
 	l := newPoseLimits(t, v, a.Plan, &d)

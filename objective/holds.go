@@ -1,6 +1,10 @@
 package objective
 
-import "math"
+import (
+	"math"
+
+	"legwright/kin"
+)
 
 // poseLimits judges single poses of one design against every pose limit.
 type poseLimits struct {
@@ -31,9 +35,12 @@ func (l *poseLimits) fails(s *Sample) string {
 	v := l.v
 	v.keep = math.Inf(1)
 	if !v.at(s, 0, l.need) {
+		if v.S.Fail == kin.Stopped {
+			return v.S.What
+		}
 		return "reach"
 	}
-	for i := range v.n {
+	for i := range v.n - v.free {
 		if l.plan.rangeExcess(&v.task.Actuator, v.S.Q[i], v.S.Q[i], l.d.Values) > 0 {
 			return "actuator range"
 		}

@@ -21,6 +21,7 @@ const (
 	Watt
 	NewtonPerMetre
 	NewtonMetrePerRadian
+	MetrePerRadian
 )
 
 // Sense tells which values of a measure are better.
@@ -45,6 +46,14 @@ const (
 	NeedExact                    // the conditioning of every pose, not of the worst alone
 )
 
+// UnitOf is the unit of the measure for machines of the family.
+func (m *Measure) UnitOf(f *kin.Family) Unit {
+	if f.Drive == kin.Rotary && m.Rotary != 0 {
+		return m.Rotary
+	}
+	return m.Unit
+}
+
 // Worst is the worst raw value of a measure so far, and where it was met.
 type Worst struct {
 	Value float64
@@ -66,6 +75,7 @@ type Measure struct {
 	Name   string
 	Text   string
 	Unit   Unit
+	Rotary Unit // the unit for families with rotary drives, where it differs from Unit; 0 otherwise
 	Sense  Sense
 	Source string
 	Inputs []string // keys of the brief without which it has no value

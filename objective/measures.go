@@ -25,6 +25,8 @@ func Measures() []*Measure {
 		jointSpacing(),
 		bucklingMargin(),
 		footprint(),
+		gainLeast(),
+		gainMost(),
 		stroke(),
 		legMin(),
 		legMax(),

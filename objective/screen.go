@@ -71,6 +71,7 @@ func (t *Task) Constraints() []string {
 // NewScreen makes scratch for judging designs of a plan.
 func NewScreen(t *Task, p *Plan) *Screen {
 	s := &Screen{task: t, plan: p, v: newView(t)}
+	s.v.free = p.Family.Free
 	s.d = Design{Family: p.Family, Values: make([]float64, len(p.Specs))}
 	s.soft = t.Coverage < 1 || t.CoverageGoal
 	s.exact = s.soft

@@ -6,21 +6,29 @@ import (
 	"legwright/kin/linalg"
 )
 
-// compliance is that of leg i between its joint centres: actuator, rod and two joints in series.
+// compliance is that of leg i at its actuator: the actuator itself, and in series the
+// rod and two joints, whose force is the actuator's effort times the linear part of
+// the row of J (1 for a prismatic leg). A parallelogram counts as one rod.
 func (v *View) compliance(i int) float64 {
 	t := v.task
-	c := 1 / t.Actuator.Stiffness
-	if r := t.Legs.RodDiameter; r > 0 && t.Legs.Modulus > 0 && v.linear() {
-		c += v.S.Q[i] / (t.Legs.Modulus * math.Pi * r * r / 4)
+	axial := 0.0
+	if r := t.Legs.RodDiameter; r > 0 && t.Legs.Modulus > 0 {
+		axial = v.rod(i) / (t.Legs.Modulus * math.Pi * r * r / 4)
 	}
 	if t.Joints.Stiffness > 0 {
-		c += 1 / t.Joints.Stiffness
+		axial += 1 / t.Joints.Stiffness
 	}
-	return c
+	r := (*[6]float64)(v.S.J[6*i : 6*i+6])
+	return 1/t.Actuator.Stiffness + axial*(r[0]*r[0]+r[1]*r[1]+r[2]*r[2])
 }
 
-// linear tells whether the actuator coordinates are lengths of legs.
-func (v *View) linear() bool { return true }
+// rod is the length of leg i's rod, or of the whole leg if it is prismatic.
+func (v *View) rod(i int) float64 {
+	if v.frame.Rods == nil {
+		return v.S.Q[i]
+	}
+	return v.frame.Rods[i]
+}
 
 // softest is the largest eigenvalue of a 3×3 block of the compliance at the tool
 // point, rows from first on: the sum over the legs of c·x xᵀ.

@@ -15,6 +15,7 @@ type View struct {
 	frame    *kin.Frame
 	invLc    float64
 	n        int // legs, and freedoms
+	free     int // actuators, the last ones, without a range (kin.Family.Free)
 	homeSign int
 	homeQ    [6]float64
 	demands  []demand
@@ -36,6 +37,7 @@ type View struct {
 	six    linalg.Six
 	own    [36]float64
 	tie    [36]float64
+	unit   [36]float64 // unit wrenches
 	ownX   [36]float64
 
 	// Over the walk so far.
@@ -231,7 +233,7 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 // span is the least and the greatest actuator coordinate so far, and the legs.
 func (v *View) span() (least, most float64) {
 	least, most = math.Inf(1), math.Inf(-1)
-	for i := range v.n {
+	for i := range v.n - v.free {
 		least, most = math.Min(least, v.least[i]), math.Max(most, v.most[i])
 	}
 	return least, most
