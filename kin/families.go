@@ -7,7 +7,10 @@ func Families() []*Family {
 		sixRUS(),
 		sixPUS(),
 		threeRPR(),
+		threeRRR(),
+		fiveBar(),
 		delta(),
+		delta4(),
 		linearDelta(),
 	}
 }

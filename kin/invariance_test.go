@@ -113,7 +113,14 @@ func TestTurningAndMovingTheWhole(t *testing.T) {
 		back := kin.Rot{g[0], g[3], g[6], g[1], g[4], g[7], g[2], g[5], g[8]}
 		r := g.Mul(&p.R)
 		q := kin.Pose{P: g.Apply(p.P), R: r.Mul(&back)}
-		sameLegs(t, f, m, other, moved(t, m, p), moved(t, other, q), g, func(i int) int { return i })
+		s, o := moved(t, m, p), moved(t, other, q)
+		if f.Drive == kin.Rotary { // angles from +x
+			for i := range f.Legs {
+				s.Q[i] = math.Remainder(s.Q[i]+turn.Z, 2*math.Pi)
+				o.Q[i] = math.Remainder(o.Q[i], 2*math.Pi)
+			}
+		}
+		sameLegs(t, f, m, other, s, o, g, func(i int) int { return i })
 	})
 }
 
@@ -155,6 +162,9 @@ func TestRenumberingLegs(t *testing.T) {
 		j := outright(f, x.d, m)
 		for i, k := range order {
 			j.Base[k], j.Platform[k] = m.Frame().Base[i], m.Frame().Platform[i]
+			if first := f.Index("modes_1"); first >= 0 {
+				j.Values[first+k] = x.d[first+i]
+			}
 		}
 		rails := slices.Clone(j.Rails)
 		for i := range rails {
