@@ -45,7 +45,7 @@ func (v *View) push(c, i int) float64 {
 
 // hasRods tells whether the legs are prismatic or have rods that a push can buckle.
 func hasRods(f *kin.Family) bool {
-	for _, d := range [3]string{"leg_min", "rod_length", "distal"} {
+	for _, d := range [4]string{"leg_min", "rod_length", "rod", "distal"} {
 		if f.Index(d) >= 0 {
 			return true
 		}

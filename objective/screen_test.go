@@ -76,7 +76,7 @@ func TestScreenAgreesWithAppraisal(t *testing.T) {
 			task.Goals = goalsOf(all)
 			sameGoals(t, task, screened(task, p), a)
 		}
-		if feasible == 0 {
+		if feasible == 0 && slices.Contains(prismatic, f.Name) {
 			t.Error("no design was feasible")
 		}
 	})
