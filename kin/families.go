@@ -9,9 +9,11 @@ func Families() []*Family {
 		threeRPR(),
 		threeRRR(),
 		fiveBar(),
+		threeRPS(),
 		delta(),
 		delta4(),
 		linearDelta(),
+		levelArm(),
 	}
 }
 

@@ -39,7 +39,7 @@ func Locate(m Machine, q []float64, from Pose) (Posture, bool) {
 	var (
 		s    State
 		own  [36]float64
-		here = from
+		here = Settle(m, &from)
 		jac  = mat.NewDense(n, n, nil)
 		step = mat.NewVecDense(n, nil)
 		diff = mat.NewVecDense(n, nil)
@@ -73,6 +73,7 @@ func Locate(m Machine, q []float64, from Pose) (Posture, bool) {
 		cut, moved := 1.0, false
 		for range 20 {
 			try := advance(&here, f, step, cut)
+			try = Settle(m, &try)
 			var t State
 			if r := residual(m, &try, &t, q); r < res {
 				here, s, res, moved = try, t, r, true

@@ -156,7 +156,7 @@ func TestLocateInvertsMove(t *testing.T) {
 			t.Errorf("residual %g of %g", got.Residual, greatest)
 		}
 		near(t, "determinant", got.Determinant, kin.Determinant(m, again), 0)
-		origin, rot := m.Frame().Place(&got.Pose)
+		origin, rot := m.Place(&got.Pose)
 		if origin != got.Origin || rot != got.Rot {
 			t.Error("origin and rotation are not those of the pose")
 		}

@@ -36,6 +36,10 @@ type State struct {
 	// End and Rod are set for legs of a drive and a rod: where the rod leaves the crank
 	// or the carriage, base frame, and the unit vector along the rod to the platform.
 	End, Rod [6]Vec
+
+	// Tool is the tool point in the base frame, and Rod holds the unit vectors along the legs,
+	// where the platform's freedoms are tied: rows of J then do not tell.
+	Tool Vec
 }
 
 // Machine is one geometry of some family.

@@ -105,7 +105,7 @@ func TestSwingChords(t *testing.T) {
 					j.HomeRot = kin.RPY(0.2, -0.3, 0.4)
 					m = f.Outright(j, setup)
 				}
-				p, home := kin.NewPose(randomCoords(rng, f, 1.5)), atHome()
+				p, home := settled(m, randomCoords(rng, f, 1.5)), atHome()
 				s, fr := moved(t, m, p), m.Frame()
 				_, rot := fr.Place(&p)
 				for i := range f.Legs {
@@ -163,6 +163,23 @@ func TestInnerLoopAllocatesNothing(t *testing.T) {
 	}
 }
 
+// ownTwists are the twists (v, Lc·ω) of the tool point in each of the family's own freedoms.
+func ownTwists(m kin.Machine, p *kin.Pose) []*mat.VecDense {
+	var tie [36]float64
+	f := m.Frame()
+	for k, q := range f.Freedoms {
+		tie[6*int(q)+k] = 1
+	}
+	if f.Tied {
+		m.Tie(p, &tie)
+	}
+	out := make([]*mat.VecDense, len(f.Freedoms))
+	for k := range out {
+		out[k] = mat.VecDenseCopyOf(mat.NewDense(6, 6, tie[:]).ColView(k))
+	}
+	return out
+}
+
 // The constraint wrenches complete the legs' wrenches: they do no work in the
 // family's own freedoms, are unit wrenches, and stale contents of the buffer do
 // not show.
@@ -190,9 +207,12 @@ func TestConstraintsCompleteTheLegs(t *testing.T) {
 				force = math.Sqrt(row[3]*row[3] + row[4]*row[4] + row[5]*row[5])
 			}
 			near(t, "constraint wrench", force, 1, 1e-14)
+			for k, twist := range ownTwists(m, &p) {
+				near(t, "power of a constraint in "+f.Freedoms[k].String(), mat.Dot(mat.NewVecDense(6, row), twist), 0, 1e-14)
+			}
 		}
 		// The 6×6 has the legs' determinant where the constraints are unit vectors of the other freedoms.
-		if prismatic(m) {
+		if prismatic(m) && !m.Frame().Tied {
 			near(t, "determinant of all six wrenches", math.Abs(mat.Det(full)), math.Abs(mat.Det(ownJacobian(m, s))), 1e-12)
 		}
 	})

@@ -61,15 +61,16 @@ func pairLegs(leg *[6]strut, n int, home Vec, s *Setup) legPairs {
 	return sorted
 }
 
-// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least.
-func (ps *legPairs) gap(leg *[6]strut, s *State) (gap float64, i, j int) {
+// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least. The
+// first three of a row of six are the unit vector along a leg, q are the lengths.
+func (ps *legPairs) gap(rows *[36]float64, q *[6]float64) (gap float64, i, j int) {
 	best := math.Inf(1)
 	i, j = -1, -1
 	for k := range ps.pair[:ps.n] {
 		p := &ps.pair[k]
-		u := (*[6]float64)(s.J[6*p.i : 6*p.i+6])
-		v := (*[6]float64)(s.J[6*p.j : 6*p.j+6])
-		lu, lv := s.Q[p.i], s.Q[p.j]
+		u := (*[6]float64)(rows[6*p.i : 6*p.i+6])
+		v := (*[6]float64)(rows[6*p.j : 6*p.j+6])
+		lu, lv := q[p.i], q[p.j]
 		// projections on e: leg i runs from base to base+pu, leg j from 0 to pv
 		pu := lu * (u[0]*p.e.X + u[1]*p.e.Y + u[2]*p.e.Z)
 		pv := lv * (v[0]*p.e.X + v[1]*p.e.Y + v[2]*p.e.Z)

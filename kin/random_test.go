@@ -104,7 +104,8 @@ func postured(t *testing.T, rng *rand.Rand, f *kin.Family, setup *kin.Setup, par
 	t.Helper()
 	for range 1000 {
 		d := randomDesign(rng, f)
-		x := trial{f: f, d: d, m: f.Build(d, setup), p: kin.NewPose(randomCoords(rng, f, part))}
+		x := trial{f: f, d: d, m: f.Build(d, setup)}
+		x.p = settled(x.m, randomCoords(rng, f, part))
 		if reaches(x.m, atHome()) && reaches(x.m, x.p) {
 			return x
 		}
@@ -127,7 +128,8 @@ func eachMachine(t *testing.T, n int, check func(t *testing.T, rng *rand.Rand, x
 		t.Run(f.Name, func(t *testing.T) {
 			rng := seeded(1)
 			d := midRange(f)
-			check(t, rng, trial{f: f, d: d, m: f.Build(d, offCentre()), p: kin.NewPose(randomCoords(rng, f, 1))})
+			m := f.Build(d, offCentre())
+			check(t, rng, trial{f: f, d: d, m: m, p: settled(m, randomCoords(rng, f, 1))})
 			for range n {
 				check(t, rng, postured(t, rng, f, offCentre(), 1.5))
 				if t.Failed() {
@@ -136,6 +138,12 @@ func eachMachine(t *testing.T, n int, check func(t *testing.T, rng *rand.Rand, x
 			}
 		})
 	}
+}
+
+// settled is the pose that the platform takes for the coordinates.
+func settled(m kin.Machine, c kin.Coords) kin.Pose {
+	p := kin.NewPose(c)
+	return kin.Settle(m, &p)
 }
 
 // prismatic tells whether the machine's legs are prismatic.

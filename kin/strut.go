@@ -116,7 +116,7 @@ func (m *struts) Move(p *Pose, s *State) {
 
 // Gap is the least distance of two leg axes less the leg diameter.
 func (m *struts) Gap(s *State) (gap float64, i, j int) {
-	return m.pairs.gap(&m.leg, s)
+	return m.pairs.gap(&s.J, &s.Q)
 }
 
 // Constraints of a planar machine: the force along z and the couples about x and y. A six-legged platform has none.
