@@ -51,11 +51,11 @@ func (v *View) deflect(d *demand) float64 {
 		}
 		return kin.Vec{X: o[0], Y: o[1], Z: o[2]}
 	}
-	w := d.wrench(&v.pose.Pose, v.task.Gravity, v.invLc)
+	w := d.wrench(v.stand, v.task.Gravity, v.invLc)
 	mid := move(&w)
 	var corner [maxCorners]kin.Vec
 	corners, extra := 0, 0.0
-	generators(d, &v.pose.Pose, v.invLc, func(kind SetKind, radius float64, g [3][6]float64) {
+	generators(d, v.stand, v.invLc, func(kind SetKind, radius float64, g [3][6]float64) {
 		var s [3]kin.Vec
 		for k := range g {
 			s[k] = move(&g[k])

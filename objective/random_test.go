@@ -41,11 +41,14 @@ func randomDesign(rng *rand.Rand, f *kin.Family) []float64 {
 	return d
 }
 
-// soundDesign is a regular design inside the family's usual ranges, three tenths up each of them.
+// soundDesign is a regular design inside the family's usual ranges, three tenths up each of them, in its usual working mode.
 func soundDesign(f *kin.Family) []float64 {
 	d := make([]float64, len(f.Dimensions))
 	for i, dim := range f.Dimensions {
 		d[i] = dim.Low + 0.3*(dim.High-dim.Low)
+		if dim.Unit == kin.Sign {
+			d[i] = dim.Default
+		}
 	}
 	return d
 }
@@ -57,7 +60,9 @@ func sizedPlan(t *Task, f *kin.Family, values []float64) *Plan {
 		specs[i] = Spec{Kind: Fixed, Values: []float64{v}}
 	}
 	least, span := f.Range()
-	specs[least], specs[span] = Spec{Kind: Sized}, Spec{Kind: Sized}
+	if least >= 0 {
+		specs[least], specs[span] = Spec{Kind: Sized}, Spec{Kind: Sized}
+	}
 	return NewPlan(t, f, specs)
 }
 

@@ -120,8 +120,8 @@ func TestScreenAgreesOnLimits(t *testing.T) {
 				}
 				task.Limits = append(task.Limits, l)
 			}
-			if rng.IntN(3) == 0 { // fixed ends of the actuator range instead of sized ones
-				least, span := f.Range()
+			least, span := f.Range()
+			if rng.IntN(3) == 0 && least >= 0 { // fixed ends of the actuator range instead of sized ones
 				p.Specs[least] = Spec{Kind: Fixed, Values: []float64{first.Values[least] - between(rng, -0.01, 0.05)}}
 				p.Specs[span] = Spec{Kind: Fixed, Values: []float64{first.Values[span] + between(rng, -0.02, 0.1)}}
 				p = NewPlan(task, f, p.Specs)

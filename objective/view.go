@@ -24,6 +24,8 @@ type View struct {
 	// At the pose in work.
 	S      kin.State
 	pose   *Sample
+	stand  *kin.Pose // the pose that the platform takes: with its parasitic coordinates where freedoms are tied
+	settle kin.Pose
 	index  int
 	sign   int         // of det J; 0 if it is singular to rounding
 	x      [36]float64 // 6 rows of freedoms by 6 columns of legs: inverse of J, zero where there is no freedom or leg
@@ -83,6 +85,7 @@ func (v *View) begin(m kin.Machine) {
 	v.lost, v.singular, v.singularAt, v.seen = 0, 0, -1, 0
 	home := Sample{Pose: kin.NewPose(kin.Coords{})}
 	v.pose, v.index = &home, -1
+	v.stand = &home.Pose
 	m.Move(&home.Pose, &v.S)
 	v.homeSign = 0
 	for i := range v.least {
@@ -134,7 +137,7 @@ func (v *View) factor() {
 // untie spreads the inverse over all six freedoms of a family whose other freedoms follow from its own.
 func (v *View) untie() {
 	n := v.n
-	v.machine.Tie(&v.pose.Pose, &v.tie)
+	v.machine.Tie(v.stand, &v.tie)
 	v.x = [36]float64{}
 	for r := range 6 {
 		for k := range n {
@@ -149,7 +152,12 @@ func (v *View) untie() {
 // at moves to the sample and finds what need asks for. It reports false if the pose has no posture.
 func (v *View) at(s *Sample, index int, need Need) bool {
 	v.pose, v.index = s, index
-	v.machine.Move(&s.Pose, &v.S)
+	v.stand = &s.Pose
+	if v.frame.Tied {
+		v.settle = kin.Settle(v.machine, v.stand)
+		v.stand = &v.settle
+	}
+	v.machine.Move(v.stand, &v.S)
 	if v.S.Fail != kin.Reached {
 		return false
 	}
@@ -167,7 +175,7 @@ func (v *View) at(s *Sample, index int, need Need) bool {
 				}
 				continue
 			}
-			v.demands[c].efforts(&s.Pose, v.task.Gravity, v.invLc, &v.x, v.n, &v.lo[c], &v.hi[c])
+			v.demands[c].efforts(v.stand, v.task.Gravity, v.invLc, &v.x, v.n, &v.lo[c], &v.hi[c])
 		}
 	}
 	if need&NeedRates != 0 {
