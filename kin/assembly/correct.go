@@ -40,10 +40,8 @@ func (h *hexapod) correct(origin kin.Vec, rot kin.Rot) (Mode, bool) {
 			break
 		}
 		best = Mode{Origin: origin, Rot: rot, Residual: worst, Determinant: mat.Det(jac)}
-		if err := step.SolveVec(jac, diff); err != nil {
-			if c, ok := err.(mat.Condition); !ok || math.IsInf(float64(c), 1) {
-				break
-			}
+		if !solved(step, jac, diff) {
+			break
 		}
 		v := step.RawVector().Data
 		origin = r3.Add(origin, kin.Vec{X: v[0], Y: v[1], Z: v[2]})
@@ -51,4 +49,11 @@ func (h *hexapod) correct(origin kin.Vec, rot kin.Rot) (Mode, bool) {
 		rot = turn.Mul(&rot)
 	}
 	return best, best.Residual <= accepted*h.size
+}
+
+// solved solves jac·step = diff and tells whether it could be done at all, however ill-conditioned.
+func solved(step *mat.VecDense, jac *mat.Dense, diff *mat.VecDense) bool {
+	err := step.SolveVec(jac, diff)
+	c, ill := err.(mat.Condition)
+	return err == nil || ill && !math.IsInf(float64(c), 1)
 }
