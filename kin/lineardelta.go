@@ -24,6 +24,7 @@ func linearDelta() *Family {
 		Text:     "three carriages on rails with parallelograms of rods carry a platform that never turns: x, y and z",
 		Freedoms: []Freedom{X, Y, Z},
 		Legs:     3,
+		Rails:    true,
 		Drive:    Linear,
 		Picture: `Rails start on a circle of rail_radius about the base origin at the leg azimuths (90°, 210° and 330° from +x
 unless leg_azimuths says otherwise) and run upward; with a rail_slant they lean towards the axis on their way to the

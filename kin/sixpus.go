@@ -21,6 +21,7 @@ func sixPUS() *Family {
 		Text:     "six-legged platform with carriages: six rods of fixed length from carriages on rails, all six freedoms",
 		Freedoms: []Freedom{X, Y, Z, Roll, Pitch, Yaw},
 		Legs:     6,
+		Rails:    true,
 		Drive:    Linear,
 		Picture: `Rails start where 6-UPS has its base joints: in three pairs on a circle about the base origin, centred at
 azimuths 0°, 120° and 240° from +x, base_half_angle from a pair's centre line to each; platform joints in pairs

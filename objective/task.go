@@ -33,6 +33,7 @@ type Joints struct {
 type Legs struct {
 	Diameter    float64 // m
 	RodDiameter float64 // m; 0 if not given
+	Crank       float64 // diameter of cranks and arms, m; 0 for Diameter
 	Modulus     float64 // Pa; 0 if not given
 	EndFixity   float64 // K of the effective length
 }
@@ -137,5 +138,5 @@ func (t *Task) dutyLength() float64 {
 
 // setup is what a machine needs of the task.
 func (t *Task) setup() kin.Setup {
-	return kin.Setup{Tool: t.Tool, Axis: t.Joints.Axis, Diameter: t.Legs.Diameter, Length: t.Length}
+	return kin.Setup{Tool: t.Tool, Axis: t.Joints.Axis, Diameter: t.Legs.Diameter, Crank: t.Legs.Crank, Length: t.Length}
 }

@@ -21,17 +21,17 @@ its margin, what each leg must do, and how far each coordinate goes alone. It ex
 with 3 if a limit does not hold.`,
 		Args: cobra.ExactArgs(1),
 		RunE: func(_ *cobra.Command, args []string) error {
-			s, plan, err := job.Design(args[0], briefFile)
+			s, task, plan, err := job.Design(args[0], briefFile)
 			if err != nil {
 				return inputError{err}
 			}
 			values := plan.Single()
-			a := objective.Appraise(s.Task, plan, values)
-			a.Excursions = objective.Excurse(s.Task, a)
+			a := objective.Appraise(task, plan, values)
+			a.Excursions = objective.Excurse(task, a)
 			a.Notes = append(s.Notes(), a.Notes...)
 			if posesFile != "" {
 				var b bytes.Buffer
-				if err := study.WritePoses(&b, s.Task, a); err != nil {
+				if err := study.WritePoses(&b, task, a); err != nil {
 					return err
 				}
 				if err := study.WriteFile(posesFile, b.Bytes()); err != nil {
@@ -39,7 +39,7 @@ with 3 if a limit does not hold.`,
 				}
 				c.hint("wrote %d poses to %s", a.Poses, posesFile)
 			}
-			d := study.FromAppraisal(s.Task, a)
+			d := study.FromAppraisal(task, a)
 			if c.json {
 				err = printJSON(c.out, d)
 			} else {

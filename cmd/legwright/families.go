@@ -9,7 +9,7 @@ import (
 
 	"github.com/spf13/cobra"
 
-	"legwright/cmd/legwright/internal/job"
+	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
 )
@@ -69,7 +69,7 @@ counter-clockwise seen from +z, from +x. Poses are relative to home: R = Rz(yaw)
 	fmt.Fprintln(t, "dimension\tunit\tusual range\tmeaning")
 	for i := range f.Dimensions {
 		d := &f.Dimensions[i]
-		k := job.DimensionKind(d.Unit)
+		k := study.DimensionUnit(d.Unit)
 		u := units.Display(k)
 		span := fmt.Sprintf("%s to %s", units.Digits(u.From(d.Low), 4), units.Digits(u.From(d.High), 4))
 		if d.Optional {
@@ -124,7 +124,7 @@ func familiesJSON(w io.Writer, fs []*kin.Family) error {
 		e := entry{Name: f.Name, Text: f.Text, Picture: f.Picture, Freedoms: strings.Split(freedoms(f), ", "), Legs: f.Legs, Sources: f.Sources}
 		for i := range f.Dimensions {
 			d := &f.Dimensions[i]
-			n := dimension{Name: d.Name, Unit: job.DimensionKind(d.Unit).SI(), Text: d.Text, Low: d.Low, High: d.High,
+			n := dimension{Name: d.Name, Unit: study.DimensionUnit(d.Unit).SI(), Text: d.Text, Low: d.Low, High: d.High,
 				Sizable: d.Role != kin.Shape, Optional: d.Optional}
 			if d.Optional {
 				n.Default = &d.Default

@@ -10,7 +10,7 @@ import (
 	"strings"
 	"testing"
 
-	"legwright/cmd/legwright/internal/job"
+	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/objective"
 )
@@ -60,8 +60,8 @@ func TestReadmeMeasures(t *testing.T) {
 	var b strings.Builder
 	b.WriteString("<!-- measures -->\n| name | meaning | unit | needs |\n|---|---|---|---|\n")
 	for _, m := range objective.Measures() {
-		unit := job.MeasureKind(m).SI()
-		if job.MeasureKind(m) == units.Ratio {
+		unit := study.UnitKind(m.Unit).SI()
+		if study.UnitKind(m.Unit) == units.Ratio {
 			unit = "1"
 		}
 		fmt.Fprintf(&b, "| %s | %s | %s | %s |\n", m.Name, m.Text, unit, strings.Join(m.Inputs, ", "))

@@ -4,12 +4,13 @@ import (
 	_ "embed"
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 	"text/template"
 
 	"github.com/spf13/cobra"
 
-	"legwright/cmd/legwright/internal/job"
+	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
 )
@@ -55,6 +56,7 @@ func starter(f *kin.Family) (string, error) {
 		"pad":      func(d kin.Dimension) string { return strings.Repeat(" ", max(0, 20-len(d.Name))) },
 		"comment":  func(text string) string { return "# " + strings.ReplaceAll(text, "\n", "\n# ") },
 		"optional": func(d kin.Dimension) bool { return d.Optional },
+		"turns":    func() bool { return slices.ContainsFunc(f.Freedoms, kin.Freedom.Angular) },
 		"linear":   func() bool { return f.Drive == kin.Linear },
 		"inertia":  func(m float64) string { return units.Format(m*0.06, units.Inertia, 2) },
 	}).Parse(starterText)
@@ -82,7 +84,7 @@ func starterRange(d *kin.Dimension) string {
 	if d.Role != kin.Shape {
 		return "sized"
 	}
-	k := job.DimensionKind(d.Unit)
+	k := study.DimensionUnit(d.Unit)
 	if math.Abs(d.High-d.Low) == 0 {
 		return units.Format(d.Low, k, 4)
 	}

@@ -222,6 +222,7 @@ func legKeys() []key {
 	return []key{
 		{name: "diameter", read: measured(units.Length, notNegative)},
 		{name: "rod_diameter", read: measured(units.Length, aboveZero)},
+		{name: "crank_diameter", read: measured(units.Length, aboveZero)},
 		{name: "modulus", read: measured(units.Pressure, aboveZero)},
 		{name: "end_fixity", read: measured(units.Ratio, aboveZero)},
 	}

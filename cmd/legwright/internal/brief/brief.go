@@ -95,10 +95,11 @@ type Axis struct {
 
 // Legs holds what is known of the legs' bodies.
 type Legs struct {
-	Diameter    float64 `json:"diameter" mapstructure:"diameter"`         // m
-	RodDiameter float64 `json:"rod_diameter" mapstructure:"rod_diameter"` // m; 0: not given
-	Modulus     float64 `json:"modulus" mapstructure:"modulus"`           // Pa; 0: not given
-	EndFixity   float64 `json:"end_fixity" mapstructure:"end_fixity"`
+	Diameter      float64 `json:"diameter" mapstructure:"diameter"`             // m
+	RodDiameter   float64 `json:"rod_diameter" mapstructure:"rod_diameter"`     // m; 0: not given
+	CrankDiameter float64 `json:"crank_diameter" mapstructure:"crank_diameter"` // m, of cranks and arms; 0: as diameter
+	Modulus       float64 `json:"modulus" mapstructure:"modulus"`               // Pa; 0: not given
+	EndFixity     float64 `json:"end_fixity" mapstructure:"end_fixity"`
 }
 
 // Length is the characteristic length: "value" (m), "platform_radius" or "duty".

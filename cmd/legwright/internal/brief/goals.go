@@ -25,6 +25,15 @@ func (r *reader) measure(n *node) (*KnownMeasure, bool) {
 		r.refuse(n, fmt.Sprintf("%s has no value for %s", name, strings.Join(without, ", ")), "measures for all families here: "+strings.Join(r.common(), ", "))
 		return nil, false
 	}
+	if push, turn := r.drives(); m.Turn != units.Ratio && turn {
+		if push {
+			r.refuse(n, fmt.Sprintf("%s of families that push and of families that turn differ in their units", name), "measures for all families here: "+strings.Join(r.common(), ", "))
+			return nil, false
+		}
+		turned := *m
+		turned.Kind = m.Turn
+		m = &turned
+	}
 	r.measures = append(r.measures, measureUse{n, m})
 	return m, true
 }
@@ -32,6 +41,10 @@ func (r *reader) measure(n *node) (*KnownMeasure, bool) {
 // common lists the measures that every family has.
 func (r *reader) common() (names []string) {
 	for _, m := range r.known.Measures {
+		push, turn := r.drives()
+		if push && turn && m.Turn != units.Ratio {
+			continue
+		}
 		if !slices.ContainsFunc(r.families, func(f *KnownFamily) bool { return !m.of(f.Name) }) {
 			names = append(names, m.Name)
 		}

@@ -48,10 +48,11 @@ const (
 type KnownMeasure struct {
 	Name     string
 	Kind     units.Kind
-	Sense    Sense    // the way in which it is better; "" if either may be wanted
-	Families []string // that have it; nil: all
-	Share    bool     // lies from 0 to 1
-	Needs    []string // keys of the brief without which it has no value, as "actuator.stiffness"
+	Turn     units.Kind // the kind where all actuators turn, if it differs; Ratio for none
+	Sense    Sense      // the way in which it is better; "" if either may be wanted
+	Families []string   // that have it; nil: all
+	Share    bool       // lies from 0 to 1
+	Needs    []string   // keys of the brief without which it has no value, as "actuator.stiffness"
 }
 
 // Sense is the direction of a goal.

@@ -12,31 +12,33 @@ import (
 
 // Design reads a design file and the brief to judge it by: briefFile, or the one that the design names.
 // The plan leaves nothing open but an actuator range that the file leaves out and the brief sizes.
-func Design(file, briefFile string) (*Study, *objective.Plan, error) {
+func Design(file, briefFile string) (*Study, *objective.Task, *objective.Plan, error) {
 	d, err := brief.LoadDesign(file, *Known())
 	if err != nil {
-		return nil, nil, err
+		return nil, nil, nil, err
 	}
 	if briefFile == "" {
 		briefFile = d.BriefFile()
 	}
 	if briefFile == "" {
-		return nil, nil, brief.Faults{d.Fault("", "names no brief", "write brief: FILE in it, or give one with --brief")}
+		return nil, nil, nil, brief.Faults{d.Fault("", "names no brief", "write brief: FILE in it, or give one with --brief")}
 	}
 	b, err := brief.Load(briefFile, *Known())
 	if err != nil {
-		return nil, nil, err
+		return nil, nil, nil, err
 	}
 	s, err := New(b)
 	if err != nil {
-		return nil, nil, err
+		return nil, nil, nil, err
 	}
-	p, err := s.plan(d)
-	return s, p, err
+	t := task(b, kin.FamilyNamed(d.Family))
+	t.Prepare()
+	p, err := s.plan(t, d)
+	return s, t, p, err
 }
 
 // plan is the plan of a single design under the study's brief.
-func (s *Study) plan(d *brief.Design) (*objective.Plan, error) {
+func (s *Study) plan(t *objective.Task, d *brief.Design) (*objective.Plan, error) {
 	var of *objective.Plan
 	for _, p := range s.Plans {
 		if p.Family.Name == d.Family {
@@ -56,10 +58,10 @@ func (s *Study) plan(d *brief.Design) (*objective.Plan, error) {
 			specs[i] = of.Specs[i]
 			specs[i].Kind = objective.Sized
 		default:
-			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+DimensionKind(dim.Unit).Sample()))
+			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+study.DimensionUnit(dim.Unit).Sample()))
 		}
 	}
-	joints, err := outright(d)
+	joints, err := outright(d, values)
 	if err != nil {
 		return nil, err
 	}
@@ -69,7 +71,7 @@ func (s *Study) plan(d *brief.Design) (*objective.Plan, error) {
 	if err := faults.Err(); err != nil {
 		return nil, err
 	}
-	p := objective.NewPlan(s.Task, f, specs)
+	p := objective.NewPlan(t, f, specs)
 	p.Joints = joints
 	return p, nil
 }
@@ -93,18 +95,25 @@ func dimensionValues(f *kin.Family, d *brief.Design) (values []float64, missing 
 	return values, missing
 }
 
-// outright gives the joints of a design file, or nil.
-func outright(d *brief.Design) (*kin.Joints, error) {
+// outright gives the joints of a design file, or nil. values are the design's dimensions.
+func outright(d *brief.Design, values []float64) (*kin.Joints, error) {
 	if d.Joints == nil {
 		return nil, nil
 	}
-	j := &kin.Joints{HomeRot: kin.Identity()}
+	j := &kin.Joints{HomeRot: kin.Identity(), Values: values}
 	f := kin.FamilyNamed(d.Family)
 	for _, p := range d.Joints.Base {
 		j.Base = append(j.Base, vec(p))
 	}
 	for _, p := range d.Joints.Platform {
 		j.Platform = append(j.Platform, vec(p))
+	}
+	for _, r := range d.Rails {
+		j.Rails = append(j.Rails, kin.Rail{Point: vec(r.Point), Direction: vec(r.Direction)})
+		j.Base = append(j.Base, vec(r.Point))
+	}
+	if len(d.Rails) == 0 && f.Rails {
+		return nil, brief.Faults{d.Fault("joints", "joints are given outright, but no rails", "write rails: [{point: [x, y, z], direction: [x, y, z]}, …]")}
 	}
 	if len(j.Base) != f.Legs || len(j.Platform) != f.Legs {
 		return nil, brief.Faults{d.Fault("joints", fmt.Sprintf("%d base and %d platform joints", len(j.Base), len(j.Platform)),
@@ -132,23 +141,23 @@ func Machine(file string) (kin.Machine, *kin.Family, error) {
 		return nil, nil, err
 	}
 	f := kin.FamilyNamed(d.Family)
-	joints, err := outright(d)
+	values, missing := dimensionValues(f, d)
+	joints, err := outright(d, values)
 	if err != nil {
 		return nil, nil, err
 	}
 	var setup kin.Setup
-	if joints != nil {
-		return f.Outright(joints, &setup), f, nil
-	}
-	values, missing := dimensionValues(f, d)
 	var faults brief.Faults
 	for i, m := range missing {
-		if dim := &f.Dimensions[i]; m && dim.Role == kin.Shape {
-			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+DimensionKind(dim.Unit).Sample()))
+		if dim := &f.Dimensions[i]; m && dim.Role == kin.Shape && !(joints != nil && dim.Joints) {
+			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+study.DimensionUnit(dim.Unit).Sample()))
 		}
 	}
 	if err := faults.Err(); err != nil {
 		return nil, nil, err
+	}
+	if joints != nil {
+		return f.Outright(joints, &setup), f, nil
 	}
 	return f.Build(values, &setup), f, nil
 }
@@ -171,7 +180,7 @@ func EncodeDesign(r study.Design, briefFile string) []byte {
 		if !listed {
 			name = dim.Name
 		}
-		d.Dimensions = append(d.Dimensions, brief.DesignDimension{Name: name, Kind: DimensionKind(dim.Unit), Values: []float64{float64(v)}})
+		d.Dimensions = append(d.Dimensions, brief.DesignDimension{Name: name, Kind: study.DimensionUnit(dim.Unit), Values: []float64{float64(v)}})
 	}
 	return d.Encode()
 }

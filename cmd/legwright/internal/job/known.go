@@ -7,7 +7,7 @@ import (
 	"strings"
 
 	"legwright/cmd/legwright/internal/brief"
-	"legwright/cmd/legwright/internal/units"
+	"legwright/cmd/legwright/internal/study"
 	"legwright/kin"
 	"legwright/objective"
 )
@@ -19,7 +19,10 @@ func Known() *brief.Known {
 		k.Families = append(k.Families, knownFamily(f))
 	}
 	for _, m := range objective.Measures() {
-		km := brief.KnownMeasure{Name: m.Name, Kind: MeasureKind(m), Needs: m.Inputs, Share: m.Most == 1}
+		km := brief.KnownMeasure{Name: m.Name, Kind: study.UnitKind(m.Unit), Needs: m.Inputs, Share: m.Most == 1}
+		if m.Rotary != 0 {
+			km.Turn = study.UnitKind(m.Rotary)
+		}
 		switch m.Sense {
 		case objective.Larger:
 			km.Sense = brief.Maximise
@@ -43,6 +46,7 @@ func knownFamily(f *kin.Family) brief.KnownFamily {
 	k := brief.KnownFamily{Name: f.Name, Rotary: f.Drive == kin.Rotary}
 	if f.Outright != nil {
 		k.Legs = f.Legs
+		k.Rails = f.Rails
 	}
 	for _, q := range f.Freedoms {
 		k.Freedoms = append(k.Freedoms, q.String())
@@ -55,8 +59,8 @@ func knownFamily(f *kin.Family) brief.KnownFamily {
 			continue
 		}
 		kd := brief.KnownDimension{
-			Name: d.Name, Kind: DimensionKind(d.Unit), Optional: d.Optional,
-			Sizable: d.Role != kin.Shape, Positive: d.Unit == kin.Metre,
+			Name: d.Name, Kind: study.DimensionUnit(d.Unit), Optional: d.Optional,
+			Sizable: d.Role != kin.Shape, Positive: d.Unit == kin.Metre && d.Low >= 0,
 		}
 		if listed {
 			kd.Name, kd.Each = name, 1
@@ -74,7 +78,7 @@ func knownFamily(f *kin.Family) brief.KnownFamily {
 
 // eachOf splits the name of a dimension that briefs give as a list with one item for each leg.
 func eachOf(name string) (list string, item int, ok bool) {
-	for _, l := range []string{"leg_azimuths"} {
+	for _, l := range []string{"leg_azimuths", "modes"} {
 		if rest, found := strings.CutPrefix(name, l+"_"); found {
 			return l, int(rest[0] - '1'), true
 		}
@@ -87,34 +91,4 @@ func lastName(ds []brief.KnownDimension) string {
 		return ""
 	}
 	return ds[len(ds)-1].Name
-}
-
-// DimensionKind is what a dimension in the unit is a quantity of.
-func DimensionKind(u kin.Unit) units.Kind {
-	switch u {
-	case kin.Radian:
-		return units.Angle
-	case kin.Sign:
-		return units.Sign
-	}
-	return units.Length
-}
-
-// MeasureKind is what the measure's value is a quantity of.
-func MeasureKind(m *objective.Measure) units.Kind { return UnitKind(m.Unit) }
-
-// UnitKind is what a number in the unit is a quantity of.
-func UnitKind(u objective.Unit) units.Kind {
-	return map[objective.Unit]units.Kind{
-		objective.Ratio:                units.Ratio,
-		objective.Metre:                units.Length,
-		objective.Radian:               units.Angle,
-		objective.Newton:               units.Force,
-		objective.NewtonMetre:          units.Torque,
-		objective.MetrePerSecond:       units.Speed,
-		objective.RadianPerSecond:      units.AngularSpeed,
-		objective.Watt:                 units.Power,
-		objective.NewtonPerMetre:       units.Stiffness,
-		objective.NewtonMetrePerRadian: units.TurnStiffness,
-	}[u]
 }

@@ -4,6 +4,7 @@ import (
 	"fmt"
 
 	"legwright/cmd/legwright/internal/study"
+	"legwright/kin"
 	"legwright/objective"
 )
 
@@ -15,7 +16,7 @@ func Program() string { return "legwright " + Version }
 
 // Notes says what holds for the whole study: what its figures leave out, and its Hints.
 func (s *Study) Notes() []string {
-	return append(study.LeftOut(len(s.Task.Samples())), s.Hints()...)
+	return append(study.LeftOut(len(s.Tasks[0].Samples())), s.Hints()...)
 }
 
 // Hints says what the brief might say better.
@@ -28,9 +29,14 @@ func (s *Study) Hints() []string {
 			notes = append(notes, fmt.Sprintf("no goal or limit of the brief depends on where %s and %s lie in their ranges, so each %s gets the shortest that the duty needs within them; write `sized` to drop the ranges", a, b, p.Family.Name))
 		}
 	}
-	for i := range s.Task.Zones {
-		if s.Task.Zones[i].Kind == objective.Axes {
-			notes = append(notes, fmt.Sprintf("zone %q asks for each excursion alone; such excursions are not reachable together", s.Task.Zones[i].Name))
+	for _, p := range s.Plans {
+		if p.Family.Drive == kin.Rotary {
+			notes = append(notes, fmt.Sprintf("%s: torques are for the payload only; arms, cranks and rods are massless here, so motors need more", p.Family.Name))
+		}
+	}
+	for _, z := range s.Tasks[0].Zones {
+		if z.Kind == objective.Axes {
+			notes = append(notes, fmt.Sprintf("zone %q asks for each excursion alone; such excursions are not reachable together", z.Name))
 		}
 	}
 	return notes

@@ -52,12 +52,12 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	f := &study.Front{
 		Format: study.Format, Program: Program(), Title: s.Brief.Title, Seed: r.Seed,
 		Status: out.Status.String(), Evaluations: out.Evaluations, Feasible: out.Feasible, Population: out.Population,
-		Poses: len(s.Task.Samples()), Hypervolume: study.Number(out.Hypervolume),
+		Poses: len(s.Tasks[0].Samples()), Hypervolume: study.Number(out.Hypervolume),
 		Weights: s.Brief.Ranking.Weights,
 		Notes:   s.Notes(),
 	}
-	for i, g := range s.Task.Goals {
-		v := study.Goal{Measure: g.Measure.Name, Sense: "minimise", Unit: MeasureKind(g.Measure).SI()}
+	for i, g := range s.goals() {
+		v := study.Goal{Measure: g.Measure.Name, Sense: "minimise", Unit: study.UnitKind(g.Measure.UnitOf(s.Plans[0].Family)).SI()}
 		if g.Maximise {
 			v.Sense = "maximise"
 		}
@@ -74,9 +74,22 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	return &Found{Front: f, History: out.History, Status: out.Status}, nil
 }
 
+// goals are those of the brief.
+func (s *Study) goals() []objective.Goal { return s.Tasks[0].Goals }
+
+// task is the task of a plan.
+func (s *Study) task(p *objective.Plan) *objective.Task {
+	for i := range s.Plans {
+		if s.Plans[i] == p {
+			return s.Tasks[i]
+		}
+	}
+	panic("job: a plan of another study")
+}
+
 // turn changes between a goal as the search sees it, to be minimised, and the measure's value.
 func (s *Study) turn(goal int, v float64) float64 {
-	if s.Task.Goals[goal].Maximise {
+	if s.goals()[goal].Maximise {
 		return -v
 	}
 	return v
@@ -88,8 +101,8 @@ func (s *Study) reference() []float64 {
 	if given == nil {
 		return nil
 	}
-	out := make([]float64, len(s.Task.Goals))
-	for i, g := range s.Task.Goals {
+	out := make([]float64, len(s.goals()))
+	for i, g := range s.goals() {
 		out[i] = s.turn(i, given[g.Measure.Name])
 	}
 	return out
@@ -97,15 +110,16 @@ func (s *Study) reference() []float64 {
 
 // problem makes the search problem, with scratch for each worker and family.
 func (s *Study) problem(workers int) opt.Problem {
-	p := opt.Problem{Goals: len(s.Task.Goals), Limits: len(s.Task.Constraints())}
-	for _, plan := range s.Plans {
+	p := opt.Problem{Goals: len(s.goals())}
+	for i, plan := range s.Plans {
+		p.Limits = max(p.Limits, len(s.Tasks[i].Constraints()))
 		p.Spaces = append(p.Spaces, space(plan))
 	}
 	screens := make([][]*objective.Screen, workers)
 	scores := make([]objective.Score, workers)
 	for w := range screens {
-		for _, plan := range s.Plans {
-			screens[w] = append(screens[w], objective.NewScreen(s.Task, plan))
+		for i, plan := range s.Plans {
+			screens[w] = append(screens[w], objective.NewScreen(s.Tasks[i], plan))
 		}
 	}
 	p.Evaluate = func(worker, space int, x []float64, r *opt.Result) {
@@ -151,7 +165,8 @@ func (s *Study) appraise(ds []opt.Design, workers int) []*objective.Appraisal {
 	for range max(1, workers) {
 		wg.Go(func() {
 			for i := range next {
-				out[i] = s.oneOfTwins(objective.Appraise(s.Task, s.Plans[ds[i].Space], s.values(&ds[i])))
+				t, p := s.Tasks[ds[i].Space], s.Plans[ds[i].Space]
+				out[i] = s.oneOfTwins(objective.Appraise(t, p, s.values(&ds[i])), t)
 			}
 		})
 	}
@@ -173,7 +188,7 @@ next:
 				continue next
 			}
 		}
-		out = append(out, study.FromAppraisal(s.Task, a))
+		out = append(out, study.FromAppraisal(s.task(a.Plan), a))
 	}
 	return out
 }

@@ -11,39 +11,43 @@ import (
 // Study is a brief made ready to be worked on.
 type Study struct {
 	Brief *brief.Brief
-	Task  *objective.Task
-	Plans []*objective.Plan // one for each family of the brief
+	Tasks []*objective.Task // one for each family of the brief; they differ in what depends on the kind of actuator
+	Plans []*objective.Plan
 
 	halfTurn bool // half a turn about z leaves the task unchanged
 }
 
 // New makes the study of a brief. Faults that only show with the kinematics are brief.Faults.
 func New(b *brief.Brief) (*Study, error) {
-	s := &Study{Brief: b, Task: task(b)}
+	s := &Study{Brief: b}
 	faults := impossible(b)
 	for i := range b.Families {
 		f := kin.FamilyNamed(b.Families[i].Name)
-		s.Plans = append(s.Plans, objective.NewPlan(s.Task, f, specs(f, &b.Families[i])))
+		t := task(b, f)
+		s.Tasks = append(s.Tasks, t)
+		s.Plans = append(s.Plans, objective.NewPlan(t, f, specs(f, &b.Families[i])))
 		faults = append(faults, singularEverywhere(b, &b.Families[i])...)
 	}
 	if err := faults.Err(); err != nil {
 		return nil, err
 	}
-	s.Task.Prepare()
-	s.halfTurn = s.Task.HalfTurn()
+	for _, t := range s.Tasks {
+		t.Prepare()
+	}
+	s.halfTurn = s.Tasks[0].HalfTurn()
 	return s, nil
 }
 
-// task is everything of the brief but the dimensions.
-func task(b *brief.Brief) *objective.Task {
-	rotary := len(b.Families) > 0 && kin.FamilyNamed(b.Families[0].Name).Drive == kin.Rotary
+// task is everything of the brief but the dimensions, as it concerns a family.
+func task(b *brief.Brief, f *kin.Family) *objective.Task {
+	rotary := f.Drive == kin.Rotary
 	t := &objective.Task{
 		Tool:     vec(b.Tool),
 		Gravity:  vec(b.Gravity),
 		Actuator: actuator(&b.Actuator, rotary),
 		Joints:   objective.Joints{Axis: axis(&b.Joints.Axis), Stiffness: b.Joints.Stiffness},
 		Legs: objective.Legs{Diameter: b.Legs.Diameter, RodDiameter: b.Legs.RodDiameter,
-			Modulus: b.Legs.Modulus, EndFixity: b.Legs.EndFixity},
+			Crank: b.Legs.CrankDiameter, Modulus: b.Legs.Modulus, EndFixity: b.Legs.EndFixity},
 		Singular: b.SingularBelow,
 		Coverage: 1,
 	}
@@ -80,8 +84,8 @@ func task(b *brief.Brief) *objective.Task {
 		}
 	}
 	most := func(name, origin string, bound float64) {
-		if bound > 0 {
-			t.Limits = append(t.Limits, objective.Limit{Measure: objective.MeasureNamed(name), Bound: bound, Origin: origin})
+		if m := objective.MeasureNamed(name); bound > 0 && (m.Has == nil || m.Has(f)) {
+			t.Limits = append(t.Limits, objective.Limit{Measure: m, Bound: bound, Origin: origin})
 		}
 	}
 	most("base_swing", "joints.base_swing", b.Joints.BaseSwing)

@@ -10,7 +10,7 @@ import (
 // the two are one machine turned by half a turn, so that a table never shows
 // one machine in two ways: the task must be unchanged by half a turn, both must be
 // allowed, and the sampled poses must agree on every goal.
-func (s *Study) oneOfTwins(a *objective.Appraisal) *objective.Appraisal {
+func (s *Study) oneOfTwins(a *objective.Appraisal, t *objective.Task) *objective.Appraisal {
 	if !s.halfTurn {
 		return a
 	}
@@ -18,11 +18,11 @@ func (s *Study) oneOfTwins(a *objective.Appraisal) *objective.Appraisal {
 	if twin == nil || !less(twin, a.Values) {
 		return a
 	}
-	b := objective.Appraise(s.Task, a.Plan, twin)
+	b := objective.Appraise(t, a.Plan, twin)
 	if !b.Feasible {
 		return a
 	}
-	for _, g := range s.Task.Goals {
+	for _, g := range t.Goals {
 		x, y := a.Reading(g.Measure.Name), b.Reading(g.Measure.Name)
 		if x == nil || y == nil || math.Abs(x.Value-y.Value) > objective.Tolerance*math.Abs(x.Value) {
 			return a

@@ -79,7 +79,7 @@ func (s *sheet) measures(d *study.Design, poses *gazetteer) {
 		{head: "case", name: "case", left: true, most: 20}, {head: "zone", name: "zone", left: true, most: 20},
 	}
 	for _, n := range d.MeasureNames() {
-		c := measureScale(n)
+		c := measureScale(d.Family, n)
 		v := c.number(float64(d.Measures[n]), manyDigits)
 		if d.Unbounded[n] {
 			v = "unbounded"

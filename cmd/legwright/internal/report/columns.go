@@ -36,7 +36,13 @@ func (d *designs) figures(name string, keep int, s scale, of func(*study.Design)
 }
 
 func (d *designs) measure(name string, keep int) column {
-	return d.figures(study.Clean(name), keep, measureScale(name), func(r *study.Design) (study.Number, bool) {
+	family := ""
+	for _, r := range d.rows {
+		if _, ok := r.Measures[name]; ok {
+			family = r.Family
+		}
+	}
+	return d.figures(study.Clean(name), keep, measureScale(family, name), func(r *study.Design) (study.Number, bool) {
 		v, ok := r.Measures[name]
 		return v, ok
 	})

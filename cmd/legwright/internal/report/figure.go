@@ -16,8 +16,8 @@ type scale struct {
 }
 
 // measureScale is the scale of a measure; a share of poses is shown in percent.
-func measureScale(name string) scale {
-	return scale{kind: study.MeasureKind(name), percent: name == "coverage"}
+func measureScale(family, name string) scale {
+	return scale{kind: study.MeasureKind(family, name), percent: name == "coverage"}
 }
 
 // limitScale is the scale of a limit with an SI unit.

@@ -185,7 +185,7 @@ func (st *step) words(f *study.Front, from, gained int) string {
 // change says how a measure changes from a to b: "8.1 % less leg_force (2140 to 1970 N)"; lengths and
 // angles as such: "120 mm more footprint (1530 to 1650 mm)".
 func change(measure string, a, b *study.Design) string {
-	c := measureScale(measure)
+	c := measureScale(a.Family, measure)
 	u, v := float64(a.Measures[measure]), float64(b.Measures[measure])
 	word := "more"
 	if v < u {

@@ -78,7 +78,7 @@ func poseOf(s *objective.Sample) *Pose {
 
 func limitOf(v *objective.Verdict) Limit {
 	l := Limit{
-		Measure: v.Name, Origin: v.Origin, Unit: kindOfMeasure(v.Unit).SI(), Sense: "at_most",
+		Measure: v.Name, Origin: v.Origin, Unit: UnitKind(v.Unit).SI(), Sense: "at_most",
 		Bound: Number(v.Bound), Value: Number(v.Value), Holds: v.Holds, Margin: Number(v.Margin), Unbounded: unbounded(v.Value),
 	}
 	if v.AtLeast {

@@ -269,7 +269,7 @@ func TestUnboundedFields(t *testing.T) {
 // Every measure and dimension has a unit that its record can be read back by.
 func TestKindsOfTheRegistries(t *testing.T) {
 	for _, m := range objective.Measures() {
-		k := MeasureKind(m.Name)
+		k := MeasureKind("", m.Name)
 		if m.Unit != objective.Ratio && k.Bare() {
 			t.Errorf("%s has no unit", m.Name)
 		}

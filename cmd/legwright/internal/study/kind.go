@@ -18,38 +18,42 @@ func KindOf(unit string) units.Kind {
 	return units.Ratio
 }
 
-// MeasureKind is the kind of quantity of the named measure, a bare number if there is no such measure.
-func MeasureKind(name string) units.Kind {
-	for _, m := range objective.Measures() {
-		if m.Name == name {
-			return kindOfMeasure(m.Unit)
+// MeasureKind is the kind of quantity that the named measure has for machines of the family, a bare
+// number if there is no such measure.
+func MeasureKind(family, name string) units.Kind {
+	m := objective.MeasureNamed(name)
+	if m == nil {
+		return units.Ratio
+	}
+	if f := kin.FamilyNamed(family); f != nil {
+		return UnitKind(m.UnitOf(f))
+	}
+	return UnitKind(m.Unit)
+}
+
+// DimensionKind is the kind of quantity of a family's dimension, a bare number if there is no such dimension.
+func DimensionKind(family, name string) units.Kind {
+	if f := kin.FamilyNamed(family); f != nil {
+		if i := f.Index(name); i >= 0 {
+			return DimensionUnit(f.Dimensions[i].Unit)
 		}
 	}
 	return units.Ratio
 }
 
-// DimensionKind is the kind of quantity of a family's dimension, a bare number if there is no such dimension.
-func DimensionKind(family, name string) units.Kind {
-	f := kin.FamilyNamed(family)
-	if f == nil {
-		return units.Ratio
-	}
-	i := f.Index(name)
-	if i < 0 {
-		return units.Ratio
-	}
-	switch f.Dimensions[i].Unit {
-	case kin.Metre:
-		return units.Length
+// DimensionUnit is the kind of quantity of dimensions in the unit.
+func DimensionUnit(u kin.Unit) units.Kind {
+	switch u {
 	case kin.Radian:
 		return units.Angle
 	case kin.Sign:
 		return units.Sign
 	}
-	return units.Ratio
+	return units.Length
 }
 
-func kindOfMeasure(u objective.Unit) units.Kind {
+// UnitKind is the kind of quantity of measures in the unit.
+func UnitKind(u objective.Unit) units.Kind {
 	switch u {
 	case objective.Metre:
 		return units.Length
@@ -69,6 +73,8 @@ func kindOfMeasure(u objective.Unit) units.Kind {
 		return units.Stiffness
 	case objective.NewtonMetrePerRadian:
 		return units.TurnStiffness
+	case objective.MetrePerRadian:
+		return units.Gain
 	}
 	return units.Ratio
 }

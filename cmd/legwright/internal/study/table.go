@@ -52,7 +52,7 @@ func WriteTable(w io.Writer, f *Front) error {
 		if f.isDimension(name) {
 			continue // stroke, leg_min and home_height are measures too
 		}
-		k := MeasureKind(name)
+		k := f.measureKind(name)
 		cols = append(cols, column{units.Heading(name, k), func(d *Design) string { return among(d.Measures, name, k) }})
 	}
 	cols = append(cols,
@@ -154,6 +154,16 @@ func (f *Front) dimensionKind(name string) units.Kind {
 	for i := range f.Designs {
 		if _, ok := f.Designs[i].Dimensions[name]; ok {
 			return DimensionKind(f.Designs[i].Family, name)
+		}
+	}
+	return units.Ratio
+}
+
+// measureKind is that of the first design that has the measure; all designs of a front agree.
+func (f *Front) measureKind(name string) units.Kind {
+	for i := range f.Designs {
+		if _, ok := f.Designs[i].Measures[name]; ok {
+			return MeasureKind(f.Designs[i].Family, name)
 		}
 	}
 	return units.Ratio
