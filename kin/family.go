@@ -82,7 +82,7 @@ type Family struct {
 	Legs       int
 	Drive      Drive
 	Rails      bool // Outright takes rails in place of base joints
-	Free       int // actuators, the last ones, that the dimensions of the roles Least and Span do not bound
+	Free       int  // actuators, the last ones, that the dimensions of the roles Least and Span do not bound
 	Dimensions []Dimension
 	Starter    Starter
 	Sources    []string

@@ -26,13 +26,20 @@ const (
 // Locate finds the pose whose actuator coordinates are q by Newton-Raphson from
 // the pose `from`, each step halved until the residual falls (at most 20 times).
 // It has converged when the largest difference of an actuator coordinate is below
-// 1e-13 of the largest coordinate, or when no step improves on 1e-10 of it. It
+// 1e-13 of the largest coordinate, or when no step improves on 1e-10 of it (of a
+// crank's angle at least of 1 rad, of a carriage's coordinate at least of its rod, as both may be 0). It
 // reports false after 200 steps, at a singular pose, or where it leaves reach;
 // the posture is then the last one met.
 func Locate(m Machine, q []float64, from Pose) (Posture, bool) {
 	f := m.Frame()
 	n := len(f.Freedoms)
 	scale := 0.0
+	for _, r := range f.Rods {
+		if f.Rails == nil {
+			r = 1
+		}
+		scale = math.Max(scale, r)
+	}
 	for _, v := range q {
 		scale = math.Max(scale, math.Abs(v))
 	}
