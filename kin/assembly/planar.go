@@ -195,15 +195,8 @@ func (h *triangle) merge(modes []Mode, heading float64) (_ []Mode, curve bool) {
 	for _, side := range [2]float64{-1, 1} {
 		p := n*complex(along, side*across)*complex(h.size, 0) + h.base[0] - cmplx.Rect(1, heading)*h.platform[0]
 		m, ok := h.correct(p, heading)
-		if !ok {
-			continue
-		}
-		known := false
-		for j := range modes {
-			known = known || distance(m.Origin, modes[j].Origin, &m.Rot, &modes[j].Rot, h.size) < sameMode*h.size
-		}
-		if !known {
-			modes = append(modes, m)
+		if ok {
+			modes = include(modes, m, h.size)
 		}
 	}
 	return modes, false
