@@ -63,15 +63,18 @@ type Point struct {
 
 // Outcome is what a Search found. Designs share memory with nothing else.
 type Outcome struct {
-	// Front holds at most Settings.Front non-dominated designs, those that
-	// cover most hypervolume, in ascending order of their goals.
+	// Front holds at most Settings.Front non-dominated designs in ascending
+	// order of their goals: the best in each goal (if Settings.Front is at
+	// least 4 per goal) and those that cover most hypervolume.
 	Front []Design
 	// Archive is the number of non-dominated designs Front was picked from.
 	Archive int
-	// Reference bounds the hypervolume: Settings.Reference, or fixed at the
-	// first generation barrier with feasible designs: per goal the worst value
-	// among them plus a tenth of their range (a tenth of its magnitude, or 1,
-	// where the range is 0). nil when no design was feasible.
+	// Reference bounds the hypervolume: Settings.Reference, or fixed once 30
+	// feasible designs are counted (at the first polish or at the end, if there
+	// are fewer): per goal
+	// the worst value among those counted by then plus half their range (half
+	// its magnitude, or 1, where the range is nothing). nil when no design was
+	// feasible.
 	Reference []float64
 	// Hypervolume that Front covers up to Reference.
 	Hypervolume float64

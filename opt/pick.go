@@ -6,7 +6,8 @@ import (
 )
 
 // pick returns the indices of at most k of the mutually non-dominated pts
-// that cover much hypervolume up to ref: greedily the point that adds most
+// that cover much hypervolume up to ref: unless k is less than 4 per goal, the
+// best in each goal to begin with, even beyond ref; then greedily the point that adds most
 // (within 1-1/e of the best, Nemhauser, Wolsey, Fisher 1978), then, with up to
 // 3 goals and while it pays, a chosen point is replaced by the one that adds
 // most without it. With more than 4 goals the points are spread instead, see
@@ -29,6 +30,14 @@ func pick(pts [][]float64, k int, ref []float64) []int {
 		copy(p.corner(i), ref)
 		p.update(i)
 	}
+	if k >= 4*len(ref) {
+		for _, i := range Extremes(pts) {
+			if p.gains[i] >= 0 {
+				p.take(i, true)
+				p.fixed = append(p.fixed, i)
+			}
+		}
+	}
 	for len(p.index) < k {
 		p.take(p.best(), true)
 	}
@@ -45,6 +54,7 @@ type picker struct {
 	chosen shares
 	index  []int     // of the chosen points, in the order of chosen
 	gains  []float64 // what each point would add; -1 once chosen
+	fixed  []int     // chosen points that stay
 	stale  []bool    // the gain may have become less since it was computed
 	upper  []float64 // corners of the boxes that hold these gains
 }
@@ -117,7 +127,7 @@ func (p *picker) exchange() {
 	for range rounds {
 		swapped := false
 		for _, i := range slices.Clone(p.index) {
-			if settled[i] {
+			if settled[i] || slices.Contains(p.fixed, i) {
 				continue
 			}
 			c := slices.Index(p.index, i)

@@ -27,6 +27,7 @@ func (r *run) polish() {
 	if due <= 0 || r.archive.Len() == 0 || r.ctx.Err() != nil {
 		return
 	}
+	r.fixReference()
 	jobs := r.polishJobs(due)
 	if len(jobs) == 0 {
 		return

@@ -124,7 +124,7 @@ func (p *population) scale() {
 		}
 	}
 	for k := range p.at {
-		p.at[k] = margin(p.low[k], p.high[k])
+		p.at[k] = margin(p.low[k], p.high[k], 0.1)
 		if p.ref != nil {
 			far := p.high[k] + 10*(p.high[k]-p.low[k])
 			p.at[k] = max(p.at[k], min(p.ref[k], far))
@@ -133,14 +133,13 @@ func (p *population) scale() {
 	p.share.move(p.at)
 }
 
-// margin returns a value a tenth of the range beyond high, clear of it even
-// when the range is nothing.
-func margin(low, high float64) float64 {
-	if d := high - low; d > 0 && high+0.1*d > high {
-		return high + 0.1*d
-	}
-	if d := math.Abs(high); high+0.1*d > high {
-		return high + 0.1*d
+// margin returns a value the share of the range beyond high, clear of it even
+// when the range is nothing: then the share of high's magnitude, or 1.
+func margin(low, high, share float64) float64 {
+	for _, d := range []float64{high - low, math.Abs(high)} {
+		if at := high + float64(share*d); at > high && !math.IsInf(at, 0) {
+			return at
+		}
 	}
 	return high + 1
 }

@@ -39,6 +39,7 @@ func (a *Archive) points() [][]float64 {
 
 // outcome sums the run up.
 func (r *run) outcome() *Outcome {
+	r.fixReference()
 	o := &Outcome{
 		Archive: r.archive.Len(), Reference: r.reference, Evaluations: r.evaluations, Feasible: r.feasible,
 		Population: r.start, Grown: r.grown, Children: r.set.Children, Polished: r.polished,

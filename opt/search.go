@@ -76,7 +76,7 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 
 // archiveLimit bounds what a newcomer costs: enough designs that the choice of
 // the front loses nothing that shows.
-func archiveLimit(front int) int { return max(1000, 5*front) }
+func archiveLimit(front int) int { return max(1000, 7*front) }
 
 // evolve lets eaopt run the generations: one population per space, which it
 // sets up, applies the model to side by side, and orders.
@@ -153,11 +153,24 @@ func (r *run) merge() {
 		}
 		l.fresh = l.fresh[:0]
 	}
-	if r.reference == nil && r.worst != nil {
-		r.reference = make([]float64, r.problem.Goals)
-		for k := range r.reference {
-			r.reference[k] = margin(r.best[k], r.worst[k])
-		}
+	if r.feasible >= referenceSample {
+		r.fixReference()
+	}
+}
+
+// referenceSample is the number of feasible designs that the reference is
+// fixed from, if so many are met.
+const referenceSample = 30
+
+// fixReference sets the reference, unless that was done, half a range beyond
+// the worst of the feasible designs counted so far.
+func (r *run) fixReference() {
+	if r.reference != nil || r.worst == nil {
+		return
+	}
+	r.reference = make([]float64, r.problem.Goals)
+	for k := range r.reference {
+		r.reference[k] = margin(r.best[k], r.worst[k], 0.5)
 	}
 }
 

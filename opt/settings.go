@@ -29,7 +29,7 @@ type Settings struct {
 	// Front is the largest number of designs to report, 0 means 200.
 	Front int
 	// Reference is the point that bounds the hypervolume, one value per goal.
-	// nil fixes it from the first feasible sample, see Outcome.Reference.
+	// nil fixes it from the first feasible designs, see Outcome.Reference.
 	Reference []float64
 	// Polish is the largest share of the budget that Nelder-Mead may take,
 	// below 1. 0 means the default of 0.05; negative means none.
