@@ -11,7 +11,7 @@ func bucklingMargin() *Measure {
 		Name: "buckling_margin", Unit: Ratio, Sense: Larger, Need: NeedEfforts,
 		Text:   "least ratio of the Euler load of a leg, at its length in that pose, or of its rod, to its push there",
 		Source: "L. Euler 1757: P = π² E I / (K L)², I = π d⁴/64 (from memory)",
-		Inputs: []string{"legs.rod_diameter", "legs.modulus"}, Has: hasRods,
+		Inputs: []string{"legs.rod_diameter", "legs.modulus"}, Has: legged,
 		Start: inf, Lost: 0,
 		Scan: func(v *View, w *Worst) {
 			l := &v.task.Legs
@@ -43,8 +43,8 @@ func (v *View) push(c, i int) float64 {
 	return math.Max(v.hi[c][i]*g, v.lo[c][i]*g)
 }
 
-// hasRods tells whether the legs are prismatic or have rods that a push can buckle.
-func hasRods(f *kin.Family) bool {
+// legged tells whether the family has legs: prismatic ones, or rods.
+func legged(f *kin.Family) bool {
 	for _, d := range [4]string{"leg_min", "rod_length", "rod", "distal"} {
 		if f.Index(d) >= 0 {
 			return true

@@ -8,7 +8,7 @@ import (
 
 func legClearance() *Measure {
 	return &Measure{
-		Name: "leg_clearance", Unit: Metre, Sense: Larger, Need: NeedGap,
+		Name: "leg_clearance", Unit: Metre, Sense: Larger, Need: NeedGap, Has: legged,
 		Text:   "least distance between the axes of two legs that share no joint, less the leg diameter",
 		Source: "segment distance, common practice, no source",
 		Scale: func(t *Task) float64 {

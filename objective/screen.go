@@ -161,9 +161,12 @@ func (s *Screen) Judge(x []float64, r *Score) {
 		if t.Goals[i].Maximise {
 			g = -g
 		}
-		r.Goals[i] = g
+		r.Goals[i] = math.Max(-beyond, math.Min(beyond, g))
 	}
 }
+
+// beyond is the value of a goal without bound, such as the buckling margin of legs that nothing pushes.
+const beyond = 1e12
 
 // mends tells whether a limit on the actuator range can come to hold as leg_min falls
 // and the stroke grows, as they do while more poses are seen; leg_max may go
@@ -290,10 +293,13 @@ func (s *Screen) value(at int, m *Measure, r *Score) float64 {
 	return m.value(&s.all[at].w)
 }
 
-// slack takes off what counts as rounding.
+// farWithin is where an excess is no longer told from -Inf, which a search could not work with.
+const farWithin = -1e6
+
+// slack takes off what counts as rounding, and keeps what holds without bound finite.
 func slack(e float64) float64 {
 	if e <= Tolerance {
-		return math.Min(e, 0)
+		return math.Max(farWithin, math.Min(e, 0))
 	}
 	return e
 }

@@ -37,7 +37,7 @@ func sameGoals(t *testing.T, task *Task, r *Score, a *Appraisal) {
 		if g.Maximise {
 			want = -want
 		}
-		if r.Goals[i] != want {
+		if want = math.Max(-beyond, math.Min(beyond, want)); r.Goals[i] != want {
 			t.Errorf("%s: the screen has %.17g, the appraisal %.17g", g.Measure.Name, r.Goals[i], want)
 		}
 	}

@@ -13,6 +13,7 @@ import (
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
+	"legwright/objective"
 )
 
 //go:embed starter.tmpl
@@ -57,6 +58,7 @@ func starter(f *kin.Family) (string, error) {
 		"comment":  func(text string) string { return "# " + strings.ReplaceAll(text, "\n", "\n# ") },
 		"optional": func(d kin.Dimension) bool { return d.Optional },
 		"turns":    func() bool { return slices.ContainsFunc(f.Freedoms, kin.Freedom.Angular) },
+		"legs":     func() bool { return objective.MeasureNamed("leg_clearance").Has(f) },
 		"linear":   func() bool { return f.Drive == kin.Linear },
 		"inertia":  func(m float64) string { return units.Format(m*0.06, units.Inertia, 2) },
 	}).Parse(starterText)

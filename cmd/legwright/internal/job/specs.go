@@ -53,7 +53,7 @@ func spec(d *brief.Dimension) objective.Spec {
 func singularEverywhere(b *brief.Brief, given *brief.Family) brief.Faults {
 	f := kin.FamilyNamed(given.Name)
 	heading := f.Index("home_heading")
-	if heading < 0 {
+	if heading < 0 || f.Index("leg_min") < 0 { // other legs than prismatic ones have another determinant
 		return nil
 	}
 	ss := specs(f, given)
