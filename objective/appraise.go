@@ -14,6 +14,7 @@ type Reading struct {
 	Leg     int     // 0-based, -1 for none
 	Mate    int     // second leg of a pair, -1 for none
 	Case    int     // -1 for none
+	Kind    string  // the kind of singularity that the pose is near: serial, actuator or constraint; "" for none
 }
 
 // Verdict is a limit with the value that a design has.
@@ -156,6 +157,9 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 				continue // an average over no pose
 			}
 			r.Value = inf // of a range that no pose has sized
+		}
+		if (m.Name == "conditioning" || m.Name == "regularity") && r.Value < nearSingular && r.Pose != nil {
+			r.Kind = v.kindAt(r.Pose)
 		}
 		a.Readings = append(a.Readings, r)
 	}

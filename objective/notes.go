@@ -13,6 +13,16 @@ func (a *Appraisal) notes(t *Task, v *View) {
 	if v.homeSign == 0 {
 		note("the home pose is singular: home_height, radii and angles (or home_heading) give a machine that cannot be held there")
 	}
+	if v.singular > 0 && v.singularAt >= 0 && v.homeSign != 0 {
+		s := &t.samples[v.singularAt]
+		note("%d of the %d poses are singular or lie behind a singularity; the first met is of the kind %s", v.singular, len(t.samples), kindText(v.kindAt(s)))
+	} else {
+		for i := range a.Readings {
+			if r := &a.Readings[i]; r.Kind != "" {
+				note("the worst %s, %.3g, is near a singularity of the kind %s", r.Measure.Name, r.Value, kindText(r.Kind))
+			}
+		}
+	}
 	for c := range t.Cases {
 		k := &t.Cases[c]
 		spin := followed(k.Angular, a.Machine.Frame().Freedoms)

@@ -31,6 +31,26 @@ func (v *View) kind() string {
 	return "actuator"
 }
 
+// kindAt is the kind at a sample, "" where it has no posture.
+func (v *View) kindAt(s *Sample) string {
+	v.keep = 0
+	if !v.at(s, 0, NeedMatrix) {
+		return ""
+	}
+	return v.kind()
+}
+
+// kindText says what a kind of singularity means.
+func kindText(kind string) string {
+	switch kind {
+	case "serial":
+		return "serial (a crank and its rod are nearly in line, or a rod is nearly square to its rail: the platform loses a freedom)"
+	case "constraint":
+		return "constraint (the joints' own forces hardly hold the platform, whatever the actuators do)"
+	}
+	return "actuator (the legs' forces hardly hold the platform in some direction, though the actuators are locked)"
+}
+
 // whole is σmin/σmax of the 6×6 matrix of unit actuation and constraint wrenches at the pose in work.
 func (v *View) whole() float64 {
 	kin.Wrenches(v.machine, &v.S, &v.unit)

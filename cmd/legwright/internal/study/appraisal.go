@@ -54,7 +54,7 @@ func FromAppraisal(t *objective.Task, a *objective.Appraisal) Design {
 func unbounded(v float64) bool { return math.IsInf(v, 0) || math.IsNaN(v) }
 
 func worstOf(t *objective.Task, r *objective.Reading) Worst {
-	w := Worst{Leg: r.Leg + 1, Mate: r.Mate + 1}
+	w := Worst{Leg: r.Leg + 1, Mate: r.Mate + 1, Near: r.Kind}
 	if r.Case >= 0 {
 		w.Case = t.Cases[r.Case].Name
 	}

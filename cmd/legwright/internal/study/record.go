@@ -84,6 +84,7 @@ type Worst struct {
 	Mate int    `json:"mate,omitempty"` // the other leg of a pair, from 1
 	Zone string `json:"zone,omitempty"`
 	Case string `json:"case,omitempty"`
+	Near string `json:"near,omitempty"` // kind of singularity: serial, actuator or constraint
 }
 
 // Pose is about home.
