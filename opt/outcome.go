@@ -71,10 +71,10 @@ type Outcome struct {
 	Archive int
 	// Reference bounds the hypervolume: Settings.Reference, or fixed once 30
 	// feasible designs are counted (at the first polish or at the end, if there
-	// are fewer): per goal
-	// the worst value among those counted by then plus half their range (half
-	// its magnitude, or 1, where the range is nothing). nil when no design was
-	// feasible.
+	// are fewer): per goal the worst value among those of them that no other
+	// beats, plus half their range (half its magnitude, or 1, where the range
+	// is nothing), but no less than the upper quartile of all of them. nil when
+	// no design was feasible.
 	Reference []float64
 	// Hypervolume that Front covers up to Reference.
 	Hypervolume float64

@@ -45,7 +45,7 @@ type run struct {
 	archive     Archive
 	misses      misses
 	reference   []float64
-	worst, best []float64 // of the first feasible sample
+	early       [][]float64 // goals of the feasible designs until reference is fixed
 	evaluations int
 	feasible    int
 	polished    int
@@ -162,16 +162,25 @@ func (r *run) merge() {
 // fixed from, if so many are met.
 const referenceSample = 30
 
-// fixReference sets the reference, unless that was done, half a range beyond
-// the worst of the feasible designs counted so far.
+// fixReference sets the reference, unless that was done: beyond the front so
+// far, and no nearer than most designs. The worst are left out: one next to a
+// singularity would carry the reference off.
 func (r *run) fixReference() {
-	if r.reference != nil || r.worst == nil {
+	if r.reference != nil || r.archive.Len() == 0 {
 		return
 	}
+	low, high := r.archive.bounds()
 	r.reference = make([]float64, r.problem.Goals)
+	column := make([]float64, len(r.early))
 	for k := range r.reference {
-		r.reference[k] = margin(r.best[k], r.worst[k], 0.5)
+		for i, g := range r.early {
+			column[i] = g[k]
+		}
+		slices.Sort(column)
+		quartile := column[len(column)*3/4]
+		r.reference[k] = max(margin(low[k], high[k], 0.5), quartile)
 	}
+	r.early = nil
 }
 
 // count takes one evaluated design into the books.
@@ -187,12 +196,7 @@ func (r *run) count(g *genome) {
 	}
 	r.feasible++
 	if r.reference == nil {
-		if r.worst == nil {
-			r.worst, r.best = slices.Clone(g.goals), slices.Clone(g.goals)
-		}
-		for k, v := range g.goals {
-			r.worst[k], r.best[k] = max(r.worst[k], v), min(r.best[k], v)
-		}
+		r.early = append(r.early, g.goals)
 	}
 	r.archive.add(g, order)
 }
