@@ -39,7 +39,7 @@ func solve(p problem, paths int, size float64) Result {
 	for try := range uint64(attempts) {
 		sys, starts := p.start(try)
 		k := newTracker(sys)
-		ends := follow(sys, starts)
+		ends := runAll(sys, starts)
 		c := count(p, k, ends)
 		simple = union(p, k, simple, ends)
 		if missing := max(0, paths-len(simple)-c.Infinite-c.Singular); try == 0 || missing < out.Lost {

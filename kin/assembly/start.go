@@ -29,7 +29,7 @@ func startSystem(seed uint64) (*legs, []end) {
 	}
 	rng := rand.New(rand.NewPCG(seed, 1))
 	other := randomLegs(rng)
-	return other, follow(&soma{from: base, to: other, gamma: 1}, points)
+	return other, runAll(&soma{from: base, to: other, gamma: 1}, points)
 }
 
 // randomLegs are parameters without any relation.

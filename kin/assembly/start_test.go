@@ -51,7 +51,7 @@ func monodromy(t *testing.T, rng *rand.Rand, p *legs, first point) []point {
 		a, b := randomLegs(rng), randomLegs(rng)
 		round := found
 		for _, way := range [][2]*legs{{p, a}, {a, b}, {b, p}} {
-			round = follow(&soma{from: way[0], to: way[1], gamma: 1}, round)
+			round = runAll(&soma{from: way[0], to: way[1], gamma: 1}, round)
 		}
 		idle++
 		for _, e := range round {
@@ -125,7 +125,7 @@ func writeStart(t *testing.T) {
 		starts = append(starts, end{x: x, outcome: regular})
 	}
 	var points []point
-	for _, e := range follow(&soma{from: p, to: q, gamma: 1}, starts) {
+	for _, e := range runAll(&soma{from: p, to: q, gamma: 1}, starts) {
 		if e.outcome == regular {
 			points = append(points, e.x)
 		}

@@ -6,9 +6,9 @@ import (
 	"sync/atomic"
 )
 
-// follow runs the paths that begin at the regular ones of the starts, on as many
+// runAll runs the paths that begin at the regular ones of the starts, on as many
 // goroutines as there are processors to use. Results do not depend on their number.
-func follow(sys equations, starts []end) []end {
+func runAll(sys equations, starts []end) []end {
 	out := make([]end, len(starts))
 	var next atomic.Int64
 	var wait sync.WaitGroup
