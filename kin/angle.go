@@ -17,17 +17,24 @@ var angleMarks = func() (m [2*28 + 1]angleMark) {
 	return m
 }()
 
-// angle is that of the unit vector (cos, sin), in [-π, π]. It is math.Atan2 without
-// the branches that a crank turning to and fro makes the processor guess wrong: the
-// angle of the nearest mark and that between the two, whose sine is at most 1/16 (the series
-// of the arcsine to x¹¹ then errs by less than 1e-17).
-func angle(cos, sin float64) float64 {
-	k := uint(int(angleSteps*sin/(1+cos) + (float64(len(angleMarks)/2) + 0.5)))
-	if !(cos > -0.5) || k >= uint(len(angleMarks)) {
-		return math.Atan2(sin, cos)
+// angles writes those of the first n unit vectors (cos, sin), in [-π, π]. It is math.Atan2
+// without the branches that a crank turning to and fro makes the processor guess
+// wrong: the angle of the nearest mark and that between the two, whose sine is at most 1/16
+// (the series of the arcsine to x¹¹ then errs by less than 1e-17).
+func angles(n int, cos, sin, out *[6]float64) {
+	for i := range cos {
+		if i >= n {
+			break
+		}
+		c, s := cos[i], sin[i]
+		k := uint(int(angleSteps*s/(1+c) + (float64(len(angleMarks)/2) + 0.5)))
+		if !(c > -0.5) || k >= uint(len(angleMarks)) {
+			out[i] = math.Atan2(s, c)
+			continue
+		}
+		m := &angleMarks[k]
+		x := s*m.cos - c*m.sin
+		z := x * x
+		out[i] = m.angle + (x + x*z*(1./6+z*(3./40+z*(15./336+z*(105./3456+z*(945./42240))))))
 	}
-	m := &angleMarks[k]
-	x := sin*m.cos - cos*m.sin
-	z := x * x
-	return m.angle + (x + x*z*(1./6+z*(3./40+z*(15./336+z*(105./3456+z*(945./42240))))))
 }

@@ -8,6 +8,11 @@ import (
 // The angle of a unit vector against math.Atan2 (its own error is below 1e-15),
 // all round, next to the marks and half way between them, and small. 1e-15, and for small angles relative.
 func TestAngle(t *testing.T) {
+	angle := func(cos, sin float64) float64 {
+		var out [6]float64
+		angles(1, &[6]float64{cos}, &[6]float64{sin}, &out)
+		return out[0]
+	}
 	check := func(a float64) {
 		t.Helper()
 		sin, cos := math.Sincos(a)

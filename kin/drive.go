@@ -73,6 +73,7 @@ func (m *rods) close(c *closures, s *State) bool {
 // a cos q + b sin q = c, c = (w² + length² - rod²)/(2 length). Angles lie within half a
 // turn of the angle at home.
 func (m *rods) turn(c *closures, s *State) bool {
+	var cs, sn, across [6]float64
 	for i := range m.leg {
 		if i >= m.n {
 			break
@@ -90,17 +91,24 @@ func (m *rods) turn(c *closures, s *State) bool {
 		inv := 1 / (rho2 * h)
 		c.rate[i] = l.lever * rho2 * inv
 		inv *= h
-		cos, sin := (a*k+b*h)*inv, (b*k-a*h)*inv
-		s.Q[i] = l.zero + angle(cos, sin)
-		cos *= l.length
-		sin *= l.length
+		cs[i], sn[i] = (a*k+b*h)*inv, (b*k-a*h)*inv
+		// the rod in the crank's frame: along the crank, across it, along its axis
+		dx, dy := (k-l.length)*l.invRod-l.ua.X, h*l.invRod-l.ua.Y
+		across[i] = dx*dx + dy*dy
+	}
+	angles(m.n, &cs, &sn, &s.Q)
+	for i := range m.leg {
+		if i >= m.n {
+			break
+		}
+		l, w := &m.leg[i], &c.w[i]
+		s.Q[i] += l.zero
+		cos, sin := l.length*cs[i], l.length*sn[i]
 		x, y, z := cos*l.e1.X+sin*l.e2.X, cos*l.e1.Y+sin*l.e2.Y, cos*l.e1.Z+sin*l.e2.Z
 		s.End[i] = Vec{X: l.at.X + x, Y: l.at.Y + y, Z: l.at.Z + z}
 		s.Rod[i] = Vec{X: (w.X - x) * l.invRod, Y: (w.Y - y) * l.invRod, Z: (w.Z - z) * l.invRod}
-		// the rod in the crank's frame: along the crank, across it, along its axis
-		dx, dy := (k-l.length)*l.invRod-l.ua.X, h*l.invRod-l.ua.Y
 		dz := (w.X*l.e3.X+w.Y*l.e3.Y+w.Z*l.e3.Z)*l.invRod - l.ua.Z
-		s.BaseChord[i] = dx*dx + dy*dy + dz*dz
+		s.BaseChord[i] = across[i] + dz*dz
 	}
 	return true
 }
