@@ -52,7 +52,7 @@ func newArm(freedoms []Freedom, d []float64, s *Setup) *arm {
 			Freedoms: freedoms,
 			Base:     []Vec{{}, shoulder, shoulder, {Z: d[armBaseHeight]}},
 			Platform: make([]Vec, 4),
-			Rods:     []float64{0, d[armUpper], d[armForearm], 0},
+			Rods:     make([]float64, 4), // no leg is prismatic, and none has a rod
 			Home:     Vec{X: d[armHomeReach], Z: d[armHomeHeight]},
 			HomeRot:  Identity(),
 			Tool:     s.Tool,
@@ -157,9 +157,13 @@ func (m *arm) Constraints(_ *State, rows *[36]float64) int {
 // Place is that of the frame.
 func (m *arm) Place(p *Pose) (Vec, Rot) { return m.frame.Place(p) }
 
-// Serial is |sin(θ2-θ3)|: each link's motor moves the wrist square to that link, against
-// a force along the other one.
-func (m *arm) Serial(s *State) float64 { return math.Abs(math.Sin(s.Q[1] - s.Q[2])) }
+// Serial is |sin(θ2-θ3)|, as each link's motor moves the wrist square to that link, against a
+// force along the other one; or, where that is less, the platform origin's distance from the column's axis
+// over that of the arm stretched out level, as nothing moves sideways on the axis.
+func (m *arm) Serial(s *State) float64 {
+	lever := 1 / (math.Hypot(s.J[0], s.J[1]) * (m.inner + m.upper + m.fore))
+	return math.Min(math.Abs(math.Sin(s.Q[1]-s.Q[2])), lever)
+}
 
 // Tie is not wanted: the freedoms are free of each other.
 func (m *arm) Tie(*Pose, *[36]float64) { panic("kin: freedoms are not tied") }
