@@ -31,8 +31,8 @@ func jointSpacing() *Measure {
 	return &Measure{
 		Name: "joint_spacing", Unit: Metre, Sense: Larger,
 		Text:   "least distance between two joint centres on one plate (joints that coincide count as one)",
-		Source: "common practice, no source",
-		Scale:  func(*Task) float64 { return 0.05 },
+		Source: "common practice, no source", Has: legged,
+		Scale: func(*Task) float64 { return 0.05 },
 		Design: func(d *Design) float64 {
 			f := d.Machine.Frame()
 			return math.Min(spacing(f.Base), spacing(f.Platform))

@@ -21,7 +21,8 @@ const (
 
 // Excurse finds the single-axis excursions of an appraised design. They are not
 // reachable together. The march along each axis has steps of 0.09° and of 1/2000
-// of five times the longest leg; a failure narrower than that may be stepped over.
+// of five times the longest leg (with rotary drives: the base's diameter in plan or the
+// platform's distance from the base origin); a failure narrower than that may be stepped over.
 func Excurse(t *Task, a *Appraisal) []Excursion {
 	v := newView(t)
 	v.free = a.Plan.Family.Free
@@ -34,7 +35,7 @@ func Excurse(t *Task, a *Appraisal) []Excursion {
 	}
 	f := a.Machine.Frame()
 	if a.Plan.Family.Drive == kin.Rotary {
-		most = enclosing(f.Base)
+		most = math.Max(enclosing(f.Base), norm(f.Home))
 	}
 	var out []Excursion
 	for _, q := range f.Freedoms {

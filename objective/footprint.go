@@ -13,15 +13,15 @@ func footprint() *Measure {
 		Source: "smallest enclosing circle, E. Welzl 1991 (from memory)",
 		Design: func(d *Design) float64 {
 			plan := d.Machine.Frame().Base
+			low, high := 0.0, 0.0 // a family without a range has stops of its own
 			if least, span := d.Family.Range(); least >= 0 {
-				low, high := d.Values[least], d.Values[least]+d.Values[span]
-				swept := kin.Sweep(d.Machine, low, high)
-				if len(swept) > 0 && math.IsNaN(high) {
-					return high // known when the range is sized
-				}
-				plan = append(append([]kin.Vec(nil), plan...), swept...)
+				low, high = d.Values[least], d.Values[least]+d.Values[span]
 			}
-			return enclosing(plan)
+			swept := kin.Sweep(d.Machine, low, high)
+			if len(swept) > 0 && math.IsNaN(high) {
+				return high // known when the range is sized
+			}
+			return enclosing(append(append([]kin.Vec(nil), plan...), swept...))
 		},
 	}
 }

@@ -27,6 +27,8 @@ func Measures() []*Measure {
 		footprint(),
 		gainLeast(),
 		gainMost(),
+		parasiticMotion(),
+		parasiticTurn(),
 		stroke(),
 		legMin(),
 		legMax(),

@@ -19,7 +19,11 @@ const nearSingular = 0.05
 func (v *View) kind() string {
 	serial := v.machine.Serial(&v.S)
 	whole := v.whole() // leaves the unit wrenches in v.unit
-	kin.Own(v.frame.Freedoms, &v.unit, &v.own)
+	if v.frame.Tied {  // the wrenches' power in the platform's own freedoms is in J
+		kin.Own(v.frame.Freedoms, &v.S.J, &v.own)
+	} else {
+		kin.Own(v.frame.Freedoms, &v.unit, &v.own)
+	}
 	lo, hi := linalg.Singular(v.n, &v.own)
 	actuator := lo / hi
 	switch least := math.Min(serial, math.Min(actuator, whole)); {

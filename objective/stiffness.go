@@ -7,8 +7,8 @@ import (
 )
 
 // compliance is that of leg i at its actuator: the actuator itself, and in series the
-// rod and two joints, whose force is the actuator's effort times the linear part of
-// the row of J (1 for a prismatic leg). A parallelogram counts as one rod.
+// rod and two joints, whose force is the actuator's effort itself in a prismatic leg, else the
+// effort times the linear part of the row of J. A parallelogram counts as one rod.
 func (v *View) compliance(i int) float64 {
 	t := v.task
 	axial := 0.0
@@ -17,6 +17,9 @@ func (v *View) compliance(i int) float64 {
 	}
 	if t.Joints.Stiffness > 0 {
 		axial += 1 / t.Joints.Stiffness
+	}
+	if v.frame.Rods == nil {
+		return 1/t.Actuator.Stiffness + axial
 	}
 	r := (*[6]float64)(v.S.J[6*i : 6*i+6])
 	return 1/t.Actuator.Stiffness + axial*(r[0]*r[0]+r[1]*r[1]+r[2]*r[2])

@@ -11,7 +11,7 @@ func swing(name, text string, chords func(v *View) *[6]float64) *Measure {
 	return &Measure{
 		Name: name, Text: text, Unit: Radian, Sense: Smaller,
 		Source: "angle of two unit vectors by their difference and sum, W. Kahan (from memory)",
-		Start:  0, Lost: 4, Finish: swingOf,
+		Start:  0, Lost: 4, Finish: swingOf, Has: legged,
 		Scan: func(v *View, w *Worst) {
 			c := chords(v)
 			for i := 0; i < v.n && i < 6; i++ {
