@@ -225,7 +225,7 @@ func (h *triangle) correct(p complex128, heading float64) (Mode, bool) {
 			diff.SetVec(i, h.length[i]-l)
 			worst = math.Max(worst, math.Abs(h.length[i]-l))
 		}
-		if !(worst < best.Residual) {
+		if !(worst < best.Residual) || worst > nearby*h.size {
 			break
 		}
 		at = phi
