@@ -43,7 +43,7 @@ With modes -1 and 1 both elbows are on the outside.`,
 	}
 	f.Dimensions = append(f.Dimensions, workingModes(2, "turn from crank to link")...)
 	f.Dimensions[barModes].Default = -1
-	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 180*deg)...)
+	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 360*deg)...)
 	freedoms := f.Freedoms
 	f.Build = func(d []float64, s *Setup) Machine {
 		t := planarSetup(s)

@@ -156,7 +156,8 @@ func TestInnerLoopAllocatesNothing(t *testing.T) {
 		if n := testing.AllocsPerRun(100, func() {
 			m.Move(&p, &s)
 			gap, _, _ := m.Gap(&s)
-			sum += gap + float64(m.Constraints(&s, &rows))
+			sum += gap + float64(m.Constraints(&s, &rows)) + m.Serial(&s)
+			kin.Wrenches(m, &s, &rows)
 		}); n != 0 {
 			t.Errorf("%s: %g allocations a pose", f.Name, n)
 		}

@@ -51,7 +51,7 @@ leg is the sign of the turn from its crank to its link: 1 where the link bends o
 	f.Dimensions = append(f.Dimensions, legAzimuths()...)
 	f.Dimensions = append(f.Dimensions, jointOffsets()...)
 	f.Dimensions = append(f.Dimensions, workingModes(3, "turn from crank to link")...)
-	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 180*deg)...)
+	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 360*deg)...)
 	freedoms := f.Freedoms
 	stage := func(pivots, platform []Vec, home Vec, homeRot Rot, d []float64, s *Setup) Machine {
 		var drives []drive
