@@ -71,6 +71,9 @@ func (r *run) polishJobs(due int) (jobs []*job) {
 		l := r.islands[a.start.space]
 		n := len(l.dom.real)
 		budget := min(polishSteps*(n+1), due, l.left)
+		if len(pts[0]) == 1 { // nothing but the one optimum to share with
+			budget = min(due, l.left)
+		}
 		if n == 0 || budget < n+2 { // less does not finish the first simplex
 			continue
 		}

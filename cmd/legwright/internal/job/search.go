@@ -36,6 +36,9 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	if r.Workers <= 0 {
 		r.Workers = runtime.GOMAXPROCS(0)
 	}
+	if len(s.goals()) == 1 && r.Polish == 0 {
+		r.Polish = 0.5 // a single optimum is for Nelder-Mead to finish
+	}
 	out, err := opt.Search(ctx, s.problem(r.Workers), opt.Settings{
 		Evaluations: r.Evaluations,
 		Population:  r.Population,
