@@ -29,7 +29,8 @@ const (
 // 1e-13 of the largest coordinate, or when no step improves on 1e-10 of it (of a
 // crank's angle at least of 1 rad, of a carriage's coordinate at least of its rod, as both may be 0). It
 // reports false after 200 steps, at a singular pose, or where it leaves reach;
-// the posture is then the last one met.
+// the posture is then the last one met. Where freedoms are tied, start and steps are
+// settled first (see Settle), and so is the pose that is found.
 func Locate(m Machine, q []float64, from Pose) (Posture, bool) {
 	f := m.Frame()
 	n := len(f.Freedoms)

@@ -87,13 +87,14 @@ type Frame struct {
 	HomeRot  Rot       // platform rotation at home
 	Tool     Vec       // tool point, platform frame (a planar family: in the plane of its legs)
 	Length   float64   // characteristic length Lc
-	Tied     bool      // the other freedoms move with the family's own ones: see Machine.Tie
+	Tied     bool      // the other freedoms move with the family's own ones: see Machine.Tie and Settle
 }
 
 // Legs is the number of legs, each with one actuator.
 func (f *Frame) Legs() int { return len(f.Base) }
 
-// Place gives the platform's origin and rotation in the base frame at the pose p.
+// Place gives the platform's origin and rotation in the base frame at the pose p; where
+// freedoms are tied, at a settled one (see Settle).
 func (f *Frame) Place(p *Pose) (origin Vec, rot Rot) {
 	rot = p.R.Mul(&f.HomeRot)
 	t0 := f.HomeRot.Apply(f.Tool)
