@@ -64,19 +64,16 @@ func mixed() opt.Problem {
 	}
 }
 
-// single has one goal, many five, both a start of nothing.
+// single has one goal with its least value 0 at x[i] = i/10.
 func single() opt.Problem {
-	k := known.ZDT1(6)
-	p := problemOf(k)
+	p := problemOf(known.ZDT1(6))
 	p.Goals = 1
 	p.Evaluate = func(_, _ int, x []float64, r *opt.Result) {
+		s := 0.0
 		for i, v := range x {
-			r.Goals[0] += 0 // NaN on entry: stays NaN unless set
-			if i == 0 {
-				r.Goals[0] = 0
-			}
-			r.Goals[0] += (v - 0.1*float64(i)) * (v - 0.1*float64(i))
+			s += (v - 0.1*float64(i)) * (v - 0.1*float64(i))
 		}
+		r.Goals[0] = s
 	}
 	return p
 }
@@ -193,6 +190,13 @@ func TestWorkersDoNotMatter(t *testing.T) {
 		if o := mustSearch(t, p, s); p.Goals > 1 && reflect.DeepEqual(o.Front, want.Front) {
 			t.Errorf("%s: another seed, the same front", name)
 		}
+	}
+}
+
+func TestSingleGoalFindsTheLeast(t *testing.T) {
+	o := mustSearch(t, single(), opt.Settings{Evaluations: 3000, Seed: 1})
+	if len(o.Front) != 1 || o.Front[0].Goals[0] > 1e-4 {
+		t.Errorf("front %v, want one design of nearly 0", o.Front)
 	}
 }
 

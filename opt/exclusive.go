@@ -176,15 +176,18 @@ func (s *shares) update(i int) { s.alone[i] = s.gain(s.point(i), i, s.corner(i))
 // before, the less work. The gain is 0, and u is p, for a point that is beaten
 // or beyond the reference.
 func (s *shares) gain(p []float64, skip int, u []float64) float64 {
-	if s.m == 3 {
+	switch s.m {
+	case 2:
+		return s.gain2(p[0], p[1], skip, u)
+	case 3:
 		return s.gain3(xyz(p), skip, (*xyz)(u))
 	}
 	if !s.bound(p, skip, u) || !below(p, u) {
 		copy(u, p)
 		return 0
 	}
-	if s.m <= 2 { // nothing but its neighbours cuts into a plane box
-		return box(p, u)
+	if s.m == 1 {
+		return u[0] - p[0]
 	}
 	flat, lim := s.flat[:0], s.lim[:0]
 	for j := range s.alone {
@@ -226,6 +229,35 @@ func (s *shares) bound(p []float64, skip int, u []float64) bool {
 		}
 	}
 	return true
+}
+
+// gain2 is gain for two goals. Along the second goal the first one descends, so
+// nothing but the neighbours matters.
+func (s *shares) gain2(p0, p1 float64, skip int, u []float64) float64 {
+	lo, hi := 0, s.len() // first point with no less in the second goal
+	for lo < hi {
+		if h := (lo + hi) / 2; s.pts[2*h+1] < p1 {
+			lo = h + 1
+		} else {
+			hi = h
+		}
+	}
+	u0, u1 := s.ref[0], s.ref[1]
+	if lo > 0 {
+		u0 = min(u0, s.pts[2*lo-2])
+	}
+	if lo == skip {
+		lo++
+	}
+	if lo < s.len() {
+		u1 = min(u1, s.pts[2*lo+1])
+	}
+	if !(p0 < u0 && p1 < u1) {
+		u[0], u[1] = p0, p1
+		return 0
+	}
+	u[0], u[1] = u0, u1
+	return (u0 - p0) * (u1 - p1)
 }
 
 // gain3 is gain for three goals.

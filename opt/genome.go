@@ -19,10 +19,11 @@ type genome struct {
 	origin    int // index into operators, or one of the constants below
 	done      bool
 
-	rank  int     // 0 is the front; ahead of a larger one
-	crowd float64 // larger is better among equals in rank
-	young bool    // made by the generation that is being selected
-	place float64 // fitness in the first generation: eaopt's sort is unstable
+	rank   int     // 0 is the front; ahead of a larger one
+	crowd  float64 // larger is better among equals in rank
+	beaten bool    // by another of its population when it came
+	young  bool    // made by the generation that is being selected
+	place  float64 // fitness in the first generation: eaopt's sort is unstable
 }
 
 func newGenome(dom *domain, space int, goals, limits int) *genome {

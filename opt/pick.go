@@ -38,9 +38,7 @@ func pick(pts [][]float64, k int, ref []float64) []int {
 			}
 		}
 	}
-	for len(p.index) < k {
-		p.take(p.best(), true)
-	}
+	p.greedy(k)
 	if len(ref) <= 3 {
 		p.exchange()
 	}
@@ -66,22 +64,63 @@ func (p *picker) update(i int) {
 	p.stale[i] = false
 }
 
-// best returns the point outside that adds most, the first of equals. Gains
-// only become less while points are taken, so it is enough that the greatest
-// one is fresh.
-func (p *picker) best() int {
-	for {
-		b := 0
-		for i, g := range p.gains {
-			if g > p.gains[b] {
-				b = i
-			}
-		}
-		if !p.stale[b] {
-			return b
-		}
-		p.update(b)
+// greedy takes the points that add most until k are taken. Gains only become
+// less while points are taken, so a stale one is computed anew no sooner than
+// it comes to the top of the heap.
+func (p *picker) greedy(k int) {
+	h := make([]int, len(p.pts))
+	for i := range h {
+		h[i] = i
 	}
+	for i := len(h)/2 - 1; i >= 0; i-- {
+		p.sink(h, i)
+	}
+	for len(p.index) < k {
+		b := h[0]
+		switch {
+		case p.gains[b] < 0: // chosen before
+			h[0] = h[len(h)-1]
+			h = h[:len(h)-1]
+		case p.stale[b]:
+			p.update(b)
+		default:
+			p.take(b, true)
+		}
+		p.sink(h, 0)
+	}
+}
+
+// sink restores the heap below position i: greatest gain first, of equals the
+// first point.
+func (p *picker) sink(h []int, i int) {
+	ahead := func(a, b int) bool {
+		return p.gains[a] > p.gains[b] || p.gains[a] == p.gains[b] && a < b
+	}
+	for {
+		c := 2*i + 1
+		if c >= len(h) {
+			return
+		}
+		if c+1 < len(h) && ahead(h[c+1], h[c]) {
+			c++
+		}
+		if !ahead(h[c], h[i]) {
+			return
+		}
+		h[i], h[c] = h[c], h[i]
+		i = c
+	}
+}
+
+// best returns the point outside that adds most, the first of equals.
+func (p *picker) best() int {
+	b := 0
+	for i, g := range p.gains {
+		if g > p.gains[b] {
+			b = i
+		}
+	}
+	return b
 }
 
 // take moves point i into the selection.
@@ -99,19 +138,25 @@ func (p *picker) take(i int, lazy bool) {
 	}
 }
 
-// leave takes the c-th chosen point out again.
-func (p *picker) leave(c int) {
+// leave takes the c-th chosen point out again and returns the point outside
+// that adds most among those whose gain this changes.
+func (p *picker) leave(c int) int {
 	i := p.index[c]
 	p.index = slices.Delete(p.index, c, c+1)
 	p.chosen.remove(c)
 	copy(p.corner(i), p.chosen.ref)
 	p.update(i)
+	b := i
 	for j := next(p.upper, p.pts[i], 0, false); j < len(p.pts); j = next(p.upper, p.pts[i], j+1, false) {
 		if p.gains[j] >= 0 && j != i {
 			loosen(p.corner(j), p.pts[i], p.chosen.ref)
 			p.update(j)
+			if p.gains[j] > p.gains[b] {
+				b = j
+			}
 		}
 	}
+	return b
 }
 
 // exchange swaps single points until no swap pays. A point is tried again
@@ -124,26 +169,36 @@ func (p *picker) exchange() {
 		}
 	}
 	settled := make([]bool, len(p.pts))
+	for _, i := range p.fixed {
+		settled[i] = true
+	}
+	top := p.best()
 	for range rounds {
 		swapped := false
 		for _, i := range slices.Clone(p.index) {
-			if settled[i] || slices.Contains(p.fixed, i) {
+			if settled[i] {
 				continue
 			}
 			c := slices.Index(p.index, i)
 			lost := p.chosen.alone[c]
-			p.leave(c)
-			b := p.best()
+			b := p.leave(c)
+			if p.gains[top] > p.gains[b] {
+				b = top
+			}
 			if p.gains[b] <= lost*(1+1e-9) {
-				b = i
-			} else {
-				swapped = true
-				for _, j := range p.index {
-					settled[j] = settled[j] && !p.near(j, i) && !p.near(j, b)
+				p.take(i, false)
+				settled[i] = true
+				continue
+			}
+			swapped = true
+			for _, j := range p.index {
+				if settled[j] && !slices.Contains(p.fixed, j) {
+					settled[j] = !p.near(j, i) && !p.near(j, b)
 				}
 			}
 			p.take(b, false)
 			settled[b] = true
+			top = p.best()
 		}
 		if !swapped {
 			return

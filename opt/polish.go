@@ -59,9 +59,9 @@ func (r *run) polish() {
 	r.merge()
 }
 
-// polishJobs chooses starts and targets that share due evaluations: widest
-// gap, best in the first goal, next gap, best in the second goal ... and knee,
-// going on where the round before ended.
+// polishJobs chooses starts and targets that share due evaluations: best in
+// the first goal, widest gap, best in the second goal, next gap ... and knee
+// among them, going on where the round before ended.
 func (r *run) polishJobs(due int) (jobs []*job) {
 	pts := r.archive.points()
 	low, high := r.archive.bounds()
@@ -132,13 +132,16 @@ func (r *run) aims(pts [][]float64, low, high []float64) []aim {
 		rims = append(rims, a)
 	}
 	var out []aim
-	for g, i := range r.gaps(pts) {
-		out = append(out, aim{start: r.archive.designs[i], target: pts[i], weight: scale})
-		if g < len(rims) {
-			out = append(out, rims[g])
+	gaps := r.gaps(pts)
+	for n := range max(len(rims), len(gaps)) {
+		if n < len(rims) {
+			out = append(out, rims[n])
+		}
+		if n < len(gaps) {
+			out = append(out, aim{start: r.archive.designs[gaps[n]], target: pts[gaps[n]], weight: scale})
 		}
 	}
-	return append(out, rims[min(len(rims), len(out)/2):]...)
+	return out
 }
 
 // gaps returns points of the inner front with most room around, the one with

@@ -90,6 +90,7 @@ func (p *population) enter(g *genome, beaten []*genome) []*genome {
 		var r int
 		switch i, r = related(p.share.pts, g.goals, i); r {
 		case -1:
+			g.beaten = true
 			return append(beaten, g)
 		case 1:
 			beaten = append(beaten, p.front[i])

@@ -3,7 +3,7 @@ package opt
 import "slices"
 
 const (
-	historyPoints = 100
+	historyPoints = 50
 	historySubset = 50 // designs that stand for the archive with 4 goals or more
 )
 

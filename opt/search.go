@@ -198,7 +198,9 @@ func (r *run) count(g *genome) {
 	if r.reference == nil {
 		r.early = append(r.early, g.goals)
 	}
-	r.archive.add(g, order)
+	if !g.beaten {
+		r.archive.add(g, order)
+	}
 }
 
 func (r *run) progress() Progress {
