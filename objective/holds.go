@@ -34,7 +34,7 @@ func newPoseLimits(t *Task, v *View, p *Plan, d *Design) *poseLimits {
 func (l *poseLimits) fails(s *Sample) string {
 	v := l.v
 	v.keep = math.Inf(1)
-	if !v.at(s, 0, l.need) {
+	if !v.at(s, len(v.task.samples), l.need) { // no scout: what only scouts are asked is not asked here
 		if v.S.Fail == kin.Stopped {
 			return v.S.What
 		}

@@ -183,7 +183,7 @@ func TestScalingLengths(t *testing.T) {
 		"coverage": 0, "conditioning": 0, "mean_conditioning": 0, "regularity": 0,
 		"leg_force": 0, "push_force": 0, "pull_force": 0, "base_swing": 0, "platform_swing": 0, "angle_error": 0,
 		"leg_speed": 1, "leg_power": 1, "position_error": 1, "leg_clearance": 1, "joint_spacing": 1,
-		"footprint": 1, "stroke": 1, "leg_min": 1, "leg_max": 1, "home_height": 1, "buckling_margin": 1,
+		"footprint": 1, "mode_separation": 1, "stroke": 1, "leg_min": 1, "leg_max": 1, "home_height": 1, "buckling_margin": 1,
 		"stiffness": 0, "deflection": 0, "turn_stiffness": 2,
 	}
 	long := func(v kin.Vec) kin.Vec { return kin.Vec{X: k * v.X, Y: k * v.Y, Z: k * v.Z} }

@@ -27,6 +27,7 @@ func Measures() []*Measure {
 		footprint(),
 		gainLeast(),
 		gainMost(),
+		modeSeparation(),
 		parasiticMotion(),
 		parasiticTurn(),
 		stroke(),

@@ -88,6 +88,7 @@ func TestUnitsAndSenses(t *testing.T) {
 		"leg_clearance": {Metre, Larger}, "joint_spacing": {Metre, Larger}, "buckling_margin": {Ratio, Larger},
 		"footprint": {Metre, Smaller}, "stroke": {Metre, Either}, "leg_min": {Metre, Either}, "leg_max": {Metre, Either},
 		"home_height": {Metre, Either}, "gain_least": {Ratio, Larger}, "gain_most": {Ratio, Smaller},
+		"mode_separation":  {Metre, Larger},
 		"parasitic_motion": {Metre, Smaller}, "parasitic_turn": {Radian, Smaller},
 	}
 	for _, m := range Measures() {

@@ -12,7 +12,10 @@ import (
 )
 
 func newAppraise(c *common) *cobra.Command {
-	var briefFile, posesFile string
+	var (
+		briefFile, posesFile string
+		modes                bool
+	)
 	cmd := &cobra.Command{
 		Use:   "appraise DESIGN",
 		Short: "every measure of one geometry, with the pose, leg and case that decide it",
@@ -28,6 +31,9 @@ with 3 if a limit does not hold.`,
 			values := plan.Single()
 			a := objective.Appraise(task, plan, values)
 			a.Excursions = objective.Excurse(task, a)
+			if modes {
+				objective.ModeSeparation(task, a)
+			}
 			a.Notes = append(s.Notes(), a.Notes...)
 			if posesFile != "" {
 				var b bytes.Buffer
@@ -56,5 +62,6 @@ with 3 if a limit does not hold.`,
 	}
 	cmd.Flags().StringVar(&briefFile, "brief", "", "brief to judge by, in place of the one that the design file names")
 	cmd.Flags().StringVar(&posesFile, "poses", "", "write what the design does at every pose to a CSV `file`")
+	cmd.Flags().BoolVar(&modes, "modes", false, "also the distance to other assembly modes of a platform that tilts, which takes some seconds")
 	return cmd
 }

@@ -2,6 +2,7 @@ package main
 
 import (
 	"fmt"
+	"io"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -12,7 +13,10 @@ import (
 )
 
 func newLocate(c *common) *cobra.Command {
-	var actuators, near string
+	var (
+		actuators, near string
+		all             bool
+	)
 	cmd := &cobra.Command{
 		Use:   "locate DESIGN --actuators LIST",
 		Short: "platform pose from actuator values (forward kinematics)",
@@ -20,11 +24,14 @@ func newLocate(c *common) *cobra.Command {
 given with --near. It has converged when the largest difference of an actuator value
 is below 1e-13 of the largest value. A machine has several postures for the same
 actuator values; this gives the one that Newton's method reaches from where it
-starts. It exits with 3 if there is none.`,
+starts. --all gives every assembly mode: in closed form, by a polynomial, or for
+six legs by following the 40 solutions of a general platform; the one that the
+machine reaches from home on a straight way in its actuators, without passing a
+singular posture, is marked. It exits with 3 if there is none.`,
 		Example: `  legwright locate design.yaml --actuators "910 mm, 905 mm, 880 mm, 900 mm, 902 mm, 911 mm"`,
 		Args:    cobra.ExactArgs(1),
 		RunE: func(_ *cobra.Command, args []string) error {
-			m, f, err := job.Machine(args[0])
+			m, f, home, err := job.Machine(args[0])
 			if err != nil {
 				return inputError{err}
 			}
@@ -38,6 +45,12 @@ starts. It exits with 3 if there is none.`,
 			q, err := quantities("--actuators", actuators, f.Legs, func(int) units.Kind { return kind })
 			if err != nil {
 				return inputError{err}
+			}
+			if all {
+				if near != "" {
+					return inputError{fmt.Errorf("legwright locate: --all looks for every posture and needs no --near; leave one of them out")}
+				}
+				return locateAll(c, f, m, q, home)
 			}
 			var from kin.Coords
 			if near != "" {
@@ -64,6 +77,7 @@ starts. It exits with 3 if there is none.`,
 	}
 	cmd.Flags().StringVar(&actuators, "actuators", "", "actuator values with units, leg 1 first, separated by commas")
 	cmd.Flags().StringVar(&near, "near", "", "pose to start from, about home: x, y, z, roll, pitch, yaw with units")
+	cmd.Flags().BoolVar(&all, "all", false, "every assembly mode")
 	return cmd
 }
 
@@ -84,24 +98,12 @@ func quantities(flag, text string, n int, kind func(i int) units.Kind) ([]float6
 	return out, nil
 }
 
-// mode is one posture as JSON gives it: the platform frame in the base frame.
-type mode struct {
-	Position    [3]float64    `json:"position"`
-	Rotation    [3][3]float64 `json:"rotation"`
-	Residual    float64       `json:"residual"`
-	Determinant float64       `json:"determinant"`
-}
-
+// showPosture prints the posture that Newton's method has found.
 func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 	if c.json {
 		modes := []mode{}
 		if ok {
-			r := p.Rot
-			modes = append(modes, mode{
-				Position: [3]float64{p.Origin.X, p.Origin.Y, p.Origin.Z},
-				Rotation: [3][3]float64{{r[0], r[1], r[2]}, {r[3], r[4], r[5]}, {r[6], r[7], r[8]}},
-				Residual: p.Residual, Determinant: p.Determinant,
-			})
+			modes = append(modes, modeOf(p.Origin, p.Rot, p.Residual, p.Determinant))
 		}
 		return printJSON(c.out, map[string]any{"modes": modes})
 	}
@@ -109,12 +111,7 @@ func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 		c.hint("no posture found from there after %d steps: the actuator values may be out of reach or belong to a singular pose, or another start (--near) is needed", p.Steps)
 		return nil
 	}
-	fmt.Fprintf(c.out, "platform origin in the base frame  x %s  y %s  z %s\n",
-		units.Format(p.Origin.X, units.Length, 9), units.Format(p.Origin.Y, units.Length, 9), units.Format(p.Origin.Z, units.Length, 9))
-	fmt.Fprintln(c.out, "platform rotation in the base frame")
-	for i := range 3 {
-		fmt.Fprintf(c.out, "  %12.9f %12.9f %12.9f\n", p.Rot[3*i], p.Rot[3*i+1], p.Rot[3*i+2])
-	}
+	showFrame(c.out, p.Origin, p.Rot)
 	q := p.Pose.Coords()
 	var parts []string
 	for _, k := range f.Freedoms {
@@ -127,4 +124,14 @@ func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 	fmt.Fprintf(c.out, "tool point about home              %s\n", strings.Join(parts, "  "))
 	fmt.Fprintf(c.out, "residual %.2g, determinant of the inverse Jacobian %.6g, %d steps\n", p.Residual, p.Determinant, p.Steps)
 	return nil
+}
+
+// showFrame prints the platform frame in the base frame.
+func showFrame(w io.Writer, origin kin.Vec, r kin.Rot) {
+	fmt.Fprintf(w, "platform origin in the base frame  x %s  y %s  z %s\n",
+		units.Format(origin.X, units.Length, 9), units.Format(origin.Y, units.Length, 9), units.Format(origin.Z, units.Length, 9))
+	fmt.Fprintln(w, "platform rotation in the base frame")
+	for i := range 3 {
+		fmt.Fprintf(w, "  %12.9f %12.9f %12.9f\n", r[3*i], r[3*i+1], r[3*i+2])
+	}
 }

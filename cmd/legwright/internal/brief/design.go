@@ -147,6 +147,12 @@ func (o outright) replaces(p Places) *node {
 	return nil
 }
 
+// wants tells whether the design must give the dimension. A brief may size the range, and forward
+// kinematics needs neither that nor, where joints are given, a home.
+func (o outright) wants(d *KnownDimension) bool {
+	return !d.Optional && !d.Sizable && o.replaces(d.Places) == nil && !(d.Places == PlacesHome && o.joints != nil)
+}
+
 // design reads the whole tree of a design file.
 func (r *reader) design(n *node) map[string]any {
 	m := r.mapping(n, designKeys())
@@ -172,7 +178,7 @@ func (r *reader) design(n *node) map[string]any {
 	}
 	f := r.families[0]
 	if !given {
-		if slices.ContainsFunc(f.Dimensions, func(d KnownDimension) bool { return !d.Optional && !d.Sizable && o.replaces(d.Places) == nil }) {
+		if slices.ContainsFunc(f.Dimensions, func(d KnownDimension) bool { return o.wants(&d) }) {
 			r.missing(n, "dimensions")
 		}
 		return m
@@ -197,7 +203,7 @@ func (r *reader) designDimensions(n *node, f *KnownFamily, o outright) (out []De
 			if values := r.designValues(v, d); values != nil {
 				out = append(out, DesignDimension{d.Name, d.Kind, values})
 			}
-		case instead == nil && !d.Optional && !d.Sizable && !excused[d.Name]: // the brief may size it; locate needs no range
+		case o.wants(d) && !excused[d.Name]:
 			r.lacks(n, d.Name, d.Name+": "+d.Kind.Sample())
 		}
 	}

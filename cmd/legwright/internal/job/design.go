@@ -65,8 +65,8 @@ func (s *Study) plan(t *objective.Task, d *brief.Design) (*objective.Plan, error
 	if err != nil {
 		return nil, err
 	}
-	if joints != nil && d.Home == nil {
-		faults = append(faults, d.Fault("joints", "joints are given outright, but not where the platform is at home", "write home: [x, y, z, roll, pitch, yaw]"))
+	if joints != nil && !homeGiven(d) {
+		faults = append(faults, d.Fault("joints", "joints are given outright, but not where the platform is at home", "write home: [x, y, z, roll, pitch, yaw], or home_height under dimensions"))
 	}
 	if err := faults.Err(); err != nil {
 		return nil, err
@@ -129,22 +129,38 @@ func outright(d *brief.Design, values []float64) (*kin.Joints, error) {
 	if h := d.Home; h != nil {
 		j.Home = kin.Vec{X: h[0], Y: h[1], Z: h[2]}
 		j.HomeRot = kin.RPY(h[3], h[4], h[5])
+		return j, nil
+	}
+	if h, ok := d.Values()["home_height"]; ok { // straight above
+		j.Home.Z = h
+	}
+	if h, ok := d.Values()["home_heading"]; ok {
+		j.HomeRot = kin.RPY(0, 0, h)
 	}
 	return j, nil
 }
 
+// homeGiven tells whether a design with joints outright says where the platform is at home.
+func homeGiven(d *brief.Design) bool {
+	v := d.Values()
+	_, height := v["home_height"]
+	_, heading := v["home_heading"]
+	return d.Home != nil || height || heading
+}
+
 // Machine builds the machine of a design file for forward kinematics alone: it
-// needs no brief, no actuator range and, with joints outright, no home.
-func Machine(file string) (kin.Machine, *kin.Family, error) {
+// needs no brief, no actuator range and, with joints outright, no home; home
+// tells whether the design says where that is.
+func Machine(file string) (m kin.Machine, f *kin.Family, home bool, err error) {
 	d, err := brief.LoadDesign(file, *Known())
 	if err != nil {
-		return nil, nil, err
+		return nil, nil, false, err
 	}
-	f := kin.FamilyNamed(d.Family)
+	f = kin.FamilyNamed(d.Family)
 	values, missing := dimensionValues(f, d)
 	joints, err := outright(d, values)
 	if err != nil {
-		return nil, nil, err
+		return nil, nil, false, err
 	}
 	var setup kin.Setup
 	var faults brief.Faults
@@ -154,12 +170,12 @@ func Machine(file string) (kin.Machine, *kin.Family, error) {
 		}
 	}
 	if err := faults.Err(); err != nil {
-		return nil, nil, err
+		return nil, nil, false, err
 	}
 	if joints != nil {
-		return f.Outright(joints, &setup), f, nil
+		return f.Outright(joints, &setup), f, homeGiven(d), nil
 	}
-	return f.Build(values, &setup), f, nil
+	return f.Build(values, &setup), f, true, nil
 }
 
 // EncodeDesign writes the design file of a record. briefFile is the path of the brief from there.

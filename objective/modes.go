@@ -1,0 +1,87 @@
+package objective
+
+import (
+	"math"
+
+	"legwright/kin"
+	"legwright/kin/assembly"
+)
+
+// cheapModes tells whether all assembly modes of the family's machines come in closed form or from a
+// polynomial. Platforms that tilt need a continuation of 16 or 40 paths, too dear for a search.
+func cheapModes(f *kin.Family) bool { return legged(f) && !f.Has(kin.Roll) }
+
+func modeSeparation() *Measure {
+	return &Measure{
+		Name: "mode_separation", Unit: Metre, Sense: Larger,
+		Text:   "least distance to another assembly mode with the same actuator values, over home and the poses that lie farthest out: sqrt(|Δp|² + (Lc·angle)²); of platforms that tilt by appraise --modes alone",
+		Source: "C. Innocenti and V. Parenti-Castelli 1992, on changes of mode without a singularity (from memory); the distance is our own",
+		Has:    cheapModes, Start: inf, Lost: 0,
+		Scan: func(v *View, w *Worst) {
+			if v.index >= v.task.scouts {
+				return
+			}
+			if d := v.separation(&v.pose.Pose, &v.S); d < w.Value {
+				w.set(v, d, -1, -1)
+			}
+			if v.index == 0 {
+				home := kin.NewPose(kin.Coords{})
+				var s kin.State
+				if v.machine.Move(&home, &s); s.Fail == kin.Reached {
+					if d := v.separation(&home, &s); d < w.Value {
+						w.Value, w.Pose = d, -1
+					}
+				}
+			}
+		},
+	}
+}
+
+// modeSeed starts the continuation of six-legged machines; any seed finds the same modes.
+const modeSeed = 1
+
+// separation is the distance from the posture to the nearest other real solution with
+// the same actuator coordinates. The posture itself is among the solutions: the nearest, at a
+// distance of rounding.
+func (v *View) separation(p *kin.Pose, s *kin.State) float64 {
+	q := s.Q[:v.n]
+	found, ok := assembly.Modes(v.frame, kin.Ends(v.machine, q), q, modeSeed)
+	if !ok {
+		return inf
+	}
+	here := kin.Settle(v.machine, p)
+	first, second := inf, inf
+	for i := range found.Modes {
+		m := found.Modes[i].Pose(v.frame)
+		switch d := assembly.Distance(v.frame, &here, &m); {
+		case d < first:
+			first, second = d, first
+		case d < second:
+			second = d
+		}
+	}
+	return second
+}
+
+// ModeSeparation adds the reading of mode_separation to the appraisal of a machine for which the
+// measure is too dear elsewhere. It costs some tenths of a second for each of up to 77 poses.
+func ModeSeparation(t *Task, a *Appraisal) {
+	m := modeSeparation()
+	if a.Reading(m.Name) != nil || !legged(a.Plan.Family) {
+		return
+	}
+	v := newView(t)
+	v.free = a.Plan.Family.Free
+	v.begin(a.Machine)
+	ts := []tracker{{m: m}}
+	ts[0].reset()
+	v.walk(0, t.scouts, 0, ts)
+	r := Reading{Measure: m, Value: ts[0].w.Value, Leg: -1, Mate: -1, Case: -1}
+	if k := ts[0].w.Pose; k >= 0 {
+		r.Pose = &t.samples[k]
+	}
+	if math.IsInf(r.Value, 1) {
+		r.Pose = nil
+	}
+	a.Readings = append(a.Readings, r)
+}
