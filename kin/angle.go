@@ -20,7 +20,8 @@ var angleMarks = func() (m [2*28 + 1]angleMark) {
 // angles writes those of the first n unit vectors (cos, sin), in [-π, π]. It is math.Atan2
 // without the branches that a crank turning to and fro makes the processor guess
 // wrong: the angle of the nearest mark and that between the two, whose sine is at most 1/16
-// (the series of the arcsine to x¹¹ then errs by less than 1e-17).
+// (the series of the arcsine to x¹¹ then errs by less than 1e-17). Beyond 120° the conversion of the tangent
+// to an integer may overflow, in ways that differ between processors.
 func angles(n int, cos, sin, out *[6]float64) {
 	for i := range cos {
 		if i >= n {

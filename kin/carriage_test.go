@@ -45,6 +45,27 @@ func TestDeltaOnUprightRails(t *testing.T) {
 	near(t, "conditioning", conditioning(t, m, moved(t, m, atHome())), 1, 1e-14)
 }
 
+// Upright rails given outright have the short sides of their parallelograms along the
+// circle, as those that dimensions place: same swings and gaps. 1e-15.
+func TestUprightRailsOutright(t *testing.T) {
+	f, d := with("linear-delta", map[string]float64{"rail_slant": 0, "rod_spacing": 0.1})
+	setup := &kin.Setup{Length: 0.2, Diameter: 0.01}
+	m := f.Build(d, setup)
+	o := f.Outright(outright(f, d, m), setup)
+	p := kin.NewPose(kin.Coords{0.06, -0.04, 0.02})
+	a, b := moved(t, m, p), moved(t, o, p)
+	// leg 1 stands at 90°, so that x is along its short sides; leg 2 at 210°
+	rod := d[f.Index("rod")]
+	near(t, "swing of leg 1", a.BaseChord[0], 2-2*math.Cos(math.Asin(0.06/rod)), 1e-15)
+	near(t, "swing of leg 2", a.BaseChord[1], 2-2*math.Cos(math.Asin((0.06*math.Cos(300*deg)-0.04*math.Sin(300*deg))/rod)), 1e-15)
+	for i := range 3 {
+		near(t, "swing", b.BaseChord[i], a.BaseChord[i], 1e-15)
+	}
+	ga, _, _ := m.Gap(a)
+	gb, _, _ := o.Gap(b)
+	near(t, "gap", gb, ga, 1e-15)
+}
+
 // gains are the singular values of the map from rates to velocity, falling.
 func gains(t *testing.T, m kin.Machine, p kin.Pose) []float64 {
 	t.Helper()

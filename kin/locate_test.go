@@ -136,7 +136,10 @@ func TestLocateInvertsMove(t *testing.T) {
 			far = 0.002
 		}
 		from := beside(rng, f.Freedoms, p, far)
-		for !reaches(m, from) {
+		for k := 0; !reaches(m, from); k++ {
+			if k == 1000 {
+				t.Fatalf("no start beside %v", p.Coords())
+			}
 			from = beside(rng, f.Freedoms, p, far)
 		}
 		got, ok := kin.Locate(m, q, from)

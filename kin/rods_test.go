@@ -268,9 +268,10 @@ func TestRodsOutOfReach(t *testing.T) {
 // such ends themselves; those of a planar family miss less than a hundredth of the crank.
 func TestSweepHoldsTheDrives(t *testing.T) {
 	eachRods(t, 10, func(t *testing.T, x trial, legs []rodLeg) {
-		least, span := x.d[len(x.d)-2], x.d[len(x.d)-1]
-		if l, s := x.f.Range(); l >= 0 {
-			least, span = x.d[l], x.d[s]
+		l, s := x.f.Range()
+		least, span := x.d[l], x.d[s]
+		if x.d[0] > x.f.Dimensions[0].Low+0.5*(x.f.Dimensions[0].High-x.f.Dimensions[0].Low) { // half of them: past a whole turn
+			least, span = least-3, 7
 		}
 		points := kin.Sweep(x.m, least, least+span)
 		for _, direction := range []float64{0, 1, 2, 3, 4, 5, 6} {
@@ -284,11 +285,11 @@ func TestSweepHoldsTheDrives(t *testing.T) {
 			for _, p := range points {
 				held = math.Max(held, r3.Dot(u, p))
 			}
-			slack := 1e-6
+			slack := 1e-6 // the points are exact, the drives are sampled every 7e-3 rad or less
 			if i := x.f.Index("proximal"); i >= 0 {
 				slack = x.d[i] / 100
 			}
-			if held < most-slack || held > most+1e-6 {
+			if held < most-slack || held > most+1e-5 {
 				t.Errorf("towards %g rad: the points reach %g, the drives %g", direction, held, most)
 			}
 		}
