@@ -1,6 +1,6 @@
 module legwright
 
-go 1.26
+go 1.26.0
 
 require (
 	github.com/MaxHalford/eaopt v0.4.2
