@@ -23,14 +23,16 @@ type end struct {
 
 // The rules of the endgame. Lengths are over |x|, which is 1.
 const (
-	endgameStart = 0.02  // t at which it takes over
-	directSteps  = 100   // on the straight way from there to t = 0
-	illPosed     = 1e9   // norm of the inverse matrix from which on a solution counts as multiple
-	corners      = 12    // of the polygon about t = 0
-	mostCycles   = 12    // loops before the path is taken not to close
-	closed       = 1e-7  // distance at which a loop is closed
-	settled      = 1e-8  // angle between two limits in turn, the radius quartered in between
-	smallestLoop = 1e-10 // radius
+	endgameStart  = 0.02  // t at which it takes over
+	straightSteps = 40    // on the straight way from there to t = 0
+	loopSteps     = 100   // on a side of a loop's polygon, and from one loop to the next
+	illPosed      = 1e9   // norm of the inverse matrix from which on a solution counts as multiple
+	corners       = 12    // of the polygon about t = 0
+	mostCycles    = 12    // loops before the path is taken not to close
+	closed        = 1e-7  // distance at which a loop is closed
+	settled       = 1e-8  // angle between two limits in turn, the radius quartered in between
+	solution      = 1e-10 // residual of a limit
+	smallestLoop  = 1e-10 // radius
 )
 
 // run follows the path of x from t = 1 to its end at t = 0. Where the straight
@@ -38,11 +40,11 @@ const (
 // Cauchy's integral over loops about t = 0 (A. Morgan, A. Sommese, C. Wampler
 // 1991, Numerische Mathematik 58:669).
 func (k *tracker) run(x point) end {
-	if _, ok := k.along(&x, 1, endgameStart, mostSteps, false); !ok {
+	if !k.along(&x, 1, endgameStart, mostSteps, false) {
 		return end{x: x}
 	}
 	y := x
-	if _, ok := k.along(&y, endgameStart, 0, directSteps, false); ok && k.settle(&y) {
+	if k.along(&y, endgameStart, 0, straightSteps, false) && k.settle(&y) {
 		return end{x: y, outcome: regular, cycle: 1}
 	}
 	return k.circle(x)
@@ -66,24 +68,42 @@ func (k *tracker) settle(x *point) bool {
 	return last < 1e-9 && k.linearise(0, x) && k.work.lu.inverseNorm() < illPosed
 }
 
-// circle finds the end of the path of x, which is at t = endgameStart.
+// circle finds the end of the path of x, which is at t = endgameStart, as the limit on
+// which loops of two radii agree. Where rounding ends the path before that, at an end of high
+// multiplicity, the last limit counts that is a solution itself.
 func (k *tracker) circle(x point) end {
 	var last point
+	out := end{x: x}
 	for r := endgameStart; r > smallestLoop; r /= 4 {
 		limit, cycle, ok := k.mean(x, r)
-		if ok && r < endgameStart && k.apart(&last, &limit) < settled {
-			y := limit
-			if cycle == 1 && k.settle(&y) && k.apart(&y, &limit) < 1e-5 {
-				return end{x: y, outcome: regular, cycle: 1}
+		if ok && k.holds(&limit) {
+			out = end{x: limit, outcome: singular, cycle: cycle}
+			if r < endgameStart && k.apart(&last, &limit) < settled {
+				break
 			}
-			return end{x: limit, outcome: singular, cycle: cycle}
 		}
 		last = limit
-		if _, ok := k.along(&x, complex(r, 0), complex(r/4, 0), directSteps, false); !ok {
+		if !k.along(&x, complex(r, 0), complex(r/4, 0), loopSteps, false) {
 			break
 		}
 	}
-	return end{x: x}
+	y := out.x
+	if out.outcome == singular && out.cycle == 1 && k.settle(&y) && k.apart(&y, &out.x) < 1e-5 {
+		return end{x: y, outcome: regular, cycle: 1}
+	}
+	return out
+}
+
+// holds tells whether x, of unit blocks, is a solution at t = 0.
+func (k *tracker) holds(x *point) bool {
+	k.here = *x
+	k.sys.at(0, &k.here, &k.work)
+	for _, f := range k.work.f[:k.n-len(k.ends)] {
+		if !(size2(f) < solution*solution) {
+			return false
+		}
+	}
+	return true
 }
 
 // mean is the mean of x over as many loops of radius r about t = 0 as close the
@@ -96,7 +116,7 @@ func (k *tracker) mean(x point, r float64) (limit point, cycle int, ok bool) {
 		for c := 1; c <= corners; c++ {
 			limit.addScaled(1, &x)
 			next := cmplx.Rect(r, 2*math.Pi*float64(c)/corners)
-			if _, ok := k.along(&x, t, next, directSteps, true); !ok {
+			if !k.along(&x, t, next, loopSteps, true) {
 				return limit, cycle, false
 			}
 			t = next

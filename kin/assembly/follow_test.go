@@ -61,8 +61,6 @@ func TestFollow(t *testing.T) {
 		if !ok || Distance(f, &back, &home) > 1e-9 {
 			t.Errorf("back from %v: %v, %g off", q1, ok, Distance(f, &back, &home))
 		}
-		var at [3]float64
-		copy(at[:], q1)
 		modes, _ := Modes(f, nil, q1, 0)
 		if k := Reached(m, modes.Modes, q1); k < 0 || modes.Modes[k].Determinant >= 0 {
 			t.Errorf("mode %d is reached at %v", k, q1)

@@ -1,7 +1,6 @@
 package assembly
 
 import (
-	"cmp"
 	"math"
 	"slices"
 
@@ -90,7 +89,7 @@ func quaternion(r *kin.Rot) [4]float64 {
 		q = [4]float64{r[3] - r[1], r[2] + r[6], r[5] + r[7], square[3]}
 	}
 	s := 0.5 / math.Sqrt(square[most])
-	if cmp.Compare(q[0], 0) < 0 {
+	if q[0] < 0 {
 		s = -s
 	}
 	for i := range q {

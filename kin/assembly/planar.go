@@ -116,9 +116,6 @@ func newTriangle(base, platform *[3][2]float64, length *[3]float64) *triangle {
 // cross is the z component of a×b.
 func cross(a, b complex128) float64 { return imag(conj(a) * b) }
 
-// dot is a·b.
-func dot(a, b complex128) float64 { return real(conj(a) * b) }
-
 // lines gives at a heading the vectors w and numbers k of the equations 2 p·w = k,
 // over the size, for p from the first base joint to the first platform joint:
 // |p + w|² = l² of legs 2 and 3, less |p|² = l² of leg 1.

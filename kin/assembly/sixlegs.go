@@ -25,8 +25,7 @@ import (
 // for a general platform, several times that for one with solutions at infinity.
 //
 // Special platforms have fewer solutions, the others being counted as Infinite: those
-// of the family 6-UPS have 28, those with three platform joints (6-3, 3-3) 16. A solution
-// farther away than some 10⁵ of the machine's size counts as infinite too; no real one is.
+// of the family 6-UPS have 28, those with three platform joints (6-3, 3-3) 16.
 // At a singular posture, or where the locked drives leave the platform a curve of postures (at
 // every pose of similar hexagons, for one), solutions are Singular: a real one
 // among them is given as found, which of a curve is a point, and may be none.
@@ -51,13 +50,15 @@ func (h *hexapod) start(try uint64) (equations, []end) {
 // infinite tells whether the rotation of an end has no measure.
 func (h *hexapod) infinite(e *end) bool {
 	var ee complex128
+	size := 0.0
 	for _, z := range e.x[:4] {
 		ee += z * z
+		size += size2(z)
 	}
-	if e.outcome == singular {
-		return cmplx.Abs(ee) < infiniteLimit
+	if e.outcome == regular {
+		return cmplx.Abs(ee) < infiniteEnd*size
 	}
-	return cmplx.Abs(ee) < infiniteEnd
+	return cmplx.Abs(ee) < infiniteLimit
 }
 
 // hexapod is a six-legged platform moved and scaled to a usual place and size.

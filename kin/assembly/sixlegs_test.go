@@ -266,6 +266,25 @@ func TestUnitsAndPlace(t *testing.T) {
 	}
 }
 
+// Hexagons turned by a quarter are singular (E. Fichter 1986, check C5): the posture is
+// found as a double solution without determinant.
+func TestSixLegsAtSingularPosture(t *testing.T) {
+	rng := rand.New(rand.NewPCG(11, 11))
+	a, b := hexagons(rng, 15, 20)
+	p, r := kin.Vec{Z: 0.8}, kin.RPY(0, 0, math.Pi/2)
+	got := SixLegs(a, b, lengths(&a, &b, p, &r), 0)
+	if got.Singular < 2 || got.Lost != 0 || got.Complex+got.Infinite+got.Singular != 40 {
+		t.Errorf("%d simple, %d infinite, %d singular, %d lost", got.Complex, got.Infinite, got.Singular, got.Lost)
+	}
+	k, far := nearest(got.Modes, &Mode{Origin: p, Rot: r})
+	if !(far < 1e-5) { // half the digits are lost at a double solution
+		t.Fatalf("the posture is missed by %g", far)
+	}
+	if d := got.Modes[k].Determinant; !(math.Abs(d) < 1e-5) {
+		t.Errorf("determinant %g, want 0", d)
+	}
+}
+
 // What cannot be solved is said to be lost or singular, not left out.
 func TestSixLegsDegenerate(t *testing.T) {
 	rng := rand.New(rand.NewPCG(5, 5))

@@ -36,15 +36,6 @@ func (x *point) addScaled(s complex128, y *point) {
 	}
 }
 
-// inner is xᴴy.
-func (x *point) inner(y *point) complex128 {
-	var s complex128
-	for i := range x {
-		s += conj(x[i]) * y[i]
-	}
-	return s
-}
-
 // lu is a factored matrix of order n.
 type lu struct {
 	n   int
@@ -75,7 +66,7 @@ func (m *lu) factor() bool {
 				p, best = i, s
 			}
 		}
-		if !(best > 1e-30) { // NaN too
+		if !(best > 1e-28) { // NaN too
 			return false
 		}
 		if p != k {

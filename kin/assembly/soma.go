@@ -29,19 +29,6 @@ type leg struct {
 // legs are the parameters of a six-legged platform.
 type legs [6]leg
 
-// blend is the parameter-wise s·a + (1-s)·b.
-func blend(s complex128, a, b *legs) legs {
-	var out legs
-	for i := range out {
-		for k := range 3 {
-			out[i].less[k] = s*a[i].less[k] + (1-s)*b[i].less[k]
-			out[i].sum[k] = s*a[i].sum[k] + (1-s)*b[i].sum[k]
-		}
-		out[i].square = s*a[i].square + (1-s)*b[i].square
-	}
-	return out
-}
-
 // soma is the forward kinematics of a six-legged platform in the eight
 // homogeneous coordinates (e0, e, d0, d) of a displacement (E. Study's; "soma
 // coordinates" with C. Wampler 1996, Mechanism and Machine Theory 31:331): the

@@ -25,7 +25,7 @@ const (
 	largestError  = 3e-5  // a step with a larger one is refused
 	correctedWell = 1e-11 // the corrector stops here
 	smallestStep  = 1e-9  // of the segment: below it the path is given up
-	firstStep     = 0.05  // of the segment
+	firstStep     = 0.05  // of the segment, where it is not a short one
 	mostSteps     = 2000  // on the way to the endgame
 )
 
@@ -36,8 +36,8 @@ type tracker struct {
 	ends  []int
 	n     int
 	patch point
+	here  point // where the system is evaluated
 	work  workspace
-	steps int // accepted and refused, since it was made
 }
 
 func newTracker(sys equations) *tracker {
@@ -66,7 +66,8 @@ func (k *tracker) normalise(x *point) {
 // linearise evaluates the system at (t, x), adds the rows of the patches and factors.
 func (k *tracker) linearise(t complex128, x *point) bool {
 	w := &k.work
-	k.sys.at(t, x, w)
+	k.here = *x
+	k.sys.at(t, &k.here, w)
 	w.lu.n = k.n
 	row, from := k.n-len(k.ends), 0
 	for _, to := range k.ends {
@@ -146,28 +147,29 @@ func (k *tracker) step(t complex128, x *point, dt complex128) (y point, err floa
 
 // along follows the path on the straight segment of the complex plane from t=a to
 // t=b. If hold is set the patch stays where it is, so that points of the path may
-// be compared and averaged; otherwise it moves with the path. It reports false,
-// with x and the t of the last point reached, if the step becomes too small or
-// `most` steps do not suffice.
-func (k *tracker) along(x *point, a, b complex128, most int, hold bool) (t complex128, ok bool) {
+// be compared and averaged; otherwise it moves with the path. It reports false if
+// the step becomes too small or `most` steps do not suffice.
+func (k *tracker) along(x *point, a, b complex128, most int, hold bool) bool {
 	if !hold {
 		k.normalise(x)
 	}
 	u, h := 0.0, firstStep
+	if hold { // a side of a small polygon
+		h = 1
+	}
 	for range most {
-		k.steps++
 		last := u+h >= 1
 		if last {
 			h = 1 - u
 		}
-		here := a + complex(u, 0)*(b-a)
-		y, err, ok := k.step(here, x, complex(h, 0)*(b-a))
+		y, err, ok := k.step(a+complex(u, 0)*(b-a), x, complex(h, 0)*(b-a))
 		if !ok {
-			if h /= 2; !(err > 1) && err > largestError {
-				h *= 2 * math.Max(0.1, math.Min(0.5, math.Pow(wantedError/err, 0.2)))
+			cut := 0.5
+			if err > largestError {
+				cut = math.Max(0.1, math.Min(0.5, math.Pow(wantedError/err, 0.2)))
 			}
-			if h < smallestStep {
-				return here, false
+			if h *= cut; h < smallestStep {
+				return false
 			}
 			continue
 		}
@@ -176,10 +178,10 @@ func (k *tracker) along(x *point, a, b complex128, most int, hold bool) (t compl
 			k.normalise(x)
 		}
 		if last {
-			return b, true
+			return true
 		}
 		u += h
 		h *= math.Max(0.3, math.Min(2.5, 0.9*math.Pow(wantedError/math.Max(err, 1e-16), 0.2)))
 	}
-	return a + complex(u, 0)*(b-a), false
+	return false
 }
