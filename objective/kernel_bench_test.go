@@ -75,6 +75,72 @@ func BenchmarkKernel(b *testing.B) {
 	}
 }
 
+// BenchmarkFamilies is everything per pose of every family: a machine within the usual ranges in its starter's
+// box, under the loads and speeds of kernelTask. Each is measured in turns with 6-UPS, so that the ratio of the two holds
+// on a machine with other load.
+func BenchmarkFamilies(b *testing.B) {
+	for _, exact := range []Need{0, NeedExact} {
+		name := "worst conditioning"
+		if exact != 0 {
+			name = "every conditioning"
+		}
+		b.Run(name, func(b *testing.B) {
+			for _, f := range kin.Families() {
+				b.Run(f.Name, func(b *testing.B) {
+					unit, w := newFamilyWalk(b, kin.FamilyNamed("6-UPS"), exact), newFamilyWalk(b, f, exact)
+					b.ReportAllocs()
+					for b.Loop() {
+						unit.run()
+						w.run()
+					}
+					poses := float64(b.N * len(w.v.task.samples))
+					b.ReportMetric(float64(w.spent.Nanoseconds())/poses, "cpu-ns/pose")
+					b.ReportMetric(float64(w.spent)/float64(unit.spent), "of-6-UPS")
+				})
+			}
+		})
+	}
+}
+
+// familyWalk walks one machine of a family again and again.
+type familyWalk struct {
+	v     *View
+	m     kin.Machine
+	ts    []tracker
+	need  Need
+	spent time.Duration
+}
+
+func newFamilyWalk(b *testing.B, f *kin.Family, exact Need) *familyWalk {
+	task := kernelTask(b)
+	task.Zones = []Zone{ranged(f, Box, 1, 500)}
+	task.Prepare()
+	setup := task.setup()
+	names := []string{"conditioning", "base_swing", "platform_swing", "leg_clearance", "leg_force", "leg_speed"}
+	if f.Drive == kin.Rotary {
+		names = append(names[:4], "motor_torque", "motor_speed")
+	}
+	w := &familyWalk{v: newView(task), m: f.Build(soundDesign(f), &setup)}
+	w.ts, w.need = kernelTrackers(b, names...)
+	w.need |= exact
+	w.run()
+	if w.v.lost > 0 || w.v.homeSign == 0 {
+		b.Fatalf("%d poses out of reach, sign at home %d", w.v.lost, w.v.homeSign)
+	}
+	w.spent = 0
+	return w
+}
+
+func (w *familyWalk) run() {
+	start := cpuTime()
+	w.v.begin(w.m)
+	for i := range w.ts {
+		w.ts[i].reset()
+	}
+	w.v.walk(0, len(w.v.task.samples), w.need, w.ts)
+	w.spent += cpuTime() - start
+}
+
 // cpuTime is the processor time of the process, which other load disturbs less than the wall's.
 func cpuTime() time.Duration {
 	var r syscall.Rusage
