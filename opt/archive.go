@@ -69,6 +69,15 @@ func (a *Archive) add(g *genome, order int) bool {
 	return true
 }
 
+// beats reports whether a design kept beats p or equals it.
+func (a *Archive) beats(p []float64) bool {
+	relation := 1
+	for i := 0; relation > 0; i++ {
+		i, relation = related(a.goals, p, i)
+	}
+	return relation < 0
+}
+
 func (a *Archive) swap(i, j int) {
 	a.designs[i], a.designs[j] = a.designs[j], a.designs[i]
 	a.orders[i], a.orders[j] = a.orders[j], a.orders[i]

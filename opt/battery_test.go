@@ -249,32 +249,6 @@ func TestFailuresAreKeptApart(t *testing.T) {
 	}
 }
 
-// Both spaces get an equal share, and on a front that only the second can
-// reach the designs come from it.
-func TestSpacesShareTheBudget(t *testing.T) {
-	var calls [2]atomic.Int64
-	p := problemOf(known.DTLZ2(2, 4))
-	p.Spaces = append(p.Spaces, p.Spaces[0])
-	k := known.DTLZ2(2, 4)
-	p.Evaluate = func(_, space int, x []float64, r *opt.Result) {
-		calls[space].Add(1)
-		k.Evaluate(x, r.Goals)
-		if space == 0 {
-			r.Goals[0]++
-			r.Goals[1]++
-		}
-	}
-	o := mustSearch(t, p, opt.Settings{Evaluations: 1001, Seed: 1, Polish: -1})
-	if calls[0].Load() != 501 || calls[1].Load() != 500 {
-		t.Errorf("shares %d and %d", calls[0].Load(), calls[1].Load())
-	}
-	for _, d := range o.Front {
-		if d.Space != 1 {
-			t.Errorf("design of space %d on the front", d.Space)
-		}
-	}
-}
-
 // A small discrete space is tried out completely, no design twice.
 func TestDiscreteSpaceIsExhausted(t *testing.T) {
 	seen := map[[2]float64]int{}

@@ -6,7 +6,8 @@
 // The search is genetic, driven by eaopt: one population per Space, variation
 // by simulated binary crossover, differential evolution and coordinate resets
 // whose shares follow their success, survival by constrained domination and
-// exclusive hypervolume. Now and then gonum's Nelder-Mead polishes extremes,
+// exclusive hypervolume. The budget moves towards the spaces that still improve
+// the common front. Now and then gonum's Nelder-Mead polishes extremes,
 // knee and gaps of the front. Every feasible design that is not dominated is
 // kept in an Archive; the reported front is the subset of it that covers most
 // hypervolume.

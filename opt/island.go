@@ -18,17 +18,24 @@ type island struct {
 	pending *batch    // children being evaluated
 	fresh   []*genome // evaluated, not yet merged
 	guests  []*genome // polished designs that want to join
-	left    int       // evaluations not yet given out
-	budget  int
 	ranked  []*genome
 	done    bool // the space holds no other design
+
+	turn   int     // children to breed in the next generation
+	used   int     // evaluations given out
+	budget int     // what they are expected to come to in the end
+	share  float64 // of the evaluations to come
+	due    float64 // generations owed
+	books  books
+	standing
 }
 
-func newIsland(r *run, index, budget int) *island {
+func newIsland(r *run, index int) *island {
 	p := r.problem
-	l := &island{pending: new(batch), run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals), left: budget, budget: budget}
+	l := &island{pending: new(batch), run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals)}
+	l.budget = r.set.Evaluations / len(p.Spaces)
 	rng := stream(r.set.Seed, streamSample, index, 0)
-	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, min(budget, 1<<16))}
+	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, min(l.budget, 1<<16))}
 	for k := range l.breed.share {
 		l.breed.share[k] = 1.0 / bred
 	}
@@ -41,17 +48,18 @@ func newIsland(r *run, index, budget int) *island {
 	}
 	l.dom.latin(xs, rng)
 	for _, g := range l.sample {
-		if l.left > 0 && l.breed.fresh(g) {
+		if l.breed.fresh(g) {
 			l.pending.designs = append(l.pending.designs, g)
-			l.left--
 		}
 	}
+	l.used = len(l.pending.designs)
+	r.left -= l.used
 	return l
 }
 
 // spent reports that nothing is left to make or to wait for.
 func (l *island) spent() bool {
-	return len(l.pending.designs) == 0 && len(l.fresh) == 0 && (l.left == 0 || l.done)
+	return len(l.pending.designs) == 0 && len(l.fresh) == 0 && l.turn == 0
 }
 
 // collect takes the evaluated designs of a batch and empties it.
@@ -103,10 +111,11 @@ func (l *island) generation(pop *eaopt.Population) error {
 		l.first = nil
 	}
 	next := new(batch)
-	if n := min(r.set.Children, l.left); n > 0 && !l.done {
+	if l.turn > 0 {
 		l.breed.parents = l.ranked
-		next.designs = l.breed.breed(n)
-		l.left -= len(next.designs)
+		next.designs = l.breed.breed(l.turn)
+		l.used += len(next.designs)
+		l.turn -= len(next.designs)
 		l.done = len(next.designs) == 0
 	}
 	r.ev.submit(next)
@@ -140,8 +149,8 @@ func (l *island) join(kids []*genome) {
 // with the evaluations, small first to get to the front, large then to fill it.
 func (l *island) size() int {
 	r := l.run
-	spent := float64(l.budget-l.left) / float64(l.budget)
-	return r.start + int(float64(r.grown-r.start)*spent)
+	spent := float64(l.used) / float64(l.budget)
+	return r.start + int(float64(l.grown()-r.start)*spent)
 }
 
 // publish gives eaopt the population in order. The fitness falls from

@@ -81,11 +81,13 @@ type Outcome struct {
 	Evaluations int    // at most Settings.Evaluations
 	Feasible    int    // feasible designs among the evaluated
 	Population  int    // per space at the start
-	Grown       int    // per space at the end
+	Grown       int    // at the end, of the space that grew most
 	Polished    int    // evaluations that Nelder-Mead took
-	Children    int    // per generation and space
+	Children    int    // per generation and space, while the space has its turn
 	Status      Status // why it ended
-	History     []Point
+	// Spaces tells what became of each of Problem.Spaces.
+	Spaces  []SpaceOutcome
+	History []Point
 	// Near holds the infeasible designs of least violation, best first.
 	Near []Design
 	// Single has one list per limit: designs that violate this limit only,

@@ -47,7 +47,8 @@ func (r *run) polish() {
 	wg.Wait()
 	for _, j := range jobs {
 		l := r.islands[j.start.space]
-		l.left += j.budget - len(j.made)
+		r.left += j.budget - len(j.made)
+		l.used += len(j.made)
 		for _, g := range j.made {
 			l.breed.seen[fingerprint(g.x)] = struct{}{}
 			if g.feasible() {
@@ -70,15 +71,15 @@ func (r *run) polishJobs(due int) (jobs []*job) {
 		a := &aims[(i+r.aimed)%len(aims)]
 		l := r.islands[a.start.space]
 		n := len(l.dom.real)
-		budget := min(polishSteps*(n+1), due, l.left)
+		budget := min(polishSteps*(n+1), due, r.left)
 		if len(pts[0]) == 1 { // nothing but the one optimum to share with
-			budget = min(due, l.left)
+			budget = min(due, r.left)
 		}
 		if n == 0 || budget < n+2 { // less does not finish the first simplex
 			continue
 		}
 		due -= budget
-		l.left -= budget
+		r.left -= budget
 		jobs = append(jobs, &job{aim: *a, budget: budget})
 	}
 	r.aimed += len(jobs)

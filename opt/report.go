@@ -42,7 +42,7 @@ func (r *run) outcome() *Outcome {
 	r.fixReference()
 	o := &Outcome{
 		Archive: r.archive.Len(), Reference: r.reference, Evaluations: r.evaluations, Feasible: r.feasible,
-		Population: r.start, Grown: r.grown, Children: r.set.Children, Polished: r.polished,
+		Population: r.start, Grown: r.grown(), Children: r.set.Children, Polished: r.polished,
 		Near: designs(r.misses.near), Failed: r.misses.failed, Failures: r.misses.failures,
 	}
 	for _, list := range r.misses.single {
@@ -63,6 +63,7 @@ func (r *run) outcome() *Outcome {
 		}
 		o.Hypervolume = Hypervolume(front, r.reference)
 	}
+	o.Spaces = r.spaces(o.Front)
 	if n := len(r.history); r.evaluations > 0 && (n == 0 || r.history[n-1].Evaluations < r.evaluations) {
 		r.record()
 	}

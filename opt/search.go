@@ -40,7 +40,7 @@ type run struct {
 	ga      *eaopt.GA
 	islands []*island
 	start   int // population per space at the start
-	grown   int // and at the end
+	left    int // evaluations not yet given out
 
 	archive     Archive
 	misses      misses
@@ -62,14 +62,9 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	r.archive.Limit = archiveLimit(s.Front)
 	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
 	r.reference = slices.Clone(s.Reference)
-	r.start, r.grown = sizes(p, &s)
-	share, extra := s.Evaluations/len(p.Spaces), s.Evaluations%len(p.Spaces)
+	r.start, r.left = startSize(p, &s), s.Evaluations
 	for i := range p.Spaces {
-		budget := share
-		if i < extra {
-			budget++
-		}
-		r.islands = append(r.islands, newIsland(r, i, budget))
+		r.islands = append(r.islands, newIsland(r, i))
 	}
 	return r
 }
@@ -124,7 +119,7 @@ func (r *run) evolve() error {
 // spent reports that no space has anything left to do.
 func (r *run) spent() bool {
 	for _, l := range r.islands {
-		if !l.spent() {
+		if !l.spent() || r.left > 0 && !l.done {
 			return false
 		}
 	}
@@ -136,6 +131,7 @@ func (r *run) barrier() {
 	r.phase = "search"
 	r.merge()
 	r.polish()
+	r.allot()
 	if r.evaluations >= r.next {
 		r.record()
 	}
@@ -147,11 +143,15 @@ func (r *run) barrier() {
 // merge counts what the spaces have evaluated since the last time, in fixed
 // order.
 func (r *run) merge() {
+	slack := r.nearly()
 	for _, l := range r.islands {
 		for _, g := range l.fresh {
+			r.judge(g, slack)
 			r.count(g)
 		}
 		l.fresh = l.fresh[:0]
+		r.left += l.turn // what the space could not breed
+		l.turn = 0
 	}
 	if r.feasible >= referenceSample {
 		r.fixReference()
@@ -187,6 +187,7 @@ func (r *run) fixReference() {
 func (r *run) count(g *genome) {
 	order := r.evaluations
 	r.evaluations++
+	r.islands[g.space].books.add(g, order)
 	if g.origin == originPolish {
 		r.polished++
 	}

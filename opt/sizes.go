@@ -1,29 +1,41 @@
 package opt
 
-// sizes chooses the population per space at the start and at the end of a
-// search. A run starts small, which gets to the front soonest, and ends with
-// as many designs as the evaluations per variable can move: a front of one
+// A population starts small, which gets to the front soonest, and ends with as
+// many designs as the evaluations per variable can move: a front of one
 // dimension more takes more of them. The constants were found on the known
 // problems and on the sizing of a six-legged machine.
-func sizes(p *Problem, s *Settings) (start, grown int) {
-	const (
-		usual = 30
-		cost  = 33 // evaluations per variable, design and dimension of the front
-		most4 = 60 // volumes of four goals are dear
-	)
+const (
+	usualStart = 30
+	costOfOne  = 33 // evaluations per variable, design and dimension of the front
+	mostOf4    = 60 // volumes of four goals are dear
+)
+
+// startSize returns the population per space at the start of a search.
+func startSize(p *Problem, s *Settings) int {
 	budget := s.Evaluations / len(p.Spaces)
-	vars := 1
-	for i := range p.Spaces {
-		vars = max(vars, len(newDomain(&p.Spaces[i]).free))
-	}
-	start = s.Population
+	start := s.Population
 	if start == 0 {
-		start = min(usual, max(leastPerSpace, budget/10))
+		start = min(usualStart, max(leastPerSpace, budget/10))
 	}
-	start = min(start, budget)
-	grown = min(s.Front, budget/vars*max(1, p.Goals-1)/cost)
-	if p.Goals == maxShareGoals {
-		grown = min(grown, most4)
+	return min(start, budget)
+}
+
+// grown returns the population at the end, for the evaluations that the space
+// is expected to get.
+func (l *island) grown() int {
+	r := l.run
+	n := min(r.set.Front, l.budget/max(1, len(l.dom.free))*max(1, r.problem.Goals-1)/costOfOne)
+	if r.problem.Goals == maxShareGoals {
+		n = min(n, mostOf4)
 	}
-	return start, max(start, grown)
+	return max(r.start, n)
+}
+
+// grown is the largest population that any space ends with.
+func (r *run) grown() int {
+	n := 0
+	for _, l := range r.islands {
+		n = max(n, l.grown())
+	}
+	return n
 }
