@@ -229,15 +229,19 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		if p.Family.Drive == kin.Rotary {
 			unit = Radian
 		}
+		first, final := "shortest needed", "longest needed"
+		if p.Family.Drive == kin.Rotary || p.Family.Rails {
+			first, final = "least needed", "most needed"
+		}
 		low, span := a.Values[p.least], a.Values[p.span]
 		r := t.Actuator.Reserve
 		slack := p.rangeSlack(a.Values)
 		if !p.derived(p.least) {
-			add(Verdict{Name: "shortest needed", Origin: "dimensions." + p.Family.Dimensions[p.least].Name, Unit: unit, AtLeast: true,
+			add(Verdict{Name: first, Origin: "dimensions." + p.Family.Dimensions[p.least].Name, Unit: unit, AtLeast: true,
 				Bound: low + r, Value: least}, (low+r-least-slack)/math.Max(span, 1e-3))
 		}
 		if !p.derived(p.span) {
-			add(Verdict{Name: "longest needed", Origin: "dimensions." + p.Family.Dimensions[p.span].Name, Unit: unit,
+			add(Verdict{Name: final, Origin: "dimensions." + p.Family.Dimensions[p.span].Name, Unit: unit,
 				Bound: low + span - r, Value: most}, (most-low-span+r-slack)/math.Max(span, 1e-3))
 		}
 		if n := len(t.Actuator.Strokes); n > 0 && p.Specs[p.span].Kind == Sized {
@@ -255,7 +259,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		if r == nil {
 			continue
 		}
-		add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.Unit, AtLeast: l.AtLeast, Bound: l.Bound, Value: r.Value},
+		add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.UnitOf(p.Family), AtLeast: l.AtLeast, Bound: l.Bound, Value: r.Value},
 			l.excess(t, r.Value))
 	}
 	if v.singular > 0 || v.homeSign == 0 {
@@ -275,7 +279,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 // pose tells whether the verdict counts through coverage alone where coverage is below 100 %.
 func pose(w *Verdict) bool {
 	switch w.Name {
-	case "shortest needed", "longest needed", "singular poses":
+	case "shortest needed", "longest needed", "least needed", "most needed", "singular poses":
 		return true
 	}
 	return w.Origin == "joints.base_swing" || w.Origin == "joints.platform_swing"

@@ -27,7 +27,7 @@ func keeps(t *testing.T, task *Task, f *kin.Family, d []float64, a *Appraisal, s
 	one.Zones = []Zone{{Kind: Listed, Poses: []kin.Coords{s.Coords}}}
 	one.Cases = nil
 	for _, c := range task.Cases {
-		if c.in(s.Zone) {
+		if c.In(s.Zone) {
 			c.Zones = nil
 			one.Cases = append(one.Cases, c)
 		}

@@ -78,8 +78,8 @@ type Case struct {
 	Zones           []int // zones in which it occurs; nil for all
 }
 
-// in tells whether the case occurs in the zone.
-func (c *Case) in(zone int) bool {
+// In tells whether the case occurs in the zone.
+func (c *Case) In(zone int) bool {
 	if c.Zones == nil {
 		return true
 	}

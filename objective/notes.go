@@ -34,7 +34,7 @@ func (a *Appraisal) notes(t *Task, v *View) {
 		v.keep = 0
 		for i := range t.samples {
 			s := &t.samples[i]
-			if !k.in(s.Zone) || !v.at(s, i, NeedMatrix|NeedEfforts) {
+			if !k.In(s.Zone) || !v.at(s, i, NeedMatrix|NeedEfforts) {
 				continue
 			}
 			for j := range v.n {

@@ -2,6 +2,7 @@ package objective
 
 import (
 	"math"
+	"slices"
 
 	"legwright/kin"
 	"legwright/kin/linalg"
@@ -37,10 +38,10 @@ type View struct {
 	gapI   int
 	gapJ   int
 	six    linalg.Six
+	small  linalg.Small
 	own    [36]float64
 	tie    [36]float64
 	unit   [36]float64 // unit wrenches
-	ownX   [36]float64
 
 	// Over the walk so far.
 	least, most     [6]float64 // actuator coordinates, home included
@@ -61,7 +62,7 @@ func newView(t *Task) *View {
 	v.active = make([][]int, len(t.Zones)+1)
 	for z := range t.Zones {
 		for c := range t.Cases {
-			if t.Cases[c].in(z) {
+			if t.Cases[c].In(z) {
 				v.active[z] = append(v.active[z], c)
 			}
 		}
@@ -118,33 +119,39 @@ func (v *View) factor() {
 		return
 	}
 	n := v.n
-	kin.Own(v.frame.Freedoms, &v.S.J, &v.own)
-	v.sign = linalg.Inverse(n, &v.own, &v.ownX)
+	kin.Own(v.frame.Freedoms, &v.S.J, &v.small.A)
+	v.sign = v.small.Factor(n)
 	v.ratio2 = 0
 	if v.sign == 0 {
 		return
 	}
-	v.ratio2 = linalg.Ratio2(n, &v.own)
+	v.ratio2 = v.small.Ratio2(v.keep)
+	for k, f := range v.frame.Freedoms {
+		own, x := v.small.X[n*k:n*k+n], v.x[6*int(f):6*int(f)+n]
+		for i := range x {
+			x[i] = own[i]
+		}
+	}
 	if v.frame.Tied {
 		v.untie()
-		return
-	}
-	for k, f := range v.frame.Freedoms {
-		copy(v.x[6*int(f):6*int(f)+n], v.ownX[n*k:n*k+n])
 	}
 }
 
-// untie spreads the inverse over all six freedoms of a family whose other freedoms follow from its own.
+// untie adds the other freedoms, of a family where they follow from its own, to the inverse.
 func (v *View) untie() {
 	n := v.n
 	v.machine.Tie(v.stand, &v.tie)
-	v.x = [36]float64{}
-	for r := range 6 {
-		for k := range n {
-			t := v.tie[6*r+k]
-			for i := range n {
-				v.x[6*r+i] += t * v.ownX[n*k+i]
+	for q := kin.X; q <= kin.Yaw; q++ {
+		if slices.Contains(v.frame.Freedoms, q) {
+			continue
+		}
+		x := v.x[6*int(q) : 6*int(q)+n]
+		for i := range x {
+			sum := 0.0
+			for k := range n {
+				sum += v.tie[6*int(q)+k] * v.small.X[n*k+i]
 			}
+			x[i] = sum
 		}
 	}
 }

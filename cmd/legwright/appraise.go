@@ -2,6 +2,8 @@ package main
 
 import (
 	"bytes"
+	"fmt"
+	"path/filepath"
 
 	"github.com/spf13/cobra"
 
@@ -36,6 +38,9 @@ with 3 if a limit does not hold.`,
 			}
 			a.Notes = append(s.Notes(), a.Notes...)
 			if posesFile != "" {
+				if filepath.Ext(posesFile) != ".csv" {
+					return inputError{fmt.Errorf("--poses %s: the file is a CSV; give a name that ends in .csv", posesFile)}
+				}
 				var b bytes.Buffer
 				if err := study.WritePoses(&b, task, a); err != nil {
 					return err

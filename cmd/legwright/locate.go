@@ -3,6 +3,7 @@ package main
 import (
 	"fmt"
 	"io"
+	"math"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -45,6 +46,9 @@ singular posture, is marked. It exits with 3 if there is none.`,
 			q, err := quantities("--actuators", actuators, f.Legs, func(int) units.Kind { return kind })
 			if err != nil {
 				return inputError{err}
+			}
+			if text := job.Beyond(args[0], q); text != "" {
+				c.hint("note: %s", text)
 			}
 			if all {
 				if near != "" {
@@ -119,7 +123,7 @@ func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 		if k.Angular() {
 			kind = units.Angle
 		}
-		parts = append(parts, fmt.Sprintf("%s %s", k, units.Format(q[k], kind, 9)))
+		parts = append(parts, fmt.Sprintf("%s %s", k, units.Format(tidy(q[k]), kind, 9)))
 	}
 	fmt.Fprintf(c.out, "tool point about home              %s\n", strings.Join(parts, "  "))
 	fmt.Fprintf(c.out, "residual %.2g, determinant of the inverse Jacobian %.6g, %d steps\n", p.Residual, p.Determinant, p.Steps)
@@ -128,10 +132,22 @@ func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 
 // showFrame prints the platform frame in the base frame.
 func showFrame(w io.Writer, origin kin.Vec, r kin.Rot) {
+	origin = kin.Vec{X: tidy(origin.X), Y: tidy(origin.Y), Z: tidy(origin.Z)}
+	for i := range r {
+		r[i] = tidy(r[i])
+	}
 	fmt.Fprintf(w, "platform origin in the base frame  x %s  y %s  z %s\n",
 		units.Format(origin.X, units.Length, 9), units.Format(origin.Y, units.Length, 9), units.Format(origin.Z, units.Length, 9))
 	fmt.Fprintln(w, "platform rotation in the base frame")
 	for i := range 3 {
 		fmt.Fprintf(w, "  %12.9f %12.9f %12.9f\n", r[3*i], r[3*i+1], r[3*i+2])
 	}
+}
+
+// tidy makes what is zero but for rounding zero, so that no 1e-17 is printed.
+func tidy(x float64) float64 {
+	if math.Abs(x) < 1e-12 {
+		return 0
+	}
+	return x
 }

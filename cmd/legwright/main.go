@@ -10,6 +10,7 @@ import (
 	"io"
 	"os"
 	"os/signal"
+	"strings"
 	"syscall"
 
 	"github.com/spf13/cobra"
@@ -45,7 +46,7 @@ func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
 
 // run is main with its surroundings given, for tests.
 func run(args []string, stdout, stderr io.Writer) int {
-	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM)
+	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM, syscall.SIGHUP)
 	defer stop()
 	root := newRoot(stdout, stderr)
 	root.SetArgs(args)
@@ -87,8 +88,18 @@ It is a geometry study, not a safety assessment: README, "What it is not".`,
 		SilenceErrors:     true,
 		SilenceUsage:      true,
 		CompletionOptions: cobra.CompletionOptions{HiddenDefaultCmd: true},
-		Args:              cobra.NoArgs,
-		RunE:              func(cmd *cobra.Command, _ []string) error { return cmd.Help() },
+		Args: func(cmd *cobra.Command, args []string) error {
+			if len(args) == 0 {
+				return nil
+			}
+			near := ""
+			if s := cmd.SuggestionsFor(args[0]); len(s) > 0 {
+				near = "; did you mean " + strings.Join(s, " or ") + "?"
+			}
+			return fmt.Errorf("legwright: there is no command %q%s", args[0], near)
+		},
+		SuggestionsMinimumDistance: 2,
+		RunE:                       func(cmd *cobra.Command, _ []string) error { return cmd.Help() },
 	}
 	root.SetOut(stdout)
 	root.SetErr(stderr)

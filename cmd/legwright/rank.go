@@ -23,7 +23,10 @@ func newRank(c *common) *cobra.Command {
 Hwang and Yoon 1981). The files stay as they are.`,
 		Example: "  legwright rank out --weight leg_force=3 --top 20",
 		Args:    cobra.ExactArgs(1),
-		RunE: func(_ *cobra.Command, args []string) error {
+		RunE: func(cmd *cobra.Command, args []string) error {
+			if top < 0 || top == 0 && cmd.Flags().Changed("top") {
+				return inputError{fmt.Errorf("--top %d: write a number from 1 on", top)}
+			}
 			f, err := study.Read(args[0])
 			if err != nil {
 				return inputError{err}

@@ -5,8 +5,10 @@ import (
 	"flag"
 	"os"
 	"os/exec"
+	"path/filepath"
 	"strconv"
 	"testing"
+	"time"
 
 	"github.com/rogpeppe/go-internal/testscript"
 )
@@ -28,6 +30,23 @@ func TestScripts(t *testing.T) {
 			return nil
 		},
 		Cmds: map[string]func(*testscript.TestScript, bool, []string){
+			// interrupt AFTER COMMAND… sends an interrupt after that time; the command must end with status 130.
+			"interrupt": func(ts *testscript.TestScript, neg bool, args []string) {
+				after, err := time.ParseDuration(args[0])
+				ts.Check(err)
+				cmd := exec.Command(args[1], args[2:]...)
+				cmd.Dir, cmd.Env = ts.Getenv("WORK"), append(os.Environ(), "NO_COLOR=1", "PATH="+ts.Getenv("PATH"))
+				if cmd.Path, err = exec.LookPath(args[1]); err != nil {
+					cmd.Path = filepath.Join(filepath.SplitList(ts.Getenv("PATH"))[0], args[1])
+					cmd.Err = nil
+				}
+				ts.Check(cmd.Start())
+				time.Sleep(after)
+				ts.Check(cmd.Process.Signal(os.Interrupt))
+				if err := cmd.Wait(); cmd.ProcessState.ExitCode() != exitInterrupted {
+					ts.Fatalf("status %d, want %d: %v", cmd.ProcessState.ExitCode(), exitInterrupted, err)
+				}
+			},
 			"rc": func(ts *testscript.TestScript, neg bool, args []string) {
 				if neg || len(args) < 2 {
 					ts.Fatalf("usage: rc STATUS COMMAND [ARG]…")

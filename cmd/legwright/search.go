@@ -57,7 +57,7 @@ whatever the number of workers.`,
 	f.Int64Var(&run.Seed, "seed", 0, "seed of the random numbers (default: the brief's, else 1)")
 	f.IntVar(&run.Workers, "workers", 0, "designs judged side by side (default: all processors); never changes the result")
 	f.BoolVar(&force, "force", false, "write over a finished study")
-	f.BoolVar(&resume, "resume", false, "go on with an unfinished study; leave a finished one as it is")
+	f.BoolVar(&resume, "resume", false, "begin an interrupted study again (the same seed meets the same designs); leave a finished one as it is")
 	return cmd
 }
 
@@ -89,10 +89,16 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	if cmd.Flags().Changed("seed") {
 		given.Seed = run.Seed
 	}
-	if given.Evaluations < 1 || given.Evaluations > 1e9 {
-		return inputError{fmt.Errorf("--evaluations %d: write a whole number from 1 to 1000000000", given.Evaluations)}
+	if force && resume {
+		return inputError{fmt.Errorf("--force begins anew and --resume goes on; give one of them")}
 	}
-	if run.Workers < 0 || run.Workers > 4096 {
+	if least := leastEvaluations * len(b.Families); given.Evaluations < least || given.Evaluations > 1e9 {
+		return inputError{fmt.Errorf("%d evaluations: write a whole number from %d to 1000000000", given.Evaluations, least)}
+	}
+	if given.Seed < 0 {
+		return inputError{fmt.Errorf("--seed %d: write a whole number from 0 on", given.Seed)}
+	}
+	if run.Workers < 0 || run.Workers > 4096 || run.Workers == 0 && cmd.Flags().Changed("workers") {
 		return inputError{fmt.Errorf("--workers %d: write a whole number from 1 to 4096, or leave it out", run.Workers)}
 	}
 	given.Workers = run.Workers
@@ -112,6 +118,11 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		c.hint("%s holds a finished study; nothing to do", dir)
 		return nil
 	}
+	here := job.NewCheckpoint(sources, given)
+	before, err := goOn(folder, here, force)
+	if err != nil {
+		return inputError{fmt.Errorf("%s: %w", dir, err)}
+	}
 	for _, name := range sources.Apart() {
 		c.hint("note: pose file %s is not copied into %s, because its path leads out of the brief's folder; the study does not stand alone", name, dir)
 	}
@@ -128,8 +139,17 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		return err
 	}
 	stopped := found.Status == opt.Interrupted
+	if stopped && before != nil && before.Evaluations > found.Front.Evaluations {
+		c.hint("interrupted after %d evaluations; %s keeps the result of the %d that were made before. --resume begins again.", found.Front.Evaluations, dir, before.Evaluations)
+		return status(exitInterrupted)
+	}
 	if stopped {
-		if err := folder.SaveCheckpoint(job.Checkpoint(found)); err != nil {
+		here.Evaluations = found.Front.Evaluations
+		text, err := here.Bytes()
+		if err == nil {
+			err = folder.SaveCheckpoint(text)
+		}
+		if err != nil {
 			return err
 		}
 	}
@@ -159,6 +179,23 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		return status(exitLimit)
 	}
 	return nil
+}
+
+// leastEvaluations is the least budget for each family: differential evolution wants four designs.
+const leastEvaluations = 4
+
+// goOn gives the checkpoint of the unfinished study that the folder holds, nil for none. It refuses to go
+// on with a study of another brief, seed or budget.
+func goOn(folder *study.Folder, here *job.Checkpoint, force bool) (*job.Checkpoint, error) {
+	text, err := folder.Checkpoint()
+	if err != nil || force {
+		return nil, err
+	}
+	old, err := job.ReadCheckpoint(text)
+	if err != nil || old == nil {
+		return nil, err
+	}
+	return old, here.Continues(old)
 }
 
 // sourcesOf are the brief and the pose files that it names, to be copied into the study.

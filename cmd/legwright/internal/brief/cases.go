@@ -183,7 +183,8 @@ func possible(t [6]float64) bool {
 	xx, yy, zz, xy, xz, yz = xx/s, yy/s, zz/s, xy/s, xz/s, yz/s
 	const rounding = 1e-12
 	det := xx*(yy*zz-yz*yz) - xy*(xy*zz-yz*xz) + xz*(xy*yz-yy*xz)
-	return min(xx, yy, zz) >= 0 &&
+	return min(xx+yy-zz, yy+zz-xx, zz+xx-yy) >= -rounding && // each is twice a sum of m·x²
+		min(xx, yy, zz) >= 0 &&
 		min(xx*yy-xy*xy, xx*zz-xz*xz, yy*zz-yz*yz, det) >= -rounding
 }
 

@@ -3,9 +3,11 @@ package job
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"legwright/cmd/legwright/internal/brief"
 	"legwright/cmd/legwright/internal/study"
+	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
 	"legwright/objective"
 )
@@ -34,6 +36,7 @@ func Design(file, briefFile string) (*Study, *objective.Task, *objective.Plan, e
 	t := task(b, kin.FamilyNamed(d.Family))
 	t.Prepare()
 	p, err := s.plan(t, d)
+	s.foreign = !slices.ContainsFunc(b.Families, func(f brief.Family) bool { return f.Name == d.Family })
 	return s, t, p, err
 }
 
@@ -176,6 +179,31 @@ func Machine(file string) (m kin.Machine, f *kin.Family, home bool, err error) {
 		return f.Outright(joints, &setup), f, homeGiven(d), nil
 	}
 	return f.Build(values, &setup), f, true, nil
+}
+
+// Beyond says which of the actuator values lie outside the range that the design file gives, or nothing.
+func Beyond(file string, q []float64) string {
+	d, err := brief.LoadDesign(file, *Known())
+	if err != nil {
+		return ""
+	}
+	f := kin.FamilyNamed(d.Family)
+	least, span := f.Range()
+	if least < 0 {
+		return ""
+	}
+	values, missing := dimensionValues(f, d)
+	if missing[least] || missing[span] {
+		return ""
+	}
+	low, high := values[least], values[least]+values[span]
+	k := study.DimensionUnit(f.Dimensions[least].Unit)
+	for i, v := range q[:len(q)-f.Free] {
+		if slack := objective.Tolerance * math.Abs(v); v < low-slack || v > high+slack {
+			return fmt.Sprintf("actuator %d: %s is outside its range, %s to %s", i+1, units.Format(v, k, 6), units.Format(low, k, 6), units.Format(high, k, 6))
+		}
+	}
+	return ""
 }
 
 // EncodeDesign writes the design file of a record. briefFile is the path of the brief from there.

@@ -16,7 +16,7 @@ func Program() string { return "legwright " + Version }
 
 // Notes says what holds for the whole study: what its figures leave out, and its Hints.
 func (s *Study) Notes() []string {
-	return append(study.LeftOut(len(s.Tasks[0].Samples())), s.Hints()...)
+	return append(append(study.LeftOut(len(s.Tasks[0].Samples())), s.lengthNote()), s.Hints()...)
 }
 
 // Hints says what the brief might say better.
@@ -33,6 +33,12 @@ func (s *Study) Hints() []string {
 		if p.Family.Drive == kin.Rotary {
 			notes = append(notes, fmt.Sprintf("%s: torques are for the payload only; arms, cranks and rods are massless here, so motors need more", p.Family.Name))
 		}
+	}
+	if s.foreign {
+		notes = append(notes, "the brief is for another family; its duty, actuators, joints and limits are used as far as this one has them")
+	}
+	if zones := idle(s.Tasks[0]); zones != "" {
+		notes = append(notes, fmt.Sprintf("no case occurs in zone %s: forces and speeds are not looked at there", zones))
 	}
 	for _, z := range s.Tasks[0].Zones {
 		if z.Kind == objective.Axes {

@@ -2,7 +2,6 @@ package job
 
 import (
 	"context"
-	"fmt"
 	"runtime"
 	"sync"
 
@@ -57,6 +56,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 		Status: out.Status.String(), Evaluations: out.Evaluations, Feasible: out.Feasible, Population: out.Population,
 		Poses: len(s.Tasks[0].Samples()), Hypervolume: study.Number(out.Hypervolume),
 		Weights: s.Brief.Ranking.Weights,
+		Designs: []study.Design{},
 		Notes:   s.Notes(),
 	}
 	for i, g := range s.goals() {
@@ -70,6 +70,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 		}
 	}
 	f.Designs = s.records(s.appraise(out.Front, r.Workers))
+	f.Notes = append(f.Notes, s.ends(f.Designs)...)
 	if len(f.Designs) == 0 {
 		f.Help = s.help(out, r.Workers)
 	}
@@ -183,7 +184,7 @@ func (s *Study) appraise(ds []opt.Design, workers int) []*objective.Appraisal {
 
 // records turns appraisals into records, each design once.
 func (s *Study) records(as []*objective.Appraisal) []study.Design {
-	var out []study.Design
+	out := []study.Design{}
 next:
 	for i, a := range as {
 		for _, b := range as[:i] {
@@ -207,10 +208,4 @@ func (s *Study) values(d *opt.Design) []float64 {
 // Settings are the brief's own settings of the search.
 func Settings(b *brief.Brief) Run {
 	return Run{Evaluations: b.Search.Evaluations, Population: b.Search.Population, Seed: b.Search.Seed}
-}
-
-// Checkpoint marks a folder as that of an unfinished study. The search itself has no state to go on
-// from: the same seed leads it to the same designs.
-func Checkpoint(f *Found) []byte {
-	return fmt.Appendf(nil, "{\"program\": %q, \"seed\": %d, \"evaluations\": %d}\n", Program(), f.Front.Seed, f.Front.Evaluations)
 }

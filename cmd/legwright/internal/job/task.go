@@ -15,12 +15,13 @@ type Study struct {
 	Plans []*objective.Plan
 
 	halfTurn bool // half a turn about z leaves the task unchanged
+	foreign  bool // the design that is appraised is of a family that the brief does not name
 }
 
 // New makes the study of a brief. Faults that only show with the kinematics are brief.Faults.
 func New(b *brief.Brief) (*Study, error) {
 	s := &Study{Brief: b}
-	faults := impossible(b)
+	faults := append(impossible(b), unfounded(b)...)
 	for i := range b.Families {
 		f := kin.FamilyNamed(b.Families[i].Name)
 		t := task(b, f)
@@ -40,11 +41,10 @@ func New(b *brief.Brief) (*Study, error) {
 
 // task is everything of the brief but the dimensions, as it concerns a family.
 func task(b *brief.Brief, f *kin.Family) *objective.Task {
-	rotary := f.Drive == kin.Rotary
 	t := &objective.Task{
 		Tool:     vec(b.Tool),
 		Gravity:  vec(b.Gravity),
-		Actuator: actuator(&b.Actuator, rotary),
+		Actuator: actuator(&b.Actuator, f),
 		Joints:   objective.Joints{Axis: axis(&b.Joints.Axis), Stiffness: b.Joints.Stiffness},
 		Legs: objective.Legs{Diameter: b.Legs.Diameter, RodDiameter: b.Legs.RodDiameter,
 			Crank: b.Legs.CrankDiameter, Modulus: b.Legs.Modulus, EndFixity: b.Legs.EndFixity},
@@ -99,19 +99,25 @@ func task(b *brief.Brief, f *kin.Family) *objective.Task {
 	return t
 }
 
-func actuator(a *brief.Actuator, rotary bool) objective.Actuator {
+// actuator is what the brief says of a family's own sort of actuator: cranks have no stroke in mm, and
+// only legs that draw in have a dead length.
+func actuator(a *brief.Actuator, f *kin.Family) objective.Actuator {
 	out := objective.Actuator{
 		DeadLength: math.NaN(), DeadRatio: a.DeadRatio, Reserve: a.Reserve,
 		Strokes: a.Strokes, Stiffness: a.Stiffness, Error: a.Error,
 	}
-	if a.DeadLength != nil {
+	if a.DeadLength != nil && drawsIn(f) {
 		out.DeadLength = *a.DeadLength
 	}
-	if rotary {
+	if f.Drive == kin.Rotary {
+		out.Strokes = nil
 		out.Reserve, out.Stiffness, out.Error = a.TurnReserve, a.TurnStiffness, a.TurnError
 	}
 	return out
 }
+
+// drawsIn tells whether the legs of a family change their length.
+func drawsIn(f *kin.Family) bool { return f.Index("leg_min") >= 0 }
 
 func axis(a *brief.Axis) kin.Axis {
 	switch a.Kind {

@@ -105,6 +105,9 @@ func (d *designs) strokeUsed(keep int) column {
 	}
 	c := d.figures("stroke used", keep, scale{kind: k}, (*study.Design).StrokeUsed)
 	c.head = "stroke\nused"
+	if k != units.Length {
+		c.name, c.head = "range used", "range\nused"
+	}
 	return c
 }
 

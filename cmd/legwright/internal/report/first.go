@@ -48,6 +48,11 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	}
 	cols = append(cols, d.tightest(0), d.margin(0))
 	needs := []column{d.id(), d.strokeUsed(0)}
+	for _, m := range []string{"stroke", "leg_min"} {
+		if d.has(m) && !goal(f, m) {
+			needs = append(needs, d.measure(m, 0))
+		}
+	}
 	for _, m := range []string{"push_force", "pull_force", "motor_torque", "footprint", "home_height"} {
 		if d.has(m) && !goal(f, m) {
 			needs = append(needs, d.measure(m, 0))

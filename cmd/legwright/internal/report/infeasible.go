@@ -131,9 +131,15 @@ func (s *sheet) nearest(h *study.Help, first []int) {
 	for n, i := range first {
 		d := &h.Nearest[i]
 		number := strconv.Itoa(n + 1)
+		broken := 0
+		for k := range d.Limits {
+			if !d.Limits[k].Holds {
+				broken++
+			}
+		}
 		for k := range d.Limits {
 			l := &d.Limits[k]
-			if l.Holds {
+			if l.Holds || l.Measure == "coverage" && broken > 1 { // it falls short because of the others
 				continue
 			}
 			c := limitScale(l.Measure, l.Unit)

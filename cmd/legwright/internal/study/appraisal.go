@@ -16,6 +16,7 @@ func FromAppraisal(t *objective.Task, a *objective.Appraisal) Design {
 		Dimensions: map[string]Number{},
 		Measures:   map[string]Number{},
 		Worst:      map[string]Worst{},
+		Marks:      []string{},
 		Joints:     jointsOf(a.Machine.Frame()),
 		Notes:      append([]string(nil), a.Notes...),
 		Poses:      a.Poses,
