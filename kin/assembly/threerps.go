@@ -21,7 +21,7 @@ import (
 // in the tangent of half the swing of two legs each, with 16 solutions
 // (L.-W. Tsai 1996; M. Husty and co-workers find the 16 in two operation modes of
 // eight, from memory). They are the ends of 16 paths from equations that are products, by
-// the rules of SixLegs. The cost is some 10 ms on one core.
+// the rules of SixLegs. The cost is some 6 ms of processor time.
 //
 // The determinant is that of the six rows [n, (R b)×n] of the legs and [h, (R b)×h] of the hinges,
 // h the unit hinge axis: the wrenches of the drives and of the hinges. No platform is found if the
