@@ -56,37 +56,6 @@ func (t *tridiagonalThree) step(x float64) float64 {
 	return float64(3 * p / (math.Sqrt(s) - q))
 }
 
-// extremes returns the ratio of the smallest to the largest eigenvalue of a
-// matrix with the given trace. ok is false if rounding errors hide the smallest,
-// or the differences between all.
-func (t *tridiagonalThree) extremes(trace float64) (ratio float64, ok bool) {
-	if !(trace > traceMin && trace < traceMax) {
-		return 0, false
-	}
-	x, y := t.step(0), t.upperBound()
-	if !(x > 0) {
-		return 0, false
-	}
-	lastX, lastY := x, y
-	for it := range iterationMax {
-		stepX, stepY := t.step(x), -t.step(y)
-		if !(stepX > 0) {
-			stepX = 0
-		}
-		if !(stepY > 0) {
-			stepY = 0
-		}
-		x += stepX
-		y -= stepY
-		x4, y4 := stepX*stepX*(stepX*stepX), stepY*stepY*(stepY*stepY)
-		if it > 0 && x4 <= stepTol*x*(lastX*lastX*lastX) && y4 <= stepTol*y*(lastY*lastY*lastY) {
-			return x / y, x > ratioMin*y && x < isotropic*y
-		}
-		lastX, lastY = stepX, stepY
-	}
-	return 0, false
-}
-
 // Sym3Largest returns the largest eigenvalue of the symmetric matrix of order
 // three a = (xx, yy, zz, xy, xz, yz). The error is a few rounding errors of the
 // largest magnitude of an eigenvalue, so the relative error is as small if the
