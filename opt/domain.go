@@ -29,19 +29,6 @@ func newDomain(s *Space) *domain {
 	return d
 }
 
-// count returns the number of different designs, +Inf with a free real
-// variable.
-func (d *domain) count() float64 {
-	if len(d.real) > 0 {
-		return math.Inf(1)
-	}
-	n := 1.0
-	for _, i := range d.free {
-		n *= float64(d.vars[i].Levels)
-	}
-	return n
-}
-
 // at maps u in [0, 1) onto variable i.
 func (d *domain) at(i int, u float64) float64 {
 	if v := &d.vars[i]; v.Kind != Real {

@@ -5,10 +5,9 @@ import (
 	"math/rand"
 )
 
-// spread is the distribution index of crossover and mutation. With 15 the
-// powers and roots of the formulas are of order 16: squarings and square
-// roots, the same bits on every machine.
-const spread = 15
+// The distribution index of crossover and mutation is 15: the powers and roots of
+// the formulas are then of order 16, squarings and square roots, the same bits on
+// every machine.
 
 func power16(v float64) float64 {
 	v *= v

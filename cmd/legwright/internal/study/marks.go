@@ -1,6 +1,10 @@
 package study
 
-import "math"
+import (
+	"math"
+
+	"legwright/opt"
+)
 
 // The marks of designs; "best " and a measure's name is the mark of a goal's extreme.
 const (
@@ -49,7 +53,9 @@ func (f *Front) mark(values [][]float64, maximise []bool) {
 	}
 	give(0, MarkRank)
 	scaled := unit(values, maximise)
-	give(knee(scaled), MarkKnee)
+	if len(scaled) >= 3 { // fewer have no knee
+		give(opt.Knee(scaled), MarkKnee)
+	}
 	for j, g := range f.Goals {
 		best, differ := 0, false
 		for i := range values {

@@ -7,6 +7,8 @@ import (
 	"slices"
 	"sort"
 	"strings"
+
+	"legwright/opt"
 )
 
 // Rank orders the designs by their closeness to the ideal (TOPSIS, Hwang and Yoon 1981) under the
@@ -30,7 +32,7 @@ func Rank(f *Front, weights map[string]float64) {
 		f.Designs[i].Score = 0
 	}
 	sort.Stable(&byScore{f, values, maximise}) // so that the order given changes no last digit
-	for i, s := range closeness(values, maximise, w) {
+	for i, s := range opt.TOPSIS(values, maximise, w) {
 		f.Designs[i].Score = Number(s)
 	}
 	sort.Stable(&byScore{f, values, maximise})
