@@ -124,7 +124,7 @@ func TestEncodeReadsBack(t *testing.T) {
 		{"home_height", units.Length, []float64{1}},
 		{"crank_length", units.Length, []float64{1}},
 		{"rod_length", units.Length, []float64{1}},
-		{"mode", units.Sign, []float64{1, -1, 1, 1, 1, -1}},
+		{"mode", units.Sign, []float64{-1}},
 		{"angle_min", units.Angle, []float64{-1}},
 		{"angle_range", units.Angle, []float64{1}},
 	}})

@@ -119,12 +119,25 @@ func (r *reader) family(n *node, f *KnownFamily) Family {
 	return out
 }
 
-// dimension reads one dimension: a list with an entry for each leg, or one form for all.
+// dimension reads one dimension: one form, a list with a form for each leg, or one sign for all legs.
 func (r *reader) dimension(n *node, d *KnownDimension) (Dimension, bool) {
-	if d.Each < 2 || d.Kind == units.Sign && n.shape != list {
+	if d.Each < 2 {
 		return r.form(n, d, d.Name)
 	}
 	out := Dimension{Name: d.Name, Kind: d.Kind, Form: PerLeg}
+	if d.Kind == units.Sign && n.shape != list {
+		if _, ok := n.child("choices"); ok {
+			each := strings.Join(slices.Repeat([]string{"{choices: [-1, 1]}"}, d.Each), ", ")
+			r.refuse(n, "choices do not say whether all legs choose alike", "write a list, one for each leg: ["+each+"]")
+			return out, false
+		}
+		one, ok := r.form(n, d, "")
+		for i := range d.Each {
+			one.Name = fmt.Sprintf("%s_%d", d.Name, i+1)
+			out.Each = append(out.Each, one)
+		}
+		return out, ok
+	}
 	write := fmt.Sprintf("a list of %d: [%s, …]", d.Each, d.Kind.Sample())
 	items := r.items(n, write)
 	if items == nil {

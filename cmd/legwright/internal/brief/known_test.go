@@ -24,7 +24,7 @@ func known() Known {
 	}
 	azimuths := placed(optional(angle("leg_azimuths")), PlacesJoints)
 	azimuths.Each = 3
-	mode := KnownDimension{Name: "mode", Kind: units.Sign, Each: 6, Optional: true}
+	mode := KnownDimension{Name: "mode", Kind: units.Sign, Optional: true}
 	return Known{
 		Families: []KnownFamily{
 			{Name: "6-UPS", Freedoms: six, Legs: 6, Dimensions: with(sizable(length("leg_min")), sizable(length("stroke")))},

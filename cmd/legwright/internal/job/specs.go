@@ -15,18 +15,21 @@ func specs(f *kin.Family, given *brief.Family) []objective.Spec {
 	for i := range f.Dimensions {
 		out[i] = objective.Spec{Kind: objective.Fixed, Values: []float64{f.Dimensions[i].Default}}
 	}
+	put := func(d *brief.Dimension) {
+		at := f.Index(d.Name)
+		if at < 0 {
+			panic("job: a dimension that the family does not have")
+		}
+		out[at] = spec(d)
+	}
 	for i := range given.Dimensions {
 		d := &given.Dimensions[i]
-		if d.Form == brief.PerLeg {
-			for k := range d.Each {
-				if at := f.Index(d.Each[k].Name); at >= 0 {
-					out[at] = spec(&d.Each[k])
-				}
-			}
+		if d.Form != brief.PerLeg {
+			put(d)
 			continue
 		}
-		if at := f.Index(d.Name); at >= 0 {
-			out[at] = spec(d)
+		for k := range d.Each {
+			put(&d.Each[k])
 		}
 	}
 	return out
