@@ -1,6 +1,6 @@
 package kin
 
-// ender is a machine whose drives carry the rods' ends.
+// ender is a machine with rods, or with legs that are rods themselves.
 type ender interface {
 	ends(q []float64) []Vec
 }
@@ -9,11 +9,8 @@ type ender interface {
 // frame: the ends of cranks, the carriages, or the base joints of prismatic legs.
 // It is nil for machines without rods.
 func Ends(m Machine, q []float64) []Vec {
-	switch e := m.(type) {
-	case ender:
+	if e, ok := m.(ender); ok {
 		return e.ends(q)
-	case *struts:
-		return e.frame.Base
 	}
 	return nil
 }

@@ -1,9 +1,7 @@
 package kin
 
 import (
-	"cmp"
 	"math"
-	"slices"
 
 	"gonum.org/v1/gonum/spatial/r3"
 )
@@ -80,16 +78,8 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 			ps.n++
 		}
 	}
-	order := make([]int, ps.n)
-	for k := range order {
-		order[k] = k
-	}
-	slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(dist[a], dist[b]) })
-	sorted := ps
-	for k, o := range order {
-		sorted.pair[k] = ps.pair[o]
-	}
-	return sorted
+	nearestFirst(ps.pair[:ps.n], dist[:ps.n])
+	return ps
 }
 
 // nearest is the least distance met so far: free is that between surfaces.

@@ -40,7 +40,7 @@ func pairLegs(leg *[6]strut, n int, home Vec, s *Setup) legPairs {
 			}
 			d := r3.Sub(leg[i].a, leg[j].a)
 			t := r3.Sub(tip(i), tip(j))
-			if one := 1e-18 * r3.Norm2(r3.Sub(tip(i), leg[i].a)); r3.Norm2(d) <= one || r3.Norm2(t) <= one {
+			if one := oneJoint * oneJoint * r3.Norm2(r3.Sub(tip(i), leg[i].a)); r3.Norm2(d) <= one || r3.Norm2(t) <= one {
 				continue // they share a joint
 			}
 			e := unit(r3.Add(d, t))
@@ -49,16 +49,21 @@ func pairLegs(leg *[6]strut, n int, home Vec, s *Setup) legPairs {
 			ps.n++
 		}
 	}
-	order := make([]int, ps.n)
+	nearestFirst(ps.pair[:ps.n], dist[:ps.n])
+	return ps
+}
+
+// nearestFirst sorts pairs by their distances; equals keep their order.
+func nearestFirst[P any](pairs []P, dist []float64) {
+	order := make([]int, len(pairs))
 	for k := range order {
 		order[k] = k
 	}
 	slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(dist[a], dist[b]) })
-	sorted := ps
+	was := slices.Clone(pairs)
 	for k, o := range order {
-		sorted.pair[k] = ps.pair[o]
+		pairs[k] = was[o]
 	}
-	return sorted
 }
 
 // gap looks at the pairs in order and skips those whose bound shows that they cannot be the least. The

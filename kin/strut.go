@@ -121,15 +121,10 @@ func (m *struts) Gap(s *State) (gap float64, i, j int) {
 
 // Constraints of a planar machine: the force along z and the couples about x and y. A six-legged platform has none.
 func (m *struts) Constraints(_ *State, rows *[36]float64) int {
-	*rows = [36]float64{}
-	if len(m.frame.Freedoms) == 6 {
-		return 0
-	}
-	for i, k := range [3]int{int(Z), int(Roll), int(Pitch)} {
-		rows[6*i+k] = 1
-	}
-	return 3
+	return unitConstraints(m.frame.Freedoms, rows)
 }
+
+func (m *struts) ends([]float64) []Vec { return m.frame.Base }
 
 // Place is that of the frame.
 func (m *struts) Place(p *Pose) (Vec, Rot) { return m.frame.Place(p) }

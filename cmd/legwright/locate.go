@@ -22,7 +22,7 @@ func newLocate(c *common) *cobra.Command {
 		Use:   "locate DESIGN --actuators LIST",
 		Short: "platform pose from actuator values (forward kinematics)",
 		Long: `locate solves the forward kinematics by Newton-Raphson from home, or from the pose
-given with --near. It has converged when the largest difference of an actuator value
+given with --near, both of the platform origin. It has converged when the largest difference of an actuator value
 is below 1e-13 of the largest value. A machine has several postures for the same
 actuator values; this gives the one that Newton's method reaches from where it
 starts. --all gives every assembly mode: in closed form, by a polynomial, or for
@@ -80,7 +80,7 @@ singular posture, is marked. It exits with 3 if there is none.`,
 		},
 	}
 	cmd.Flags().StringVar(&actuators, "actuators", "", "actuator values with units, leg 1 first, separated by commas")
-	cmd.Flags().StringVar(&near, "near", "", "pose to start from, about home: x, y, z, roll, pitch, yaw with units")
+	cmd.Flags().StringVar(&near, "near", "", "pose of the platform origin to start from, about home: x, y, z, roll, pitch, yaw with units")
 	cmd.Flags().BoolVar(&all, "all", false, "every assembly mode")
 	return cmd
 }
@@ -125,7 +125,7 @@ func showPosture(c *common, f *kin.Family, p *kin.Posture, ok bool) error {
 		}
 		parts = append(parts, fmt.Sprintf("%s %s", k, units.Format(tidy(q[k]), kind, 9)))
 	}
-	fmt.Fprintf(c.out, "tool point about home              %s\n", strings.Join(parts, "  "))
+	fmt.Fprintf(c.out, "platform origin about home         %s\n", strings.Join(parts, "  "))
 	fmt.Fprintf(c.out, "residual %.2g, determinant of the inverse Jacobian %.6g, %d steps\n", p.Residual, p.Determinant, p.Steps)
 	return nil
 }

@@ -10,6 +10,7 @@ import (
 	"io"
 	"os"
 	"os/signal"
+	"runtime/debug"
 	"strings"
 	"syscall"
 
@@ -50,7 +51,7 @@ func run(args []string, stdout, stderr io.Writer) int {
 	defer stop()
 	root := newRoot(stdout, stderr)
 	root.SetArgs(args)
-	err := root.ExecuteContext(ctx)
+	err := guarded(func() error { return root.ExecuteContext(ctx) })
 	var s status
 	var in inputError
 	var ran failure
@@ -65,6 +66,16 @@ func run(args []string, stdout, stderr io.Writer) int {
 	}
 	fmt.Fprintln(stderr, err) // a file, a flag, or a command that there is not
 	return exitInput
+}
+
+// guarded turns a panic into a failure, so that it never looks like bad input.
+func guarded(f func() error) (err error) {
+	defer func() {
+		if p := recover(); p != nil {
+			err = failure{fmt.Errorf("internal failure: %v\n%s", p, debug.Stack())}
+		}
+	}()
+	return f()
 }
 
 // common are the flags that every command has.
