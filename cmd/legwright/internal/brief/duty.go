@@ -18,9 +18,9 @@ const (
 type Zone struct {
 	Name    string       `json:"name"`
 	Shape   string       `json:"shape"`
-	Ranges  []Range      `json:"ranges,omitempty"` // in the order x, y, z, roll, pitch, yaw
-	Samples int          `json:"samples,omitempty"`
-	File    string       `json:"file,omitempty"` // as the brief gives it
+	Ranges  []Range      `json:"ranges,omitempty"`  // in the order x, y, z, roll, pitch, yaw
+	Samples int          `json:"samples,omitempty"` // poses in all, of a zone in which something moves
+	File    string       `json:"file,omitempty"`    // as the brief gives it
 	Poses   [][6]float64 `json:"poses,omitempty"`
 }
 
@@ -31,6 +31,17 @@ type Range struct {
 	Index      int     `json:"index"` // 0 to 5: x, y, z, roll, pitch, yaw
 	Low        float64 `json:"low"`
 	High       float64 `json:"high"`
+}
+
+// Moving counts the coordinates that move.
+func (z *Zone) Moving() int {
+	count := 0
+	for i := range z.Ranges {
+		if z.Ranges[i].Low < z.Ranges[i].High {
+			count++
+		}
+	}
+	return count
 }
 
 // Case is one alternative of loads that act together and speeds.

@@ -261,10 +261,28 @@ func (r *reader) byGoal(n *node, read func(*node, *KnownMeasure) (float64, bool)
 // searchKeys are the keys under search.
 func searchKeys() []key {
 	return []key{
-		{name: "evaluations", read: counted(1, 1_000_000_000)},
-		{name: "population", read: counted(0, 100_000)},
+		{name: "evaluations", read: readEvaluations},
+		{name: "population", read: readPopulation},
 		{name: "seed", read: counted(0, 1<<62)},
 		{name: "front", read: counted(1, 100_000)},
 		{name: "reference", read: readReference},
 	}
+}
+
+// leastPopulation is the least number of designs that a search can breed from.
+const leastPopulation = 4
+
+// readEvaluations reads the number of designs to judge, at least a population for each family.
+func readEvaluations(r *reader, n *node) any {
+	return counted(int64(leastPopulation*max(1, len(r.families))), 1_000_000_000)(r, n)
+}
+
+// readPopulation reads the number of designs in a generation; with 0 the search chooses.
+func readPopulation(r *reader, n *node) any {
+	v := counted(0, 100_000)(r, n)
+	if size, ok := v.(int64); ok && 0 < size && size < leastPopulation {
+		r.refuse(n, n.text+" designs are too few to breed from", fmt.Sprintf("write %d or more, or 0 to let the search choose", leastPopulation))
+		return nil
+	}
+	return v
 }

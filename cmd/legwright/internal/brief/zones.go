@@ -12,6 +12,7 @@ const (
 	maxPoses       = 1_000_000 // of all zones
 	maxZones       = 1000
 	defaultSamples = 500
+	axisSamples    = 25 // of each coordinate that moves alone
 )
 
 // zoneKeys are the keys of a zone.
@@ -101,6 +102,9 @@ func (r *reader) zoneShape(n *node, m map[string]any, z *Zone) {
 	default:
 		z.Ranges, _ = m[z.Shape].([]Range)
 		z.Samples = defaultSamples
+		if z.Shape == Axes {
+			z.Samples = axisSamples * z.Moving()
+		}
 		if v, ok := m["samples"].(int64); ok {
 			z.Samples = int(v)
 			r.enough(samples, z)
@@ -119,22 +123,23 @@ func near1(n *node, names ...string) bool {
 	return false
 }
 
-// enough refuses fewer samples than a box has corners, with its centre.
+// enough refuses fewer samples than the shape has corners or ends, with its centre.
 func (r *reader) enough(n *node, z *Zone) {
-	if z.Shape != Box || len(z.Ranges) == 0 {
+	moving := z.Moving()
+	if moving == 0 {
 		return
 	}
-	need := 1
-	for _, g := range z.Ranges {
-		if g.Low < g.High {
-			need *= 2
-		}
-	}
-	if need > 1 {
-		need++ // the centre
+	need, what := 0, ""
+	switch z.Shape {
+	case Box:
+		need, what = 1<<moving+1, "the corners and the centre of the box"
+	case Ellipsoid:
+		need, what = 2*moving+1, "the centre of the ellipsoid and the ends of its axes"
+	case Axes:
+		need, what = 2*moving, "the ends of every excursion"
 	}
 	if z.Samples < need {
-		r.refuse(n, fmt.Sprintf("%s poses do not hold the corners and the centre of the box", n.text), fmt.Sprintf("write %d or more", need))
+		r.refuse(n, fmt.Sprintf("%s poses do not hold %s", n.text, what), fmt.Sprintf("write %d or more", need))
 	}
 }
 

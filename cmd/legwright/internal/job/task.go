@@ -129,9 +129,6 @@ func axis(a *brief.Axis) kin.Axis {
 	return kin.Axis{Kind: kin.AxisHomeLeg}
 }
 
-// axisSamples is the number of poses along each excursion of a zone that gives axes and no samples.
-const axisSamples = 25
-
 func zone(z *brief.Zone) objective.Zone {
 	out := objective.Zone{Name: z.Name, Samples: z.Samples}
 	for _, r := range z.Ranges {
@@ -142,10 +139,7 @@ func zone(z *brief.Zone) objective.Zone {
 		out.Kind = objective.Box
 	case brief.Axes:
 		out.Kind = objective.Axes
-		out.Samples = axisSamples
-		if z.Samples > 0 && len(z.Ranges) > 0 {
-			out.Samples = max(2, min(axisSamples, z.Samples/len(z.Ranges)))
-		}
+		out.Samples = max(2, z.Samples/max(1, z.Moving())) // shared over the coordinates that move
 	case brief.Ellipsoid:
 		out.Kind = objective.Ellipsoid
 	case brief.Recorded:
