@@ -33,7 +33,11 @@ func Design(file, briefFile string) (*Study, *objective.Task, *objective.Plan, e
 	if err != nil {
 		return nil, nil, nil, err
 	}
-	t := task(b, kin.FamilyNamed(d.Family))
+	f := kin.FamilyNamed(d.Family)
+	t := task(b, f)
+	if t.Rule == objective.LengthOfPlatform && f.Index("platform_radius") < 0 {
+		return nil, nil, nil, brief.Faults{b.Fault("characteristic_length", f.Name+", the design's family, has no platform_radius", "write a length or duty")}
+	}
 	t.Prepare()
 	p, err := s.plan(t, d)
 	s.foreign = !slices.ContainsFunc(b.Families, func(f brief.Family) bool { return f.Name == d.Family })
@@ -57,9 +61,8 @@ func (s *Study) plan(t *objective.Task, d *brief.Design) (*objective.Plan, error
 		specs[i] = objective.Spec{Kind: objective.Fixed, Values: []float64{v}}
 		switch {
 		case !missing[i] || d.Joints != nil && dim.Joints:
-		case dim.Role != kin.Shape && of != nil && (of.Specs[i].Kind == objective.Sized || of.Derive):
+		case dim.Role != kin.Shape && of != nil && leftToDuty(of, i):
 			specs[i] = of.Specs[i]
-			specs[i].Kind = objective.Sized
 		default:
 			faults = append(faults, d.Fault("dimensions", dim.Name+" is missing", "write "+dim.Name+": "+study.DimensionUnit(dim.Unit).Sample()))
 		}
@@ -79,7 +82,15 @@ func (s *Study) plan(t *objective.Task, d *brief.Design) (*objective.Plan, error
 	return p, nil
 }
 
-// dimensionValues puts a design's dimensions into the family's order; missing tells which have neither value nor default.
+// leftToDuty tells whether a design may leave dimension i, of the actuator range, to the brief's plan:
+// the duty sizes it, or derives the range within what the brief allows.
+func leftToDuty(of *objective.Plan, i int) bool {
+	kind := of.Specs[i].Kind
+	return kind == objective.Sized || of.Derive && kind != objective.Choices
+}
+
+// dimensionValues puts a design's dimensions into the family's order; missing tells which have neither
+// value nor default. Those that place joints have no default beside joints given outright.
 func dimensionValues(f *kin.Family, d *brief.Design) (values []float64, missing []bool) {
 	given := d.Values()
 	values, missing = make([]float64, len(f.Dimensions)), make([]bool, len(f.Dimensions))
@@ -89,7 +100,7 @@ func dimensionValues(f *kin.Family, d *brief.Design) (values []float64, missing 
 		switch {
 		case ok:
 			values[i] = v
-		case dim.Optional:
+		case dim.Optional && !(d.Joints != nil && dim.Joints):
 			values[i] = dim.Default
 		default:
 			values[i], missing[i] = math.NaN(), true
