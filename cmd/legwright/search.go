@@ -2,6 +2,7 @@ package main
 
 import (
 	_ "embed"
+	"errors"
 	"fmt"
 	"io"
 	"os"
@@ -56,7 +57,7 @@ whatever the number of workers.`,
 	f.IntVar(&run.Evaluations, "evaluations", 0, "designs to look at (default: the brief's, else 20000)")
 	f.Int64Var(&run.Seed, "seed", 0, "seed of the random numbers (default: the brief's, else 1)")
 	f.IntVar(&run.Workers, "workers", 0, "designs judged side by side (default: all processors); never changes the result")
-	f.BoolVar(&force, "force", false, "write over a finished study")
+	f.BoolVar(&force, "force", false, "replace the study that the folder holds, finished or not")
 	f.BoolVar(&resume, "resume", false, "begin an interrupted study again (the same seed meets the same designs); leave a finished one as it is")
 	return cmd
 }
@@ -90,7 +91,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		given.Seed = run.Seed
 	}
 	if force && resume {
-		return inputError{fmt.Errorf("--force begins anew and --resume goes on; give one of them")}
+		return inputError{fmt.Errorf("--force begins anew and --resume begins the same study again; give one of them")}
 	}
 	if least := leastEvaluations * len(b.Families); given.Evaluations < least || given.Evaluations > 1e9 {
 		return inputError{fmt.Errorf("%d evaluations: write a whole number from %d to 1000000000", given.Evaluations, least)}
@@ -129,6 +130,11 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	for _, n := range s.Hints() {
 		c.hint("note: %s", n)
 	}
+	if before == nil { // from here on the folder is known as that of a study
+		if err := save(folder, here); err != nil {
+			return err
+		}
+	}
 	bar := report.NewProgress(c.err, given.Evaluations, 0, c.quiet)
 	given.Progress = func(p opt.Progress) {
 		bar.Show(report.Count{Evaluations: p.Evaluations, Feasible: p.Feasible, Hypervolume: p.Hypervolume, Phase: p.Phase})
@@ -136,6 +142,9 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	found, err := s.Search(cmd.Context(), given)
 	bar.Done()
 	if err != nil {
+		if folder.State() != study.Unfinished { // as it was
+			err = errors.Join(err, folder.RemoveCheckpoint())
+		}
 		return err
 	}
 	stopped := found.Status == opt.Interrupted
@@ -145,11 +154,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	}
 	if stopped {
 		here.Evaluations = found.Front.Evaluations
-		text, err := here.Bytes()
-		if err == nil {
-			err = folder.SaveCheckpoint(text)
-		}
-		if err != nil {
+		if err := save(folder, here); err != nil {
 			return err
 		}
 	}
@@ -184,8 +189,8 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 // leastEvaluations is the least budget for each family: differential evolution wants four designs.
 const leastEvaluations = 4
 
-// goOn gives the checkpoint of the unfinished study that the folder holds, nil for none. It refuses to go
-// on with a study of another brief, seed or budget.
+// goOn gives the checkpoint of the unfinished study that the folder holds, nil for none. It refuses a
+// study of another brief, seed or budget.
 func goOn(folder *study.Folder, here *job.Checkpoint, force bool) (*job.Checkpoint, error) {
 	text, err := folder.Checkpoint()
 	if err != nil || force {
@@ -196,6 +201,15 @@ func goOn(folder *study.Folder, here *job.Checkpoint, force bool) (*job.Checkpoi
 		return nil, err
 	}
 	return old, here.Continues(old)
+}
+
+// save writes the checkpoint into the folder.
+func save(folder *study.Folder, c *job.Checkpoint) error {
+	text, err := c.Bytes()
+	if err != nil {
+		return err
+	}
+	return folder.SaveCheckpoint(text)
 }
 
 // sourcesOf are the brief and the pose files that it names, to be copied into the study.

@@ -1,13 +1,14 @@
 package study
 
 import (
+	"encoding/json"
 	"errors"
 	"fmt"
 	"io/fs"
 	"os"
 	"path/filepath"
-	"regexp"
 	"slices"
+	"strings"
 )
 
 // State is what a folder holds.
@@ -26,17 +27,13 @@ const (
 	frontFile      = "front.json"
 	tableFile      = "front.csv"
 	progressFile   = "progress.csv"
-	reportFile     = "report.html"
 	checkpointFile = "checkpoint.json"
 	designsFolder  = "designs"
 )
 
-// designFile matches what Save writes under designs/, and the folders of drawings beside it.
-var designFile = regexp.MustCompile(`^[0-9]{3,}(\.(yaml|toml|json))?$`)
-
-// Inspect tells what the folder holds. A study is known by its front.json, its checkpoint or its
-// design files.
-func Inspect(dir string) (State, error) {
+// inspect tells what the folder holds. A study is known by a front.json or a checkpoint that this
+// program wrote, and by nothing else: files of those names that it did not write are foreign.
+func inspect(dir string) (State, error) {
 	info, err := os.Stat(dir)
 	switch {
 	case errors.Is(err, fs.ErrNotExist):
@@ -56,21 +53,29 @@ func Inspect(dir string) (State, error) {
 	has := func(name string) bool {
 		return slices.ContainsFunc(entries, func(e fs.DirEntry) bool { return e.Name() == name })
 	}
-	switch {
-	case has(checkpointFile):
-		return Unfinished, nil
-	case has(frontFile):
+	if has(frontFile) {
 		if _, err := Read(dir); err != nil {
 			return Foreign, nil
 		}
-		return Finished, nil
-	case has(designsFolder):
-		names, _ := os.ReadDir(filepath.Join(dir, designsFolder))
-		if slices.ContainsFunc(names, func(e fs.DirEntry) bool { return designFile.MatchString(e.Name()) }) {
-			return Unfinished, nil
+	}
+	switch {
+	case has(checkpointFile):
+		if b, err := os.ReadFile(filepath.Join(dir, checkpointFile)); err != nil || !own(b) {
+			return Foreign, nil
 		}
+		return Unfinished, nil
+	case has(frontFile):
+		return Finished, nil
 	}
 	return Foreign, nil
+}
+
+// own tells whether a checkpoint names this program as its writer.
+func own(checkpoint []byte) bool {
+	var c struct {
+		Program string `json:"program"`
+	}
+	return json.Unmarshal(checkpoint, &c) == nil && strings.HasPrefix(c.Program, "legwright ")
 }
 
 // Folder is a study folder on disk.
@@ -82,14 +87,14 @@ type Folder struct {
 // Intent is what to do with a study that the folder holds already.
 type Intent struct {
 	Force  bool // begin anew, also over a finished one
-	Resume bool // go on with an unfinished one, leave a finished one
+	Resume bool // begin an unfinished one again, leave a finished one
 }
 
 // Create opens a folder to write a study into, making it if it is not there. It refuses a folder that
 // holds other things, and a study unless the intent allows it. With Resume a finished study is no
 // error: the caller sees State() == Finished and leaves it alone.
 func Create(dir string, intent Intent) (*Folder, error) {
-	state, err := Inspect(dir)
+	state, err := inspect(dir)
 	if err != nil {
 		return nil, err
 	}
@@ -100,7 +105,7 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	case state == Finished && !intent.Force && !intent.Resume:
 		return nil, fmt.Errorf("%s: the folder holds a finished study; give another folder, or --force to replace the study", name)
 	case state == Unfinished && !intent.Force && !intent.Resume:
-		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to go on with it, or --force to begin anew", name)
+		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to begin it again with the same brief and seed, or --force to replace it", name)
 	}
 	f := &Folder{dir: dir, state: state}
 	if state == Finished && !intent.Force {
@@ -114,21 +119,6 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	}
 	return f, nil
 }
-
-// Open opens the folder of a study that is there.
-func Open(dir string) (*Folder, error) {
-	state, err := Inspect(dir)
-	if err != nil {
-		return nil, err
-	}
-	if state == Empty || state == Foreign {
-		return nil, fmt.Errorf("%s: there is no study; give the folder that `legwright search -o` has written", Clean(dir))
-	}
-	return &Folder{dir: dir, state: state}, nil
-}
-
-// Dir is the path of the folder.
-func (f *Folder) Dir() string { return f.dir }
 
 // State is what the folder held when it was opened.
 func (f *Folder) State() State { return f.state }

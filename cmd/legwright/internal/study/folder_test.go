@@ -32,6 +32,9 @@ func files(t *testing.T, dir string) map[string]string {
 	return out
 }
 
+// checkpoint is one as this program writes it, as far as this package reads it.
+const checkpoint = `{"program": "legwright 0"}`
+
 const briefText = "title: Tilter\r\n# not as we would write it\n"
 
 func result() *Result {
@@ -43,7 +46,6 @@ func result() *Result {
 			Poses: []File{{"poses.csv", []byte("x_mm\n1\n")}, {"duty/more.csv", []byte("x_mm\n2\n")}, {"../out.csv", nil}, {"front.csv", nil}},
 		},
 		Encode: encodeTest,
-		More:   []File{{"designs/001/holes.csv", []byte("hole\n")}},
 	}
 }
 
@@ -53,10 +55,10 @@ func TestSaveStudy(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if err := f.SaveCheckpoint([]byte("half")); err != nil {
+	if err := f.SaveCheckpoint([]byte(checkpoint)); err != nil {
 		t.Fatal(err)
 	}
-	if b, err := f.Checkpoint(); string(b) != "half" || err != nil {
+	if b, err := f.Checkpoint(); string(b) != checkpoint || err != nil {
 		t.Errorf("checkpoint %q, %v", b, err)
 	}
 	r := result()
@@ -64,7 +66,7 @@ func TestSaveStudy(t *testing.T) {
 		t.Fatal(err)
 	}
 	got := files(t, dir)
-	want := []string{"brief.yaml", "designs/001.yaml", "designs/001/holes.csv", "designs/002.yaml", "designs/003.yaml", "designs/004.yaml",
+	want := []string{"brief.yaml", "designs/001.yaml", "designs/002.yaml", "designs/003.yaml", "designs/004.yaml",
 		"designs/005.yaml", "duty/more.csv", "front.csv", "front.json", "poses.csv", "progress.csv"}
 	if names := slices.Sorted(maps.Keys(got)); !slices.Equal(names, want) {
 		t.Errorf("files %v, want %v", names, want)
@@ -86,7 +88,7 @@ func TestSaveStudy(t *testing.T) {
 	if info.Mode().Perm() != folder.Mode().Perm()&0o666 {
 		t.Errorf("front.json has mode %v in a folder with %v", info.Mode(), folder.Mode())
 	}
-	if s, err := Inspect(dir); s != Finished || err != nil {
+	if s, err := inspect(dir); s != Finished || err != nil {
 		t.Errorf("state %v, %v", s, err)
 	}
 }
@@ -123,10 +125,17 @@ func TestFolderRules(t *testing.T) {
 		{"finished", make("finished", finished), Intent{}, "finished study", 0},
 		{"finished, forced", make("forced", finished), Intent{Force: true}, "", Finished},
 		{"finished, resumed", make("resumed", finished), Intent{Resume: true}, "", Finished},
-		{"unfinished", make("half", map[string]string{"checkpoint.json": "a"}), Intent{}, "--resume", 0},
+		{"unfinished", make("half", map[string]string{"checkpoint.json": checkpoint}), Intent{}, "--resume", 0},
 		{"unfinished, forced", make("half", nil), Intent{Force: true}, "", Unfinished},
 		{"unfinished, resumed", make("half", nil), Intent{Resume: true}, "", Unfinished},
-		{"broken off while saving", make("designs", map[string]string{"designs/001.yaml": "a", "brief.yaml": "a"}), Intent{Force: true}, "", Unfinished},
+		{"broken off while saving", make("broken", map[string]string{"checkpoint.json": checkpoint, "designs/001.yaml": "a", "brief.yaml": "a"}), Intent{Force: true}, "", Unfinished},
+		{"designs alone", make("designs", map[string]string{"designs/001.yaml": "a", "brief.yaml": "a"}), Intent{Force: true}, "holds other files", 0},
+		{"folders that look like designs", make("years", map[string]string{"designs/2024/keep.txt": "a"}), Intent{Force: true}, "holds other files", 0},
+		{"those, resumed", make("years", nil), Intent{Resume: true}, "holds other files", 0},
+		{"someone else's checkpoint", make("trained", map[string]string{"checkpoint.json": `{"program": "other 1"}`}), Intent{Force: true}, "holds other files", 0},
+		{"a checkpoint that is no JSON", make("noise", map[string]string{"checkpoint.json": "a"}), Intent{Force: true}, "holds other files", 0},
+		{"someone else's checkpoint in a study", make("both", map[string]string{"front.json": string(front), "checkpoint.json": "{}"}), Intent{Force: true}, "holds other files", 0},
+		{"someone else's front.json with a checkpoint", make("both2", map[string]string{"front.json": "{}", "checkpoint.json": checkpoint}), Intent{Force: true}, "holds other files", 0},
 		{"a file", filepath.Join(make("finished", nil), "brief.yaml"), Intent{}, "not a folder", 0},
 		{"below a file", filepath.Join(make("finished", nil), "brief.yaml", "deep"), Intent{}, "give another folder", 0},
 	} {
@@ -139,12 +148,6 @@ func TestFolderRules(t *testing.T) {
 		case c.want != "" && (err == nil || !strings.Contains(err.Error(), c.want) || !strings.Contains(err.Error(), c.dir)):
 			t.Errorf("%s: got %v, want %q and the folder's name", c.why, err, c.want)
 		}
-	}
-	if _, err := Open(filepath.Join(root, "other")); err == nil {
-		t.Error("opened a folder without a study")
-	}
-	if f, err := Open(filepath.Join(root, "finished")); err != nil || f.State() != Finished {
-		t.Errorf("open: %v", err)
 	}
 	if got := files(t, filepath.Join(root, "resumed")); len(got) != 2 {
 		t.Errorf("resuming a finished study changed it: %v", got)
@@ -167,7 +170,7 @@ func TestReadOnlyFolder(t *testing.T) {
 	}
 }
 
-// A study that takes the place of another leaves nothing of it but the user's own files.
+// A study that takes the place of another leaves the user's own files, and of the other study only its pose files.
 func TestForceLeavesNothingStale(t *testing.T) {
 	dir := t.TempDir()
 	f, err := Create(dir, Intent{})
@@ -177,25 +180,27 @@ func TestForceLeavesNothingStale(t *testing.T) {
 	if err := f.Save(result()); err != nil {
 		t.Fatal(err)
 	}
-	own := filepath.Join(dir, "designs", "my notes.txt")
-	os.WriteFile(own, []byte("mine"), 0o666)
+	for _, name := range []string{"notes.txt", "designs/my notes.txt", "designs/2024/keep.txt", "designs/001/sketch.txt", "designs/1234.yaml"} {
+		path := filepath.Join(dir, name)
+		os.MkdirAll(filepath.Dir(path), 0o777)
+		if err := os.WriteFile(path, []byte("mine"), 0o666); err != nil {
+			t.Fatal(err)
+		}
+	}
 	f, err = Create(dir, Intent{Force: true})
 	if err != nil {
 		t.Fatal(err)
 	}
 	r := result()
-	r.More = nil
 	r.Front.Designs = r.Front.Designs[1:3] // 002 and 003
+	r.Sources = Sources{Brief: File{"other.json", []byte("{}")}}
 	if err := f.Save(r); err != nil {
 		t.Fatal(err)
 	}
-	var designs []string
-	for n := range files(t, filepath.Join(dir, "designs")) {
-		designs = append(designs, n)
-	}
-	slices.Sort(designs)
-	if want := []string{"002.yaml", "003.yaml", "my notes.txt"}; !slices.Equal(designs, want) {
-		t.Errorf("designs holds %v, want %v", designs, want)
+	want := []string{"brief.json", "designs/001/sketch.txt", "designs/002.yaml", "designs/003.yaml", "designs/1234.yaml", "designs/2024/keep.txt",
+		"designs/my notes.txt", "duty/more.csv", "front.csv", "front.json", "notes.txt", "poses.csv", "progress.csv"}
+	if got := slices.Sorted(maps.Keys(files(t, dir))); !slices.Equal(got, want) {
+		t.Errorf("files %v, want %v", got, want)
 	}
 }
 
@@ -204,6 +209,9 @@ func TestBrokenSaveIsNotFinished(t *testing.T) {
 	dir := t.TempDir()
 	f, _ := Create(dir, Intent{})
 	if err := f.Save(result()); err != nil {
+		t.Fatal(err)
+	}
+	if err := f.SaveCheckpoint([]byte(checkpoint)); err != nil {
 		t.Fatal(err)
 	}
 	r := result()
@@ -216,7 +224,7 @@ func TestBrokenSaveIsNotFinished(t *testing.T) {
 	if err := f.Save(r); err == nil || !strings.Contains(err.Error(), "design 003: no ink") {
 		t.Errorf("got %v", err)
 	}
-	if s, _ := Inspect(dir); s != Unfinished {
+	if s, _ := inspect(dir); s != Unfinished {
 		t.Errorf("state %v", s)
 	}
 }

@@ -123,7 +123,7 @@ func FuzzDecode(f *testing.F) {
 		if _, err := Encode(front); err != nil {
 			t.Errorf("read, but cannot be written: %v", err)
 		}
-		if err := WriteTable(new(bytes.Buffer), front); err != nil {
+		if err := writeTable(new(bytes.Buffer), front); err != nil {
 			t.Error(err)
 		}
 	})

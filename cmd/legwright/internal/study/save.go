@@ -8,6 +8,7 @@ import (
 	"io/fs"
 	"os"
 	"path/filepath"
+	"slices"
 	"strings"
 
 	"legwright/opt"
@@ -28,6 +29,9 @@ type Sources struct {
 	Poses []File
 }
 
+// briefNames are the names that BriefName gives.
+var briefNames = []string{"brief.yaml", "brief.toml", "brief.json"}
+
 // BriefName is the name of the brief's copy in the folder: brief.yaml, brief.toml or brief.json.
 func (s *Sources) BriefName() string {
 	switch strings.ToLower(filepath.Ext(s.Brief.Name)) {
@@ -46,11 +50,10 @@ func inside(name string) bool {
 	}
 	first, _, _ := strings.Cut(filepath.ToSlash(filepath.Clean(name)), "/")
 	switch first {
-	case frontFile, tableFile, progressFile, reportFile, checkpointFile, designsFolder,
-		"brief.yaml", "brief.toml", "brief.json", ".":
+	case frontFile, tableFile, progressFile, checkpointFile, designsFolder, ".":
 		return false
 	}
-	return true
+	return !slices.Contains(briefNames, first)
 }
 
 // Apart lists the pose files that are not copied into a study folder, because their path leads out of
@@ -72,25 +75,27 @@ type Result struct {
 	Sources Sources
 	// Encode writes a design file (YAML) that names its brief ../brief.yaml.
 	Encode func(Design) ([]byte, error)
-	// More are further files by their paths in the folder, slashes between: report.html, designs/001/hole-table.csv.
-	More []File
 	// Unfinished leaves the checkpoint where it is.
 	Unfinished bool
 }
 
 // Save writes the study: the brief as it was given with its pose files, a file for each design, the
-// tables, further files, and front.json last. What an earlier study of the folder left over is
-// removed.
+// tables, and front.json last. Until then the study is known by its checkpoint alone, which the caller
+// saves before. Of the study that the folder held when it was opened it removes the designs that are no
+// more and the brief of another format, but no pose files: they may be the user's own.
 func (f *Folder) Save(r *Result) error {
+	if err := f.clear(r); err != nil {
+		return err
+	}
 	if err := f.remove(frontFile); err != nil {
 		return err
 	}
-	if err := f.Write(r.Sources.BriefName(), r.Sources.Brief.Bytes); err != nil {
+	if err := f.write(r.Sources.BriefName(), r.Sources.Brief.Bytes); err != nil {
 		return err
 	}
 	for _, p := range r.Sources.Poses {
 		if inside(p.Name) {
-			if err := f.Write(filepath.ToSlash(p.Name), p.Bytes); err != nil {
+			if err := f.write(filepath.ToSlash(p.Name), p.Bytes); err != nil {
 				return err
 			}
 		}
@@ -98,17 +103,12 @@ func (f *Folder) Save(r *Result) error {
 	if err := f.saveDesigns(r); err != nil {
 		return err
 	}
-	for _, m := range r.More {
-		if err := f.Write(m.Name, m.Bytes); err != nil {
-			return err
-		}
-	}
 	var b bytes.Buffer
 	writeProgress(&b, r.History)
-	if err := f.Write(progressFile, b.Bytes()); err != nil {
+	if err := f.write(progressFile, b.Bytes()); err != nil {
 		return err
 	}
-	if err := f.SaveFront(r.Front); err != nil {
+	if err := f.saveFront(r.Front); err != nil {
 		return err
 	}
 	if !r.Unfinished {
@@ -117,48 +117,63 @@ func (f *Folder) Save(r *Result) error {
 	return nil
 }
 
-// saveDesigns writes designs/ID.yaml and removes the files of ids that are no more.
+// clear removes the files of the study that the folder held when it was opened and that r does not
+// write again: the designs that its front.json lists, and briefs under another name.
+func (f *Folder) clear(r *Result) error {
+	if f.state == Empty {
+		return nil
+	}
+	for _, name := range briefNames {
+		if name != r.Sources.BriefName() {
+			if err := f.remove(name); err != nil {
+				return err
+			}
+		}
+	}
+	before, err := Read(f.dir)
+	if err != nil {
+		return nil // broken off before its front was written
+	}
+	for i := range before.Designs {
+		if err := f.remove(designName(before.Designs[i].ID)); err != nil {
+			return err
+		}
+	}
+	return nil
+}
+
+// designName is the path of a design's file in the folder.
+func designName(id string) string { return designsFolder + "/" + id + ".yaml" }
+
+// saveDesigns writes the file of each design.
 func (f *Folder) saveDesigns(r *Result) error {
-	keep := map[string]bool{}
 	for i := range r.Front.Designs {
 		d := &r.Front.Designs[i]
 		b, err := r.Encode(*d)
 		if err != nil {
 			return fmt.Errorf("design %s: %w", d.ID, err)
 		}
-		keep[d.ID+".yaml"], keep[d.ID] = true, true
-		if err := f.Write(designsFolder+"/"+d.ID+".yaml", b); err != nil {
+		if err := f.write(designName(d.ID), b); err != nil {
 			return err
-		}
-	}
-	entries, err := os.ReadDir(filepath.Join(f.dir, designsFolder))
-	if err != nil {
-		return nil // no designs
-	}
-	for _, e := range entries {
-		if designFile.MatchString(e.Name()) && !keep[e.Name()] {
-			if err := os.RemoveAll(filepath.Join(f.dir, designsFolder, e.Name())); err != nil {
-				return fmt.Errorf("%s: %w", Clean(f.dir), err)
-			}
 		}
 	}
 	return nil
 }
 
-// SaveFront writes front.csv and front.json.
-func (f *Folder) SaveFront(front *Front) error {
+// saveFront writes front.csv and front.json.
+func (f *Folder) saveFront(front *Front) error {
 	var b bytes.Buffer
-	if err := WriteTable(&b, front); err != nil {
+	if err := writeTable(&b, front); err != nil {
 		return err
 	}
-	if err := f.Write(tableFile, b.Bytes()); err != nil {
+	if err := f.write(tableFile, b.Bytes()); err != nil {
 		return err
 	}
 	text, err := Encode(front)
 	if err != nil {
 		return err
 	}
-	return f.Write(frontFile, text)
+	return f.write(frontFile, text)
 }
 
 // Encode is a record as JSON: indented, keys in a fixed order, every number the shortest that reads
@@ -174,9 +189,9 @@ func Encode(v any) ([]byte, error) {
 	return b.Bytes(), nil
 }
 
-// Write writes a file of the folder whole or not at all. The path is relative to the folder, with
+// write writes a file of the folder whole or not at all. The path is relative to the folder, with
 // slashes; folders on the way are made.
-func (f *Folder) Write(name string, b []byte) error {
+func (f *Folder) write(name string, b []byte) error {
 	if !filepath.IsLocal(filepath.FromSlash(name)) {
 		panic("study: a file outside the folder")
 	}
@@ -212,13 +227,13 @@ func (f *Folder) Checkpoint() ([]byte, error) {
 }
 
 // SaveCheckpoint writes the checkpoint.
-func (f *Folder) SaveCheckpoint(b []byte) error { return f.Write(checkpointFile, b) }
+func (f *Folder) SaveCheckpoint(b []byte) error { return f.write(checkpointFile, b) }
 
 // RemoveCheckpoint removes the checkpoint if there is one.
 func (f *Folder) RemoveCheckpoint() error { return f.remove(checkpointFile) }
 
 func (f *Folder) remove(name string) error {
-	err := os.Remove(filepath.Join(f.dir, name))
+	err := os.Remove(filepath.Join(f.dir, filepath.FromSlash(name)))
 	if err != nil && !errors.Is(err, fs.ErrNotExist) {
 		return fmt.Errorf("%s: %s cannot be removed (%w)", Clean(f.dir), name, bare(err))
 	}

@@ -34,9 +34,9 @@ type column struct {
 	cell func(d *Design) string
 }
 
-// WriteTable writes the front as CSV: a row for each design in the order of rank, the unit in each
+// writeTable writes the front as CSV: a row for each design in the order of rank, the unit in each
 // heading, inf for an unbounded value, nothing where a design has no such dimension or measure.
-func WriteTable(w io.Writer, f *Front) error {
+func writeTable(w io.Writer, f *Front) error {
 	cols := []column{
 		{"id", func(d *Design) string { return d.ID }},
 		{"rank", func(d *Design) string { return strconv.Itoa(d.Rank) }},

@@ -12,7 +12,7 @@ func TestWriteTable(t *testing.T) {
 	f.Designs[1].Family = "6-UPS"
 	f.Designs[1].Dimensions = map[string]Number{"platform_half_angle": 0.3, "stroke": 0.5701}
 	var b bytes.Buffer
-	if err := WriteTable(&b, f); err != nil {
+	if err := writeTable(&b, f); err != nil {
 		t.Fatal(err)
 	}
 	rows, err := csv.NewReader(&b).ReadAll()
