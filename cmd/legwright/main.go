@@ -13,6 +13,7 @@ import (
 	"runtime/debug"
 	"strings"
 	"syscall"
+	"time"
 
 	"github.com/spf13/cobra"
 
@@ -47,7 +48,7 @@ func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
 
 // run is main with its surroundings given, for tests.
 func run(args []string, stdout, stderr io.Writer) int {
-	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM, syscall.SIGHUP)
+	ctx, stop := interruptible()
 	defer stop()
 	root := newRoot(stdout, stderr)
 	root.SetArgs(args)
@@ -76,6 +77,21 @@ func guarded(f func() error) (err error) {
 		}
 	}()
 	return f()
+}
+
+// settle is how long after the first signal others are taken for the same one: some senders signal
+// both a process and its group.
+const settle = 300 * time.Millisecond
+
+// interruptible gives a context that the first signal ends. The next one ends the process at once, with
+// the signal's own status (130 in a shell, for Ctrl-C).
+func interruptible() (context.Context, context.CancelFunc) {
+	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt, syscall.SIGTERM, syscall.SIGHUP)
+	context.AfterFunc(ctx, func() {
+		time.Sleep(settle)
+		stop()
+	})
+	return ctx, stop
 }
 
 // common are the flags that every command has.
