@@ -135,7 +135,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 			return err
 		}
 	}
-	bar := report.NewProgress(c.err, given.Evaluations, 0, c.quiet)
+	bar := report.NewProgress(c.err, given.Evaluations, c.quiet)
 	given.Progress = func(p opt.Progress) {
 		bar.Show(report.Count{Evaluations: p.Evaluations, Feasible: p.Feasible, Hypervolume: p.Hypervolume, Phase: p.Phase})
 	}

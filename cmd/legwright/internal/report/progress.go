@@ -27,7 +27,6 @@ type Progress struct {
 	now    func() time.Time
 
 	started, told time.Time
-	first         int // evaluations when it started
 	last          Count
 	line          string // on the terminal now
 	pending       bool   // last was not told yet
@@ -47,13 +46,12 @@ const (
 	plainBeat = 10 * time.Second
 )
 
-// NewProgress starts to tell of a search with a budget of evaluations, some of which may have been
-// spent before (a search that is resumed). Quiet makes it tell nothing.
-func NewProgress(w io.Writer, budget, spent int, quiet bool) *Progress {
+// NewProgress starts to tell of a search with a budget of evaluations. Quiet makes it tell nothing.
+func NewProgress(w io.Writer, budget int, quiet bool) *Progress {
 	if quiet {
 		return nil
 	}
-	p := &Progress{w: w, budget: budget, first: spent, now: time.Now, width: usualWidth}
+	p := &Progress{w: w, budget: budget, now: time.Now, width: usualWidth}
 	if f, ok := w.(*os.File); ok && term.IsTerminal(int(f.Fd())) && os.Getenv("TERM") != "dumb" {
 		p.live = true
 		if width, _, err := term.GetSize(int(f.Fd())); err == nil && width > 0 {
@@ -78,20 +76,6 @@ func (p *Progress) Show(c Count) {
 		beat = liveBeat
 	}
 	if p.now().Sub(p.told) >= beat {
-		p.tell()
-	}
-}
-
-// Say writes a line of its own, such as a warning, without disturbing the line of progress.
-func (p *Progress) Say(t string) {
-	if p == nil || p.w == nil {
-		return
-	}
-	p.mu.Lock()
-	defer p.mu.Unlock()
-	p.wipe()
-	fmt.Fprintln(p.w, study.Clean(t))
-	if p.live && p.last.Evaluations > 0 {
 		p.tell()
 	}
 }
@@ -126,14 +110,6 @@ func (p *Progress) tell() {
 	p.line = t
 }
 
-// wipe clears the line on a terminal.
-func (p *Progress) wipe() {
-	if p.line != "" {
-		fmt.Fprint(p.w, "\r", strings.Repeat(" ", text.StringWidth(p.line)), "\r")
-		p.line = ""
-	}
-}
-
 // words is the state in a line.
 func (p *Progress) words() string {
 	c := p.last
@@ -142,8 +118,8 @@ func (p *Progress) words() string {
 		parts[0] = fmt.Sprintf("%d evaluations", c.Evaluations)
 	}
 	spent := p.now().Sub(p.started).Seconds()
-	if done := c.Evaluations - p.first; done > 0 && spent > 0 {
-		rate := float64(done) / spent
+	if c.Evaluations > 0 && spent > 0 {
+		rate := float64(c.Evaluations) / spent
 		parts = append(parts, units.Digits(rate, 3)+"/s")
 		if left := p.budget - c.Evaluations; left > 0 {
 			parts = append(parts, clock(float64(left)/rate)+" left")

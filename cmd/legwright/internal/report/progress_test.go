@@ -17,7 +17,7 @@ func at(p *Progress, clock *time.Time) *Progress {
 func TestProgressBeatsSlowlyOffTerminals(t *testing.T) {
 	var b bytes.Buffer
 	clock := time.Unix(1000, 0)
-	p := at(NewProgress(&b, 20000, 0, false), &clock)
+	p := at(NewProgress(&b, 20000, false), &clock)
 	for i := range 250 {
 		clock = clock.Add(100 * time.Millisecond)
 		p.Show(Count{Evaluations: 80 * (i + 1), Feasible: 20 * (i + 1), Hypervolume: 0.25, Phase: "search"})
@@ -32,33 +32,20 @@ func TestProgressBeatsSlowlyOffTerminals(t *testing.T) {
 	}
 }
 
-// A search that is resumed did not do the earlier evaluations in this time.
-func TestProgressRateOfAResumedSearch(t *testing.T) {
-	var b bytes.Buffer
-	clock := time.Unix(1000, 0)
-	p := at(NewProgress(&b, 20000, 15000, false), &clock)
-	clock = clock.Add(10 * time.Second)
-	p.Show(Count{Evaluations: 16000})
-	if want := "16000 of 20000 evaluations, 100/s, 40 s left, 0 % feasible\n"; b.String() != want {
-		t.Errorf("got %q, want %q", b.String(), want)
-	}
-}
-
 func TestProgressRedrawsOneLineOnATerminal(t *testing.T) {
 	var b bytes.Buffer
 	clock := time.Unix(1000, 0)
-	p := at(NewProgress(&b, 1000, 0, false), &clock)
+	p := at(NewProgress(&b, 1000, false), &clock)
 	p.live, p.width = true, 80
 	for i := range 10 {
 		clock = clock.Add(50 * time.Millisecond)
 		p.Show(Count{Evaluations: 100 * (i + 1), Phase: strings.Repeat("x", 10-i)})
 	}
-	p.Say("a warning\x1b[2J")
 	p.Done()
-	if n := strings.Count(b.String(), "\n"); n != 2 {
-		t.Errorf("%d lines were ended, want the warning and the last state: %q", n, b.String())
+	if n := strings.Count(b.String(), "\n"); n != 1 {
+		t.Errorf("%d lines were ended, want the last state alone: %q", n, b.String())
 	}
-	if got := screen(b.String()); got != "a warning[2J\n1000 of 1000 evaluations, 2000/s, 0 % feasible, x\n" {
+	if got := screen(b.String()); got != "1000 of 1000 evaluations, 2000/s, 0 % feasible, x\n" {
 		t.Errorf("the terminal shows %q", got)
 	}
 }
@@ -91,9 +78,8 @@ func screen(s string) string {
 
 func TestProgressQuiet(t *testing.T) {
 	var b bytes.Buffer
-	p := NewProgress(&b, 10, 0, true)
+	p := NewProgress(&b, 10, true)
 	p.Show(Count{Evaluations: 5})
-	p.Say("something")
 	p.Done()
 	new(Progress).Show(Count{Evaluations: 1})
 	if b.Len() != 0 {
@@ -104,7 +90,7 @@ func TestProgressQuiet(t *testing.T) {
 func TestProgressNarrowTerminal(t *testing.T) {
 	var b bytes.Buffer
 	clock := time.Unix(1000, 0)
-	p := at(NewProgress(&b, 100000, 0, false), &clock)
+	p := at(NewProgress(&b, 100000, false), &clock)
 	p.live, p.width = true, 20
 	clock = clock.Add(time.Second)
 	p.Show(Count{Evaluations: 50000, Feasible: 1, Hypervolume: 0.1})
