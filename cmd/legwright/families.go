@@ -83,7 +83,11 @@ counter-clockwise seen from +z, from +x. Poses are relative to home: R = Rz(yaw)
 	}
 	t.Flush()
 	if f.Outright != nil {
-		fmt.Fprintln(w, "\nA design file may give joint centres outright (joints: {base, platform}) in place of the dimensions that place them.")
+		outright := "joint centres outright (joints: {base, platform})"
+		if f.Rails {
+			outright = "rails and joint centres outright (rails: [{point, direction}, …], joints: {platform})"
+		}
+		fmt.Fprintf(w, "\nA design file may give %s in place of the dimensions that place them.\n", outright)
 	}
 	fmt.Fprintln(w, "\nSources:")
 	for _, s := range f.Sources {
