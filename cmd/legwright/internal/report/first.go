@@ -19,7 +19,7 @@ const (
 // costs, and what the figures leave out. A front without designs is drawn by Infeasible.
 func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	if len(f.Designs) == 0 {
-		return Infeasible(w, f, p)
+		return infeasible(w, f, p)
 	}
 	s := p.sheet()
 	s.title(f)

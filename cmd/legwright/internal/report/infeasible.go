@@ -11,9 +11,9 @@ import (
 	"legwright/cmd/legwright/internal/units"
 )
 
-// Infeasible draws what a search without a feasible design still tells: what stands in the way, what
+// infeasible draws what a search without a feasible design still tells: what stands in the way, what
 // change of one limit alone would do, the designs that came nearest, and what to try.
-func Infeasible(w io.Writer, f *study.Front, p Page) error {
+func infeasible(w io.Writer, f *study.Front, p Page) error {
 	s := p.sheet()
 	s.title(f)
 	s.gap()

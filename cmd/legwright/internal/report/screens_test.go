@@ -135,7 +135,7 @@ func TestScreensStripControls(t *testing.T) {
 	}
 	var b bytes.Buffer
 	p := Page{Width: 100, Dir: bad}
-	for _, err := range []error{FirstScreen(&b, f, p), Table(&b, f, 0, p), Appraisal(&b, &f.Designs[0], p), Infeasible(&b, g, p)} {
+	for _, err := range []error{FirstScreen(&b, f, p), Table(&b, f, 0, p), Appraisal(&b, &f.Designs[0], p), infeasible(&b, g, p)} {
 		if err != nil {
 			t.Fatal(err)
 		}

@@ -12,7 +12,7 @@ import (
 // columns as there is room for.
 func Table(w io.Writer, f *study.Front, top int, p Page) error {
 	if len(f.Designs) == 0 {
-		return Infeasible(w, f, p)
+		return infeasible(w, f, p)
 	}
 	s := p.sheet()
 	s.title(f)
