@@ -58,7 +58,7 @@ whatever the number of workers.`,
 	f.Int64Var(&run.Seed, "seed", 0, "seed of the random numbers (default: the brief's, else 1)")
 	f.IntVar(&run.Workers, "workers", 0, "designs judged side by side (default: all processors); never changes the result")
 	f.BoolVar(&force, "force", false, "replace the study that the folder holds, finished or not")
-	f.BoolVar(&resume, "resume", false, "begin an interrupted study again (the same seed meets the same designs); leave a finished one as it is")
+	f.BoolVar(&resume, "resume", false, "replay an interrupted study from the start (the same seed meets the same designs) and on to its end; leave a finished one as it is")
 	return cmd
 }
 
@@ -91,7 +91,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		given.Seed = run.Seed
 	}
 	if force && resume {
-		return inputError{fmt.Errorf("--force begins anew and --resume begins the same study again; give one of them")}
+		return inputError{fmt.Errorf("--force replaces a study and --resume replays it; give one of them")}
 	}
 	if least := leastEvaluations * len(b.Families); given.Evaluations < least || given.Evaluations > 1e9 {
 		return inputError{fmt.Errorf("%d evaluations: write a whole number from %d to 1000000000", given.Evaluations, least)}
@@ -149,7 +149,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	}
 	stopped := found.Status == opt.Interrupted
 	if stopped && before != nil && before.Evaluations > found.Front.Evaluations {
-		c.hint("interrupted after %d evaluations; %s keeps the result of the %d that were made before. --resume begins again.", found.Front.Evaluations, dir, before.Evaluations)
+		c.hint("interrupted after %d evaluations; %s keeps the result of the %d that were made before. --resume replays the study from the start.", found.Front.Evaluations, dir, before.Evaluations)
 		return status(exitInterrupted)
 	}
 	if stopped {
@@ -178,7 +178,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	case err != nil:
 		return err
 	case stopped:
-		c.hint("interrupted after %d evaluations; what was found is in %s. --resume begins this study again: with its seed it meets the same designs and goes on from there.", found.Front.Evaluations, dir)
+		c.hint("interrupted after %d evaluations; what was found is in %s. --resume replays this study from the start: with its seed it meets the same designs, then goes on to the rest.", found.Front.Evaluations, dir)
 		return status(exitInterrupted)
 	case len(found.Front.Designs) == 0:
 		return status(exitLimit)

@@ -87,7 +87,7 @@ type Folder struct {
 // Intent is what to do with a study that the folder holds already.
 type Intent struct {
 	Force  bool // begin anew, also over a finished one
-	Resume bool // begin an unfinished one again, leave a finished one
+	Resume bool // replay an unfinished one, leave a finished one
 }
 
 // Create opens a folder to write a study into, making it if it is not there. It refuses a folder that
@@ -105,7 +105,7 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	case state == Finished && !intent.Force && !intent.Resume:
 		return nil, fmt.Errorf("%s: the folder holds a finished study; give another folder, or --force to replace the study", name)
 	case state == Unfinished && !intent.Force && !intent.Resume:
-		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to begin it again with the same brief and seed, or --force to replace it", name)
+		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to replay it from the start and on to its end, or --force to replace it", name)
 	}
 	f := &Folder{dir: dir, state: state}
 	if state == Finished && !intent.Force {
