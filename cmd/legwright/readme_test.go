@@ -100,3 +100,18 @@ func compare(t *testing.T, text, now string) {
 	}
 	t.Fatal("README.md is longer than it should be; go test ./cmd/legwright -update writes it again")
 }
+
+// DEVELOPERS.md lists the modules that the program asks for, with their versions.
+func TestDevelopersModules(t *testing.T) {
+	text := read(t, "../../DEVELOPERS.md")
+	direct, _, _ := strings.Cut(read(t, "../../go.mod"), ")")
+	for _, line := range strings.Split(direct, "\n") {
+		f := strings.Fields(line)
+		if len(f) != 2 || !strings.Contains(f[0], "/") {
+			continue
+		}
+		if row := "| " + f[0] + " | " + f[1] + " |"; !strings.Contains(text, row) {
+			t.Errorf("DEVELOPERS.md lacks the row %q", row)
+		}
+	}
+}
