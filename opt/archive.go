@@ -53,8 +53,10 @@ func (a *Archive) add(g *genome, order int) bool {
 		switch i, r = related(a.goals, g.goals, i); r {
 		case -1: // brought forward: it is likely to beat the next one, too
 			a.swap(i, i/2)
+			g.beaten = true
 			return false
 		case 1:
+			a.designs[i].beaten = true
 			a.drop(i)
 			continue
 		}

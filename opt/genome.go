@@ -21,7 +21,7 @@ type genome struct {
 
 	rank   int     // 0 is the front; ahead of a larger one
 	crowd  float64 // larger is better among equals in rank
-	beaten bool    // by another of its population when it came
+	beaten bool    // by another that its population or the archive has met
 	young  bool    // made by the generation that is being selected
 	place  float64 // fitness in the first generation: eaopt's sort is unstable
 }
