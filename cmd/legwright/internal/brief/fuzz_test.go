@@ -61,7 +61,7 @@ func FuzzPoses(f *testing.F) {
 		f.Add([]byte(s))
 	}
 	f.Fuzz(func(t *testing.T, text []byte) {
-		poses, err := ParsePoses("p.csv", text, nil)
+		poses, err := posesFor(text, nil)
 		faultsOnly(t, poses == nil, err)
 		for _, p := range poses {
 			for _, v := range p {

@@ -17,30 +17,6 @@ const (
 	maxPoseFaults = 20       // faults of rows that are told one by one
 )
 
-// LoadPoses reads a pose file: x, y, z in m, roll, pitch, yaw in rad, about home. Each heading names
-// a coordinate and its unit, as x_mm or yaw_deg; a coordinate without a column is 0. Columns of
-// freedoms that the family lacks must be 0; a nil family has all six. The error is of type Faults.
-func LoadPoses(file string, family *KnownFamily) ([][6]float64, error) {
-	data, err := readFile(file, maxPoseFile)
-	if err != nil {
-		return nil, Faults{{Position{File: file}, "", err.Error(), "give the path of a pose file"}}
-	}
-	return ParsePoses(file, data, family)
-}
-
-// ParsePoses is LoadPoses of text in memory.
-func ParsePoses(file string, data []byte, family *KnownFamily) ([][6]float64, error) {
-	var families []*KnownFamily
-	if family != nil {
-		families = append(families, family)
-	}
-	poses, faults := parsePoses(file, data, families)
-	if len(faults) > 0 {
-		return nil, faults.Err()
-	}
-	return poses, nil
-}
-
 // poseColumn is one column of a pose file.
 type poseColumn struct {
 	heading string
@@ -56,6 +32,9 @@ type poseReader struct {
 	more   int // faults beyond the bound
 }
 
+// parsePoses reads a pose file: x, y, z in m, roll, pitch, yaw in rad, about home. Each heading names
+// a coordinate and its unit, as x_mm or yaw_deg; a coordinate without a column is 0. Columns of
+// freedoms that one of the families lacks must be 0; without families all six may move.
 func parsePoses(file string, data []byte, families []*KnownFamily) ([][6]float64, Faults) {
 	data = bytes.TrimPrefix(data, []byte("\ufeff"))
 	if i := firstBad(data); i >= 0 {

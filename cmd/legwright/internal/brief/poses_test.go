@@ -8,6 +8,16 @@ import (
 	"testing"
 )
 
+// posesFor reads the text of a pose file for a family, nil for one with all freedoms.
+func posesFor(text []byte, family *KnownFamily) ([][6]float64, error) {
+	var families []*KnownFamily
+	if family != nil {
+		families = append(families, family)
+	}
+	poses, faults := parsePoses("p.csv", text, families)
+	return poses, faults.Err()
+}
+
 func TestParsePoses(t *testing.T) {
 	deg := math.Pi / 180
 	want := [][6]float64{{0.01, 0, 0, 0, 0, 12 * deg}, {-0.02, 0, 0, 0, 0, -1 * deg}}
@@ -23,7 +33,7 @@ func TestParsePoses(t *testing.T) {
 		"exponents":    "x_m,yaw_deg\n1e-2,1.2E+1\n-.02,-1.\n",
 		"zeros":        "x_mm,z_mm,yaw_deg\n10,0,12\n-20,0.0,-1\n",
 	} {
-		got, err := ParsePoses("p.csv", []byte(text), nil)
+		got, err := posesFor([]byte(text), nil)
 		if err != nil {
 			t.Errorf("%s: %v", why, err)
 		} else if !reflect.DeepEqual(got, want) {
@@ -64,20 +74,20 @@ func TestPosesRefused(t *testing.T) {
 		{"no such freedom", "x_mm,z_mm\n1,0\n2,3\n", planar, "p.csv:3:3: z_mm: 3-RPR does not move in z; leave the column out or write 0"},
 	} {
 		t.Run(c.why, func(t *testing.T) {
-			_, err := ParsePoses("p.csv", []byte(c.text), c.family)
+			_, err := posesFor([]byte(c.text), c.family)
 			if err == nil || !strings.Contains(err.Error(), c.want) {
 				t.Errorf("got\n%v\nwant\n%s", err, c.want)
 			}
 		})
 	}
-	if p, err := ParsePoses("p.csv", []byte("x_mm,z_mm\n1,0\n2,-0\n"), planar); err != nil || len(p) != 2 {
+	if p, err := posesFor([]byte("x_mm,z_mm\n1,0\n2,-0\n"), planar); err != nil || len(p) != 2 {
 		t.Errorf("zero in a column without freedom: %v, %v", p, err)
 	}
 }
 
 // Bad rows are told one by one up to a bound, then counted.
 func TestPosesBadRowsBounded(t *testing.T) {
-	_, err := ParsePoses("p.csv", []byte("x_mm\n"+strings.Repeat("bad\n", 50)), nil)
+	_, err := posesFor([]byte("x_mm\n"+strings.Repeat("bad\n", 50)), nil)
 	fs, ok := err.(Faults)
 	if !ok || len(fs) != maxPoseFaults+1 {
 		t.Fatalf("%d faults: %v", len(fs), err)
