@@ -29,7 +29,7 @@ type Verdict struct {
 	Margin  float64 // relative to the bound; negative where it does not hold
 }
 
-// Leg is what one leg must do, over all required poses and home.
+// Leg is what one leg must do, over the required poses that count (Task.Coverage), and home for the coordinates.
 type Leg struct {
 	Least, Home, Most        float64 // actuator coordinate
 	LeastAt, MostAt          *Sample // nil for home
@@ -130,12 +130,22 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	for i := range ts {
 		ts[i].reset()
 	}
-	v.walk(0, len(t.samples), need, ts)
-	least, most := v.span()
-	p.size(&t.Actuator, least, most, a.Values)
-	a.Legs = a.legs(t, v)
-
-	share := a.cover(t, v, &d)
+	l := newPoseLimits(t, v, p, &d)
+	good := 0
+	if t.soft() {
+		good = l.survey(need, ts)
+		for i := range ts {
+			if good == 0 {
+				ts[i].w.Value = ts[i].m.Lost
+			}
+		}
+	} else {
+		v.walk(0, len(t.samples), need, ts)
+		least, most := v.span()
+		p.size(&t.Actuator, least, most, a.Values)
+		good = l.count(len(t.samples), nil)
+	}
+	a.Legs = a.legs(t, l)
 	k := 0
 	for _, m := range measures {
 		r := Reading{Measure: m, Leg: -1, Mate: -1, Case: -1}
@@ -150,12 +160,9 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 		case m.Design != nil:
 			r.Value = m.Design(&d)
 		default:
-			r.Value = share
+			r.Value = t.share(good)
 		}
 		if math.IsNaN(r.Value) {
-			if m.Mean {
-				continue // an average over no pose
-			}
 			r.Value = inf // of a range that no pose has sized
 		}
 		if (m.Name == "conditioning" || m.Name == "regularity") && r.Value < nearSingular && r.Pose != nil {
@@ -163,13 +170,14 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 		}
 		a.Readings = append(a.Readings, r)
 	}
-	a.judge(t, least, most, share, v)
-	a.notes(t, v)
+	a.judge(t, good, v)
+	a.notes(t, l)
 	return a
 }
 
 // legs walks the poses once more for what each leg must do.
-func (a *Appraisal) legs(t *Task, v *View) []Leg {
+func (a *Appraisal) legs(t *Task, pl *poseLimits) []Leg {
+	v := pl.v
 	out := make([]Leg, v.n)
 	for i := range out {
 		l := &out[i]
@@ -184,7 +192,7 @@ func (a *Appraisal) legs(t *Task, v *View) []Leg {
 	v.keep = 0
 	for k := range t.samples {
 		s := &t.samples[k]
-		if !v.at(s, k, NeedMatrix|NeedEfforts|NeedRates) {
+		if !pl.counts(k) || !v.at(s, k, NeedMatrix|NeedEfforts|NeedRates) {
 			continue
 		}
 		for i := range out {
@@ -201,21 +209,11 @@ func (a *Appraisal) legs(t *Task, v *View) []Leg {
 	return out
 }
 
-// cover is the share of poses at which every pose limit holds.
-func (a *Appraisal) cover(t *Task, v *View, d *Design) float64 {
-	l := newPoseLimits(t, v, a.Plan, d)
-	good := 0
-	for i := range t.samples {
-		if l.fails(&t.samples[i]) == "" {
-			good++
-		}
-	}
-	return float64(good) / float64(len(t.samples))
-}
-
 // judge fills the verdicts.
-func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
+func (a *Appraisal) judge(t *Task, good int, v *View) {
 	p := a.Plan
+	soft := t.soft()
+	least, most := v.span()
 	add := func(w Verdict, excess float64) {
 		w.Holds = excess <= Tolerance
 		if w.Margin = -excess; w.Holds && math.Abs(excess) < 1e-6 {
@@ -223,7 +221,7 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		}
 		a.Verdicts = append(a.Verdicts, w)
 	}
-	add(Verdict{Name: "coverage", Origin: "limits", AtLeast: true, Bound: t.Coverage, Value: share}, t.Coverage-share)
+	add(Verdict{Name: "coverage", Origin: "limits", AtLeast: true, Bound: t.Coverage, Value: t.share(good)}, t.shortfall(good))
 	if p.least >= 0 {
 		unit := Metre
 		if p.Family.Drive == kin.Rotary {
@@ -236,17 +234,20 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		low, span := a.Values[p.least], a.Values[p.span]
 		r := t.Actuator.Reserve
 		slack := p.rangeSlack(a.Values)
-		if !p.derived(p.least) {
+		if !p.derived(p.least) && !soft {
 			add(Verdict{Name: first, Origin: "dimensions." + p.Family.Dimensions[p.least].Name, Unit: unit, AtLeast: true,
 				Bound: low + r, Value: least}, (low+r-least-slack)/math.Max(span, 1e-3))
 		}
-		if !p.derived(p.span) {
+		if !p.derived(p.span) && !soft {
 			add(Verdict{Name: final, Origin: "dimensions." + p.Family.Dimensions[p.span].Name, Unit: unit,
 				Bound: low + span - r, Value: most}, (most-low-span+r-slack)/math.Max(span, 1e-3))
 		}
 		if n := len(t.Actuator.Strokes); n > 0 && p.Specs[p.span].Kind == Sized {
-			last := t.Actuator.Strokes[n-1]
-			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: most + r - low}, (most+r-low-last)/last)
+			last, need := t.Actuator.Strokes[n-1], most+r-low
+			if soft {
+				need = span
+			}
+			add(Verdict{Name: "stock stroke", Origin: "actuator.strokes", Unit: unit, Bound: last, Value: need}, (need-last)/last)
 		}
 		if !math.IsNaN(t.Actuator.DeadLength) {
 			need := t.Actuator.DeadRatio*span + t.Actuator.DeadLength
@@ -262,25 +263,11 @@ func (a *Appraisal) judge(t *Task, least, most, share float64, v *View) {
 		add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.UnitOf(p.Family), AtLeast: l.AtLeast, Bound: l.Bound, Value: r.Value},
 			l.excess(t, r.Value))
 	}
-	if v.singular > 0 || v.homeSign == 0 {
+	if !soft && (v.singular > 0 || v.homeSign == 0) {
 		add(Verdict{Name: "singular poses", Origin: "singular_below", Bound: 0, Value: float64(v.singular)}, 1)
 	}
 	a.Feasible = least <= most // else there is no posture, not even at home
-	soft := t.Coverage < 1 || t.CoverageGoal
 	for i := range a.Verdicts {
-		w := &a.Verdicts[i]
-		if soft && pose(w) {
-			continue
-		}
-		a.Feasible = a.Feasible && w.Holds
+		a.Feasible = a.Feasible && a.Verdicts[i].Holds
 	}
-}
-
-// pose tells whether the verdict counts through coverage alone where coverage is below 100 %.
-func pose(w *Verdict) bool {
-	switch w.Name {
-	case "shortest needed", "longest needed", "least needed", "most needed", "singular poses":
-		return true
-	}
-	return w.Origin == "joints.base_swing" || w.Origin == "joints.platform_swing"
 }

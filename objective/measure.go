@@ -70,7 +70,9 @@ func (w *Worst) set(v *View, value float64, l, c int) {
 	w.Value, w.Pose, w.Leg, w.Mate, w.Case = value, v.index, l, -1, c
 }
 
-// Measure is a number that a duty and a design give.
+// Measure is a number that a duty and a design give. Of a measure of poses it is the worst value over
+// the required poses, or its mean; of a task whose coverage may be below 100 % or is a goal, over
+// those of them that count (Task.Coverage).
 type Measure struct {
 	Name   string
 	Text   string
@@ -95,17 +97,21 @@ type Measure struct {
 	Start, Lost float64
 	Finish      func(raw float64) float64
 	Mean        bool // the value is Sum/Count
+	Scouts      bool // asked at home and at the scouts only: it is dear
 
 	// A measure of the design itself.
 	Design func(d *Design) float64
 }
+
+// perPose tells whether a limit on the measure is judged pose by pose, else over the whole duty.
+func (m *Measure) perPose() bool { return m.Scan != nil && !m.Mean && !m.Scouts }
 
 // value is the measure's value after the poses that w has seen.
 func (m *Measure) value(w *Worst) float64 {
 	x := w.Value
 	if m.Mean {
 		if w.Count == 0 {
-			return math.NaN()
+			return m.Lost
 		}
 		return w.Sum / float64(w.Count)
 	}

@@ -16,22 +16,10 @@ func modeSeparation() *Measure {
 		Name: "mode_separation", Unit: Metre, Sense: Larger,
 		Text:   "least distance to another assembly mode with the same actuator values, over home and the poses that lie farthest out: sqrt(|Δp|² + (Lc·angle)²); of platforms that tilt by appraise --modes alone",
 		Source: "C. Innocenti and V. Parenti-Castelli 1992, on changes of mode without a singularity (from memory); the distance is our own",
-		Has:    cheapModes, Start: inf, Lost: 0,
+		Has:    cheapModes, Start: inf, Lost: 0, Scouts: true,
 		Scan: func(v *View, w *Worst) {
-			if v.index >= v.task.scouts {
-				return
-			}
 			if d := v.separation(&v.pose.Pose, &v.S); d < w.Value {
 				w.set(v, d, -1, -1)
-			}
-			if v.index == 0 {
-				home := kin.NewPose(kin.Coords{})
-				var s kin.State
-				if v.machine.Move(&home, &s); s.Fail == kin.Reached {
-					if d := v.separation(&home, &s); d < w.Value {
-						w.Value, w.Pose = d, -1
-					}
-				}
 			}
 		},
 	}

@@ -15,10 +15,9 @@ type Screen struct {
 	allNeed  Need
 	limitAt  []int // for each limit its tracker in all, -1 for a design's own, -2 for coverage
 	goalAt   []int
-	geoLimit []bool // the limit can be judged without the inverse Jacobian
-	late     []bool // the limit can be judged only after all poses: further ones may mend it
-	soft     bool   // pose limits count through coverage alone
-	exact    bool   // coverage is wanted exactly
+	geoLimit []bool      // the limit can be judged without the inverse Jacobian
+	late     []bool      // the limit can be judged only after all poses: further ones may mend it
+	limits   *poseLimits // of a soft task, nil otherwise
 }
 
 // The first constraints of every task, before its limits.
@@ -73,8 +72,9 @@ func NewScreen(t *Task, p *Plan) *Screen {
 	s := &Screen{task: t, plan: p, v: newView(t)}
 	s.v.free = p.Family.Free
 	s.d = Design{Family: p.Family, Values: make([]float64, len(p.Specs))}
-	s.soft = t.Coverage < 1 || t.CoverageGoal
-	s.exact = s.soft
+	if t.soft() {
+		s.limits = newPoseLimits(t, s.v, p, &s.d)
+	}
 	at := func(m *Measure) int {
 		switch {
 		case m.Name == "coverage":
@@ -133,36 +133,53 @@ func (s *Screen) Judge(x []float64, r *Score) {
 	}
 	own := s.ownLimits(r)
 
-	// 1. Scouts, geometry alone.
-	s.v.walk(0, t.scouts, s.geoNeed, s.geo)
-	if s.geometry(r, s.geo)+own > 0 && !s.soft {
-		r.Violation = r.total()
-		return
-	}
-	// 2. Scouts with the inverse Jacobian, then 3. all the rest.
-	s.v.lost, s.v.seen = 0, 0
-	s.v.walk(0, t.scouts, s.allNeed, s.all)
-	if !s.soft && s.judge(r) > 0 {
-		r.Violation = r.total()
-		return
-	}
-	s.v.walk(t.scouts, len(t.samples), s.allNeed, s.all)
-	s.judge(r)
-	if s.exact {
-		s.cover(r)
+	if s.limits != nil {
+		s.survey(r)
+	} else {
+		s.look(r, own)
 	}
 	r.Violation = r.total()
 	if r.Violation > 0 {
 		return
 	}
-	s.d.Values = s.resolve()
 	for i := range t.Goals {
 		g := s.value(s.goalAt[i], t.Goals[i].Measure, r)
 		if t.Goals[i].Maximise {
 			g = -g
 		}
+		if math.IsNaN(g) { // unknown
+			g = beyond
+		}
 		r.Goals[i] = math.Max(-beyond, math.Min(beyond, g))
 	}
+}
+
+// look fills the excess of a design of which every pose must keep every limit.
+func (s *Screen) look(r *Score, own float64) {
+	t := s.task
+	// 1. Scouts, geometry alone.
+	s.v.walk(0, t.scouts, s.geoNeed, s.geo)
+	if s.geometry(r, s.geo)+own > 0 {
+		return
+	}
+	// 2. Scouts with the inverse Jacobian, then 3. all the rest.
+	s.v.lost, s.v.seen = 0, 0
+	s.v.walk(0, t.scouts, s.allNeed, s.all)
+	if s.judge(r) > 0 {
+		return
+	}
+	s.v.walk(t.scouts, len(t.samples), s.allNeed, s.all)
+	s.judge(r)
+}
+
+// survey fills the excess of a design of a soft task.
+func (s *Screen) survey(r *Score) {
+	good := s.limits.survey(s.allNeed, s.all)
+	if good > 0 {
+		s.judge(r)
+	}
+	r.coverage = s.task.share(good)
+	r.Excess[conCoverage] = slack(s.task.shortfall(good))
 }
 
 // beyond is the value of a goal without bound, such as the buckling margin of legs that nothing pushes.
@@ -187,13 +204,6 @@ func (s *Screen) whole() bool { return s.v.seen == len(s.task.samples) }
 // Values are the dimension values of the design judged last, sized ones included.
 func (s *Screen) Values() []float64 { return s.d.Values }
 
-// resolve sizes the derived dimensions by what the walk has seen.
-func (s *Screen) resolve() []float64 {
-	least, most := s.v.span()
-	s.plan.size(&s.task.Actuator, least, most, s.d.Values)
-	return s.d.Values
-}
-
 // geometry fills the excess of what needs no inverse Jacobian and gives its sum.
 func (s *Screen) geometry(r *Score, ts []tracker) float64 {
 	t := s.task
@@ -206,8 +216,10 @@ func (s *Screen) geometry(r *Score, ts []tracker) float64 {
 	if least > most { // no posture, not even at home: there is nothing to size by
 		return share
 	}
-	s.resolve()
-	r.Excess[conRange] = s.plan.rangeExcess(&t.Actuator, least, most, s.d.Values)
+	if s.limits == nil { // else the survey has sized the range, and poses that leave it do not count
+		s.plan.size(&t.Actuator, least, most, s.d.Values)
+		r.Excess[conRange] = s.plan.rangeExcess(&t.Actuator, least, most, s.d.Values)
+	}
 	r.Excess[conDead] = s.plan.deadExcess(&t.Actuator, s.d.Values)
 	sum := positive(r.Excess[conReach]) + positive(r.Excess[conRange]) + positive(r.Excess[conDead])
 	for i := range t.Limits {
@@ -264,22 +276,6 @@ func (s *Screen) judge(r *Score) float64 {
 		}
 	}
 	return sum
-}
-
-// cover puts the exact coverage in place of the pose limits that count through it alone.
-func (s *Screen) cover(r *Score) {
-	if least, most := s.v.span(); least > most {
-		return // conReach tells it
-	}
-	share := s.coverage()
-	r.Excess[conReach], r.Excess[conRange], r.Excess[conSingular] = 0, 0, 0
-	for i := range s.task.Limits {
-		if s.task.Limits[i].Origin == "joints.base_swing" || s.task.Limits[i].Origin == "joints.platform_swing" {
-			r.Excess[firstLimit+i] = 0
-		}
-	}
-	r.Excess[conCoverage] = slack(s.task.Coverage - share)
-	r.coverage = share
 }
 
 // value is a goal's value for the design judged.

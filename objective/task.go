@@ -76,8 +76,11 @@ type Task struct {
 	Singular float64 // least 1/kappa of a pose that is not singular
 	Goals    []Goal
 	Limits   []Limit
-	// Coverage is the least share of poses at which every pose limit must hold.
-	// Below 1, reach, actuator range, swing and singular poses count through it alone.
+	// Coverage is the least share of poses at which every pose limit must hold: reach, passive stops,
+	// actuator range, no singularity, and every rating and limit on a measure that has a value per
+	// pose. Below 1, or where it is a goal, a pose at which one fails goes to coverage alone: it is
+	// left out of all other figures, which are over the poses that count. Limits on a design's own measures, on means
+	// and on mode_separation stay limits of the whole design, and one pose at least must count.
 	Coverage float64
 	// CoverageGoal is set when coverage is itself a goal: it is then computed exactly for every design.
 	CoverageGoal bool

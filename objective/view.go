@@ -209,6 +209,9 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 			cond = &ts[i].w
 		}
 	}
+	if from == 0 {
+		v.home(ts)
+	}
 	for k := from; k < to; k++ {
 		s := &v.task.samples[k]
 		v.keep = floor
@@ -221,25 +224,47 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 		if !v.at(s, k, need) {
 			v.lost++
 			for i := range ts {
-				ts[i].m.lost(v, &ts[i].w)
+				if !ts[i].m.Scouts || k < v.task.scouts {
+					ts[i].m.lost(v, &ts[i].w)
+				}
 			}
 			continue
-		}
-		for i := range v.n {
-			q := v.S.Q[i]
-			if q < v.least[i] {
-				v.least[i], v.leastAt[i] = q, k
-			}
-			if q > v.most[i] {
-				v.most[i], v.mostAt[i] = q, k
-			}
 		}
 		if matrix && v.isSingular() {
 			if v.singular++; v.singularAt < 0 {
 				v.singularAt = k
 			}
 		}
-		for i := range ts {
+		v.follow(ts)
+	}
+}
+
+// home asks at home the measures that want it.
+func (v *View) home(ts []tracker) {
+	for i := range ts {
+		if m := ts[i].m; m.Scouts {
+			home := Sample{Pose: kin.NewPose(kin.Coords{})}
+			if v.at(&home, -1, m.Need) {
+				m.Scan(v, &ts[i].w)
+			}
+		}
+	}
+}
+
+// follow brings the extreme coordinates and the trackers up to date with the pose in work, a required one.
+func (v *View) follow(ts []tracker) {
+	k := v.index
+	for i := range v.n {
+		q := v.S.Q[i]
+		if q < v.least[i] {
+			v.least[i], v.leastAt[i] = q, k
+		}
+		if q > v.most[i] {
+			v.most[i], v.mostAt[i] = q, k
+		}
+	}
+	for i := range ts {
+		if !ts[i].m.Scouts || k < v.task.scouts {
 			ts[i].m.Scan(v, &ts[i].w)
 		}
 	}
