@@ -149,6 +149,9 @@ func (m *arm) Move(p *Pose, s *State) {
 // Gap is +Inf: there is one arm alone.
 func (m *arm) Gap(*State) (gap float64, i, j int) { return math.Inf(1), -1, -1 }
 
+// GapBelow is Gap.
+func (m *arm) GapBelow(*State, float64) (gap float64, i, j int) { return math.Inf(1), -1, -1 }
+
 // Constraints are the couples about x and y, which the parallelograms take.
 func (m *arm) Constraints(_ *State, rows *[36]float64) int {
 	return unitConstraints(m.frame.Freedoms, rows)

@@ -133,3 +133,44 @@ func TestLegsThatShareAJoint(t *testing.T) {
 		t.Errorf("no pair: Gap = %g, %d, %d", gap, i, j)
 	}
 }
+
+// GapBelow is Gap where that is below keep, and nothing less than keep elsewhere but by 1e-11 m; the least gap over many poses
+// comes out the same with the least so far as keep, and most poses are then passed over.
+func TestGapBelow(t *testing.T) {
+	for _, f := range kin.Families() {
+		t.Run(f.Name, func(t *testing.T) {
+			rng := seeded(77)
+			m := f.Build(sound(f), offCentre())
+			least, kept := math.Inf(1), math.Inf(1)
+			passed := 0
+			for range 300 {
+				s := moved(t, m, kin.NewPose(randomCoords(rng, f, 1)))
+				gap, i, j := m.Gap(s)
+				least = math.Min(least, gap)
+				g, _, _ := m.GapBelow(s, kept)
+				kept = math.Min(kept, g)
+				if math.IsInf(g, 1) {
+					passed++
+				}
+				if math.IsInf(gap, 1) {
+					continue
+				}
+				for _, off := range []float64{-0.01, -1e-11, 1e-11, 0.001, 1} {
+					g, k, l := m.GapBelow(s, gap+off)
+					switch {
+					case off > 0 && (math.Abs(g-gap) > 1e-15 || k != i || l != j) && !(off < 1e-3 && g <= gap+1e-15):
+						t.Errorf("gap %v of legs %d, %d; kept %g above it: %v of %d, %d", gap, i, j, off, g, k, l)
+					case off < 0 && g < gap-1e-15:
+						t.Errorf("gap %v; kept %g below it: %v", gap, -off, g)
+					}
+				}
+			}
+			if math.Abs(kept-least) > 1e-11 {
+				t.Errorf("least gap %v, with keep %v", least, kept)
+			}
+			if passed < 200 {
+				t.Errorf("only %d of 300 poses passed over", passed)
+			}
+		})
+	}
+}

@@ -8,7 +8,8 @@ import (
 
 // linkPair is two legs of drives and rods. e is a fixed unit vector that points from
 // leg j to leg i at home: the distance of two links' projections on it is a lower
-// bound of their distance, sharp enough to skip most.
+// bound of their distance, sharp enough to skip most. Where home can be reached it is the
+// direction in which the two legs' links are nearest there.
 type linkPair struct {
 	i, j   int
 	e      Vec
@@ -44,15 +45,17 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 		crankCrank: crank, crankRod: (crank + s.Diameter) / 2, rodRod: s.Diameter,
 		thick: math.Max(crank, s.Diameter),
 	}
-	var middle [6]Vec
 	for i := range m.leg[:m.n] {
-		l := &m.leg[i]
-		ps.side[i] = r3.Scale(half, l.e3)
-		middle[i] = r3.Add(l.at, r3.Add(m.home, l.b))
-		if l.crank {
-			middle[i] = r3.Add(middle[i], r3.Add(l.at, r3.Scale(l.length, l.e1)))
-		}
+		ps.side[i] = r3.Scale(half, m.leg[i].e3)
 	}
+	var (
+		c closures
+		h State
+	)
+	for i := range m.leg[:m.n] {
+		c.w[i] = r3.Sub(r3.Add(m.home, m.leg[i].b), m.leg[i].at)
+	}
+	reached := m.close(&c, &h)
 	var dist [15]float64
 	for i := range m.n {
 		for j := i + 1; j < m.n; j++ {
@@ -63,9 +66,13 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 			foot, tip := r3.Norm(r3.Sub(a.at, b.at)), r3.Norm(r3.Sub(a.b, b.b))
 			small := oneJoint * (a.length + a.rod)
 			p := linkPair{
-				i: i, j: j, e: unit(r3.Sub(middle[i], middle[j])),
+				i: i, j: j,
 				cranks: a.crank && foot > small,
 				rods:   ps.twin || tip > small,
+			}
+			p.e = unit(r3.Sub(r3.Add(a.at, a.b), r3.Add(b.at, b.b)))
+			if reached {
+				p.e = ps.apart(&p, m, &h)
 			}
 			p.bi, p.bj = r3.Dot(p.e, a.at), r3.Dot(p.e, b.at)
 			p.oi, p.oj = r3.Dot(p.e, ps.side[i]), -r3.Dot(p.e, ps.side[j])
@@ -82,6 +89,47 @@ func pairLinks(m *rods, half float64, s *Setup) linkPairs {
 	return ps
 }
 
+// apart is the direction from leg j to leg i where their links are nearest in the posture s.
+func (ps *linkPairs) apart(p *linkPair, m *rods, s *State) Vec {
+	type link struct {
+		from, along Vec
+		length      float64
+		rod         bool
+	}
+	links := func(i int) (out []link) {
+		l := &m.leg[i]
+		for _, k := range [2]float64{-1, 1} {
+			out = append(out, link{r3.Add(s.End[i], r3.Scale(k, ps.side[i])), s.Rod[i], l.rod, true})
+			if !ps.twin {
+				break
+			}
+		}
+		if l.crank {
+			out = append(out, link{l.at, l.along(&s.End[i]), l.length, false})
+		}
+		return out
+	}
+	least, e := math.Inf(1), Vec{}
+	for _, x := range links(p.i) {
+		for _, y := range links(p.j) {
+			if x.rod && y.rod && !p.rods || !x.rod && !y.rod && !p.cranks {
+				continue
+			}
+			d := r3.Sub(x.from, y.from)
+			s, t := nearestOn(&d, &x.along, &y.along, x.length, y.length)
+			d = r3.Add(d, r3.Sub(r3.Scale(s, x.along), r3.Scale(t, y.along)))
+			if d2 := r3.Norm2(d); d2 < least {
+				least, e = d2, unit(d)
+			}
+		}
+	}
+	return e
+}
+
+// gapSlack is the share of a leg's size by which a gap has to be below keep to be found: more than all rounding
+// errors, so that gaps that stay the same from pose to pose, as those of platform joints do, are found once.
+const gapSlack = 1e-12
+
 // nearest is the least distance met so far: free is that between surfaces.
 type nearest struct{ free float64 }
 
@@ -96,9 +144,9 @@ func (n *nearest) see(d, u, v *Vec, lu, lv, thick float64) bool {
 	return true
 }
 
-// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least.
-func (ps *linkPairs) gap(m *rods, s *State) (gap float64, i, j int) {
-	n := nearest{free: math.Inf(1)}
+// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least, or not below keep.
+func (ps *linkPairs) gap(m *rods, s *State, keep float64) (gap float64, i, j int) {
+	n := nearest{free: keep - gapSlack*(m.leg[0].length+m.leg[0].rod)}
 	i, j = -1, -1
 	crank := m.leg[0].crank
 	for k := range ps.pair[:ps.n] {
@@ -139,6 +187,9 @@ func (ps *linkPairs) gap(m *rods, s *State) (gap float64, i, j int) {
 		if closer {
 			i, j = p.i, p.j
 		}
+	}
+	if i < 0 {
+		return math.Inf(1), i, j
 	}
 	return n.free, i, j
 }

@@ -66,11 +66,15 @@ func nearestFirst[P any](pairs []P, dist []float64) {
 	}
 }
 
-// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least. The
+// gap looks at the pairs in order and skips those whose bound shows that they cannot be the least, or not below keep. The
 // first three of a row of six are the unit vector along a leg, q are the lengths.
-func (ps *legPairs) gap(rows *[36]float64, q *[6]float64) (gap float64, i, j int) {
-	best := math.Inf(1)
+func (ps *legPairs) gap(rows *[36]float64, q *[6]float64, keep float64) (gap float64, i, j int) {
 	i, j = -1, -1
+	reach := keep + ps.diameter - gapSlack*q[0]
+	if reach < 0 {
+		return math.Inf(1), i, j
+	}
+	best := reach * reach
 	for k := range ps.pair[:ps.n] {
 		p := &ps.pair[k]
 		u := (*[6]float64)(rows[6*p.i : 6*p.i+6])
@@ -93,6 +97,9 @@ func (ps *legPairs) gap(rows *[36]float64, q *[6]float64) (gap float64, i, j int
 		if d2 := segmentGap2(&p.d, &un, &vn, lu, lv); d2 < best {
 			best, i, j = d2, p.i, p.j
 		}
+	}
+	if i < 0 {
+		return math.Inf(1), i, j
 	}
 	return math.Sqrt(best) - ps.diameter, i, j
 }

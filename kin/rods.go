@@ -120,7 +120,12 @@ func (m *rods) Serial(s *State) float64 {
 }
 
 // Gap is the least distance between the surfaces of the links of two legs.
-func (m *rods) Gap(s *State) (gap float64, i, j int) { return m.links.gap(m, s) }
+func (m *rods) Gap(s *State) (gap float64, i, j int) { return m.links.gap(m, s, math.Inf(1)) }
+
+// GapBelow is Gap where that is below keep.
+func (m *rods) GapBelow(s *State, keep float64) (gap float64, i, j int) {
+	return m.links.gap(m, s, keep)
+}
 
 // unreached says why the loop of leg i does not close, and gives false.
 func (s *State) unreached(i int, room float64) bool {

@@ -8,16 +8,25 @@ package kin
 // the system says nothing but to which end the distance falls; where such
 // segments cross, the distance may come out 3e-8 of their length too large.
 func segmentGap2(d, u, v *Vec, lu, lv float64) float64 {
+	s, t := nearestOn(d, u, v, lu, lv)
+	x := d.X + s*u.X - t*v.X
+	y := d.Y + s*u.Y - t*v.Y
+	z := d.Z + s*u.Z - t*v.Z
+	return x*x + y*y + z*z
+}
+
+// nearestOn gives the nearest points of two such segments by their distances from the starts.
+func nearestOn(d, u, v *Vec, lu, lv float64) (s, t float64) {
 	b := u.X*v.X + u.Y*v.Y + u.Z*v.Z
 	c := u.X*d.X + u.Y*d.Y + u.Z*d.Z
 	f := v.X*d.X + v.Y*d.Y + v.Z*d.Z
-	s, num := 0.0, b*f-c
+	num := b*f - c
 	if den := 1 - b*b; den > 1e-15 {
 		s = clamp(num/den, lu)
 	} else if num > 0 {
 		s = lu
 	}
-	t := b*s + f
+	t = b*s + f
 	if t < 0 {
 		t = 0
 		s = clamp(-c, lu)
@@ -25,10 +34,7 @@ func segmentGap2(d, u, v *Vec, lu, lv float64) float64 {
 		t = lv
 		s = clamp(b*lv-c, lu)
 	}
-	x := d.X + s*u.X - t*v.X
-	y := d.Y + s*u.Y - t*v.Y
-	z := d.Z + s*u.Z - t*v.Z
-	return x*x + y*y + z*z
+	return s, t
 }
 
 // clamp keeps x within [0, hi].

@@ -116,7 +116,12 @@ func (m *struts) Move(p *Pose, s *State) {
 
 // Gap is the least distance of two leg axes less the leg diameter.
 func (m *struts) Gap(s *State) (gap float64, i, j int) {
-	return m.pairs.gap(&s.J, &s.Q)
+	return m.pairs.gap(&s.J, &s.Q, math.Inf(1))
+}
+
+// GapBelow is Gap where that is below keep.
+func (m *struts) GapBelow(s *State, keep float64) (gap float64, i, j int) {
+	return m.pairs.gap(&s.J, &s.Q, keep)
 }
 
 // Constraints of a planar machine: the force along z and the couples about x and y. A six-legged platform has none.

@@ -162,12 +162,15 @@ func (m *tripod) Place(p *Pose) (Vec, Rot) {
 }
 
 // Gap is the least distance of two leg axes less the leg diameter.
-func (m *tripod) Gap(s *State) (gap float64, i, j int) {
+func (m *tripod) Gap(s *State) (gap float64, i, j int) { return m.GapBelow(s, math.Inf(1)) }
+
+// GapBelow is Gap where that is below keep.
+func (m *tripod) GapBelow(s *State, keep float64) (gap float64, i, j int) {
 	var rows [36]float64
 	for i := range 3 {
 		rows[6*i], rows[6*i+1], rows[6*i+2] = s.Rod[i].X, s.Rod[i].Y, s.Rod[i].Z
 	}
-	return m.pairs.gap(&rows, &s.Q)
+	return m.pairs.gap(&rows, &s.Q, keep)
 }
 
 // joint is the place of platform joint i from the tool point.

@@ -34,7 +34,8 @@ type View struct {
 	keep   float64
 	lo, hi [][6]float64 // efforts, by case
 	rate   [][6]float64 // rates, by case
-	gap    float64
+	gap    float64      // where it is above near, only known to be above
+	near   float64
 	gapI   int
 	gapJ   int
 	six    linalg.Six
@@ -82,7 +83,7 @@ func (v *View) begin(m kin.Machine) {
 		v.demands[c].prepare(&v.task.Cases[c], v.frame)
 	}
 	v.x = [36]float64{}
-	v.gapI, v.gapJ = -1, -1
+	v.near, v.gapI, v.gapJ = math.Inf(1), -1, -1
 	v.lost, v.singular, v.singularAt, v.seen = 0, 0, -1, 0
 	home := Sample{Pose: kin.NewPose(kin.Coords{})}
 	v.pose, v.index = &home, -1
@@ -169,7 +170,7 @@ func (v *View) at(s *Sample, index int, need Need) bool {
 		return false
 	}
 	if need&NeedGap != 0 {
-		v.gap, v.gapI, v.gapJ = v.machine.Gap(&v.S)
+		v.gap, v.gapI, v.gapJ = v.machine.GapBelow(&v.S, v.near)
 	}
 	if need&(NeedMatrix|NeedEfforts|NeedExact) != 0 {
 		v.factor()
@@ -203,12 +204,16 @@ func (v *View) isSingular() bool {
 func (v *View) walk(from, to int, need Need, ts []tracker) {
 	matrix := need&(NeedMatrix|NeedEfforts|NeedExact) != 0
 	floor := v.task.Singular * v.task.Singular
-	var cond *Worst
+	var cond, clear *Worst
 	for i := range ts {
-		if ts[i].m.Name == "conditioning" {
+		switch ts[i].m.Name {
+		case "conditioning":
 			cond = &ts[i].w
+		case "leg_clearance":
+			clear = &ts[i].w
 		}
 	}
+	defer func() { v.near = math.Inf(1) }()
 	if from == 0 {
 		v.home(ts)
 	}
@@ -219,6 +224,9 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 			v.keep = math.Inf(1)
 		} else if cond != nil && cond.Value > floor {
 			v.keep = cond.Value
+		}
+		if clear != nil {
+			v.near = clear.Value
 		}
 		v.seen++
 		if !v.at(s, k, need) {
