@@ -21,6 +21,27 @@ func (d *Design) Tightest() *Limit {
 	return least
 }
 
+// Broken are the limits that the design breaks. Coverage counts only if it is broken alone: else it
+// falls short because of the others.
+func (d *Design) Broken() []Limit {
+	var out []Limit
+	var coverage *Limit
+	for i := range d.Limits {
+		l := &d.Limits[i]
+		switch {
+		case l.Holds:
+		case l.Measure == "coverage":
+			coverage = l
+		default:
+			out = append(out, *l)
+		}
+	}
+	if len(out) == 0 && coverage != nil {
+		out = append(out, *coverage)
+	}
+	return out
+}
+
 // StrokeUsed is the difference between the longest and the shortest that any leg must be (m, or rad
 // of a crank); false if the record has no legs.
 func (d *Design) StrokeUsed() (Number, bool) {

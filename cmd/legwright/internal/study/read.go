@@ -110,6 +110,11 @@ func (f *Front) check() error {
 			}
 		}
 	}
+	for i := range f.Families {
+		if f.Families[i].Name == "" {
+			return fmt.Errorf("families[%d].name: is missing", i)
+		}
+	}
 	if f.Help != nil {
 		for i, r := range f.Help.Relaxations {
 			if r.Design < 0 || r.Design >= len(f.Help.Nearest) {

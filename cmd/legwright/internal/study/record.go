@@ -45,7 +45,8 @@ type Front struct {
 	Weights        map[string]float64 `json:"weights"` // of the goals, for the ranking
 	ReferencePoint []Number           `json:"reference_point"`
 	Hypervolume    Number             `json:"hypervolume"`
-	Designs        []Design           `json:"designs"` // best rank first
+	Designs        []Design           `json:"designs"`            // best rank first
+	Families       []FamilyLine       `json:"families,omitempty"` // a line for each, where a brief names several
 	Help           *Help              `json:"infeasible,omitempty"`
 	Notes          []string           `json:"notes"` // what holds for the whole study
 }
