@@ -21,7 +21,7 @@ func (s *Study) help(out *opt.Outcome, workers int) *study.Help {
 	h := &study.Help{Nearest: near[:min(nearest, len(near))]}
 	count := map[string]*study.Binding{}
 	for i := range near {
-		for _, l := range broken(&near[i]) {
+		for _, l := range near[i].Broken() {
 			b := count[l.Measure]
 			if b == nil {
 				b = &study.Binding{Constraint: l.Measure, Of: len(near), Least: study.Number(math.Inf(1))}
@@ -45,7 +45,7 @@ func (s *Study) help(out *opt.Outcome, workers int) *study.Help {
 	best := map[string]study.Relaxation{}
 	from := map[string]study.Design{}
 	for i := range all {
-		b := broken(&all[i])
+		b := all[i].Broken()
 		if len(b) != 1 {
 			continue
 		}
@@ -70,27 +70,6 @@ func (s *Study) help(out *opt.Outcome, workers int) *study.Help {
 		h.Relaxations = append(h.Relaxations, r)
 	}
 	return h
-}
-
-// broken are the limits that a design breaks. Coverage counts only if it is broken alone: else it
-// falls short because of the others.
-func broken(d *study.Design) []study.Limit {
-	var out []study.Limit
-	var coverage *study.Limit
-	for i := range d.Limits {
-		l := &d.Limits[i]
-		switch {
-		case l.Holds:
-		case l.Measure == "coverage":
-			coverage = l
-		default:
-			out = append(out, *l)
-		}
-	}
-	if len(out) == 0 && coverage != nil {
-		out = append(out, *coverage)
-	}
-	return out
 }
 
 func gapOf(r study.Relaxation) float64 { return math.Abs(float64(r.Needed - r.Bound)) }

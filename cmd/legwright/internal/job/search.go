@@ -71,6 +71,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	}
 	f.Designs = s.records(s.appraise(out.Front, r.Workers))
 	f.Notes = append(f.Notes, s.ends(f.Designs)...)
+	f.Compare(s.families(out, r.Workers))
 	if len(f.Designs) == 0 {
 		f.Help = s.help(out, r.Workers)
 	}
