@@ -30,36 +30,60 @@ func (a *Appraisal) notes(t *Task, l *poseLimits) {
 		}
 	}
 	for c := range t.Cases {
-		k := &t.Cases[c]
-		spin := followed(k.Angular, a.Machine.Frame().Freedoms)
-		w := spin.farthest()
-		if w == 0 {
-			continue
-		}
-		effort := 0.0
-		v.keep = 0
-		for i := range t.samples {
-			s := &t.samples[i]
-			if !k.In(s.Zone) || !l.counts(i) || !v.at(s, i, NeedMatrix|NeedEfforts) {
-				continue
+		if leg, left, effort := a.spinning(&t.Cases[c], c, t, l); left > 0.05*effort {
+			unit := "N"
+			if a.Plan.Family.Drive == kin.Rotary {
+				unit = "N m"
 			}
-			for j := range v.n {
-				effort = math.Max(effort, largest(v.lo[c][j], v.hi[c][j]))
-			}
-		}
-		left := 0.0
-		for i := range k.Loads {
-			l := &k.Loads[i]
-			r := sub(l.Centre, t.Tool)
-			if !a.Plan.Family.Has(kin.Roll) {
-				r.Z = 0 // distance from the axis of turning
-			}
-			left += l.Mass * w * w * norm(r)
-		}
-		if a.Plan.Family.Drive == kin.Linear && left > 0.05*effort {
-			note("case %q: terms in ω² are left out, and mass·ω²·|r| = %.3g N is more than 5 %% of the counted leg force %.3g N", k.Name, left, effort)
+			note("case %q: terms in ω² are left out, and mass·ω²·|r| may add %.3g %s to leg %d, which is more than 5 %% of the %.3g %s counted there",
+				t.Cases[c].Name, left, unit, leg+1, effort, unit)
 		}
 	}
+}
+
+// spinning is the leg with the largest share of what centripetal forces may add in a case to the
+// effort that is counted, both the largest over the poses. What they add is taken as that of a force
+// m ω² |r| at the tool point, in the direction in which the leg's effort is largest: a bound for
+// platforms that turn about z alone; about other axes moments come on top.
+func (a *Appraisal) spinning(k *Case, c int, t *Task, l *poseLimits) (leg int, left, effort float64) {
+	spin := followed(k.Angular, a.Machine.Frame().Freedoms)
+	w := spin.farthest()
+	force := 0.0
+	for i := range k.Loads {
+		o := &k.Loads[i]
+		r := sub(o.Centre, t.Tool)
+		if !a.Plan.Family.Has(kin.Roll) {
+			r.Z = 0 // distance from the axis of turning
+		}
+		force += o.Mass * w * w * norm(r)
+	}
+	if force == 0 {
+		return 0, 0, 0
+	}
+	v := l.v
+	v.keep = 0
+	var gain, most [6]float64
+	for i := range t.samples {
+		s := &t.samples[i]
+		if !k.In(s.Zone) || !l.counts(i) || !v.at(s, i, NeedMatrix|NeedEfforts) || v.sign == 0 {
+			continue
+		}
+		for j := range v.n {
+			g := kin.Vec{X: v.x[j], Y: v.x[6+j], Z: v.x[12+j]}
+			if !a.Plan.Family.Has(kin.Roll) {
+				g.Z = 0 // the force is square to the axis
+			}
+			gain[j] = math.Max(gain[j], norm(g))
+			most[j] = math.Max(most[j], largest(v.lo[c][j], v.hi[c][j]))
+		}
+	}
+	worst := 0.0
+	for j := range gain {
+		if share := gain[j] / most[j]; share > worst { // neither for a leg that nothing reaches
+			leg, worst = j, share
+		}
+	}
+	return leg, gain[leg] * force, most[leg]
 }
 
 // left tells how many poses do not count, and why.

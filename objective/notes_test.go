@@ -5,6 +5,8 @@ import (
 	"strings"
 	"testing"
 
+	"gonum.org/v1/gonum/mat"
+
 	"legwright/kin"
 )
 
@@ -18,38 +20,83 @@ func omega(a *Appraisal) bool {
 	return false
 }
 
-// The note on terms in ω² comes where mass ω² |r| passes 5 % of the counted effort: 1 % below that speed it is not there, 1 %
-// above it is. |r| is from the tool point; ω the largest angular speed of the set, the diagonal of a box.
-func TestNoteOnSpinning(t *testing.T) {
-	f := kin.FamilyNamed("6-UPS")
-	arm := kin.Vec{X: 0.3, Z: 0.4} // 0.5 m from the tool point
-	tool := kin.Vec{X: 0.05, Y: 0.02, Z: -0.1}
-	with := func(angular Set, mass float64) *Appraisal {
-		task := atHome()
-		task.Tool = tool
-		task.Cases = []Case{{Name: "spin", Loads: []Load{{Mass: mass, Centre: kin.Vec{X: tool.X + arm.X, Y: tool.Y, Z: tool.Z + arm.Z}}}, Angular: angular}}
-		task.Prepare()
-		return appraise(task, f, soundDesign(f))
+// gains are how much effort a unit force at the tool point can ask of each leg at home: the norms of the columns of the
+// inverse of J, by gonum, forces alone; in the plane alone if the platform only turns about z.
+func gains(t *testing.T, f *kin.Family, m kin.Machine) []float64 {
+	t.Helper()
+	home := kin.NewPose(kin.Coords{})
+	var s kin.State
+	m.Move(&home, &s)
+	n := len(f.Freedoms)
+	j := mat.NewDense(n, n, nil)
+	for i := range n {
+		for k, q := range f.Freedoms {
+			j.Set(i, k, s.J[6*i+int(q)])
+		}
 	}
-	rest := with(Set{}, 100)
-	if omega(rest) {
-		t.Error("a note without any speed")
+	var x mat.Dense
+	if err := x.Inverse(j); err != nil {
+		t.Fatal(err)
 	}
-	limit := math.Sqrt(0.05 * value(t, rest, "leg_force") / (100 * 0.5))
-	third := limit / math.Sqrt(3)
-	for _, c := range []struct {
-		part float64
-		want bool
-	}{{0.99, false}, {1.01, true}} {
-		ball := Set{Kind: AnyWay, Radius: c.part * limit}
-		box := Set{Kind: PerAxis, Half: kin.Vec{X: c.part * third, Y: c.part * third, Z: c.part * third}}
-		for _, s := range []Set{ball, box} {
-			if got := omega(with(s, 100)); got != c.want {
-				t.Errorf("%+v: a note %v, want %v", s, got, c.want)
+	out := make([]float64, n)
+	for i := range out {
+		for k, q := range f.Freedoms {
+			if !q.Angular() && (q != kin.Z || f.Has(kin.Roll)) {
+				out[i] = math.Hypot(out[i], x.At(k, i))
 			}
 		}
-		if omega(with(ball, 0)) {
-			t.Error("a note without any mass")
+	}
+	return out
+}
+
+// The note on terms in ω² comes where mass ω² |r| may add more than 5 % to the counted effort of a leg, force or torque: 1 % below that
+// speed it is not there, 1 % above it is. |r| is from the tool point, square to z if the platform turns about z
+// alone; ω the largest angular speed of the set, the diagonal of a box.
+func TestNoteOnSpinning(t *testing.T) {
+	arm := kin.Vec{X: 0.3, Z: 0.4} // 0.5 m from the tool point, 0.3 m in plan
+	for name, far := range map[string]float64{"6-UPS": 0.5, "3-RRR": 0.3, "delta-4": 0.3} {
+		f := kin.FamilyNamed(name)
+		tool := kin.Vec{X: 0.05, Y: 0.02, Z: -0.1}
+		with := func(angular Set, mass float64) *Appraisal {
+			task := atHome()
+			task.Tool = tool
+			task.Cases = []Case{{Name: "spin", Loads: []Load{
+				{Mass: mass, Centre: kin.Vec{X: tool.X + arm.X, Y: tool.Y, Z: tool.Z + arm.Z}},
+				{ForceSpread: kin.Vec{X: 400, Y: 300}},
+			}, Angular: angular}}
+			task.Prepare()
+			return appraise(task, f, soundDesign(f))
+		}
+		rest := with(Set{}, 100)
+		if omega(rest) {
+			t.Error("a note without any speed")
+		}
+		limit := math.Inf(1)
+		for i, g := range gains(t, f, rest.Machine) {
+			effort := math.Max(rest.Legs[i].Push, rest.Legs[i].Pull)
+			if g > 1e-9 {
+				limit = math.Min(limit, math.Sqrt(0.05*effort/(100*far*g)))
+			}
+		}
+		box := kin.Vec{Z: limit}
+		if f.Has(kin.Roll) {
+			box = kin.Vec{X: limit / math.Sqrt(3), Y: limit / math.Sqrt(3), Z: limit / math.Sqrt(3)}
+		}
+		for _, c := range []struct {
+			part float64
+			want bool
+		}{{0.99, false}, {1.01, true}} {
+			for _, s := range []Set{
+				{Kind: AnyWay, Radius: c.part * limit},
+				{Kind: PerAxis, Half: kin.Vec{X: c.part * box.X, Y: c.part * box.Y, Z: c.part * box.Z}},
+			} {
+				if got := omega(with(s, 100)); got != c.want {
+					t.Errorf("%s, %+v: a note %v, want %v", name, s, got, c.want)
+				}
+				if omega(with(s, 0)) {
+					t.Error("a note without any mass")
+				}
+			}
 		}
 	}
 }
