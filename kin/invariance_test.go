@@ -116,10 +116,11 @@ func TestTurningAndMovingTheWhole(t *testing.T) {
 		r := g.Mul(&p.R)
 		q := kin.Pose{P: g.Apply(p.P), R: r.Mul(&back)}
 		s, o := moved(t, m, p), moved(t, other, q)
-		if f.Drive == kin.Rotary { // angles from +x
+		if f.Drive == kin.Rotary { // angles from the outward direction
 			for i := range f.Legs {
-				s.Q[i] = math.Remainder(s.Q[i]+turn.Z, 2*math.Pi)
-				o.Q[i] = math.Remainder(o.Q[i], 2*math.Pi)
+				a, b := m.Frame().Base[i], j.Base[i]
+				s.Q[i] = math.Remainder(s.Q[i]+math.Atan2(a.Y, a.X)+turn.Z, 2*math.Pi)
+				o.Q[i] = math.Remainder(o.Q[i]+math.Atan2(b.Y, b.X), 2*math.Pi)
 			}
 		}
 		sameLegs(t, f, m, other, s, o, g, func(i int) int { return i })

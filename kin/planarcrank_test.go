@@ -7,6 +7,7 @@ import (
 	"legwright/kin"
 
 	"gonum.org/v1/gonum/mat"
+	"gonum.org/v1/gonum/spatial/r3"
 )
 
 // stageE1 is the 3-RRR of E1 in the given modes.
@@ -30,6 +31,12 @@ func stageE1(t *testing.T, modes [3]float64) (kin.Machine, kin.Pose) {
 		"modes_1": modes[0], "modes_2": modes[1], "modes_3": modes[2],
 	}, &kin.Setup{Length: 1})
 	return m, kin.NewPose(kin.Coords{kin.X: d.Pose[0], kin.Y: d.Pose[1], kin.Yaw: d.Pose[2] * deg})
+}
+
+// azimuthE1 is the direction of a pivot of E1 from +x, from where E1 counts the angle of its crank.
+func azimuthE1(m kin.Machine, leg int) float64 {
+	p := m.Frame().Base[leg]
+	return math.Atan2(p.Y, p.X)
 }
 
 // modeOf reads a sign of E1 or E2, which label modes the other way round.
@@ -60,7 +67,7 @@ func TestWorkingModesOfThePlanarCrankStage(t *testing.T) {
 		m, p := stageE1(t, [3]float64{modeOf(label[:1]), modeOf(label[1:2]), modeOf(label[2:])})
 		s := moved(t, m, p)
 		for i, c := range []string{"th1", "th2", "th3"} {
-			near(t, label+" angle", math.Remainder(s.Q[i]-number(t, row[c]), 2*math.Pi), 0, 1e-11)
+			near(t, label+" angle", math.Remainder(s.Q[i]+azimuthE1(m, i)-number(t, row[c]), 2*math.Pi), 0, 1e-11)
 		}
 		if label != "+++" {
 			continue
@@ -95,6 +102,7 @@ func TestForwardSolutionsOfThePlanarCrankStage(t *testing.T) {
 			q := moved(t, m, want).Q
 			same := true
 			for i, a := range e1.Expected.Angles {
+				a -= azimuthE1(m, i)
 				turns := math.Round((q[i] - a) / (2 * math.Pi))
 				same = same && math.Abs(q[i]-a-2*math.Pi*turns) < 1e-10
 				q[i] = a + 2*math.Pi*turns
@@ -108,6 +116,28 @@ func TestForwardSolutionsOfThePlanarCrankStage(t *testing.T) {
 		}
 		if !found {
 			t.Errorf("not located: %v", want.Coords())
+		}
+	}
+}
+
+// Cranks of a machine that is its own image under a third of a turn stand at one angle at home, whatever the azimuths.
+func TestCrankAnglesOfASymmetricStage(t *testing.T) {
+	for _, first := range []float64{90, -17, 200} {
+		values := map[string]float64{"base_radius": 0.4, "platform_radius": 0.1, "proximal": 0.25, "distal": 0.25, "home_heading": 20 * deg}
+		for i := range 3 {
+			leg := string(rune('1' + i))
+			values["leg_azimuths_"+leg] = (first + 120*float64(i)) * deg
+			values["base_offset_"+leg], values["platform_offset_"+leg] = 5*deg, -10*deg
+		}
+		m := built("3-RRR", values, &kin.Setup{})
+		s := moved(t, m, atHome())
+		near(t, "second crank", s.Q[1], s.Q[0], 1e-14)
+		near(t, "third crank", s.Q[2], s.Q[0], 1e-14)
+		// The angle at a pivot between the outward direction and the elbow.
+		for i, p := range m.Frame().Base {
+			arm := r3.Sub(s.End[i], p)
+			angle := math.Atan2(p.X*arm.Y-p.Y*arm.X, p.X*arm.X+p.Y*arm.Y)
+			near(t, "angle from the outward direction", s.Q[i], angle, 1e-14)
 		}
 	}
 }

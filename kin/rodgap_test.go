@@ -75,7 +75,7 @@ func TestGapOfPlanarCranksAnywhere(t *testing.T) {
 			j.Base, j.Platform = append(j.Base, pivot), append(j.Platform, flat())
 			legs = append(legs, rodLeg{
 				crank: true, foot: pivot, rod: d[f.Index("distal")],
-				end: func(q float64) kin.Vec { return r3.Add(pivot, polar(r, q, 0)) },
+				end: func(q float64) kin.Vec { return r3.Add(pivot, polar(r, math.Atan2(pivot.Y, pivot.X)+q, 0)) },
 			})
 		}
 		m := f.Outright(j, setup)

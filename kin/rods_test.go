@@ -74,9 +74,10 @@ func rodLegs(f *kin.Family, d []float64) []rodLeg {
 			}
 			l.side = polar(v("rod_spacing")/2, azimuth+90*deg, 0)
 		case "3-RRR":
-			l.foot = polar(v("base_radius"), v("leg_azimuths_"+leg)+v("base_offset_"+leg), 0)
+			azimuth := v("leg_azimuths_"+leg) + v("base_offset_"+leg)
+			l.foot = polar(v("base_radius"), azimuth, 0)
 			l.mode, l.rod = v("modes_"+leg), v("distal")
-			turn(v("proximal"), kin.Vec{X: 1}, kin.Vec{Y: 1})
+			turn(v("proximal"), polar(1, azimuth, 0), polar(1, azimuth+90*deg, 0))
 		case "five-bar":
 			l.foot = kin.Vec{X: (float64(i) - 0.5) * v("spacing")}
 			l.mode, l.rod = v("modes_"+leg), v("distal")

@@ -1,5 +1,7 @@
 package kin
 
+import "math"
+
 // The places of the dimensions of 3-RRR.
 const (
 	rrrBaseRadius = iota
@@ -22,9 +24,11 @@ func threeRRR() *Family {
 330° from +x unless leg_azimuths says otherwise), each moved along the circle by its base_offset; the platform
 joints stand on their circle at the same azimuths plus platform_offset, in the platform's own frame. proximal is
 the crank, from pivot to elbow, distal the link from elbow to platform joint. At home the two origins
-coincide and the platform is turned by home_heading, counter-clockwise. Crank angles are counted from +x,
-counter-clockwise, within half a turn of the angle at home, which lies between -180° and 180°. The mode of a
-leg is the sign of the turn from its crank to its link: 1 where the link bends off counter-clockwise.`,
+coincide and the platform is turned by home_heading, counter-clockwise. A crank's angle is 0 where it points
+straight away from the base origin (at its pivot's own azimuth: leg_azimuths plus base_offset; of a pivot on the base
+origin given outright: along +x) and grows counter-clockwise; it is counted within half a turn of the angle at home, which
+lies between -180° and 180°. The mode of a leg is the sign of the turn from its crank to its link: 1 where the link
+bends off counter-clockwise.`,
 		Dimensions: []Dimension{
 			{Name: "base_radius", Unit: Metre, Low: 0.25, High: 0.5, Joints: true, Text: "radius of the circle of the crank pivots about the base origin"},
 			{Name: "platform_radius", Unit: Metre, Low: 0.05, High: 0.2, Joints: true, Text: "radius of the circle of the platform joint centres about the platform origin"},
@@ -51,12 +55,13 @@ leg is the sign of the turn from its crank to its link: 1 where the link bends o
 	f.Dimensions = append(f.Dimensions, legAzimuths()...)
 	f.Dimensions = append(f.Dimensions, jointOffsets()...)
 	f.Dimensions = append(f.Dimensions, workingModes(3, "turn from crank to link")...)
-	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 360*deg)...)
+	f.Dimensions = append(f.Dimensions, crankRange("crank", -180*deg, 180*deg, 30*deg, 180*deg)...)
+	f.Dimensions[len(f.Dimensions)-2].Text = "least angle of a crank, counter-clockwise from the outward direction at its pivot"
 	freedoms := f.Freedoms
-	stage := func(pivots, platform []Vec, home Vec, homeRot Rot, d []float64, s *Setup) Machine {
+	stage := func(pivots, out, platform []Vec, home Vec, homeRot Rot, d []float64, s *Setup) Machine {
 		var drives []drive
 		for i, p := range pivots {
-			drives = append(drives, newCrank(p, Vec{X: 1}, Vec{Y: 1}, d[rrrProximal], d[rrrDistal], d[rrrModes+i]))
+			drives = append(drives, newCrank(p, out[i], Vec{X: -out[i].Y, Y: out[i].X}, d[rrrProximal], d[rrrDistal], d[rrrModes+i]))
 		}
 		return &turningRods{newRods(freedoms, drives, platform, home, homeRot, 0, s)}
 	}
@@ -66,14 +71,19 @@ leg is the sign of the turn from its crank to its link: 1 where the link bends o
 		if t.Length == 0 {
 			t.Length = d[rrrPlatformRadius]
 		}
-		return stage(onCircle(d[rrrBaseRadius], a), onCircle(d[rrrPlatformRadius], b), Vec{}, RPY(0, 0, d[rrrHomeHeading]), d, &t)
+		return stage(onCircle(d[rrrBaseRadius], a), onCircle(1, a), onCircle(d[rrrPlatformRadius], b), Vec{}, RPY(0, 0, d[rrrHomeHeading]), d, &t)
 	}
 	f.Outright = func(j *Joints, s *Setup) Machine {
 		t := planarSetup(s)
 		if t.Length == 0 {
 			t.Length = meanRadius(j.Platform)
 		}
-		return stage(j.Base, j.Platform, j.Home, j.HomeRot, j.Values, &t)
+		var out []Vec
+		for _, p := range j.Base {
+			sin, cos := math.Sincos(math.Atan2(p.Y, p.X))
+			out = append(out, Vec{X: cos, Y: sin})
+		}
+		return stage(j.Base, out, j.Platform, j.Home, j.HomeRot, j.Values, &t)
 	}
 	return f
 }
