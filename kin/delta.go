@@ -57,7 +57,7 @@ func delta() *Family {
 func deltaDimensions() []Dimension {
 	d := []Dimension{
 		{Name: "shoulder_radius", Unit: Metre, Low: 0.08, High: 0.25, Text: "radius of the circle of the shoulders (arm pivots) about the base origin"},
-		{Name: "platform_radius", Unit: Metre, Low: 0.03, High: 0.1, Text: "radius of the circle of the platform joint centres about the platform origin"},
+		{Name: "platform_radius", Unit: Metre, Low: 0.03, High: 0.1, Zero: true, Text: "radius of the circle of the platform joint centres about the platform origin; may be 0"},
 		{Name: "arm", Unit: Metre, Low: 0.15, High: 0.35, Text: "length of an arm from shoulder to knee"},
 		{Name: "rod", Unit: Metre, Low: 0.35, High: 0.9, Text: "length of the rods from knee to platform joint"},
 		{Name: "rod_spacing", Unit: Metre, Low: 0.03, High: 0.12, Optional: true, Default: 0.06, Text: "distance between the two rods of a parallelogram"},

@@ -38,6 +38,7 @@ type Dimension struct {
 	Low, High float64 // a usual range for a machine that a person could just lift, SI
 	Optional  bool    // may be left out of a brief: Default then holds
 	Default   float64
+	Zero      bool // may be 0, though the usual range lies above
 	Joints    bool // not wanted where joint centres are given outright
 }
 

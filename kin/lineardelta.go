@@ -38,7 +38,7 @@ outright (point and direction of each) take the place of the dimensions that pla
 their parallelograms lie level and square to the rail (of an upright rail: square to the line from the axis too).`,
 		Dimensions: []Dimension{
 			{Name: "rail_radius", Unit: Metre, Low: 0.15, High: 0.4, Joints: true, Text: "radius of the circle of the rails' starts about the base origin"},
-			{Name: "platform_radius", Unit: Metre, Low: 0.03, High: 0.1, Joints: true, Text: "radius of the circle of the platform joint centres about the platform origin"},
+			{Name: "platform_radius", Unit: Metre, Low: 0.03, High: 0.1, Zero: true, Joints: true, Text: "radius of the circle of the platform joint centres about the platform origin; may be 0"},
 			{Name: "rail_slant", Unit: Radian, Low: 0, High: 40 * deg, Joints: true, Text: "angle of a rail from the vertical, leaning to the axis"},
 			{Name: "rod", Unit: Metre, Low: 0.3, High: 0.7, Text: "length of the rods from carriage to platform joint"},
 			{Name: "rod_spacing", Unit: Metre, Low: 0.03, High: 0.12, Optional: true, Default: 0.06, Text: "distance between the two rods of a parallelogram"},
