@@ -139,31 +139,49 @@ func missed(l *FamilyLine, nearest *Design) string {
 
 // beaten says how far a family that has no design on the front is behind.
 func (f *Front) beaten(l *FamilyLine, best map[string]Number) string {
-	var behind, level []string
+	var behind, equal []string
 	for i := range f.Goals {
 		g := &f.Goals[i]
 		if by := behindBy(g, l.Best[g.Measure], best[g.Measure]); by != "" {
 			behind = append(behind, by+" in "+g.Measure)
 		} else {
-			level = append(level, g.Measure)
+			equal = append(equal, g.Measure)
 		}
 	}
 	t := "every one of its designs is beaten"
 	if len(behind) > 0 {
 		t += "; at its best it is behind the front by " + list(behind)
 	}
-	if len(level) > 0 {
-		t += "; as good as the front in " + list(level)
+	if len(equal) > 0 {
+		t += "; as good as the front in " + list(equal)
 	}
 	return t
 }
 
+// level is the relative difference below which two families do equally well in a goal.
+const level = 0.005
+
 // merits says what a family on the front is good for.
 func (f *Front) merits(l *FamilyLine, best map[string]Number) string {
-	var leads []string
+	var leads, levels []string
 	for i := range f.Goals {
-		if m := f.Goals[i].Measure; l.Best[m] == best[m] {
+		m := f.Goals[i].Measure
+		near := func(v Number) bool {
+			return v == best[m] || math.Abs(float64(v-best[m])) <= level*math.Abs(float64(best[m]))
+		}
+		if !near(l.Best[m]) {
+			continue
+		}
+		alone := true
+		for k := range f.Families {
+			o := &f.Families[k]
+			v, ok := o.Best[m]
+			alone = alone && (o == l || !ok || !near(v))
+		}
+		if alone {
 			leads = append(leads, m)
+		} else {
+			levels = append(levels, m)
 		}
 	}
 	t := fmt.Sprintf("%d of the %d designs of the front", l.OnFront, len(f.Designs))
@@ -172,11 +190,15 @@ func (f *Front) merits(l *FamilyLine, best map[string]Number) string {
 	}
 	switch {
 	case len(leads) == len(f.Goals):
-		return t + "; the best of every goal"
+		return t + "; leads in every goal"
+	case len(leads) > 0 && len(levels) > 0:
+		return t + "; leads in " + list(leads) + ", level with the best in " + list(levels)
 	case len(leads) > 0:
-		return t + "; the best " + list(leads)
+		return t + "; leads in " + list(leads)
+	case len(levels) > 0:
+		return t + "; level with the best in " + list(levels)
 	}
-	return t + "; the best of no goal, good for compromises"
+	return t + "; leads in no goal, its designs are compromises"
 }
 
 // behindBy is by how much a value falls short of the best, "" if by less than 0.05 %.

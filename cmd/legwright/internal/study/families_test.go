@@ -41,10 +41,10 @@ func TestCompareFamilies(t *testing.T) {
 	want := []FamilyLine{
 		{Name: "6-UPS", Evaluations: 500, Feasible: 300, OnFront: 3, Share: 0.75,
 			Best: map[string]Number{"conditioning": 0.5, "leg_power": 180, "footprint": 0.7},
-			Why:  "3 of the 4 designs of the front; the best of every goal"},
+			Why:  "3 of the 4 designs of the front; leads in conditioning and footprint, level with the best in leg_power"},
 		{Name: "6-PUS", Evaluations: 300, Feasible: 100, OnFront: 1, Share: 0.25,
 			Best: map[string]Number{"conditioning": 0.35, "leg_power": 220, "footprint": 0.8},
-			Why:  "1 of the 4 designs of the front; the best of no goal, good for compromises"},
+			Why:  "1 of the 4 designs of the front; leads in no goal, its designs are compromises"},
 		{Name: "3-RPS", Evaluations: 120, Feasible: 7,
 			Best: map[string]Number{"conditioning": 0.3, "leg_power": 180, "footprint": 1.4},
 			Why:  "every one of its designs is beaten; at its best it is behind the front by 40 % in conditioning and 100 % in footprint; as good as the front in leg_power"},
