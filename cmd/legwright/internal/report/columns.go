@@ -97,18 +97,27 @@ func (d *designs) margin(keep int) column {
 	return c
 }
 
-// strokeUsed is the travel between the shortest and the longest leg.
-func (d *designs) strokeUsed(keep int) column {
-	k := units.Length
-	for _, r := range d.rows {
-		k, _, _ = study.DriveKinds(r.Family)
+// strokeUsed has the travel between the shortest and the longest leg, and the range between the least
+// and the greatest angle of a crank, in a column each, as far as there are such designs.
+func (d *designs) strokeUsed(keep int) (cols []column) {
+	for _, k := range []units.Kind{units.Length, units.Angle} {
+		some := false
+		c := d.figures("stroke used", keep, scale{kind: k}, func(r *study.Design) (study.Number, bool) {
+			v, ok := r.StrokeUsed()
+			drive, _, _ := study.DriveKinds(r.Family)
+			ok = ok && drive == k
+			some = some || ok
+			return v, ok
+		})
+		c.head = "stroke\nused"
+		if k != units.Length {
+			c.name, c.head = "range used", "range\nused"
+		}
+		if some {
+			cols = append(cols, c)
+		}
 	}
-	c := d.figures("stroke used", keep, scale{kind: k}, (*study.Design).StrokeUsed)
-	c.head = "stroke\nused"
-	if k != units.Length {
-		c.name, c.head = "range used", "range\nused"
-	}
-	return c
+	return cols
 }
 
 // has tells whether any of the designs has the measure.

@@ -47,7 +47,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 		cols = append(cols, d.measure(g.Measure, 0))
 	}
 	cols = append(cols, d.tightest(0), d.margin(0))
-	needs := []column{d.id(), d.strokeUsed(0)}
+	needs := append([]column{d.id()}, d.strokeUsed(0)...)
 	for _, m := range []string{"stroke", "leg_min"} {
 		if d.has(m) && !goal(f, m) {
 			needs = append(needs, d.measure(m, 0))
@@ -69,6 +69,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 		s.say(margins)
 	}
 	s.gap()
+	s.families(f)
 	s.steps(f)
 	s.leftOut(f.Poses, f.Notes, study.Caution)
 	if p.Dir != "" {

@@ -22,6 +22,7 @@ func infeasible(w io.Writer, f *study.Front, p Page) error {
 		s.say("The search was interrupted, so there may be some.")
 	}
 	s.gap()
+	s.families(f)
 	if h := f.Help; h != nil {
 		s.binding(h)
 		number, first := numbers(h.Nearest)

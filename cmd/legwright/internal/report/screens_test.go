@@ -29,6 +29,12 @@ var screens = []struct {
 	}},
 	{"failing", func(w io.Writer, p Page) error { return Appraisal(w, broken(), p) }},
 	{"infeasible", func(w io.Writer, p Page) error { return FirstScreen(w, cramped(), p) }},
+	{"families", func(w io.Writer, p Page) error { return FirstScreen(w, drives(), p) }},
+	{"nofamily", func(w io.Writer, p Page) error {
+		f := cramped()
+		f.Families = drives().Families[2:]
+		return FirstScreen(w, f, p)
+	}},
 }
 
 func TestScreens(t *testing.T) {

@@ -179,7 +179,11 @@ func (st *step) words(f *study.Front, from, gained int) string {
 	if len(stays) > 0 {
 		t += "; " + strings.Join(stays, ", ") + " about the same"
 	}
-	return t + ": design " + b.ID
+	t += ": design " + b.ID
+	if b.Family != a.Family {
+		t += ", a " + study.Clean(b.Family)
+	}
+	return t
 }
 
 // change says how a measure changes from a to b: "8.1 % less leg_force (2140 to 1970 N)"; lengths and

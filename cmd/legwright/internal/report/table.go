@@ -43,6 +43,10 @@ func Table(w io.Writer, f *study.Front, top int, p Page) error {
 	if d.limited() && !among("margin", left) {
 		s.say(margins)
 	}
+	if len(f.Families) > 0 {
+		s.gap()
+		s.families(f)
+	}
 	s.say("Rank and score: closeness to the ideal under the weights (TOPSIS), 1 at best.")
 	if n < len(f.Designs) {
 		s.say(fmt.Sprintf("%d of %d designs; --top %d shows all.", n, len(f.Designs), len(f.Designs)))
