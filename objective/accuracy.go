@@ -6,7 +6,7 @@ import "math"
 // in every actuator: exact over the 2ⁿ⁻¹ sign patterns, in Gray-code order.
 func (v *View) worstShift(first int, unit float64) float64 {
 	if v.sign == 0 {
-		return inf
+		return inf()
 	}
 	e := v.task.Actuator.Error * unit
 	var s [3]float64
@@ -42,7 +42,7 @@ func positionError() *Measure {
 		Name: "position_error", Unit: Metre, Sense: Smaller, Need: NeedMatrix,
 		Text:   "largest displacement of the tool point when every actuator is off by ±actuator.error",
 		Source: "first order, exact over the signs (common practice, no source)",
-		Inputs: []string{"actuator.error"}, Lost: inf,
+		Inputs: []string{"actuator.error"}, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			if s := v.worstShift(0, 1); s > w.Value {
 				w.set(v, s, -1, -1)
@@ -56,7 +56,7 @@ func angleError() *Measure {
 		Name: "angle_error", Unit: Radian, Sense: Smaller, Need: NeedMatrix,
 		Text:   "largest rotation of the platform when every actuator is off by ±actuator.error",
 		Source: "first order, exact over the signs (common practice, no source)",
-		Inputs: []string{"actuator.error"}, Has: turns, Lost: inf,
+		Inputs: []string{"actuator.error"}, Has: turns, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			if s := v.worstShift(3, v.invLc); s > w.Value {
 				w.set(v, s, -1, -1)

@@ -115,7 +115,7 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	d.Machine = p.build(t, a.Values)
 	a.Machine = d.Machine
 	v := newView(t)
-	v.free = p.Family.Free
+	v.serve(p.Family)
 	v.begin(d.Machine)
 
 	var ts []tracker
@@ -162,8 +162,12 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 		default:
 			r.Value = t.share(good)
 		}
+		if m.Scouts && math.IsNaN(r.Value) {
+			a.Notes = append(a.Notes, unknownModes)
+			continue
+		}
 		if math.IsNaN(r.Value) {
-			r.Value = inf // of a range that no pose has sized
+			r.Value = inf() // of a range that no pose has sized
 		}
 		if (m.Name == "conditioning" || m.Name == "regularity") && r.Value < nearSingular && r.Pose != nil {
 			r.Kind = v.kindAt(r.Pose)
@@ -258,6 +262,9 @@ func (a *Appraisal) judge(t *Task, good int, v *View) {
 		l := &t.Limits[i]
 		r := a.Reading(l.Measure.Name)
 		if r == nil {
+			if l.Measure.Scouts { // unknown, which is not enough
+				add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.Unit, AtLeast: l.AtLeast, Bound: l.Bound, Value: l.Measure.Lost}, math.Inf(1))
+			}
 			continue
 		}
 		add(Verdict{Name: l.Measure.Name, Origin: l.Origin, Unit: l.Measure.UnitOf(p.Family), AtLeast: l.AtLeast, Bound: l.Bound, Value: r.Value},

@@ -12,7 +12,7 @@ func bucklingMargin() *Measure {
 		Text:   "least ratio of the Euler load of a leg, at its length in that pose, or of its rod, to its push there",
 		Source: "L. Euler 1757: P = π² E I / (K L)², I = π d⁴/64 (from memory)",
 		Inputs: []string{"legs.rod_diameter", "legs.modulus"}, Has: legged,
-		Start: inf, Lost: 0,
+		Start: inf(), Lost: 0,
 		Scan: func(v *View, w *Worst) {
 			l := &v.task.Legs
 			d2 := l.RodDiameter * l.RodDiameter

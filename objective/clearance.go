@@ -17,7 +17,7 @@ func legClearance() *Measure {
 			}
 			return 0.05
 		},
-		Start: inf, Lost: -inf,
+		Start: inf(), Lost: -inf(),
 		Scan: func(v *View, w *Worst) {
 			if v.gap < w.Value {
 				w.set(v, v.gap, v.gapI, -1)
@@ -43,7 +43,7 @@ func jointSpacing() *Measure {
 // spacing leaves out joints nearer than 1e-9 of the plate's size: a double joint
 // reached through two azimuths differs by rounding.
 func spacing(joints []kin.Vec) float64 {
-	size, least := 0.0, inf
+	size, least := 0.0, inf()
 	for _, a := range joints {
 		size = math.Max(size, norm(a))
 	}

@@ -15,7 +15,7 @@ func deflection() *Measure {
 		Name: "deflection", Unit: Metre, Sense: Smaller, Need: NeedMatrix,
 		Text:   "largest displacement of the tool point under the cases' loads: exact over per-axis sets (up to 12 components, their corners), a bound over sets of given magnitude",
 		Source: "linear elastic legs, rigid plates (common practice, no source)",
-		Inputs: []string{"actuator.stiffness"}, Lost: inf,
+		Inputs: []string{"actuator.stiffness"}, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			for _, c := range v.active[v.pose.Zone] {
 				if d := v.deflect(&v.demands[c]); d > w.Value {
@@ -30,7 +30,7 @@ func deflection() *Measure {
 // per-axis sets and the sharpest bound of each magnitude set.
 func (v *View) deflect(d *demand) float64 {
 	if v.sign == 0 {
-		return inf
+		return inf()
 	}
 	// flex is the 3×6 map from a wrench (moments over Lc) to the tool point's displacement.
 	var flex [18]float64

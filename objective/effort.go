@@ -10,7 +10,7 @@ const effortSource = "principle of virtual work, transpose of the inverse Jacobi
 func effort(name, text string, unit Unit, has func(*kin.Family) bool, part func(lo, hi float64) float64) *Measure {
 	return &Measure{
 		Name: name, Text: text, Unit: unit, Sense: Smaller, Need: NeedEfforts,
-		Source: effortSource, Has: has, Lost: inf,
+		Source: effortSource, Has: has, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			for _, c := range v.active[v.pose.Zone] {
 				lo, hi := &v.lo[c], &v.hi[c]

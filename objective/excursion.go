@@ -25,7 +25,7 @@ const (
 // platform's distance from the base origin); a failure narrower than that may be stepped over.
 func Excurse(t *Task, a *Appraisal) []Excursion {
 	v := newView(t)
-	v.free = a.Plan.Family.Free
+	v.serve(a.Plan.Family)
 	v.begin(a.Machine)
 	d := Design{Family: a.Plan.Family, Values: a.Values, Machine: a.Machine}
 	l := newPoseLimits(t, v, a.Plan, &d)

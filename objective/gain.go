@@ -29,7 +29,7 @@ func gainLeast() *Measure {
 	return &Measure{
 		Name: "gain_least", Unit: Ratio, Rotary: MetrePerRadian, Sense: Larger, Need: NeedMatrix,
 		Text:   "least platform speed per unit of actuator speed, in the slowest direction (families with one kind of freedom)",
-		Source: gainSource, Has: oneKind, Start: inf, Lost: 0,
+		Source: gainSource, Has: oneKind, Start: inf(), Lost: 0,
 		Scan: func(v *View, w *Worst) {
 			if _, hi := v.extremes(); 1/hi < w.Value {
 				w.set(v, 1/hi, -1, -1)
@@ -42,7 +42,7 @@ func gainMost() *Measure {
 	return &Measure{
 		Name: "gain_most", Unit: Ratio, Rotary: MetrePerRadian, Sense: Smaller, Need: NeedMatrix,
 		Text:   "largest platform speed per unit of actuator speed, in the fastest direction (families with one kind of freedom)",
-		Source: gainSource, Has: oneKind, Lost: inf,
+		Source: gainSource, Has: oneKind, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			lo, _ := v.extremes()
 			if g := 1 / math.Max(lo, 0); g > w.Value {

@@ -156,6 +156,9 @@ func (l *Limit) excess(t *Task, value float64) float64 {
 // Holds tells whether the value keeps the limit, within Tolerance.
 func (l *Limit) Holds(t *Task, value float64) bool { return l.excess(t, value) <= Tolerance }
 
+// inf is the worst value of a measure without an upper bound, and where the search for a least one starts.
+func inf() float64 { return math.Inf(1) }
+
 // tracker follows one measure through a walk.
 type tracker struct {
 	m *Measure

@@ -17,7 +17,7 @@ func parasiticMotion() *Measure {
 	return &Measure{
 		Name: "parasitic_motion", Unit: Metre, Sense: Smaller, Has: tiltsAlone,
 		Text:   "largest distance of the platform origin from the z axis, which tilting moves it off",
-		Source: parasiticSource, Lost: inf, Finish: math.Sqrt,
+		Source: parasiticSource, Lost: inf(), Finish: math.Sqrt,
 		Scale: func(*Task) float64 { return 0.01 },
 		Scan: func(v *View, w *Worst) {
 			if o, _ := v.machine.Place(v.stand); o.X*o.X+o.Y*o.Y > w.Value {
@@ -31,7 +31,7 @@ func parasiticTurn() *Measure {
 	return &Measure{
 		Name: "parasitic_turn", Unit: Radian, Sense: Smaller, Has: tiltsAlone,
 		Text:   "largest absolute yaw of the platform, which tilting turns it by",
-		Source: parasiticSource, Lost: inf,
+		Source: parasiticSource, Lost: inf(),
 		Scale: func(*Task) float64 { return 0.01 },
 		Scan: func(v *View, w *Worst) {
 			_, r := v.machine.Place(v.stand)

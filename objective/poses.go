@@ -20,7 +20,7 @@ type PoseRow struct {
 // Poses lists a design's poses by zone and in the order of generation or of the file.
 func Poses(t *Task, a *Appraisal) []PoseRow {
 	v := newView(t)
-	v.free = a.Plan.Family.Free
+	v.serve(a.Plan.Family)
 	v.begin(a.Machine)
 	d := Design{Family: a.Plan.Family, Values: a.Values, Machine: a.Machine}
 	l := newPoseLimits(t, v, a.Plan, &d)

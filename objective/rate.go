@@ -1,18 +1,14 @@
 package objective
 
 import (
-	"math"
-
 	"legwright/kin"
 )
-
-var inf = math.Inf(1)
 
 func rate(name, text string, unit Unit, has func(*kin.Family) bool) *Measure {
 	return &Measure{
 		Name: name, Text: text, Unit: unit, Sense: Smaller, Need: NeedRates,
 		Source: "rows of the inverse Jacobian; exact over the sets by their support functions (common practice, no source)",
-		Has:    has, Lost: inf,
+		Has:    has, Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			for _, c := range v.active[v.pose.Zone] {
 				r := &v.rate[c]
@@ -38,7 +34,7 @@ func legPower() *Measure {
 	return &Measure{
 		Name: "leg_power", Unit: Watt, Sense: Smaller, Need: NeedEfforts | NeedRates,
 		Text:   "bound of the actuator power: largest effort times largest rate of one leg at one pose and case",
-		Source: "common practice, no source", Lost: inf,
+		Source: "common practice, no source", Lost: inf(),
 		Scan: func(v *View, w *Worst) {
 			for _, c := range v.active[v.pose.Zone] {
 				for i := 0; i < v.n && i < 6; i++ {

@@ -151,6 +151,7 @@ func TestTheWorstIsWhereItIsSaidToBe(t *testing.T) {
 		task.Prepare()
 		a := appraise(task, f, soundDesign(f))
 		v := newView(task)
+		v.serve(f)
 		v.begin(a.Machine)
 		for _, r := range a.Readings {
 			if r.Pose == nil {

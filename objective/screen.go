@@ -70,7 +70,7 @@ func (t *Task) Constraints() []string {
 // NewScreen makes scratch for judging designs of a plan.
 func NewScreen(t *Task, p *Plan) *Screen {
 	s := &Screen{task: t, plan: p, v: newView(t)}
-	s.v.free = p.Family.Free
+	s.v.serve(p.Family)
 	s.d = Design{Family: p.Family, Values: make([]float64, len(p.Specs))}
 	if t.soft() {
 		s.limits = newPoseLimits(t, s.v, p, &s.d)

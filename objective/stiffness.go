@@ -7,10 +7,14 @@ import (
 )
 
 // compliance is that of leg i at its actuator: the actuator itself, and in series the
-// rod and two joints, whose force is the actuator's effort itself in a prismatic leg, else the
-// effort times the linear part of the row of J. A parallelogram counts as one rod.
+// rod and the leg's joints, whose force is the actuator's effort itself in a prismatic leg, else the
+// effort times the linear part of the row of J. A parallelogram counts as one rod. Families without legs
+// have neither rods nor such joints.
 func (v *View) compliance(i int) float64 {
 	t := v.task
+	if v.legless {
+		return 1 / t.Actuator.Stiffness
+	}
 	axial := 0.0
 	if r := t.Legs.RodDiameter; r > 0 && t.Legs.Modulus > 0 {
 		axial = v.rod(i) / (t.Legs.Modulus * math.Pi * r * r / 4)
@@ -37,7 +41,7 @@ func (v *View) rod(i int) float64 {
 // point, rows from first on: the sum over the legs of c·x xᵀ.
 func (v *View) softest(first int, unit float64) float64 {
 	if v.sign == 0 {
-		return inf
+		return inf()
 	}
 	var a [6]float64
 	for i := range v.n {
@@ -59,7 +63,7 @@ func stiffness() *Measure {
 		Text:   "least stiffness of the tool point against a force, in its softest direction",
 		Source: "C. Gosselin 1990, IEEE Trans. Robotics Automation 6:377 (from memory)",
 		Inputs: []string{"actuator.stiffness"},
-		Start:  inf, Lost: 0,
+		Start:  inf(), Lost: 0,
 		Scan: func(v *View, w *Worst) {
 			if k := 1 / v.softest(0, 1); k < w.Value {
 				w.set(v, k, -1, -1)
@@ -74,7 +78,7 @@ func turnStiffness() *Measure {
 		Text:   "least stiffness of the platform against a moment, in its softest direction",
 		Source: "C. Gosselin 1990, IEEE Trans. Robotics Automation 6:377 (from memory)",
 		Inputs: []string{"actuator.stiffness"}, Has: turns,
-		Start: inf, Lost: 0,
+		Start: inf(), Lost: 0,
 		Scan: func(v *View, w *Worst) {
 			if k := 1 / v.softest(3, v.invLc); k < w.Value {
 				w.set(v, k, -1, -1)

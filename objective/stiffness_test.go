@@ -194,3 +194,23 @@ func TestDeflectionIsABound(t *testing.T) {
 		}
 	})
 }
+
+// Of an arm without legs the drives alone give way: neither joints.stiffness nor a rod diameter changes anything, and
+// the stiffness goes with that of the drives; of an arm with rods the joints count.
+func TestNoLegsNoRods(t *testing.T) {
+	for name, counts := range map[string]bool{"level-arm": false, "delta-4": true} {
+		f := kin.FamilyNamed(name)
+		with := func(actuator, joint, rod float64) float64 {
+			task := atHome()
+			task.Actuator.Stiffness, task.Joints.Stiffness = actuator, joint
+			task.Legs.RodDiameter, task.Legs.Modulus = rod, 2.1e11
+			task.Prepare()
+			return value(t, appraise(task, f, soundDesign(f)), "stiffness")
+		}
+		plain := with(1e5, 0, 0)
+		near(t, "stiffness of the drives twice", with(2e5, 0, 0)/plain, 2, 1e-12)
+		if got := with(1e5, 1e6, 0.02) != plain; got != counts {
+			t.Errorf("%s: joints and rods count %v, want %v", name, got, counts)
+		}
+	}
+}

@@ -26,7 +26,7 @@ type Actuator struct {
 // Joints are the passive joints.
 type Joints struct {
 	Axis      kin.Axis
-	Stiffness float64 // of one joint along the leg, N/m; 0 if not given
+	Stiffness float64 // of all passive joints of one leg together, along the leg, N/m; 0 if not given
 }
 
 // Legs are the legs' bodies.

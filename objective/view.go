@@ -15,8 +15,9 @@ type View struct {
 	machine  kin.Machine
 	frame    *kin.Frame
 	invLc    float64
-	n        int // legs, and freedoms
-	free     int // actuators, the last ones, without a range (kin.Family.Free)
+	n        int  // legs, and freedoms
+	free     int  // actuators, the last ones, without a range (kin.Family.Free)
+	legless  bool // the family has no legs, only drives
 	homeSign int
 	homeQ    [6]float64
 	demands  []demand
@@ -73,6 +74,9 @@ func newView(t *Task) *View {
 	}
 	return v
 }
+
+// serve prepares for machines of the family.
+func (v *View) serve(f *kin.Family) { v.free, v.legless = f.Free, !legged(f) }
 
 // begin starts a walk of a machine at home.
 func (v *View) begin(m kin.Machine) {
