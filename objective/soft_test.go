@@ -15,7 +15,7 @@ func partTask(t *testing.T, f *kin.Family) (*Task, *Plan) {
 		task := richTask(seeded(191), f)
 		task.Zones = []Zone{ranged(f, Box, scale, 120)}
 		task.Cases = []Case{{Name: "all", Loads: randomLoads(seeded(192), perAxis)[:1], Linear: Set{Kind: AnyWay, Radius: 0.3}}}
-		task.Coverage = 0.4
+		task.Coverage = 0.7
 		task.Singular = 0.02
 		task.Prepare()
 		p := sizedPlan(task, f, soundDesign(f))
