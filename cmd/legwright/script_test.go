@@ -20,13 +20,18 @@ func TestMain(m *testing.M) {
 }
 
 // Each file under testdata/script is one story of commands. `rc N COMMAND…` runs a
-// command that must end with status N.
+// command that must end with status N. $BRIEFS is testdata/briefs.
 func TestScripts(t *testing.T) {
+	briefs, err := filepath.Abs("../../testdata/briefs")
+	if err != nil {
+		t.Fatal(err)
+	}
 	testscript.Run(t, testscript.Params{
 		Dir:           "testdata/script",
 		UpdateScripts: *update,
 		Setup: func(e *testscript.Env) error {
 			e.Setenv("NO_COLOR", "1")
+			e.Setenv("BRIEFS", briefs)
 			return nil
 		},
 		Cmds: map[string]func(*testscript.TestScript, bool, []string){

@@ -22,7 +22,7 @@ func (r *reader) measure(n *node) (*KnownMeasure, bool) {
 		}
 	}
 	if len(without) > 0 {
-		r.refuse(n, fmt.Sprintf("%s has no value for %s", name, strings.Join(without, ", ")), "measures for all families here: "+strings.Join(r.common(), ", "))
+		r.refuse(n, fmt.Sprintf("%s has no value for %s%s", name, strings.Join(without, ", "), r.whose(m, without)), "measures for all families here: "+strings.Join(r.common(), ", "))
 		return nil, false
 	}
 	if push, turn := r.drives(); m.Turn != units.Ratio && turn {
@@ -36,6 +36,28 @@ func (r *reader) measure(n *node) (*KnownMeasure, bool) {
 	}
 	r.measures = append(r.measures, measureUse{n, m})
 	return m, true
+}
+
+// whose says how the families without a measure of efforts or rates are driven, where others are driven
+// otherwise.
+func (r *reader) whose(m *KnownMeasure, without []string) string {
+	if push, turn := r.drives(); !push || !turn {
+		return ""
+	}
+	drive := "turn"
+	switch m.Kind {
+	case units.Force, units.Speed:
+	case units.Torque, units.AngularSpeed:
+		drive = "push"
+	default:
+		return ""
+	}
+	for _, f := range r.families {
+		if slices.Contains(without, f.Name) && f.Rotary != (drive == "turn") {
+			return ""
+		}
+	}
+	return ", whose actuators " + drive
 }
 
 // common lists the measures that every family has.
