@@ -25,8 +25,9 @@ var (
 	measures = regexp.MustCompile("(?s)<!-- measures -->\n.*?<!-- /measures -->")
 )
 
-// The session of the README is what the program prints. It runs the embedded example
-// whole, so it is left out of short runs; last bits differ between platforms.
+// The sessions of the README are what the program prints. They run whole examples, so
+// they are left out of short runs; last bits differ between platforms. What goes to
+// /dev/null there is run all the same.
 func TestReadmeSession(t *testing.T) {
 	if testing.Short() {
 		t.Skip("runs the whole embedded example")
@@ -35,7 +36,11 @@ func TestReadmeSession(t *testing.T) {
 		t.Skip("the text is that of amd64")
 	}
 	text := read(t, readme)
-	t.Chdir(t.TempDir())
+	dir := t.TempDir()
+	if err := os.CopyFS(filepath.Join(dir, "testdata/briefs"), os.DirFS("../../testdata/briefs")); err != nil {
+		t.Fatal(err)
+	}
+	t.Chdir(dir)
 	now := console.ReplaceAllStringFunc(text, func(block string) string {
 		var out strings.Builder
 		out.WriteString("```console\n")
@@ -44,11 +49,15 @@ func TestReadmeSession(t *testing.T) {
 			if !ok {
 				continue
 			}
+			command, silent := strings.CutSuffix(command, " > /dev/null")
 			var stdout, stderr bytes.Buffer
 			if got := run(strings.Fields(command), &stdout, &stderr); got != exitDone {
 				t.Errorf("%s: status %d\n%s", line, got, stderr.String())
 			}
-			out.WriteString(line + "\n" + stdout.String())
+			out.WriteString(line + "\n")
+			if !silent {
+				out.WriteString(stdout.String())
+			}
 		}
 		return out.String() + "```"
 	})
