@@ -106,19 +106,21 @@ func (m *arm) Move(p *Pose, s *State) {
 		return
 	}
 	across := math.Sqrt(room)
-	elbow := math.Atan2(across, along)
 	// The upper arm's direction is that to the wrist, turned by the angle at the shoulder.
 	u, v := (2*m.upper*m.upper+along)/(2*m.upper*d2), m.mode*across/(2*m.upper*d2)
 	c2, s2 := u*w-v*z, u*z+v*w
 	c3, s3 := (w-m.upper*c2)/m.fore, (z-m.upper*s2)/m.fore
 
-	var ok [3]bool
-	s.Q[0] = math.Atan2(y, x)
-	s.Q[1], ok[0] = m.upperStop.on(math.Atan2(s2, c2))
-	s.Q[2], ok[1] = m.foreStop.on(math.Atan2(s3, c3))
-	_, ok[2] = m.elbowStop.on(elbow)
 	cx, cy := x/r, y/r // the plane of the arm
-	s.Q[3] = math.Atan2(sin*cx-cos*cy, cos*cx+sin*cy)
+	fold := 1 / (2 * m.upper * m.fore)
+	cs := [6]float64{cx, c2, c3, cos*cx + sin*cy, along * fold}
+	sn := [6]float64{cy, s2, s3, sin*cx - cos*cy, across * fold}
+	var ok [3]bool
+	angles(5, &cs, &sn, &s.Q)
+	s.Q[1], ok[0] = m.upperStop.on(s.Q[1])
+	s.Q[2], ok[1] = m.foreStop.on(s.Q[2])
+	_, ok[2] = m.elbowStop.on(s.Q[4])
+	s.Q[4] = 0
 	for i, within := range ok {
 		if !within {
 			s.Fail, s.Leg, s.What = Stopped, 1+i%2, [3]string{"upper arm", "forearm", "parallelogram"}[i]
@@ -132,7 +134,7 @@ func (m *arm) Move(p *Pose, s *State) {
 	side := (ty*cx - tx*cy) * m.invLc
 	column := (*[6]float64)(s.J[0:6])
 	column[0], column[1], column[5] = -cy/r, cx/r, lead/r
-	det := m.mode * across / (2 * m.upper * m.fore) // sin(θ2-θ3)
+	det := m.mode * across * fold // sin(θ2-θ3)
 	bar := func(row *[6]float64, c, sn, length float64) {
 		k := 1 / (length * det)
 		row[0], row[1], row[2], row[5] = -c*cx*k, -c*cy*k, -sn*k, -c*side*k

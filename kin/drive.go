@@ -88,9 +88,8 @@ func (m *rods) turn(c *closures, s *State) bool {
 			return s.unreached(i, room)
 		}
 		h := l.mode * math.Sqrt(room)
-		inv := 1 / (rho2 * h)
-		c.rate[i] = l.lever * rho2 * inv
-		inv *= h
+		inv := 1 / rho2
+		c.rate[i] = l.lever / h
 		cs[i], sn[i] = (a*k+b*h)*inv, (b*k-a*h)*inv
 		// the rod in the crank's frame: along the crank, across it, along its axis
 		dx, dy := (k-l.length)*l.invRod-l.ua.X, h*l.invRod-l.ua.Y

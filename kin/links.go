@@ -116,8 +116,7 @@ func (ps *linkPairs) apart(p *linkPair, m *rods, s *State) Vec {
 				continue
 			}
 			d := r3.Sub(x.from, y.from)
-			s, t := nearestOn(&d, &x.along, &y.along, x.length, y.length)
-			d = r3.Add(d, r3.Sub(r3.Scale(s, x.along), r3.Scale(t, y.along)))
+			d = segmentApart(&d, &x.along, &y.along, x.length, y.length)
 			if d2 := r3.Norm2(d); d2 < least {
 				least, e = d2, unit(d)
 			}
@@ -157,12 +156,12 @@ func (ps *linkPairs) gap(m *rods, s *State, keep float64) (gap float64, i, j int
 		ei, ej := p.e.X*ea.X+p.e.Y*ea.Y+p.e.Z*ea.Z, p.e.X*eb.X+p.e.Y*eb.Y+p.e.Z*eb.Z
 		ti := ei + a.rod*(p.e.X*ua.X+p.e.Y*ua.Y+p.e.Z*ua.Z)
 		tj := ej + b.rod*(p.e.X*ub.X+p.e.Y*ub.Y+p.e.Z*ub.Z)
-		ri, rj := lesser(ei, ti)-p.oi, greater(ej, tj)+p.oj
+		ri, rj := min(ei, ti)-p.oi, max(ej, tj)+p.oj
 		ci, cj := ri, rj
 		if crank {
-			ci, cj = lesser(p.bi, ei), greater(p.bj, ej)
+			ci, cj = min(p.bi, ei), max(p.bj, ej)
 		}
-		if lesser(ci, ri)-greater(cj, rj)-ps.thick >= n.free {
+		if min(ci, ri)-max(cj, rj)-ps.thick >= n.free {
 			continue
 		}
 		closer := false
@@ -244,18 +243,4 @@ func (ps *linkPairs) crankAndRods(n *nearest, crank *rodLeg, c *Vec, rod *rodLeg
 	x, y := Vec{X: d.X + o.X, Y: d.Y + o.Y, Z: d.Z + o.Z}, Vec{X: d.X - o.X, Y: d.Y - o.Y, Z: d.Z - o.Z}
 	closer := n.see(&x, c, &s.Rod[leg], crank.length, rod.rod, ps.crankRod)
 	return n.see(&y, c, &s.Rod[leg], crank.length, rod.rod, ps.crankRod) || closer
-}
-
-func lesser(a, b float64) float64 {
-	if b < a {
-		return b
-	}
-	return a
-}
-
-func greater(a, b float64) float64 {
-	if b > a {
-		return b
-	}
-	return a
 }

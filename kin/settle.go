@@ -11,6 +11,9 @@ func Settle(m Machine, p *Pose) Pose {
 	if !f.Tied {
 		return *p
 	}
+	if t, ok := m.(*tripod); ok {
+		return t.settle(p)
+	}
 	origin, rot := m.Place(p)
 	back := Rot{f.HomeRot[0], f.HomeRot[3], f.HomeRot[6], f.HomeRot[1], f.HomeRot[4], f.HomeRot[7], f.HomeRot[2], f.HomeRot[5], f.HomeRot[8]}
 	home := r3.Add(f.Home, f.HomeRot.Apply(f.Tool))
