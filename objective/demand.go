@@ -15,6 +15,7 @@ type demand struct {
 	w0     [6]float64 // wrench that is the same at every pose
 	dw     [6]float64 // ± on it, per base axis
 	spread bool       // dw is not zero
+	turns  bool       // the platform has a rotational freedom
 	body   []body
 	point  []point
 	linear Set // speeds
@@ -69,6 +70,9 @@ func (d *demand) prepare(c *Case, f *kin.Frame) {
 		d.dw[2] += l.ForceSpread.Z
 	}
 	d.spread = d.dw != [6]float64{}
+	for _, q := range f.Freedoms {
+		d.turns = d.turns || q.Angular()
+	}
 }
 
 // wrench moves bodies and points to the pose and gives the nominal wrench there.
@@ -105,14 +109,22 @@ func (d *demand) efforts(p *kin.Pose, g kin.Vec, inv float64, x *[36]float64, n 
 		if i > 5 {
 			break
 		}
-		a, b, c, e, f, h := x[i], x[6+i], x[12+i], x[18+i], x[24+i], x[30+i]
-		mid := (a*w[0] + b*w[1] + c*w[2]) + (e*w[3] + f*w[4] + h*w[5])
+		a, b, c := x[i], x[6+i], x[12+i]
+		mid := a*w[0] + b*w[1] + c*w[2]
 		half := 0.0
+		dw := &d.dw
 		if d.spread {
-			dw := &d.dw
-			half = (abs(a)*dw[0] + abs(b)*dw[1] + abs(c)*dw[2]) + (abs(e)*dw[3] + abs(f)*dw[4] + abs(h)*dw[5])
+			half = abs(a)*dw[0] + abs(b)*dw[1] + abs(c)*dw[2]
 		}
-		e, f, h = e*inv, f*inv, h*inv
+		var e, f, h float64
+		if d.turns {
+			e, f, h = x[18+i], x[24+i], x[30+i]
+			mid += e*w[3] + f*w[4] + h*w[5]
+			if d.spread {
+				half += abs(e)*dw[3] + abs(f)*dw[4] + abs(h)*dw[5]
+			}
+			e, f, h = e*inv, f*inv, h*inv
+		}
 		for k := range d.body {
 			half += d.body[k].reach(p, a, b, c, e, f, h)
 		}
@@ -164,7 +176,10 @@ func (d *demand) rates(j *[36]float64, n int, out *[6]float64) {
 			break
 		}
 		r := (*[6]float64)(j[6*i : 6*i+6])
-		out[i] = d.linear.reach(r[0], r[1], r[2]) + d.spin.reach(r[3], r[4], r[5])
+		out[i] = d.linear.reach(r[0], r[1], r[2])
+		if d.turns {
+			out[i] += d.spin.reach(r[3], r[4], r[5])
+		}
 	}
 }
 

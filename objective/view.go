@@ -132,9 +132,14 @@ func (v *View) factor() {
 	}
 	v.ratio2 = v.small.Ratio2(v.keep)
 	for k, f := range v.frame.Freedoms {
-		own, x := v.small.X[n*k:n*k+n], v.x[6*int(f):6*int(f)+n]
-		for i := range x {
-			x[i] = own[i]
+		own, x := v.small.X[n*k:], v.x[6*int(f):]
+		switch n { // a copy of fixed length is a move or two
+		case 2:
+			*(*[2]float64)(x) = [2]float64(own)
+		case 3:
+			*(*[3]float64)(x) = [3]float64(own)
+		default:
+			copy(x[:n], own)
 		}
 	}
 	if v.frame.Tied {
