@@ -39,11 +39,12 @@ func (s *sheet) verdict(d *study.Design) {
 			failed++
 		}
 	}
+	covered := d.Measures["coverage"]
 	switch {
-	case d.Feasible && failed == 0:
+	case failed == 0 && covered < 1:
+		s.say(fmt.Sprintf("Every limit holds at the poses that count: %.4g %% of the %d sampled ones. Every figure is over these alone.", 100*float64(covered), d.Poses))
+	case failed == 0:
 		s.say(fmt.Sprintf("Every limit holds at the %d sampled poses.", d.Poses))
-	case d.Feasible:
-		s.say(fmt.Sprintf("The required coverage is reached over the %d sampled poses; limits that fail at single poses count through it.", d.Poses))
 	default:
 		s.b.WriteString(s.alarm(fmt.Sprintf("%s at the %d sampled poses.", plural(failed, "limit FAILS", "limits FAIL"), d.Poses)) + "\n")
 	}

@@ -98,7 +98,7 @@ func (s *sheet) legs(d *study.Design, g *gazetteer) {
 	if len(d.Legs) == 0 {
 		return
 	}
-	s.heading("Legs, over all required poses and home")
+	s.heading("Legs, over home and all poses that count")
 	q, effort, rate := study.DriveKinds(d.Family)
 	names := [3]string{"shortest", "longest", "push"}
 	pull := "pull"
