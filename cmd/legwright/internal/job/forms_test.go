@@ -97,7 +97,10 @@ func withForm(f *kin.Family, at int, text string) string {
 // Every form of every dimension of every family goes from a brief into the plan, and a design of the
 // plan through its design file back to the same values.
 func TestFormsOfEveryDimension(t *testing.T) {
-	for _, f := range kin.Families() {
+	for k, f := range kin.Families() {
+		if testing.Short() && k%4 != 1 {
+			continue // one family in four is enough for short runs
+		}
 		for at := range f.Dimensions {
 			for _, c := range formsOf(&f.Dimensions[at]) {
 				name := f.Name + " " + f.Dimensions[at].Name + " " + c.name
