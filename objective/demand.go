@@ -105,26 +105,22 @@ func (d *demand) wrench(p *kin.Pose, g kin.Vec, inv float64) [6]float64 {
 // load's sets taken independently.
 func (d *demand) efforts(p *kin.Pose, g kin.Vec, inv float64, x *[36]float64, n int, lo, hi *[6]float64) {
 	w := d.wrench(p, g, inv)
+	if !d.turns {
+		d.pushes(&w, x, n, lo, hi)
+		return
+	}
 	for i := range n {
 		if i > 5 {
 			break
 		}
-		a, b, c := x[i], x[6+i], x[12+i]
-		mid := a*w[0] + b*w[1] + c*w[2]
+		a, b, c, e, f, h := x[i], x[6+i], x[12+i], x[18+i], x[24+i], x[30+i]
+		mid := (a*w[0] + b*w[1] + c*w[2]) + (e*w[3] + f*w[4] + h*w[5])
 		half := 0.0
-		dw := &d.dw
 		if d.spread {
-			half = abs(a)*dw[0] + abs(b)*dw[1] + abs(c)*dw[2]
+			dw := &d.dw
+			half = (abs(a)*dw[0] + abs(b)*dw[1] + abs(c)*dw[2]) + (abs(e)*dw[3] + abs(f)*dw[4] + abs(h)*dw[5])
 		}
-		var e, f, h float64
-		if d.turns {
-			e, f, h = x[18+i], x[24+i], x[30+i]
-			mid += e*w[3] + f*w[4] + h*w[5]
-			if d.spread {
-				half += abs(e)*dw[3] + abs(f)*dw[4] + abs(h)*dw[5]
-			}
-			e, f, h = e*inv, f*inv, h*inv
-		}
+		e, f, h = e*inv, f*inv, h*inv
 		for k := range d.body {
 			half += d.body[k].reach(p, a, b, c, e, f, h)
 		}
@@ -132,6 +128,27 @@ func (d *demand) efforts(p *kin.Pose, g kin.Vec, inv float64, x *[36]float64, n 
 			q := &d.point[k]
 			s := &q.l.ForceSpread
 			half += abs(a+f*q.r.Z-h*q.r.Y)*s.X + abs(b+h*q.r.X-e*q.r.Z)*s.Y + abs(c+e*q.r.Y-f*q.r.X)*s.Z
+		}
+		lo[i], hi[i] = mid-half, mid+half
+	}
+}
+
+// pushes is efforts for a platform that does not turn: moments are the joints' affair.
+func (d *demand) pushes(w *[6]float64, x *[36]float64, n int, lo, hi *[6]float64) {
+	for i := range n {
+		if i > 5 {
+			break
+		}
+		a, b, c := x[i], x[6+i], x[12+i]
+		mid := a*w[0] + b*w[1] + c*w[2]
+		half := abs(a)*d.dw[0] + abs(b)*d.dw[1] + abs(c)*d.dw[2]
+		for k := range d.body {
+			l := d.body[k].l
+			half += l.Linear.reach(l.Mass*a, l.Mass*b, l.Mass*c)
+		}
+		for k := range d.point {
+			s := &d.point[k].l.ForceSpread
+			half += abs(a)*s.X + abs(b)*s.Y + abs(c)*s.Z
 		}
 		lo[i], hi[i] = mid-half, mid+half
 	}
@@ -171,15 +188,21 @@ func (b *body) reach(p *kin.Pose, a, bb, c, e, f, h float64) float64 {
 
 // rates fills the largest rate of each leg over the case's speeds.
 func (d *demand) rates(j *[36]float64, n int, out *[6]float64) {
+	if !d.turns {
+		for i := range n {
+			if i > 5 {
+				break
+			}
+			out[i] = d.linear.reach(j[6*i], j[6*i+1], j[6*i+2])
+		}
+		return
+	}
 	for i := range n {
 		if i > 5 {
 			break
 		}
 		r := (*[6]float64)(j[6*i : 6*i+6])
-		out[i] = d.linear.reach(r[0], r[1], r[2])
-		if d.turns {
-			out[i] += d.spin.reach(r[3], r[4], r[5])
-		}
+		out[i] = d.linear.reach(r[0], r[1], r[2]) + d.spin.reach(r[3], r[4], r[5])
 	}
 }
 
