@@ -212,10 +212,7 @@ func (r *reader) designDimensions(n *node, f *KnownFamily, o outright) (out []De
 
 // designValues reads the value of a dimension, or its values for each leg.
 func (r *reader) designValues(n *node, d *KnownDimension) []float64 {
-	s := anySign
-	if d.Positive {
-		s = aboveZero
-	}
+	s := d.sign()
 	if d.Each > 1 && (n.shape == list || d.Kind != units.Sign) {
 		values := make([]float64, d.Each)
 		if !r.fill(n, values, d.Kind, s) {

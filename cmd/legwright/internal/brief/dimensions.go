@@ -182,10 +182,7 @@ func (r *reader) form(n *node, d *KnownDimension, name string) (Dimension, bool)
 }
 
 func (r *reader) dimensionValue(n *node, d *KnownDimension) (float64, bool) {
-	s := anySign
-	if d.Positive {
-		s = aboveZero
-	}
+	s := d.sign()
 	v, _, ok := r.quantity(n, d.Kind)
 	return v, ok && r.signed(n, v, s)
 }

@@ -30,7 +30,19 @@ type KnownDimension struct {
 	Sizable  bool   // may be `sized`
 	Optional bool   // the family has a default
 	Positive bool   // must be above 0
+	Zero     bool   // may be 0, but not less
 	Places   Places // what it places; a design file may give that outright instead
+}
+
+// sign is what the dimension's value may be.
+func (d *KnownDimension) sign() sign {
+	switch {
+	case d.Positive:
+		return aboveZero
+	case d.Zero:
+		return notNegative
+	}
+	return anySign
 }
 
 // Places says what a dimension is for.

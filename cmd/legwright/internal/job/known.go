@@ -60,7 +60,7 @@ func knownFamily(f *kin.Family) brief.KnownFamily {
 		}
 		kd := brief.KnownDimension{
 			Name: d.Name, Kind: study.DimensionUnit(d.Unit), Optional: d.Optional,
-			Sizable: d.Role != kin.Shape, Positive: d.Unit == kin.Metre && d.Low > 0 && !d.Zero,
+			Sizable: d.Role != kin.Shape, Positive: d.Unit == kin.Metre && d.Low > 0 && !d.Zero, Zero: d.Zero,
 		}
 		if listed {
 			kd.Name, kd.Each = name, 1
