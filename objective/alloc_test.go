@@ -10,6 +10,9 @@ import (
 // Judging allocates for the machine, never for a pose: fifty poses more in two zones, no more allocations. Every measure is
 // a goal, and a limit that holds.
 func TestPosesAllocateNothing(t *testing.T) {
+	if testing.Short() {
+		t.Skip("judges hundreds of poses of every family; the walk's own test stays")
+	}
 	everyFamily(t, func(t *testing.T, f *kin.Family) {
 		judge := func(soft bool, samples int) float64 {
 			task := richTask(seeded(31), f)

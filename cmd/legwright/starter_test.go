@@ -14,8 +14,8 @@ import (
 func TestStarterFindsDesigns(t *testing.T) {
 	for i, f := range kin.Families() {
 		t.Run(f.Name, func(t *testing.T) {
-			if testing.Short() && i%4 != 0 {
-				t.Skip("one family in four is enough for short runs")
+			if testing.Short() && i > 0 {
+				t.Skip("one family is enough for short runs")
 			}
 			t.Chdir(t.TempDir())
 			text, err := starter(f)
