@@ -93,7 +93,11 @@ func (s *sheet) measures(d *study.Design, poses *gazetteer) {
 		if w.Mate > 0 {
 			leg += "-" + strconv.Itoa(w.Mate)
 		}
-		for i, t := range []string{study.Clean(n), v, c.unit(), poses.label(w.Pose), leg, study.Clean(w.Case), study.Clean(w.Zone)} {
+		name := study.Clean(n)
+		if n == torque {
+			name += " " + payloadOnly
+		}
+		for i, t := range []string{name, v, c.unit(), poses.label(w.Pose), leg, study.Clean(w.Case), study.Clean(w.Zone)} {
 			cols[i].cells = append(cols[i].cells, t)
 		}
 	}

@@ -42,11 +42,21 @@ func (d *designs) measure(name string, keep int) column {
 			family = r.Family
 		}
 	}
-	return d.figures(study.Clean(name), keep, measureScale(family, name), func(r *study.Design) (study.Number, bool) {
+	c := d.figures(study.Clean(name), keep, measureScale(family, name), func(r *study.Design) (study.Number, bool) {
 		v, ok := r.Measures[name]
 		return v, ok
 	})
+	if name == torque {
+		c.head += "\n" + payloadOnly
+	}
+	return c
 }
+
+// Torques leave out the arms, cranks and rods that the motors move too; their headings say so.
+const (
+	torque      = "motor_torque"
+	payloadOnly = "(payload only)"
+)
 
 func (d *designs) dimension(name string, keep int) column {
 	family := ""
