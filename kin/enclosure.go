@@ -28,8 +28,8 @@ type Enclosure struct {
 
 	BaseChord, PlatformChord [6]enclose.Form // 2-2cos(swing), as in State
 
-	P enclose.Vec     // the tool point from its place at home, base axes: where freedoms are tied, parasitic ones included
-	R [9]enclose.Form // the rotation from home, row by row, as Pose.R; settled where freedoms are tied
+	P enclose.Vec      // the tool point from its place at home, base axes: where freedoms are tied, parasitic ones included
+	R [9]enclose.Form  // the rotation from home, row by row, as Pose.R; settled where freedoms are tied
 	T [36]enclose.Form // as Machine.Tie, where freedoms are tied
 
 	Links []Link   // the legs' links with thickness
