@@ -60,7 +60,7 @@ func NewOutline(m Machine, least, most float64) *Outline {
 		m.outline(o)
 	case *toolDelta:
 		m.shiftingRods.rods.outline(o, 0, 0)
-		m.shaft(o)
+		m.addShaft(o)
 	case *shiftingRods:
 		m.rods.outline(o, least, most)
 	case *turningRods:

@@ -60,8 +60,8 @@ func (m *rods) ends3(s *State) []Vec {
 // hand is the length of the hand that shows where the tool points.
 func (m *toolDelta) hand() float64 { return m.leg[0].rod / 8 }
 
-// shaft adds the telescopic shaft, whose foot is the fourth base joint, and the tool, which turns on the platform.
-func (m *toolDelta) shaft(o *Outline) {
+// addShaft adds the telescopic shaft, whose foot is the fourth base joint, and the tool, which turns on the platform.
+func (m *toolDelta) addShaft(o *Outline) {
 	// The foot comes last of the fixed points: the numbers after it move up by one.
 	foot := len(o.Fixed)
 	up := func(k *int) {
