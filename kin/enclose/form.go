@@ -127,7 +127,11 @@ func (z *Form) Upper() float64 {
 // unit is u, half the distance from 1 to the next number.
 const unit = 0x1p-53
 
-// settle widens the remainder r for coefficients whose terms have the sizes m in sum: the rule of the package.
+// Settle sets the remainder to r, widened by the rule of the package for coefficients C and G whose terms, of the sizes m
+// in sum, went through 24 roundings at most, and r through as many.
+func (z *Form) Settle(r, m float64) *Form { return z.settle(r, m) }
+
+// settle is Settle.
 func (z *Form) settle(r, m float64) *Form {
 	z.R = (r+widen*m)*(1+widen) + tiny
 	if !(z.R <= math.MaxFloat64) {

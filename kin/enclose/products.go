@@ -19,6 +19,10 @@ func (p *products) add(x, y *Form, s float64) {
 	n := 0
 	for j := range x.G {
 		xj, yj := s*x.G[j], y.G[j]
+		if xj == 0 && yj == 0 {
+			n += Coords - 1 - j
+			continue
+		}
 		p.g[j] += a*yj + b*xj
 		p.diag[j] += xj * yj
 		for k := j + 1; k < Coords; k++ {

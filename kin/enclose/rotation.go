@@ -6,7 +6,7 @@ func Rotation(b *Box, r *[9]Form) {
 	Turned(roll.Coordinate(b, 3), pitch.Coordinate(b, 4), yaw.Coordinate(b, 5), r)
 }
 
-// Turned sets r to Rz(yaw) Ry(pitch) Rx(roll), row by row.
+// Turned sets r to Rz(yaw) Ry(pitch) Rx(roll), row by row, of angles that are forms themselves.
 func Turned(roll, pitch, yaw *Form, r *[9]Form) {
 	var sr, cr, sp, cp, sy, cy, ss, cs Form
 	sr.Sin(roll)

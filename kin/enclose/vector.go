@@ -111,8 +111,9 @@ func (z *Form) Norm(x *Vec) *Form {
 
 // Unit sets z to x/|x|; unknown where x can be 0.
 //
-// The second derivative of x/|x| in a unit direction is at most 2/√3 over |x|² long, so that the rest over the tangent is
-// at most 0.57736 d²/(l-d)² long, l being the length at the centre and d how far x moves.
+// The second derivative of x/|x| in a unit direction is at most 2/√3 over |x|² long. Let l be the length at the centre, d
+// how far x moves and e = d/l. The rest over the tangent is at most the integral of (1-τ) 2/√3 e²/(1-τe)² over τ from 0 to
+// 1, which is 2/√3 (-log(1-e) - e) and at most 0.57736 e²/(1-e).
 func (z *Vec) Unit(x *Vec) *Vec {
 	l2 := x[0].C*x[0].C + x[1].C*x[1].C + x[2].C*x[2].C
 	d, rest := x.reach()
@@ -124,8 +125,7 @@ func (z *Vec) Unit(x *Vec) *Vec {
 		}
 		return z
 	}
-	e := d / low
-	e = 0.57736*e*e + rest/l
+	e := 0.57736*d*d/(l*low) + rest/l
 	n := [3]float64{x[0].C / l, x[1].C / l, x[2].C / l}
 	var g [3][Coords]float64
 	for k := range Coords {

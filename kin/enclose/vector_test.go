@@ -163,6 +163,67 @@ func TestRotationHoldsTheTruth(t *testing.T) {
 	}
 }
 
+// A turned vector, exactly, against its expansion to second degree: what is left over is within Turn.Rest,
+// and comes near it; without the second degree, within Turn.Bend.
+func TestTurnHoldsTheTruth(t *testing.T) {
+	n := 20000
+	if testing.Short() {
+		n = 1000
+	}
+	rng := rand.New(rand.NewPCG(4, 5))
+	most := [2]float64{}
+	for range n {
+		b := someBox(rng, math.Exp2(-6*rng.Float64()))
+		var (
+			turn enclose.Turn
+			arm  enclose.Arm
+			at   [3]float64
+			q    [3]*big.Float
+		)
+		own := [3]bool{rng.IntN(4) > 0, rng.IntN(4) > 0, rng.IntN(4) > 0}
+		turn.Set(&b, own)
+		for k := range q {
+			q[k] = real()
+			if own[k] {
+				c, h := b.Normal(3 + k)
+				at[k] = pick(rng)
+				q[k].Add(exactly(c), real().Mul(exactly(h), exactly(at[k])))
+			}
+		}
+		v := r3.Vec{X: rng.NormFloat64(), Y: rng.NormFloat64(), Z: rng.NormFloat64()}
+		turn.Apply(v, &arm)
+		// roll about x, then pitch about y, then yaw about z
+		w := [3]*big.Float{exactly(v.X), exactly(v.Y), exactly(v.Z)}
+		for k := range 3 {
+			sin, cos := bigSincos(q[k])
+			i, j := (k+1)%3, (k+2)%3
+			y := real().Sub(real().Mul(cos, w[i]), real().Mul(sin, w[j]))
+			w[j] = real().Add(real().Mul(sin, w[i]), real().Mul(cos, w[j]))
+			w[i] = y
+		}
+		// far from the rounding of these plain sums, the boxes being large
+		left := r3.Vec{}
+		for c, f := range []*float64{&left.X, &left.Y, &left.Z} {
+			*f, _ = w[c].Float64()
+		}
+		left = r3.Sub(left, arm.At)
+		for k, x := range at {
+			left = r3.Sub(left, r3.Scale(x, arm.First[k]))
+		}
+		most[0] = max(most[0], r3.Norm(left)/(turn.Bend*r3.Norm(v)))
+		for k, m := range [6][2]int{{0, 0}, {0, 1}, {0, 2}, {1, 1}, {1, 2}, {2, 2}} {
+			left = r3.Sub(left, r3.Scale(at[m[0]]*at[m[1]], arm.Second[k]))
+		}
+		most[1] = max(most[1], r3.Norm(left)/(turn.Rest*r3.Norm(v)))
+	}
+	t.Logf("%.3f of what may be left used", most)
+	for _, s := range most {
+		if s > 1 || s < 0.8 {
+			t.Errorf("%.3f of what may be left used", most)
+		}
+	}
+}
+
 // Ends of a box lie within the range of its coordinates.
 func TestCoordinateCoversTheBox(t *testing.T) {
 	rng := rand.New(rand.NewPCG(4, 4))
