@@ -41,12 +41,12 @@ type Line struct {
 // platform, then the moving ones.
 type Outline struct {
 	Fixed    []Vec // base frame; the first are the base joints, or pivots, or where rails have the coordinate 0
-	Platform []Vec // platform frame; the first are the platform joints
+	Platform []Vec // platform frame; the first are the platform joints, the last two its origin and the tool point
 	Moving   int   // number of other points
 	Lines    []Line
 
 	Base, Joints []int // the points that are base and platform joints, by leg
-	Origin, Tool int   // the points that are the platform's origin and the tool point
+	Origin, Tool int   // the points that are the platform's origin and the tool point, which may be a moving one
 
 	machine Machine
 }
@@ -119,21 +119,22 @@ func (o *Outline) Move(p *Pose, s *State) []Vec {
 func strutOutline(o *Outline) {
 	f := o.machine.Frame()
 	o.Fixed = append(o.Fixed, f.Base...)
-	o.plate(f)
+	o.plate(f, nil)
 	for i := range f.Base {
 		o.line(PrismaticLeg, i, o.Base[i], o.Joints[i])
 	}
 }
 
-// plate adds the platform's joints, its origin and the tool point, the edges of both plates and the line to the
-// tool. The fixed points are there already, the base joints first.
-func (o *Outline) plate(f *Frame) {
+// plate adds the platform's joints, other points of it, its origin and the tool point, the edges of both plates and the
+// line to the tool. The fixed points are there already, the base joints first.
+func (o *Outline) plate(f *Frame, others []Vec) {
 	n, first := f.Legs(), len(o.Fixed)
 	for i := range n {
 		o.Base, o.Joints = append(o.Base, i), append(o.Joints, first+i)
 	}
-	o.Platform = append(o.Platform, f.Platform...)
-	o.Origin, o.Tool = first+n, first+n+1
+	o.Platform = append(append(o.Platform, f.Platform...), others...)
+	o.Origin = len(o.Fixed) + len(o.Platform)
+	o.Tool = o.Origin + 1
 	o.Platform = append(o.Platform, Vec{}, f.Tool)
 	o.edges(BaseEdge, f.Base, 0)
 	o.edges(PlatformEdge, f.Platform, first)

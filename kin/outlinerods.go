@@ -13,11 +13,15 @@ func (m *rods) outline(o *Outline, least, most float64) {
 	}
 	f := m.frame
 	f.Base, f.Platform = f.Base[:m.n], f.Platform[:m.n] // a shaft is no rod
-	o.plate(&f)
-	ends := len(o.Fixed) + len(o.Platform)
+	var corners []Vec // of the parallelograms
 	if m.links.twin {
-		ends += 2 * m.n
+		for i := range m.leg[:m.n] {
+			side := m.frame.HomeRot.Unapply(m.links.side[i])
+			corners = append(corners, r3.Sub(f.Platform[i], side), r3.Add(f.Platform[i], side))
+		}
 	}
+	o.plate(&f, corners)
+	ends := len(o.Fixed) + len(o.Platform)
 	for i := range m.leg[:m.n] {
 		if rails {
 			o.line(RailLine, i, m.n+2*i, m.n+2*i+1)
@@ -33,8 +37,7 @@ func (m *rods) outline(o *Outline, least, most float64) {
 			o.line(RodLine, i, end, o.Joints[i])
 			continue
 		}
-		side, at := m.frame.HomeRot.Unapply(m.links.side[i]), len(o.Fixed)+len(o.Platform)
-		o.Platform = append(o.Platform, r3.Sub(f.Platform[i], side), r3.Add(f.Platform[i], side))
+		at := len(o.Fixed) + m.n + 2*i
 		o.line(BarLine, i, end+1, end+2)
 		o.line(RodLine, i, end+1, at)
 		o.line(RodLine, i, end+2, at+1)
@@ -80,7 +83,7 @@ func (m *toolDelta) addShaft(o *Outline) {
 	o.Fixed = append(o.Fixed, Vec{})
 	o.Base, o.Joints = append(o.Base, foot), append(o.Joints, o.Origin)
 	o.Lines = without(o.Lines, ToolLine)
-	o.Platform[m.n+1] = Vec{} // the tool point does not keep to the platform
+	o.Platform[len(o.Platform)-1] = Vec{} // the tool point does not keep to the platform
 	o.Tool = len(o.Fixed) + len(o.Platform) + o.Moving
 	o.Moving += 2
 	o.line(ShaftLine, 3, foot, o.Origin)

@@ -16,8 +16,8 @@ const Format = "legwright-sheet/1"
 // Data is everything that the page shows.
 type Data struct {
 	Format  string `json:"format"`
-	Title   string `json:"title"` // of the brief, as given: any text
-	Program string `json:"program"`
+	Title   string `json:"title"`   // of the brief, as given: any text
+	Program string `json:"program"` // version alone: 0.1.0
 	Brief   Brief  `json:"brief"`
 
 	Seed        int64    `json:"seed"`
@@ -38,7 +38,7 @@ type Data struct {
 	Hanging bool   `json:"hanging"` // mount: ceiling
 	Folder  string `json:"folder"`  // of the study as the command line gave it, for the commands shown; "" if not known
 
-	Units    map[string]Unit `json:"units"` // by the keys that Column.Unit and others name
+	Units    map[string]Unit `json:"units"` // by SI symbol ("m", "rad", "N", …), "%" for shares of 1, "" for bare numbers
 	Goals    []Goal          `json:"goals"`
 	Measures []Column        `json:"measures"` // columns of Design.Measures
 	Limits   []LimitKind     `json:"limits"`   // that designs of the study have
@@ -48,10 +48,10 @@ type Data struct {
 	Designs  []Design        `json:"designs"`  // best rank first; about 1.5 kB each, 6 kB with cranks
 
 	// The poses of every Detail.Path and Detail.Corners: coordinates about home, six counts of Step for each pose.
-	Path    []int  `json:"path"`    // at most 200 poses, closed: begins and ends at home
-	Way     []int  `json:"way"`     // places in Path (pose numbers) that are required poses or home; the others lie between
-	Corners []int  `json:"corners"` // poses of the duty that lie farthest out, at most 64, and the centres of zones
-	Sums    string `json:"brief_hash"`
+	Path    []int  `json:"path"`       // at most 200 poses, closed: begins and ends at home
+	Way     []int  `json:"way"`        // places in Path (pose numbers) that are required poses or home; the others lie between
+	Corners []int  `json:"corners"`    // poses of the duty that lie farthest out, at most 64, and the centres of zones
+	Hash    string `json:"brief_hash"` // SHA-256 of the brief and its pose files, in hex
 
 	Help []string `json:"help,omitempty"` // where no design holds every limit: what binds and what would have to give
 }
@@ -152,10 +152,12 @@ type Family struct {
 // (Design.Fixed), then those on the platform (Design.Platform), then the moving ones (Pose.Moving).
 type Skeleton struct {
 	Fixed    int      `json:"fixed"`    // number of points that stand still
-	Platform int      `json:"platform"` // number of points that move with the platform; the last two are its origin and the tool point
+	Platform int      `json:"platform"` // number of points that move with the platform, the last two its origin and the tool point (see Tool)
 	Moving   int      `json:"moving"`   // number of other points: ends of cranks, carriages, links
 	Kinds    []string `json:"kinds"`    // what lines are: "base", "platform", "leg", "crank", "rod", "rail", "shaft", "link", "bar", "tool"
 	Lines    [][4]int `json:"lines"`    // kind (index into Kinds), leg (from 1, 0 for none), and the two points
 	Base     []int    `json:"base"`     // the points that are base joints, by leg
 	Joints   []int    `json:"joints"`   // the points that are platform joints, by leg
+	Origin   int      `json:"origin"`   // the point that is the platform's origin
+	Tool     int      `json:"tool"`     // the point that is the tool point: of a tool that turns on its platform a moving point
 }

@@ -87,7 +87,7 @@ type Excursion struct {
 // pose limit fails on the way from home to one of the poses that lie farthest out.
 type Together struct {
 	Zone   int    `json:"zone"`   // index into Data.Zones
-	Factor *Num   `json:"factor"` // 1 is the zone as asked; null where nothing fails up to 5
+	Factor *Num   `json:"factor"` // 1 is the zone as asked; null where nothing fails up to 3
 	Fails  string `json:"fails"`  // the limit that fails first beyond
 	At     [6]Num `json:"at"`     // the pose of the zone towards which it fails, about home
 }
