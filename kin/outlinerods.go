@@ -13,7 +13,7 @@ func (m *rods) outline(o *Outline, least, most float64) {
 	}
 	f := m.frame
 	f.Base, f.Platform = f.Base[:m.n], f.Platform[:m.n] // a shaft is no rod
-	var corners []Vec // of the parallelograms
+	var corners []Vec                                   // of the parallelograms
 	if m.links.twin {
 		for i := range m.leg[:m.n] {
 			side := m.frame.HomeRot.Unapply(m.links.side[i])

@@ -105,3 +105,9 @@ func (l *poseLimits) reach(t *Task, c kin.Coords, g *Together) {
 		return
 	}
 }
+
+// Unjudged is a design with nothing judged: enough for Standings, Simultaneous, ConditioningMap and
+// Excurse. values holds every dimension, sized ones included.
+func Unjudged(t *Task, p *Plan, values []float64) *Appraisal {
+	return &Appraisal{Plan: p, Values: append([]float64(nil), values...), Machine: p.build(t, values)}
+}

@@ -53,7 +53,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	}
 	f := &study.Front{
 		Format: study.Format, Program: Program(), Title: s.Brief.Title, Seed: r.Seed,
-		Status: out.Status.String(), Evaluations: out.Evaluations, Feasible: out.Feasible, Population: out.Population,
+		Status: out.Status.String(), Evaluations: out.Evaluations, Budget: r.Evaluations, Feasible: out.Feasible, Population: out.Population,
 		Poses: len(s.Tasks[0].Samples()), Hypervolume: study.Number(out.Hypervolume),
 		Weights: s.Brief.Ranking.Weights,
 		Designs: []study.Design{},

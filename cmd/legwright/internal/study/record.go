@@ -38,9 +38,10 @@ type Front struct {
 	Seed           int64              `json:"seed"`
 	Status         string             `json:"status"`
 	Evaluations    int                `json:"evaluations"`
-	Feasible       int                `json:"feasible"`   // feasible designs among the evaluated
-	Population     int                `json:"population"` // that the search started with
-	Poses          int                `json:"poses"`      // sampled poses of the duty
+	Budget         int                `json:"budget,omitempty"` // evaluations allowed; 0 if not recorded
+	Feasible       int                `json:"feasible"`         // feasible designs among the evaluated
+	Population     int                `json:"population"`       // that the search started with
+	Poses          int                `json:"poses"`            // sampled poses of the duty
 	Goals          []Goal             `json:"goals"`
 	Weights        map[string]float64 `json:"weights"` // of the goals, for the ranking
 	ReferencePoint []Number           `json:"reference_point"`
