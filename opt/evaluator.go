@@ -105,6 +105,7 @@ func (e *evaluator) run(worker int, g *genome) {
 	copy(g.goals, r.Goals)
 	copy(g.excess, r.Excess)
 	g.violation, g.fault = verdict(&r, g)
+	g.recalled = r.Recalled
 	g.done = true
 }
 

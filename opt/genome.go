@@ -18,6 +18,7 @@ type genome struct {
 	fault     string
 	origin    int // index into operators, or one of the constants below
 	done      bool
+	recalled  bool // Result.Recalled
 
 	rank   int     // 0 is the front; ahead of a larger one
 	crowd  float64 // larger is better among equals in rank

@@ -37,6 +37,12 @@ const (
 	Interrupted
 	// Exhausted: every design of the discrete spaces was tried.
 	Exhausted
+	// TimeSpent: Settings.Time was over first.
+	TimeSpent
+	// Stalled: Settings.Stall ended it.
+	Stalled
+	// Stopped: Settings.StopAt was reached.
+	Stopped
 )
 
 // String returns the status in words.
@@ -50,6 +56,12 @@ func (s Status) String() string {
 		return "interrupted"
 	case Exhausted:
 		return "every design tried"
+	case TimeSpent:
+		return "time spent"
+	case Stalled:
+		return "hypervolume stalled"
+	case Stopped:
+		return "stopped where asked"
 	}
 	return fmt.Sprintf("status %d", uint8(s))
 }
@@ -69,6 +81,9 @@ type Outcome struct {
 	Front []Design
 	// Archive is the number of non-dominated designs Front was picked from.
 	Archive int
+	// Kept are those designs, in ascending order of their goals, if
+	// Settings.Archive asks for them.
+	Kept []Design
 	// Reference bounds the hypervolume: Settings.Reference, or fixed once 30
 	// feasible designs are counted (at the first polish or at the end, if there
 	// are fewer): per goal the worst value among those of them that no other
@@ -78,7 +93,7 @@ type Outcome struct {
 	Reference []float64
 	// Hypervolume that Front covers up to Reference.
 	Hypervolume float64
-	Evaluations int    // at most Settings.Evaluations
+	Evaluations int    // at most Settings.StopAt
 	Feasible    int    // feasible designs among the evaluated
 	Population  int    // per space at the start
 	Grown       int    // at the end, of the space that grew most

@@ -24,7 +24,7 @@ func (r *run) polish() {
 	}
 	r.rounds++
 	due := int(r.set.Polish*float64(r.set.Evaluations)*float64(r.rounds)/float64(len(polishAt))) - r.polished
-	if due <= 0 || r.archive.Len() == 0 || r.ctx.Err() != nil {
+	if due <= 0 || r.left == 0 || r.archive.Len() == 0 || r.ctx.Err() != nil {
 		return
 	}
 	r.fixReference()
@@ -83,6 +83,7 @@ func (r *run) polishJobs(due int) (jobs []*job) {
 		jobs = append(jobs, &job{aim: *a, budget: budget})
 	}
 	r.aimed += len(jobs)
+	r.gave()
 	return jobs
 }
 

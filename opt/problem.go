@@ -78,6 +78,9 @@ type Result struct {
 	Violation float64
 	// Fault says why a design failed, in the evaluator's words; optional.
 	Fault string
+	// Recalled says that the result was known from a Settings.Record of an
+	// earlier run.
+	Recalled bool
 }
 
 // Problem is what Search works on.

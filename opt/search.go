@@ -3,9 +3,11 @@ package opt
 import (
 	"context"
 	"errors"
+	"fmt"
 	"math"
 	"math/rand"
 	"slices"
+	"time"
 
 	"github.com/MaxHalford/eaopt"
 )
@@ -24,6 +26,9 @@ func Search(ctx context.Context, p Problem, s Settings) (*Outcome, error) {
 	}
 	r := newRun(ctx, &p, s)
 	defer r.ev.close()
+	if r.left < 0 {
+		return nil, fmt.Errorf("opt: Settings.StopAt is %d; the first sample alone takes %d", s.StopAt, r.given())
+	}
 	err = r.evolve()
 	if err != nil && !errors.Is(err, ctx.Err()) {
 		return nil, err
@@ -54,6 +59,7 @@ type run struct {
 	rounds      int // of polish, done
 	aimed       int // polish jobs done
 	phase       string
+	stop        stopper
 }
 
 func newRun(ctx context.Context, p *Problem, s Settings) *run {
@@ -62,7 +68,8 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	r.archive.Limit = archiveLimit(s.Front)
 	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
 	r.reference = slices.Clone(s.Reference)
-	r.start, r.left = startSize(p, &s), s.Evaluations
+	r.start, r.left = startSize(p, &s), s.StopAt
+	r.stop.began = time.Now()
 	for i := range p.Spaces {
 		r.islands = append(r.islands, newIsland(r, i))
 	}
@@ -91,7 +98,7 @@ func (r *run) evolve() error {
 		NPops: uint(len(r.islands)), PopSize: uint(r.start), NGenerations: math.MaxUint32, HofSize: 1,
 		Model: (*model)(r), RNG: stream(r.set.Seed, streamMain, 0, 0),
 		Callback:  func(*eaopt.GA) { r.barrier() },
-		EarlyStop: func(*eaopt.GA) bool { return r.spent() },
+		EarlyStop: func(*eaopt.GA) bool { return r.stop.stopped || r.spent() },
 	}.NewGA()
 	if err != nil {
 		return err
@@ -106,10 +113,12 @@ func (r *run) evolve() error {
 		sample = sample[1:]
 		return g
 	})
-	if err != nil { // generations under way when the context ended
+	if err != nil || r.stop.stopped { // what is still under way
 		for _, l := range r.islands {
 			r.ev.finish(l.pending)
-			l.collect(l.pending)
+			if kids := l.collect(l.pending); r.stop.stopped {
+				l.join(kids)
+			}
 		}
 		r.merge()
 	}
@@ -130,8 +139,10 @@ func (r *run) spent() bool {
 func (r *run) barrier() {
 	r.phase = "search"
 	r.merge()
-	r.polish()
-	r.allot()
+	if !r.stops() {
+		r.polish()
+		r.allot()
+	}
 	if r.evaluations >= r.next {
 		r.record()
 	}
@@ -187,6 +198,9 @@ func (r *run) fixReference() {
 func (r *run) count(g *genome) {
 	order := r.evaluations
 	r.evaluations++
+	if r.set.Record != nil && !g.recalled {
+		r.set.Record(g.space, g.x, &Result{Goals: g.goals, Excess: g.excess, Violation: g.violation, Fault: g.fault})
+	}
 	r.islands[g.space].books.add(g, order)
 	if g.origin == originPolish {
 		r.polished++

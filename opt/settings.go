@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"math"
 	"runtime"
+	"time"
 )
 
 // Settings steer a Search. The zero value works, but for Evaluations.
@@ -12,6 +13,15 @@ type Settings struct {
 	// Evaluations is the budget: no more designs than this are evaluated,
 	// first sample and polish included. Required, at least 4 per space.
 	Evaluations int
+	// StopAt ends the search after so many evaluations of the Evaluations that
+	// it is laid out for; 0 means all of them. At least the first sample.
+	StopAt int
+	// Time ends the search at the first generation barrier after so long, 0
+	// means never. Outcome.Evaluations then depends on the machine; the search
+	// with StopAt set to it has the same Outcome but for Status.
+	Time time.Duration
+	// Stall ends the search when the front has ceased to grow.
+	Stall Stall
 	// Population is the size per space that the search starts with; it grows
 	// from there to the size that Outcome reports. 0 chooses from dimension,
 	// goals and budget. Larger suits smooth problems and long runs, smaller
@@ -36,6 +46,12 @@ type Settings struct {
 	Polish float64
 	// NearMisses is how many infeasible designs to keep, 0 means 50.
 	NearMisses int
+	// Archive asks for Outcome.Kept.
+	Archive bool
+	// Record, if set, is called for each evaluated design in the order of
+	// counting, from one goroutine at a time, unless Evaluate said that the
+	// result was recalled. Neither x nor the result may be kept.
+	Record func(space int, x []float64, r *Result)
 	// Progress, if set, is called at generation barriers, from one goroutine
 	// at a time.
 	Progress func(Progress)
@@ -65,6 +81,21 @@ func (s Settings) resolve(p *Problem) (Settings, error) {
 	bad := func(format string, a ...any) { errs = append(errs, fmt.Errorf("opt: Settings."+format, a...)) }
 	if least := leastPerSpace * len(p.Spaces); s.Evaluations < least {
 		bad("Evaluations is %d; at least %d are needed for %d space(s)", s.Evaluations, least, len(p.Spaces))
+	}
+	if s.StopAt == 0 {
+		s.StopAt = s.Evaluations
+	}
+	if s.StopAt > s.Evaluations {
+		bad("StopAt is %d, beyond the %d evaluations of the whole search; write fewer, or 0 for all", s.StopAt, s.Evaluations)
+	}
+	if s.StopAt < 0 {
+		bad("StopAt is %d; it must not be negative, 0 means all evaluations", s.StopAt)
+	}
+	if s.Time < 0 {
+		bad("Time is %v; it must not be negative, 0 means no end", s.Time)
+	}
+	if t := s.Stall; t.Evaluations < 0 || t.Evaluations > 0 && !(t.Gain > 0 && t.Gain < 1) {
+		bad("Stall is %d evaluations with a gain of %v; write a positive number with a gain between 0 and 1", t.Evaluations, t.Gain)
 	}
 	count := func(name string, v *int, def, least int) {
 		if *v == 0 {

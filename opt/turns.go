@@ -125,8 +125,9 @@ func (r *run) allot() {
 		r.left -= l.turn
 	}
 	for _, l := range r.islands {
-		l.budget = l.used + l.turn + int(l.share*float64(r.left))
+		l.budget = l.used + l.turn + int(l.share*float64(r.left+r.set.Evaluations-r.set.StopAt))
 	}
+	r.gave()
 }
 
 // divide sets the shares of the evaluations to come.
