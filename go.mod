@@ -4,6 +4,8 @@ go 1.26.0
 
 require (
 	github.com/MaxHalford/eaopt v0.4.2
+	github.com/chromedp/cdproto v0.159.0
+	github.com/chromedp/chromedp v0.23.0
 	github.com/go-viper/mapstructure/v2 v2.4.0
 	github.com/jedib0t/go-pretty/v6 v6.8.3
 	github.com/natefinch/atomic v1.0.1
@@ -19,6 +21,7 @@ require (
 require (
 	github.com/clipperhouse/uax29/v2 v2.7.0 // indirect
 	github.com/fsnotify/fsnotify v1.9.0 // indirect
+	github.com/go-json-experiment/json v0.0.0-20260213210345-44df1a37e875 // indirect
 	github.com/inconshreveable/mousetrap v1.1.0 // indirect
 	github.com/mattn/go-runewidth v0.0.30 // indirect
 	github.com/sagikazarmark/locafero v0.11.0 // indirect

@@ -1,0 +1,75 @@
+// Building the document. Text from the data always goes through text nodes and
+// set attributes, never through markup.
+
+const SVG = "http://www.w3.org/2000/svg";
+
+// fill sets attributes and children of an element. A key that starts with "on"
+// is a listener, "style" an object of custom properties, false and null leave
+// the attribute out.
+function fill(node, attrs, children) {
+  for (const [key, value] of Object.entries(attrs || {})) {
+    if (value === false || value === null || value === undefined) continue;
+    if (key.startsWith("on")) node.addEventListener(key.slice(2), value);
+    else if (key === "style") for (const [k, v] of Object.entries(value)) node.style.setProperty(k, v);
+    else node.setAttribute(key, value === true ? "" : String(value));
+  }
+  add(node, children);
+  return node;
+}
+
+// add appends nodes and texts, and lists of them.
+function add(node, children) {
+  for (const child of children.flat(Infinity)) {
+    if (child === null || child === undefined || child === false) continue;
+    node.append(child instanceof Node ? child : String(child));
+  }
+}
+
+const h = (tag, attrs, ...children) => fill(document.createElement(tag), attrs, children);
+const s = (tag, attrs, ...children) => fill(document.createElementNS(SVG, tag), attrs, children);
+
+// given wraps text that came from a file, so that marks of direction in it stay inside.
+const given = (text) => h("bdi", {}, String(text ?? ""));
+
+function empty(node, ...children) {
+  node.replaceChildren();
+  add(node, children);
+  return node;
+}
+
+const byId = (id) => document.getElementById(id);
+
+// say tells people who cannot see the page what has changed.
+let saying = 0;
+function say(text) {
+  clearTimeout(saying);
+  saying = setTimeout(() => { byId("live").textContent = text; }, 250);
+}
+
+// choice is a labelled list to pick one of; options are [value, text].
+function choice(label, options, value, pick) {
+  const select = h("select", { onchange: () => pick(select.value) },
+    options.map(([v, text]) => h("option", { value: v, selected: v === value }, text)));
+  return h("label", { class: "field" }, h("span", {}, label), select);
+}
+
+// button is a plain button.
+const button = (text, press, attrs) => h("button", { type: "button", onclick: press, ...attrs }, text);
+
+// wide puts a table or a drawing that may be broader than the page into a frame that scrolls.
+const wide = (label, node) => h("div", { class: "wide", role: "region", tabindex: "0", "aria-label": label }, node);
+
+// table makes a table from head cells and rows of cells; the first cell of a row heads it.
+function table(caption, head, rows, attrs) {
+  const cell = (c, tag, scope) => {
+    const { node, ...rest } = c !== null && typeof c === "object" && "node" in c ? c : { node: c };
+    return h(tag, { scope, ...rest }, node);
+  };
+  return h("table", attrs || {},
+    h("caption", {}, caption),
+    h("thead", {}, h("tr", {}, head.map((c) => cell(c, "th", "col")))),
+    h("tbody", {}, rows.map((r) => h("tr", {}, r.map((c, i) => (i === 0 ? cell(c, "th", "row") : cell(c, "td")))))));
+}
+
+// num is a table cell of a number.
+const num = (text, more) => ({ node: text, class: "num", ...more });
