@@ -21,12 +21,17 @@ type Checkpoint struct {
 
 // NewCheckpoint is the checkpoint of a run that has not begun.
 func NewCheckpoint(s *study.Sources, r Run) *Checkpoint {
+	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations}
+}
+
+// sourcesHash is the SHA-256 of the brief and its pose files, in hex.
+func sourcesHash(s *study.Sources) string {
 	h := sha256.New()
 	h.Write(s.Brief.Bytes)
 	for _, p := range s.Poses {
 		h.Write(p.Bytes)
 	}
-	return &Checkpoint{Program: Program(), Brief: hex.EncodeToString(h.Sum(nil)), Seed: r.Seed, Budget: r.Evaluations}
+	return hex.EncodeToString(h.Sum(nil))
 }
 
 // ReadCheckpoint reads what Bytes wrote; nil for no bytes.

@@ -1,0 +1,65 @@
+package sheet
+
+import (
+	"encoding/json"
+	"slices"
+)
+
+// Fit makes the data small enough, as far as it can, without touching the designs kept: first designs that are not
+// shown in full lose the poses that decide none of the goals, the last of them first; then unmarked designs lose their
+// detail, the last of them first. The page shows the command that brings it back.
+func Fit(d *Data, bytes int, keep []string) {
+	designs := d.Designs
+	d.Designs = nil
+	total := size(d)
+	d.Designs = designs
+	sizes := make([]int, len(designs))
+	for i := range designs {
+		sizes[i] = size(&designs[i]) + 1
+		total += sizes[i]
+	}
+	shrink := func(i int, by func(*Design)) {
+		by(&designs[i])
+		n := size(&designs[i]) + 1
+		total += n - sizes[i]
+		sizes[i] = n
+	}
+	for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
+		if designs[i].Detail == nil {
+			shrink(i, func(v *Design) { v.thin(d.Goals) })
+		}
+	}
+	for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
+		if v := &designs[i]; v.Detail != nil && len(v.Marks) == 0 && !slices.Contains(keep, v.ID) {
+			shrink(i, func(v *Design) { v.Detail = nil })
+		}
+	}
+}
+
+func size(v any) int {
+	b, err := json.Marshal(v)
+	if err != nil {
+		panic("sheet: data that cannot be written")
+	}
+	return len(b)
+}
+
+// thin leaves home and the poses that decide goals.
+func (v *Design) thin(goals []Goal) {
+	poses, rows := v.Poses[:1:1], [][6]int{}
+	at := map[int]int{0: 0}
+	for _, r := range v.Deciding {
+		if !slices.ContainsFunc(goals, func(g Goal) bool { return g.Measure == r[0] }) {
+			continue
+		}
+		n, ok := at[r[1]]
+		if !ok {
+			n = len(poses)
+			at[r[1]] = n
+			poses = append(poses, v.Poses[r[1]])
+		}
+		r[1] = n
+		rows = append(rows, r)
+	}
+	v.Poses, v.Deciding = poses, rows
+}
