@@ -9,7 +9,7 @@ import (
 	"github.com/chromedp/chromedp"
 )
 
-// The page in two widths and two schemes, written to the folder that LEGWRIGHT_LOOK names, to be looked at.
+// The page in two widths and two schemes, in the folder that LEGWRIGHT_LOOK names, to be looked at.
 func TestLook(t *testing.T) {
 	dir := os.Getenv("LEGWRIGHT_LOOK")
 	if dir == "" {
@@ -18,6 +18,7 @@ func TestLook(t *testing.T) {
 	for _, width := range []int64{360, 1440} {
 		for _, dark := range []bool{false, true} {
 			p := open(t, made(200, "A platform that was made up"), width, 900, dark)
+			p.do(chromedp.Sleep(200e6))
 			b, err := chromedp.Run(p.ctx, chromedp.FullScreenshot(90))
 			if err != nil {
 				t.Fatal(err)

@@ -8,9 +8,9 @@ function firstView(store, place) {
     const d = model.designs[f.design];
     return { d, figure: atPose(d, 0).figure, why: [...d.marks, ...(f.near || []).map((m) => `near ${m}`)] };
   });
-  const radius = Math.max(...few.map((c) => reach(c.figure.points).radius));
+  const drawings = thumbnails(few.map((c) => c.figure), data.hanging, few.map(({ d }) => `${d.family} ${d.id} at home; all are drawn to one scale`));
   const picks = few.map(({ d }) => button(d.id, () => store.pick(d.index), { class: "pick big", "aria-pressed": "false", "data-pick": d.id, "aria-label": `design ${d.id}: open its sheet below` }));
-  const heads = few.map(({ d, figure: fig }, k) => h("th", { scope: "col" }, picks[k], thumbnail(fig, radius, data.hanging, `${d.family} ${d.id} at home, all drawn to one scale`)));
+  const heads = few.map((_, k) => h("th", { scope: "col" }, picks[k], drawings[k]));
   const row = (name, cells, attrs) => h("tr", attrs || {}, h("th", { scope: "row" }, name), cells);
 
   const goalRow = (g, k) => {
@@ -40,7 +40,7 @@ function firstView(store, place) {
       neededFigures(model).map(figureRow)));
   add(place, [
     h("p", { class: "note" }, few.length > 1
-      ? `${few.length} of ${model.designs.length} designs, chosen to differ. The bar under a figure shows where it lies on the whole front: empty at the worst, full at the best. A number opens the design's sheet.`
+      ? `${few.length} of ${model.designs.length} designs, chosen to differ. All are drawn to one scale. The bar under a figure shows where it lies on the whole front: empty at the worst, full at the best. A number opens the design's sheet.`
       : "The front holds one design."),
     wide("designs to choose from first", grid),
     h("p", { class: "note" }, "Tightest limit: room left before it fails, in % of its bound (of the stroke for the range of the legs), or as a length or an angle where the bound is 0."),

@@ -11,9 +11,9 @@ function limitsView(model, d, place, showPose) {
     const parts = [w.leg ? (w.mate ? `legs ${w.leg} and ${w.mate}` : `leg ${w.leg}`) : "", model.case(w.case), model.zone(w.zone)].filter(Boolean);
     return [given(parts.join(", ")), button("show", () => showPose(index, m.label), { "data-pose": m.name, "aria-label": `show the pose that decides ${m.label}` })];
   };
-  const goalText = (index) => {
-    const g = model.goals.find((x) => x.measure === index);
-    return g ? `goal: ${g.more ? "more" : "less"}` : "";
+  const goalText = (m) => {
+    const g = m && model.goals.find((x) => x.measure === m.index);
+    return g ? h("small", {}, g.more ? " goal, more is better" : " goal, less is better") : "";
   };
   const rows = [];
   const sorted = [...d.limits].sort((x, y) => (x.margin ?? Infinity) - (y.margin ?? Infinity));
@@ -21,18 +21,18 @@ function limitsView(model, d, place, showPose) {
     const m = byName.get(l.measure), unit = l.shown;
     if (m) rest.delete(m.index);
     const [why, show] = where(m ? m.index : undefined);
-    rows.push([given(words(l.measure)), num(withUnit(l.value ?? (m ? d.measures[m.index] : NaN), unit, 5)),
+    rows.push([[given(words(l.measure)), goalText(m)], num(withUnit(l.value ?? (m ? d.measures[m.index] : NaN), unit, 5)),
       num(`${l.sense === "at_least" ? "at least" : "at most"} ${withUnit(l.bound, unit, 5)}`),
       { node: [l.holds ? "holds " : "fails ", marginText(l)], class: l.holds ? "num" : "num bad" },
-      m ? goalText(m.index) : "", why, show]);
+      why, show]);
   }
   for (const m of model.measures) {
     const v = d.measures[m.index];
     if (!rest.has(m.index) || Number.isNaN(v)) continue;
     const [why, show] = where(m.index);
-    rows.push([h("span", { title: m.text }, given(m.label)), num(withUnit(v, m.shown, 5)), num("no limit"), "", goalText(m.index), why, show]);
+    rows.push([[h("span", { title: m.text }, given(m.label)), goalText(m)], num(withUnit(v, m.shown, 5)), num("no limit"), "", why, show]);
   }
   add(place, [h("h3", {}, "Measures and limits"),
     wide("measures and limits", table("Tightest limit first. Every figure is the worst over all required poses and cases.",
-      ["measure", num("value"), num("wanted"), num("margin"), "goal", "decided by", { node: "pose", class: "screen" }], rows, { class: "limits" }))]);
+      ["measure", num("value"), num("wanted"), num("margin"), "decided by", { node: "pose", class: "screen" }], rows, { class: "limits" }))]);
 }

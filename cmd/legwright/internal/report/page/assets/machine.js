@@ -57,12 +57,19 @@ function groundOf(points) {
   return { step, lines };
 }
 
-// thumbnail is a small drawing of a design at home; all of the same radius are to one scale.
-function thumbnail(fig, radius, hanging, label) {
-  const group = s("g", {});
-  const see = sight(SLANTED, hanging), c = see(reach(fig.points).centre), k = 74 / radius;
-  plot(group, [{ figure: fig, cls: "" }], see, (q) => [(q[0] - c[0]) * k, (q[1] - c[1]) * k], null, "");
-  return s("svg", { viewBox: "-76 -70 152 140", class: "thumb", role: "img", "aria-label": label }, group);
+// thumbnails are small drawings of machines at home, all to one scale and with their bases at one height.
+function thumbnails(figures, hanging, labels) {
+  const see = sight(SLANTED, hanging), zero = see([0, 0, 0]);
+  const seen = figures.map((f) => f.points.map((p) => { const q = see(p); return [q[0] - zero[0], q[1] - zero[1]]; }));
+  const xs = seen.map((list) => [Math.min(...list.map((q) => q[0])), Math.max(...list.map((q) => q[0]))]);
+  const ys = seen.flat().map((q) => q[1]);
+  const width = Math.max(...xs.map(([low, high]) => high - low)), top = Math.min(...ys), height = Math.max(...ys) - top;
+  const k = Math.min(144 / width, 124 / height);
+  return figures.map((f, i) => {
+    const group = s("g", {}), middle = (xs[i][0] + xs[i][1]) / 2;
+    plot(group, [{ figure: f, cls: "" }], see, (q) => [(q[0] - zero[0] - middle) * k, (q[1] - zero[1] - top) * k], null, "");
+    return s("svg", { viewBox: `-76 -4 152 ${height * k + 8}`, class: "thumb", role: "img", "aria-label": labels[i] }, group);
+  });
 }
 
 // machineView is a drawing that can be turned and zoomed.

@@ -16,6 +16,8 @@ function start() {
   const store = newStore(model);
   const best = model.data.first.length ? model.data.first.find((f) => model.designs[f.design].marks.includes("knee")) || model.data.first[0] : { design: 0 };
   store.picked = best.design;
+  const second = model.data.first.find((f) => f.design !== best.design);
+  if (second) store.other = second.design;
   firstView(store, byId("first"));
   familiesView(store, byId("filters"));
   weightsView(store, byId("filters"));

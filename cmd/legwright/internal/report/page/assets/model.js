@@ -32,6 +32,7 @@ function newDesign(data, d, index) {
     measures: d.measures.map((v, k) => (v !== null ? v : unbounded.has(k) ? Infinity : NaN)),
     tightest: d.tightest >= 0 ? limits[d.tightest] : null,
     checked: d.proof === "proved" ? "proved" : d.proof === "refuted" ? "refuted: fails between the sampled poses" : d.proof === "undecided" ? "at sampled poses; proof undecided" : "at sampled poses, not proved",
+    short: d.proof || "sampled",
     proof: d.proof,
     detail: d.detail || null,
   };

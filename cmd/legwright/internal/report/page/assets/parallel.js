@@ -4,41 +4,41 @@ function parallelView(store, place) {
   const { model } = store;
   const axes = model.axes.filter((a) => a.parallel && a.high > a.low);
   const same = model.axes.filter((a) => a.parallel && a.high === a.low);
-  const step = 104, T = 44, B = 34, H = 340, L = 58;
-  const W = L * 2 + step * Math.max(axes.length - 1, 1);
+  const box = { top: 62, bottom: 316, height: 346, side: 62, least: 98 };
   const lines = s("g", { class: "lines" });
   const top = s("g", { class: "top" });
-  const rails = s("g", {});
+  const rails = axes.map((a) => rail(store, a, box));
   const svg = s("svg", {
-    viewBox: `0 0 ${W} ${H}`, class: "parallel", role: "group",
+    class: "parallel", role: "group",
     "aria-label": "A line for each design over goals and dimensions; each axis has two grips that set a range",
-    style: { "min-width": `${Math.max(330, W * 0.8)}px`, "max-width": `${W * 1.5}px` },
   }, lines, top, rails);
-
-  axes.forEach((a, k) => {
-    a.x = L + step * k;
-    a.y = (v) => T + (1 - (v - a.low) / (a.high - a.low)) * (H - T - B);
-    a.v = (y) => a.low + (1 - (y - T) / (H - T - B)) * (a.high - a.low);
-    // Values without bound stand at the bad end.
-    a.place = (v) => (Number.isFinite(v) ? a.y(v) : Number.isNaN(v) ? NaN : a.better > 0 ? H - B : T);
-  });
+  const paths = model.designs.map((d, i) => s("path", {
+    class: `tone${model.families.indexOf(d.family) % 6} dash${model.families.indexOf(d.family) % 4}`, "data-design": i,
+  }));
+  lines.append(...paths);
 
   function path(i) {
     let d = "", pen = false;
-    for (const a of axes) {
-      const y = a.place(a.values[i]);
-      if (Number.isNaN(y)) { pen = false; continue; } // another family's dimension
-      d += `${pen ? "L" : "M"}${a.x} ${y.toFixed(1)}`;
+    axes.forEach((a, k) => {
+      const v = a.values[i];
+      if (Number.isNaN(v)) { pen = false; return; } // another family's dimension
+      d += `${pen ? "L" : "M"}${at[k].toFixed(1)} ${(Number.isFinite(v) ? railY(a, box, v) : box.top).toFixed(1)}`;
       pen = true;
-    }
+    });
     return d;
   }
 
-  const paths = model.designs.map((d, i) => s("path", {
-    d: path(i), class: `tone${model.families.indexOf(d.family) % 6} dash${model.families.indexOf(d.family) % 4}`, "data-design": i,
-  }));
-  lines.append(...paths);
-  for (const a of axes) rails.append(rail(store, a, svg, { T, B, H, W }));
+  // layout spreads the axes over the width that there is; below a least distance the drawing scrolls.
+  let at = [];
+  function layout(width) {
+    const step = Math.max(box.least, (width - 2 * box.side) / Math.max(axes.length - 1, 1));
+    const full = 2 * box.side + step * (axes.length - 1);
+    at = axes.map((_, k) => box.side + step * k);
+    for (const [k, v] of [["viewBox", `0 0 ${full} ${box.height}`], ["width", full], ["height", box.height]]) svg.setAttribute(k, v);
+    rails.forEach((r, k) => r.setAttribute("transform", `translate(${at[k]} 0)`));
+    paths.forEach((node, i) => node.setAttribute("d", path(i)));
+    mark();
+  }
 
   function filter() {
     paths.forEach((node, i) => {
@@ -55,7 +55,7 @@ function parallelView(store, place) {
       .map(([i, cls]) => s("path", { d: path(i), class: cls })));
   }
 
-  const chips = h("div", { class: "chips", "aria-label": "ranges set" });
+  const chips = h("div", { class: "chips", role: "group", "aria-label": "ranges set" });
   function chip() {
     const list = [...store.ranges].map(([key, [low, high]]) => {
       const a = model.axes.find((x) => x.key === key);
@@ -64,16 +64,16 @@ function parallelView(store, place) {
           : `${a.label} ${quantity(low, a.unit)} to ${withUnit(high, a.unit)}`;
       return button(`${text} ✕`, () => store.setRange(key, null), { class: "chip", "aria-label": `${text}: take this range away` });
     });
-    empty(chips, list, list.length > 1 ? button("take all ranges away", () => store.clearRanges(), { class: "chip" }) : null);
+    empty(chips, list, list.length > 1 || store.hidden.size ? button("show all again", () => store.clearRanges(), { class: "chip" }) : null);
   }
 
-  add(place, [
-    wide("parallel coordinates", svg), chips,
-    same.length ? h("p", { class: "note" }, "The same for all designs: ",
-      same.map((a) => `${a.label} ${withUnit(a.low, a.unit)}`).join(", "), ".") : null,
-  ]);
+  const frame = wide("parallel coordinates", svg);
+  add(place, [frame, chips,
+    h("p", { class: "note screen" }, "Drag the grips of an axis, or drag along it, to keep a range; double-click takes it away. Grips also move by arrow keys.",
+      same.length ? [" The same for all designs: ", same.map((a) => `${a.label} ${withUnit(a.low, a.unit)}`).join(", "), "."] : "")]);
   for (const f of [filter, chip]) store.on("filter", f);
   store.on("pick", mark);
-  mark();
+  new ResizeObserver(() => layout(frame.clientWidth)).observe(frame);
+  layout(frame.clientWidth || 900);
   chip();
 }

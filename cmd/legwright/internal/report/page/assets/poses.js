@@ -12,7 +12,8 @@ function poseControl(store, view, changed) {
     const p = kind === "path" ? atTrack(d, d.detail.path, k, data.path)
       : kind === "corner" ? atTrack(d, d.detail.corners, k, data.corners) : atPose(d, k);
     view.show([{ figure: p.figure, cls: "", hot }], null, data.hanging);
-    const parts = [why ? why + ": " : "", poseText(model, d, p.at)];
+    const where = poseText(model, d, p.at);
+    const parts = [why && why !== where ? why + ": " : "", where];
     if (kind === "path") parts.push(` (pose ${k} of ${data.path.length / 6 - 1} of the path${data.way.includes(k) ? ", required" : ", on the way"})`);
     if (p.conditioning !== null) parts.push(`; conditioning ${digits(p.conditioning, 3)}`);
     empty(status, parts.join(""), p.fails ? h("span", { class: "bad" }, " ", given(words(p.fails)), p.fails === "out of reach" ? "" : " fails here") : null);

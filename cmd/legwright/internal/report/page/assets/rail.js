@@ -1,9 +1,11 @@
 // One axis of the parallel coordinates, with two grips that set the range of
-// designs to keep: by pointer, touch or keys.
+// designs to keep: by pointer, touch or keys. It is drawn about x = 0.
 
-function rail(store, a, svg, { T, B, H, W }) {
-  const end = H - B;
-  const band = s("rect", { x: a.x - 9, width: 18, class: "band" });
+// railY is the height at which a value stands.
+const railY = (a, box, v) => box.top + (1 - (v - a.low) / (a.high - a.low)) * (box.bottom - box.top);
+
+function rail(store, a, box) {
+  const band = s("rect", { x: -9, width: 18, class: "band" });
   const grips = ["low", "high"].map((which) => s("path", {
     class: `grip ${which}`, tabindex: "0", role: "slider", "aria-orientation": "vertical",
     "aria-label": which === "low" ? `${a.label}: least value kept` : `${a.label}: largest value kept`,
@@ -11,49 +13,50 @@ function rail(store, a, svg, { T, B, H, W }) {
     "data-axis": a.key, "data-end": which,
     d: which === "low" ? "M-11 0H11L6 9H-6Z" : "M-11 0H11L6-9H-6Z",
   }));
-  const width = Math.min(15, 104);
-  const label = fold(a.label, width);
+  const ends = [h0(box.top - 14), h0(box.bottom + 24)];
   const node = s("g", { class: "rail" },
-    s("line", { x1: a.x, x2: a.x, y1: T, y2: end }),
-    label.map((t, k) => s("text", { x: a.x, y: 12 + 12 * k, "text-anchor": "middle", class: a.goal ? "goal" : "" }, t)),
-    s("text", { x: a.x, y: T - 12, "text-anchor": "middle", class: "end" }, ""),
-    s("text", { x: a.x, y: H - 8, "text-anchor": "middle", class: "end" }, ""),
-    s("rect", { x: a.x - 22, y: T, width: 44, height: end - T, class: "touch" }),
-    band, ...grips);
-  const [highText, lowText] = node.querySelectorAll(".end");
+    s("title", {}, a.text || a.label),
+    s("line", { x1: 0, x2: 0, y1: box.top, y2: box.bottom }),
+    fold(a.label, 14).map((t, k) => s("text", { x: 0, y: 14 + 14 * k, "text-anchor": "middle", class: a.goal ? "goal" : "" }, t)),
+    ends,
+    s("rect", { x: -22, y: box.top, width: 44, height: box.bottom - box.top, class: "touch" }),
+    band, grips);
+
+  function h0(y) { return s("text", { x: 0, y, "text-anchor": "middle", class: "end" }); }
 
   const range = () => store.ranges.get(a.key) || [a.low, a.high];
   const clip = (v) => Math.max(a.low, Math.min(a.high, v));
 
   function set(low, high) {
-    if (low > high) [low, high] = [high, low];
     low = clip(low);
     high = clip(high);
     store.setRange(a.key, low <= a.low && high >= a.high ? null : [low, high]);
   }
 
   function draw() {
-    const [low, high] = range(), on = store.ranges.has(a.key);
-    const y0 = a.y(high), y1 = a.y(low);
+    const [low, high] = range();
+    const y0 = railY(a, box, high), y1 = railY(a, box, low);
     band.setAttribute("y", y0);
     band.setAttribute("height", Math.max(y1 - y0, 1));
-    node.classList.toggle("set", on);
+    node.classList.toggle("set", store.ranges.has(a.key));
     [[grips[0], y1, low], [grips[1], y0, high]].forEach(([g, y, v]) => {
-      g.setAttribute("transform", `translate(${a.x} ${y})`);
+      g.setAttribute("transform", `translate(0 ${y})`);
       g.setAttribute("aria-valuenow", v * a.unit.factor);
       g.setAttribute("aria-valuetext", withUnit(v, a.unit));
     });
-    highText.textContent = withUnit(high, a.unit);
-    lowText.textContent = withUnit(low, a.unit);
+    ends[0].textContent = withUnit(high, a.unit);
+    ends[1].textContent = withUnit(low, a.unit);
   }
 
+  // value is the value at the height of a pointer.
   const value = (e) => {
-    const box = svg.getBoundingClientRect();
-    return a.v((e.clientY - box.top) * (W / box.width));
+    const frame = node.ownerSVGElement.getBoundingClientRect();
+    const y = (e.clientY - frame.top) * (box.height / frame.height);
+    return a.low + (1 - (y - box.top) / (box.bottom - box.top)) * (a.high - a.low);
   };
-  let drag = null, waiting = null;
+  let drag = null, waiting = 0;
   const apply = () => {
-    waiting = null;
+    waiting = 0;
     if (drag && drag.next) set(...drag.next);
   };
   node.addEventListener("pointerdown", (e) => {
@@ -65,17 +68,15 @@ function rail(store, a, svg, { T, B, H, W }) {
       drag = { move: (to) => { const d = Math.max(a.low - low, Math.min(a.high - high, to - v)); return [low + d, high + d]; } };
     } else drag = { move: (to) => [Math.min(v, to), Math.max(v, to)], fresh: true };
     node.setPointerCapture(e.pointerId);
-    e.preventDefault();
-    if (e.target.focus) e.target.focus({ preventScroll: true });
   });
   node.addEventListener("pointermove", (e) => {
     if (!drag) return;
     drag.next = drag.move(value(e));
-    if (drag.fresh && Math.abs(a.y(drag.next[0]) - a.y(drag.next[1])) < 3) drag.next = null;
+    if (drag.fresh && drag.next[1] - drag.next[0] < 0.02 * (a.high - a.low)) drag.next = null;
     if (!waiting) waiting = requestAnimationFrame(apply);
   });
   node.addEventListener("pointerup", () => {
-    if (waiting) cancelAnimationFrame(waiting);
+    cancelAnimationFrame(waiting);
     apply();
     drag = null;
     say(`${store.count()} designs kept`);
@@ -101,7 +102,7 @@ function rail(store, a, svg, { T, B, H, W }) {
   return node;
 }
 
-// fold breaks a label into two lines at most.
+// fold breaks a label into two lines.
 function fold(text, width) {
   if (text.length <= width) return ["", text];
   const parts = text.split(" ");

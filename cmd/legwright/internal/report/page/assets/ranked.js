@@ -5,7 +5,7 @@ function rankedView(store, place) {
   const { model } = store;
   const columns = [
     ...model.axes.filter((a) => a.goal),
-    ...model.axes.filter((a) => !a.goal && a.table),
+    ...model.axes.filter((a) => !a.goal && a.table && a.high > a.low),
   ];
   const text = new Map(columns.map((a) => [a.key, column(a.values, a.unit)]));
   let most = 25, sortKey = "", down = false;
@@ -21,11 +21,11 @@ function rankedView(store, place) {
   const grid = h("table", { class: "ranked" },
     h("caption", {}, "Designs in the order of rank under the weights above; a heading sorts by its column"),
     h("thead", {}, h("tr", {},
-      head("", "rank", { class: "num" }), head(null, "design"), head(null, "held against"),
-      model.families.length > 1 ? head(null, "family") : null,
+      head("", "rank", { class: "num" }), head(null, "design"), head(null, "compare"),
+      model.families.length > 1 ? head(null, "family") : null, head(null, "marks"),
       head("score", "score", { class: "num" }),
       columns.map((a) => head(a.key, a.label + (a.unit.symbol ? `, ${a.unit.symbol}` : ""), { class: "num" })),
-      head("margin", "tightest limit"), head(null, "checked"), head(null, "marks"))),
+      head("margin", "tightest limit"), head(null, "checked"))),
     body);
 
   const rows = model.designs.map((d, i) => {
@@ -36,9 +36,10 @@ function rankedView(store, place) {
     const node = h("tr", { "data-design": i }, rank,
       h("th", { scope: "row" }, pick, " ", twin), h("td", {}, against),
       model.families.length > 1 ? h("td", {}, familyTag(model, d.family)) : null,
+      h("td", { class: "marked" }, given(d.marks.map(words).join(", "))),
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), h("td", {}, d.checked), h("td", {}, given(d.marks.join(", "))));
+      h("td", {}, tightest(d)), h("td", {}, d.short));
     return { node, rank, score, pick, against, twin };
   });
 

@@ -15,7 +15,7 @@ function scatterView(store, place) {
   const frame = s("g", { class: "frame" });
   const dots = s("g", {});
   const halo = s("g", { class: "halo", "aria-hidden": "true" });
-  const svg = s("svg", { viewBox: `0 0 ${W} ${H}`, class: "scatter", role: "img", "aria-label": "Scatter of the front; the table below lists the same designs" }, frame, halo, dots);
+  const svg = s("svg", { viewBox: `0 0 ${W} ${H}`, class: "scatter", role: "img", "aria-label": "Scatter of the front; the table below lists the same designs" }, frame, dots, halo);
   const tip = h("p", { class: "tip", "aria-hidden": "true" });
   let xy = [];
 
@@ -32,7 +32,7 @@ function scatterView(store, place) {
     const low = a.low - pad, high = a.high + pad;
     return {
       a, low, high,
-      of: (v) => from + ((Number.isFinite(v) ? v : a.better > 0 ? low : high) - low) / (high - low) * (to - from),
+      of: (v) => from + ((Number.isFinite(v) ? v : high) - low) / (high - low) * (to - from),
     };
   }
 

@@ -41,10 +41,13 @@ function newStore(model) {
 
     filter() {
       const before = performance.now();
-      const tests = [...store.ranges].map(([key, range]) => [model.axes.find((a) => a.key === key).values, range]);
+      const tests = [...store.ranges].map(([key, [low, high]]) => {
+        const a = model.axes.find((x) => x.key === key);
+        return [a.values, low, high >= a.high ? Infinity : high]; // a range up to the top keeps what has no bound
+      });
       for (let i = 0; i < n; i++) {
         let keep = !store.hidden.has(model.designs[i].family);
-        for (const [values, [low, high]] of tests) keep = keep && values[i] >= low && values[i] <= high;
+        for (const [values, low, high] of tests) keep = keep && values[i] >= low && values[i] <= high;
         store.shown[i] = keep;
       }
       store.tell("filter");

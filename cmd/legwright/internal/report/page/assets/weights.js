@@ -22,12 +22,12 @@ function weightsView(store, place) {
   }
 
   function tell() {
-    command.textContent = `legwright rank ${model.dir} ` + model.goals.map((g, k) => `--weight ${g.measure}=${store.weights[k]}`).join(" ");
+    command.textContent = `legwright rank ${model.folder} ` + model.goals.map((g, k) => `--weight ${g.name}=${store.weights[k]}`).join(" ");
   }
 
   const rows = model.goals.map((g, k) => {
     const name = h("span", { id: `weight-${k}` }, g.sense + " ", given(g.label));
-    const slider = h("input", { type: "range", min: 0, max: top, step: 0.1, value: g.weight, "aria-labelledby": `weight-${k}`, "data-goal": g.measure,
+    const slider = h("input", { type: "range", min: 0, max: top, step: 0.1, value: g.weight, "aria-labelledby": `weight-${k}`, "data-goal": g.name,
       oninput: () => { number.value = slider.value; read(); } });
     const number = h("input", { type: "number", min: 0, step: "any", value: g.weight, "aria-labelledby": `weight-${k}`,
       oninput: () => { slider.value = number.value; read(); } });
