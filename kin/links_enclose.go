@@ -1,0 +1,57 @@
+package kin
+
+import "legwright/kin/enclose"
+
+// Links of an enclosure are those of leg after leg: the crank, if there is one, and the rod, or both rods of a parallelogram.
+
+// perLeg is the number of links of a leg.
+func (ps *linkPairs) perLeg(crank bool) int {
+	n := 1
+	if crank {
+		n++
+	}
+	if ps.twin {
+		n++
+	}
+	return n
+}
+
+// enclose adds the links of leg i.
+func (ps *linkPairs) enclose(e *Enclosure, m *rods, i int, o *loop) {
+	l := &m.leg[i]
+	var from, to enclose.Vec
+	from.AddConst(&o.end, l.at)
+	to.AddConst(&o.w, l.at)
+	if l.crank {
+		e.Links = append(e.Links, Link{Leg: i, To: from, Radius: ps.crankCrank / 2})
+		e.Links[len(e.Links)-1].From.Const(l.at)
+	}
+	if !ps.twin {
+		e.Links = append(e.Links, Link{Leg: i, From: from, To: to, Radius: ps.rodRod / 2})
+		return
+	}
+	for _, k := range [2]float64{1, -1} {
+		e.Links = append(e.Links, Link{Leg: i, Radius: ps.rodRod / 2})
+		rod, s := &e.Links[len(e.Links)-1], ps.side[i]
+		s = Vec{X: k * s.X, Y: k * s.Y, Z: k * s.Z}
+		rod.From.AddConst(&from, s)
+		rod.To.AddConst(&to, s)
+	}
+}
+
+// pairs lists the pairs of links that gap looks at.
+func (ps *linkPairs) pairs(e *Enclosure, crank bool) {
+	n := ps.perLeg(crank)
+	for k := range ps.pair[:ps.n] {
+		p := &ps.pair[k]
+		for x := range n {
+			for y := range n {
+				ofCrank, other := crank && x == 0, crank && y == 0
+				if ofCrank && other && !p.cranks || !ofCrank && !other && !p.rods {
+					continue
+				}
+				e.Pairs = append(e.Pairs, [2]int{n*p.i + x, n*p.j + y})
+			}
+		}
+	}
+}
