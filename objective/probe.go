@@ -30,8 +30,11 @@ func (b *Probe) Machine() kin.Machine { return b.v.machine }
 // or has no posture.
 func (b *Probe) Home() (q [6]float64, sign int) { return b.v.homeQ, b.v.homeSign }
 
-// At moves to a pose of the zone and tells whether it has a posture; Fault then tells why not.
+// At moves to a pose of the zone, or of none (with all cases) where zone is -1, and tells whether it has a posture; Fault then tells why not.
 func (b *Probe) At(c kin.Coords, zone int) bool {
+	if zone < 0 {
+		zone = len(b.task.Zones)
+	}
 	b.sample = Sample{Coords: c, Pose: kin.NewPose(c), Zone: zone}
 	b.v.keep, b.v.near = math.Inf(1), math.Inf(1)
 	b.reached = b.v.at(&b.sample, -1, NeedMatrix|NeedEfforts|NeedRates|NeedGap|NeedExact)
