@@ -75,12 +75,14 @@ type Result struct {
 	Sources Sources
 	// Encode writes a design file (YAML) that names its brief ../brief.yaml.
 	Encode func(Design) ([]byte, error)
+	// Sheets gives the sheets of a design, by the names of SheetNames; nil for a study without any.
+	Sheets func(Design) (map[string][]byte, error)
 	// Unfinished leaves the checkpoint where it is.
 	Unfinished bool
 }
 
-// Save writes the study: the brief as it was given with its pose files, a file for each design, the
-// tables, and front.json last. Until then the study is known by its checkpoint alone, which the caller
+// Save writes the study: the brief as it was given with its pose files, a file for each design and the sheets of
+// some, the tables, and front.json last. Until then the study is known by its checkpoint alone, which the caller
 // saves before. Of the study that the folder held when it was opened it removes the designs that are no
 // more and the brief of another format, but no pose files: they may be the user's own.
 func (f *Folder) Save(r *Result) error {
@@ -101,6 +103,9 @@ func (f *Folder) Save(r *Result) error {
 		}
 	}
 	if err := f.saveDesigns(r); err != nil {
+		return err
+	}
+	if err := f.saveSheets(r); err != nil {
 		return err
 	}
 	var b bytes.Buffer
@@ -136,6 +141,9 @@ func (f *Folder) clear(r *Result) error {
 	}
 	for i := range before.Designs {
 		if err := f.remove(designName(before.Designs[i].ID)); err != nil {
+			return err
+		}
+		if err := f.removeSheets(before.Designs[i].ID); err != nil {
 			return err
 		}
 	}

@@ -1,0 +1,70 @@
+package handover
+
+import (
+	"math"
+
+	"legwright/cmd/legwright/internal/study"
+	"legwright/cmd/legwright/internal/units"
+	"legwright/kin"
+)
+
+// actuators is the actuator schedule: what each leg's actuator must do over the duty, and the range that it has.
+func (d *design) actuators() []byte {
+	f := d.a.Plan.Family
+	coordinate, effort, rate := study.DriveKinds(f.Name)
+	c, e, r := units.Suffix(coordinate), units.Suffix(effort), units.Suffix(rate)
+	names := [2]string{"push_", "pull_"}
+	if f.Drive == kin.Rotary {
+		names = [2]string{"torque_positive_", "torque_negative_"}
+	}
+	t := d.sheet("actuator schedule", "leg", "range_least_"+c, "range_most_"+c, "stroke_"+c, "shortest_"+c, "home_"+c, "longest_"+c,
+		"used_"+c, "reserve_low_"+c, "reserve_high_"+c, names[0]+e, names[1]+e, "speed_"+r)
+	low, high := d.rangeOf()
+	t.note("figures", "worst over the sampled poses of the duty and home, not a proof between them; legs, arms and rods are massless, without friction, play and terms in ω²")
+	t.note("reserve", "wanted free at each end of the stroke: "+number(d.task.Actuator.Reserve, coordinate)+" "+units.Display(coordinate).Symbol)
+	switch {
+	case f.Drive == kin.Rotary:
+		t.note("coordinate", "angle of the crank, counter-clockwise about its hinge (axis table); shortest is the least angle needed, longest the greatest; a positive torque acts with growing angle")
+	case f.Rails:
+		t.note("coordinate", "distance of the carriage along its rail from the point where it is 0 (joint table); push acts on the carriage with growing coordinate")
+	default:
+		t.note("coordinate", "distance between the leg's joint centres; push: the leg is in compression")
+	}
+	bounded := len(d.a.Legs) - f.Free
+	if math.IsNaN(low) {
+		t.note("range", "the actuators have no range in common: see the design's dimensions")
+	} else if f.Free > 0 {
+		t.note("range", "the last actuator turns the tool and has no range of this kind")
+	}
+	type worst struct{ least, most, push, pull, speed float64 }
+	w := worst{least: math.Inf(1), most: math.Inf(-1)}
+	line := func(name string, x worst, home string, ranged bool) {
+		cells := []string{name, "", "", "", number(x.least, coordinate), home, number(x.most, coordinate), number(x.most-x.least, coordinate), "", "", figure(x.push, effort), figure(x.pull, effort), figure(x.speed, rate)}
+		if ranged && !math.IsNaN(low) {
+			cells[1], cells[2], cells[3] = number(low, coordinate), number(high, coordinate), number(high-low, coordinate)
+			cells[8], cells[9] = number(x.least-low, coordinate), number(high-x.most, coordinate)
+		}
+		t.row(cells...)
+	}
+	for i := range d.a.Legs {
+		l := &d.a.Legs[i]
+		x := worst{l.Least, l.Most, l.Push, l.Pull, l.Speed}
+		line(legName(i), x, number(l.Home, coordinate), i < bounded)
+		if i < bounded {
+			w = worst{math.Min(w.least, x.least), math.Max(w.most, x.most), math.Max(w.push, x.push), math.Max(w.pull, x.pull), math.Max(w.speed, x.speed)}
+		}
+	}
+	if !math.IsNaN(low) {
+		line("all", w, "", true)
+	}
+	return t.bytes()
+}
+
+// rangeOf is the actuators' range, NaN without one.
+func (d *design) rangeOf() (low, high float64) {
+	least, span := d.a.Plan.Family.Range()
+	if least < 0 {
+		return math.NaN(), math.NaN()
+	}
+	return d.a.Values[least], d.a.Values[least] + d.a.Values[span]
+}

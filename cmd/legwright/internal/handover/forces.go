@@ -1,0 +1,157 @@
+package handover
+
+import (
+	"math"
+	"strconv"
+
+	"legwright/cmd/legwright/internal/units"
+	"legwright/objective"
+)
+
+var componentHeads = [6]string{"fx", "fy", "fz", "mx", "my", "mz"}
+
+// componentUnit is the kind of a component: three forces, three moments.
+func componentUnit(k int) units.Kind {
+	if k < 3 {
+		return units.Force
+	}
+	return units.Torque
+}
+
+// signs says what the forces are.
+const signs = "what the leg exerts on the plate, components along the axes of the base frame; moments about the joint's own centre, of joints that carry any; payload only: legs, arms and rods are massless, without friction, play and terms in ω²"
+
+// loads computes the joint forces once.
+func (d *design) loads() []objective.CaseLoads {
+	if d.forcesOf == nil {
+		d.forcesOf = objective.JointForces(d.task, d.a)
+	}
+	return d.forcesOf
+}
+
+// forces is the table of the largest joint forces: for each case and joint the least and the greatest of each component, and
+// the largest resultant with its components at that moment.
+func (d *design) forces() []byte {
+	heads := []string{"case", "point", "plate", "part"}
+	for k, c := range componentHeads {
+		s := units.Suffix(componentUnit(k))
+		heads = append(heads, c+"_least_"+s, c+"_most_"+s)
+	}
+	heads = append(heads, "resultant_N", "resultant_is")
+	for k, c := range componentHeads {
+		heads = append(heads, c+"_then_"+units.Suffix(componentUnit(k)))
+	}
+	t := d.sheet("joint forces, largest", append(heads, poseHeads...)...)
+	t.note("forces", signs)
+	t.note("least and most", "of each component over the case's sets and the sampled poses in its zones: exact at each pose, each load's sets taken independently; not simultaneous")
+	t.note("resultant", "largest size of the force (fx fy fz), with the components then and the pose about home; exact: the joint's force has one direction at a pose; found: it has not, a climb over the sets found this one")
+	d.open(t)
+	cases := d.loads()
+	for i := range cases {
+		for k := range cases[i].Joints {
+			j := &cases[i].Joints[k]
+			cells := []string{d.caseName(&cases[i]), d.jointName(&j.Joint), j.Plate, text(j.Part)}
+			if j.At == nil {
+				t.row(cells...)
+				continue
+			}
+			for q := range j.Least {
+				if q > 2 && !j.Moments {
+					cells = append(cells, "", "")
+					continue
+				}
+				cells = append(cells, figure(j.Least[q], componentUnit(q)), figure(j.Most[q], componentUnit(q)))
+			}
+			is := "found"
+			switch {
+			case math.IsInf(j.Largest, 0):
+				is = "singular"
+			case j.One:
+				is = "exact"
+			}
+			cells = append(cells, figure(j.Largest, units.Force), is)
+			t.row(append(append(cells, components(&j.Then, j.Moments)...), d.pose(j.At)...)...)
+		}
+	}
+	return t.bytes()
+}
+
+// components are the six cells of a load.
+func components(load *[6]float64, moments bool) []string {
+	out := make([]string, 6)
+	for q, x := range load {
+		if q < 3 || moments {
+			out[q] = figure(tidy(x), componentUnit(q))
+		}
+	}
+	return out
+}
+
+// tidy makes what is zero but for rounding zero.
+func tidy(x float64) float64 {
+	if math.Abs(x) < 1e-9 {
+		return 0
+	}
+	return x
+}
+
+// together is the table of joint forces that act at one moment: for each case, that at which the joint with the largest
+// resultant has its largest.
+func (d *design) together() []byte {
+	heads := []string{"case", "point", "plate", "part"}
+	for k, c := range componentHeads {
+		heads = append(heads, c+"_"+units.Suffix(componentUnit(k)))
+	}
+	t := d.sheet("joint forces, together", append(heads, poseHeads...)...)
+	t.note("forces", signs)
+	t.note("moment", "of each case that at which the largest resultant of all joints acts; the last row of a case is what the legs exert on the platform together, moments about the tool point")
+	d.open(t)
+	cases := d.loads()
+	for i := range cases {
+		c := &cases[i]
+		if c.Decides < 0 || math.IsInf(c.Joints[c.Decides].Largest, 0) {
+			continue
+		}
+		pose := d.pose(c.Joints[c.Decides].At)
+		for k := range c.Joints {
+			j := &c.Joints[k].Joint
+			t.row(append(append([]string{d.caseName(c), d.jointName(j), j.Plate, text(j.Part)}, components(&c.Together[k], j.Moments)...), pose...)...)
+		}
+		t.row(append(append([]string{d.caseName(c), "", onPlatform, "sum, about the tool point"}, components(&c.Wrench, true)...), pose...)...)
+	}
+	return t.bytes()
+}
+
+// open notes what the figures do not tell.
+func (d *design) open(t *table) {
+	for _, n := range objective.NotDetermined(d.a.Plan.Family) {
+		t.note("not determined", n)
+	}
+	if len(d.task.Cases) == 0 {
+		t.note("cases", "the brief has no cases: there are no forces")
+	}
+}
+
+func (d *design) caseName(c *objective.CaseLoads) string { return text(d.task.Cases[c.Case].Name) }
+
+// jointName is the point at which a joint's load acts, as the joint table names it.
+func (d *design) jointName(j *objective.Joint) string {
+	n := strconv.Itoa(j.Leg + 1)
+	switch {
+	case j.Leg < 0 && j.Plate == onPlatform:
+		return "P1"
+	case j.Leg < 0 && j.Part != "whole base":
+		return "B2"
+	case j.Leg < 0:
+		return "origin"
+	case j.Part == "rod a":
+		return "P" + n + "a"
+	case j.Part == "rod b":
+		return "P" + n + "b"
+	case j.Part == "carriage":
+		return "K" + n
+	case j.Plate == onPlatform:
+		return "P" + n
+	}
+	return "B" + n
+}

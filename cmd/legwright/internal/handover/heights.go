@@ -1,0 +1,50 @@
+package handover
+
+import (
+	"math"
+
+	"legwright/cmd/legwright/internal/units"
+	"legwright/kin"
+	"legwright/objective"
+)
+
+// heights is the table of how high the platform stands.
+func (d *design) heights() []byte {
+	t := d.sheet("heights of the platform", append([]string{"what", "height_mm", "remark"}, poseHeads...)...)
+	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top; over the sampled poses of the duty, not a proof between them")
+	if f := d.a.Plan.Family; !f.Has(kin.Z) {
+		t.note("plane", "the platform moves in its plane alone")
+	}
+	h := objective.PlatformHeights(d.task, d.a)
+	put := func(what string, v float64, remark string, at *objective.Sample) {
+		if math.IsInf(v, 0) {
+			v, remark = math.NaN(), "no pose counts"
+		}
+		t.row(append([]string{what, number(v, units.Length), text(remark)}, d.pose(at)...)...)
+	}
+	put("platform origin, home", h.Home, "", nil)
+	put("platform origin, lowest over the duty", h.Lowest, "", h.LowestAt)
+	put("platform origin, highest over the duty", h.Highest, "", h.HighAt)
+	put("platform joint centres, lowest over the duty", h.Under, "", nil)
+	put("platform joint centres, highest over the duty", h.Over, "", nil)
+	for i, what := range [2]string{"platform origin, all actuators at their least", "platform origin, all actuators at their most"} {
+		e := &h.Ends[i]
+		put(what, e.Height, endRemark(e), nil)
+	}
+	if c := h.Collapsed(); c != nil {
+		put("platform origin, collapsed", c.Height, "the lower of these two; "+endRemark(c), nil)
+	} else {
+		put("platform origin, collapsed", math.NaN(), "no such posture", nil)
+	}
+	return t.bytes()
+}
+
+func endRemark(e *objective.End) string {
+	switch {
+	case e.Fails != "":
+		return e.Fails
+	case e.Level:
+		return "as level as at home and straight above the base"
+	}
+	return "not level, or not straight above the base"
+}
