@@ -158,13 +158,14 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 			return err
 		}
 	}
+	pageErr := savePage(folder, s, found.Front, job.SheetRun{Sources: sources, Folder: dir, Workers: given.Workers})
 	err = folder.Save(&study.Result{
 		Front: found.Front, History: found.History, Sources: *sources, Unfinished: stopped,
 		Encode: func(d study.Design) ([]byte, error) {
 			return job.EncodeDesign(d, "../"+sources.BriefName()), nil
 		},
 	})
-	if err != nil {
+	if err = errors.Join(err, pageErr); err != nil {
 		return err
 	}
 	if c.json {
