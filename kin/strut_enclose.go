@@ -67,13 +67,13 @@ func (m *struts) encloseLeg(i int, x *strutBox, e *Enclosure) {
 	link.From.Const(l.a)
 
 	var t strutTaylor
-	t.start(l, x)
+	t.start(l, m.invLc, x)
 	var r strutRest
-	if !r.set(&t, l, x) {
+	if !r.set(&t, l, m.invLc, x) {
 		e.lose(i)
 		return
 	}
-	t.second(l, x)
+	t.second(l, m.invLc, x)
 
 	var z enclose.Form
 	t.length.form(&e.Q[i], r.length, math.Inf(1), r.metre)
@@ -83,9 +83,7 @@ func (m *struts) encloseLeg(i int, x *strutBox, e *Enclosure) {
 	}
 	for c := range 3 {
 		t.row[c].form(&e.J[6*i+c], r.n3, r.n2, r.round)
-		z := &e.J[6*i+3+c]
-		t.row[3+c].form(z, r.m3, r.m2, r.moment)
-		z.Scale(z, m.invLc)
+		t.row[3+c].form(&e.J[6*i+3+c], r.m3, r.m2, r.moment)
 		t.tip[c].form(&link.To[c], r.s3, r.s2, r.metre)
 	}
 	for q, own := X, 0; m.n < 6 && q <= Yaw; q++ { // planar: what lies in a freedom that the platform lacks is exactly 0
@@ -140,6 +138,6 @@ func (p *poly) form(z *enclose.Form, rest, first, round float64) {
 	if first < r {
 		c, r = p.at, first
 	}
-	*z = enclose.Form{C: c, G: p.slope}
+	z.C, z.G = c, p.slope
 	z.Settle(r*(1+strutRound)+round, 0)
 }

@@ -33,22 +33,23 @@ const strutRound = 0x1p-43
 type strutTaylor struct {
 	u, v  enclose.Arm // r, from the tool point to the platform joint, and the platform's mounting axis
 	s, n  Vec         // at the centre
+	lever Vec         // r/Lc at the centre
 	q, iq float64     // length at the centre and its inverse
 
 	// coefficients of first degree
 	along [6]float64 // of s along n, over the length
 	move  [6]Vec     // of n
-	arm   [6]Vec     // of r
+	arm   [6]Vec     // of r/Lc
 	axis  [6]Vec     // of the mounting axis
 
 	length, lift poly    // lift: only what lifts the joint along n, not what swings the leg
-	row          [6]poly // n and r×n
+	row          [6]poly // n and (r×n)/Lc
 	base, plat   poly    // n on the mounting axes
 	tip          [3]poly // platform joint
 }
 
 // start expands the leg to first degree.
-func (t *strutTaylor) start(l *strut, x *strutBox) {
+func (t *strutTaylor) start(l *strut, invLc float64, x *strutBox) {
 	x.turn.Apply(l.b, &t.u)
 	x.turn.Apply(l.ub, &t.v)
 	tip := r3.Add(x.at, t.u.At)
@@ -56,7 +57,8 @@ func (t *strutTaylor) start(l *strut, x *strutBox) {
 	t.q = lengthOf(t.s)
 	t.iq = 1 / t.q
 	n := r3.Scale(t.iq, t.s)
-	m := r3.Cross(t.u.At, n)
+	t.lever = r3.Scale(invLc, t.u.At)
+	m := r3.Cross(t.lever, n)
 	t.n = n
 	t.length.at = t.q
 	t.row[0].at, t.row[1].at, t.row[2].at = n.X, n.Y, n.Z
@@ -74,11 +76,11 @@ func (t *strutTaylor) start(l *strut, x *strutBox) {
 			h.Z = x.half[Z]
 		default:
 			h = t.u.First[f-Roll]
-			t.arm[f], t.axis[f] = h, t.v.First[f-Roll]
+			t.arm[f], t.axis[f] = r3.Scale(invLc, h), t.v.First[f-Roll]
 		}
 		a := r3.Dot(n, h)
 		w := r3.Scale(t.iq, r3.Sub(h, r3.Scale(a, n)))
-		m := r3.Add(r3.Cross(t.u.At, w), r3.Cross(t.arm[f], n))
+		m := r3.Add(r3.Cross(t.lever, w), r3.Cross(t.arm[f], n))
 		t.length.slope[f], t.along[f], t.move[f] = a, a*t.iq, w
 		t.row[0].slope[f], t.row[1].slope[f], t.row[2].slope[f] = w.X, w.Y, w.Z
 		t.row[3].slope[f], t.row[4].slope[f], t.row[5].slope[f] = m.X, m.Y, m.Z
@@ -89,7 +91,7 @@ func (t *strutTaylor) start(l *strut, x *strutBox) {
 }
 
 // second adds the parts of second degree.
-func (t *strutTaylor) second(l *strut, x *strutBox) {
+func (t *strutTaylor) second(l *strut, invLc float64, x *strutBox) {
 	n := t.n
 	for j, f := range x.moving[:x.n] {
 		for _, g := range x.moving[j:x.n] {
@@ -101,7 +103,7 @@ func (t *strutTaylor) second(l *strut, x *strutBox) {
 			wf, wg := t.move[f], t.move[g]
 			bend := part * r3.Dot(wf, wg)
 			af, ag := part*t.along[f], part*t.along[g]
-			// w, m and v are of n, r×n and n on the platform's axis
+			// w, m and v are of n, (r×n)/Lc and n on the platform's axis
 			w := Vec{
 				X: -af*wg.X - ag*wf.X - bend*n.X,
 				Y: -af*wg.Y - ag*wf.Y - bend*n.Y,
@@ -114,7 +116,7 @@ func (t *strutTaylor) second(l *strut, x *strutBox) {
 				h := t.u.Second[k]
 				a := r3.Dot(n, h)
 				w = r3.Add(w, r3.Scale(t.iq, r3.Sub(h, r3.Scale(a, n))))
-				m, v = r3.Cross(h, n), r3.Dot(t.v.Second[k], n)
+				m, v = r3.Scale(invLc, r3.Cross(h, n)), r3.Dot(t.v.Second[k], n)
 				stretch += a
 				t.lift.add(a, square)
 				t.tip[0].add(h.X, square)
@@ -125,7 +127,7 @@ func (t *strutTaylor) second(l *strut, x *strutBox) {
 				m = r3.Add(m, r3.Scale(part, r3.Add(r3.Cross(t.arm[f], wg), r3.Cross(t.arm[g], wf))))
 				v += part * (r3.Dot(t.axis[f], wg) + r3.Dot(t.axis[g], wf))
 			}
-			m = r3.Add(m, r3.Cross(t.u.At, w))
+			m = r3.Add(m, r3.Cross(t.lever, w))
 			t.length.add(stretch, square)
 			t.row[0].add(w.X, square)
 			t.row[1].add(w.Y, square)
@@ -147,16 +149,16 @@ var secondDegree = [3][3]int{{0, 1, 2}, {1, 3, 4}, {2, 4, 5}}
 type strutRest struct {
 	s2, s3 float64 // of r and the platform joint, m
 	n2, n3 float64 // of n
-	m2, m3 float64 // of r×n, m
+	m2, m3 float64 // of (r×n)/Lc
 	v2, v3 float64 // of n on the platform's axis
 	length float64 // of the length, after the second degree
 	convex float64 // a quarter of l δ²: half of what the length exceeds its tangent by
 
-	round, metre, moment float64 // of rounding: of n, of s, of r×n
+	round, metre, moment float64 // of rounding: of n, of s, of (r×n)/Lc
 }
 
 // set fills r; false where the leg's length can be 0.
-func (r *strutRest) set(t *strutTaylor, l *strut, x *strutBox) bool {
+func (r *strutRest) set(t *strutTaylor, l *strut, invLc float64, x *strutBox) bool {
 	b, v := lengthOf(l.b), lengthOf(l.ub)
 	r.s2, r.s3 = x.turn.Bend*b, x.turn.Rest*b
 	// how far s, r and the axis move to first degree, and s in all
@@ -170,7 +172,7 @@ func (r *strutRest) set(t *strutTaylor, l *strut, x *strutBox) bool {
 		return false
 	}
 	r.round = r.metre * t.iq
-	r.moment = 2 * (b + t.q) * r.round
+	r.moment = 2 * (b + t.q) * invLc * r.round
 
 	e := d * t.iq // δ
 	g := d / low  // δ/(1-δ)
@@ -178,8 +180,8 @@ func (r *strutRest) set(t *strutTaylor, l *strut, x *strutBox) bool {
 	r.n2 = s2 + 0.57736*e*g
 	r.n3 = r.s3*t.iq + 1.1548*(n1+0.5*s2)*s2 + 0.5*e*e*g
 	n1 += r.n2 // n in all
-	r.m2 = b*r.n2 + u1*n1 + r.s2
-	r.m3 = b*r.n3 + u1*r.n2 + r.s2*n1 + r.s3
+	r.m2 = (b*r.n2 + u1*n1 + r.s2) * invLc
+	r.m3 = (b*r.n3 + u1*r.n2 + r.s2*n1 + r.s3) * invLc
 	r.v2 = v*(r.n2+x.turn.Bend) + v1*n1
 	r.v3 = v*(r.n3+x.turn.Bend*n1+x.turn.Rest) + v1*r.n2
 	r.length = r.s3 + (s1+0.5*r.s2)*s2 + 0.19246*d*e*g
