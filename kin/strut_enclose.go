@@ -22,9 +22,11 @@ type strutBox struct {
 func (m *struts) Enclose(b *enclose.Box, e *Enclosure) {
 	e.Reach, e.Leg, e.What = AllReach, -1, ""
 	var x strutBox
+	m.frame.coordinates(b, &x.c)
+	copy(e.P[:], x.c[:3])
+	e.turned(&m.frame, &x.c)
 	var own [3]bool
-	for _, q := range m.frame.Freedoms { // the others stay at home
-		x.c[q].Coordinate(b, int(q))
+	for _, q := range m.frame.Freedoms {
 		x.half[q] = x.c[q].G[q]
 		if x.half[q] != 0 {
 			x.moving[x.n] = q
@@ -34,8 +36,6 @@ func (m *struts) Enclose(b *enclose.Box, e *Enclosure) {
 			own[q-Roll] = true
 		}
 	}
-	copy(e.P[:], x.c[:3])
-	enclose.Turned(&x.c[Roll], &x.c[Pitch], &x.c[Yaw], &e.R)
 	x.turn.Set(b, own)
 	x.at = Vec{X: m.home.X + x.c[X].C, Y: m.home.Y + x.c[Y].C, Z: m.home.Z + x.c[Z].C}
 	if len(e.Links) != m.n {
@@ -51,11 +51,7 @@ func (m *struts) Enclose(b *enclose.Box, e *Enclosure) {
 	}
 	if m.n < 6 {
 		copy(e.Wrenches[:6*m.n], e.J[:6*m.n])
-		var rows [36]float64
-		n := unitConstraints(m.frame.Freedoms, &rows)
-		for c := range 6 * n {
-			e.Wrenches[6*m.n+c].Const(rows[c])
-		}
+		e.held(&m.frame)
 	}
 }
 
@@ -94,11 +90,9 @@ func (m *struts) encloseLeg(i int, x *strutBox, e *Enclosure) {
 		e.J[6*i+int(q)].Const(0)
 	}
 	t.base.form(&z, r.n3, r.n2, r.round)
-	c := &e.BaseChord[i]
-	c.AddConst(c.Scale(&z, -2), 1+r3.Norm2(l.ua))
+	chord(&e.BaseChord[i], &z, r3.Norm2(l.ua))
 	t.plat.form(&z, r.v3, r.v2, 2*r.round)
-	c = &e.PlatformChord[i]
-	c.AddConst(c.Scale(&z, -2), 1+r3.Norm2(l.ub))
+	chord(&e.PlatformChord[i], &z, r3.Norm2(l.ub))
 }
 
 // lose says that nothing is known of leg i: its length can be 0.
