@@ -180,6 +180,7 @@ const dxfLongest = 255
 // control characters, and nothing of the text itself read as a code. A text that is too long is cut.
 func dxfText(s string) string {
 	var b strings.Builder
+	var last rune
 	for _, r := range s {
 		c := string(r)
 		switch {
@@ -189,8 +190,8 @@ func dxfText(s string) string {
 			c = "%%c"
 		case r == '±':
 			c = "%%p"
-		case r == '%':
-			c = "%%%" // a code for the sign itself
+		case r == '%' && last == '%':
+			c = " %" // two of them begin a code
 		case r == '^':
 			c = "^ " // the same
 		case r == '\\':
@@ -206,6 +207,7 @@ func dxfText(s string) string {
 			break
 		}
 		b.WriteString(c)
+		last = r
 	}
 	return b.String()
 }
