@@ -63,9 +63,9 @@ var strutFamilies = []string{"6-UPS", "3-RPR"}
 // from nearly nothing to 1.5 times the starter box and more, against the plain kinematics, whose own rounding is a hundredth
 // of the slack. The greatest share of a remainder that is used tells that they are not merely huge.
 func TestStrutEnclosureHoldsEveryPose(t *testing.T) {
-	boxes, each := 20000, 50
+	boxes, each := 10000, 50
 	if testing.Short() {
-		boxes, each = 1000, 50
+		boxes = 1000
 	}
 	for _, name := range strutFamilies {
 		rng := seeded(21)

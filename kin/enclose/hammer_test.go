@@ -36,7 +36,7 @@ func (a *at) tangent(f *enclose.Form) *big.Float {
 			a.sum.Sub(a.sum, a.one.SetFloat64(f.G[k]))
 		default:
 			a.one.SetFloat64(f.G[k])
-			a.sum.Add(a.sum, real().Mul(a.one, exactly(t)))
+			a.sum.Add(a.sum, number().Mul(a.one, exactly(t)))
 		}
 	}
 	return a.sum
@@ -45,12 +45,12 @@ func (a *at) tangent(f *enclose.Form) *big.Float {
 // value is a value that the form lets f have there.
 func (a *at) value(rng *rand.Rand, f *enclose.Form) *big.Float {
 	e := pick(rng)
-	return real().Add(a.tangent(f), real().Mul(exactly(f.R), exactly(e)))
+	return number().Add(a.tangent(f), number().Mul(exactly(f.R), exactly(e)))
 }
 
 // used is the share of the remainder that the value needs: above 1 it escapes.
 func (a *at) used(f *enclose.Form, value *big.Float) float64 {
-	d := real().Sub(value, a.tangent(f))
+	d := number().Sub(value, a.tangent(f))
 	if d.Sign() == 0 {
 		return 0
 	}
@@ -118,19 +118,19 @@ func unary(f func(z, x *enclose.Form) *enclose.Form) func(z, x, y *enclose.Form)
 const factor = 1.0 / 3
 
 var operations = []operation{
-	{name: "add", wide: true, forms: func(z, x, y *enclose.Form) { z.Add(x, y) }, exact: func(x, y *big.Float) *big.Float { return real().Add(x, y) }},
-	{name: "sub", wide: true, forms: func(z, x, y *enclose.Form) { z.Sub(x, y) }, exact: func(x, y *big.Float) *big.Float { return real().Sub(x, y) }},
-	{name: "neg", wide: true, forms: unary((*enclose.Form).Neg), exact: func(x, _ *big.Float) *big.Float { return real().Neg(x) }},
-	{name: "scale", wide: true, forms: func(z, x, _ *enclose.Form) { z.Scale(x, factor) }, exact: func(x, _ *big.Float) *big.Float { return real().Mul(x, exactly(factor)) }},
-	{name: "add a number", wide: true, forms: func(z, x, _ *enclose.Form) { z.AddConst(x, factor) }, exact: func(x, _ *big.Float) *big.Float { return real().Add(x, exactly(factor)) }},
+	{name: "add", wide: true, forms: func(z, x, y *enclose.Form) { z.Add(x, y) }, exact: func(x, y *big.Float) *big.Float { return number().Add(x, y) }},
+	{name: "sub", wide: true, forms: func(z, x, y *enclose.Form) { z.Sub(x, y) }, exact: func(x, y *big.Float) *big.Float { return number().Sub(x, y) }},
+	{name: "neg", wide: true, forms: unary((*enclose.Form).Neg), exact: func(x, _ *big.Float) *big.Float { return number().Neg(x) }},
+	{name: "scale", wide: true, forms: func(z, x, _ *enclose.Form) { z.Scale(x, factor) }, exact: func(x, _ *big.Float) *big.Float { return number().Mul(x, exactly(factor)) }},
+	{name: "add a number", wide: true, forms: func(z, x, _ *enclose.Form) { z.AddConst(x, factor) }, exact: func(x, _ *big.Float) *big.Float { return number().Add(x, exactly(factor)) }},
 	{name: "add scaled", wide: true, forms: func(z, x, y *enclose.Form) { z.AddScaled(x, factor, y) }, exact: func(x, y *big.Float) *big.Float {
-		return real().Add(x, real().Mul(y, exactly(factor)))
+		return number().Add(x, number().Mul(y, exactly(factor)))
 	}},
-	{name: "mul", wide: true, forms: func(z, x, y *enclose.Form) { z.Mul(x, y) }, exact: func(x, y *big.Float) *big.Float { return real().Mul(x, y) }},
-	{name: "sqr", wide: true, forms: unary((*enclose.Form).Sqr), exact: func(x, _ *big.Float) *big.Float { return real().Mul(x, x) }},
-	{name: "inv", wide: true, forms: unary((*enclose.Form).Inv), exact: func(x, _ *big.Float) *big.Float { return real().Quo(exactly(1), x) }},
-	{name: "div", wide: true, forms: func(z, x, y *enclose.Form) { z.Div(x, y) }, exact: func(x, y *big.Float) *big.Float { return real().Quo(x, y) }},
-	{name: "sqrt", wide: true, forms: unary((*enclose.Form).Sqrt), exact: func(x, _ *big.Float) *big.Float { return real().Sqrt(x) }},
+	{name: "mul", wide: true, forms: func(z, x, y *enclose.Form) { z.Mul(x, y) }, exact: func(x, y *big.Float) *big.Float { return number().Mul(x, y) }},
+	{name: "sqr", wide: true, forms: unary((*enclose.Form).Sqr), exact: func(x, _ *big.Float) *big.Float { return number().Mul(x, x) }},
+	{name: "inv", wide: true, forms: unary((*enclose.Form).Inv), exact: func(x, _ *big.Float) *big.Float { return number().Quo(exactly(1), x) }},
+	{name: "div", wide: true, forms: func(z, x, y *enclose.Form) { z.Div(x, y) }, exact: func(x, y *big.Float) *big.Float { return number().Quo(x, y) }},
+	{name: "sqrt", wide: true, forms: unary((*enclose.Form).Sqrt), exact: func(x, _ *big.Float) *big.Float { return number().Sqrt(x) }},
 	{name: "sin", forms: unary((*enclose.Form).Sin), exact: func(x, _ *big.Float) *big.Float { s, _ := bigSincos(x); return s }},
 	{name: "cos", forms: unary((*enclose.Form).Cos), exact: func(x, _ *big.Float) *big.Float { _, c := bigSincos(x); return c }},
 	{name: "acos", forms: unary((*enclose.Form).Acos), exact: func(x, _ *big.Float) *big.Float { return bigAcos(x) }},
@@ -150,7 +150,7 @@ func TestHammer(t *testing.T) {
 		}
 	}
 	rng := rand.New(rand.NewPCG(4, 1))
-	place := at{sum: real(), one: real()}
+	place := at{sum: number(), one: number()}
 	var most, known [32]float64
 	for i := range n {
 		o := i % len(operations)
@@ -215,14 +215,14 @@ func TestHammer(t *testing.T) {
 
 // sameTurn adds full turns to the angle a to come near b.
 func sameTurn(a, b *big.Float) *big.Float {
-	turn := real().Add(pi, pi)
+	turn := number().Add(pi, pi)
 	for {
-		d := real().Sub(a, b)
+		d := number().Sub(a, b)
 		switch {
 		case d.Cmp(pi) > 0:
-			a = real().Sub(a, turn)
+			a = number().Sub(a, turn)
 		case d.Neg(d).Cmp(pi) > 0:
-			a = real().Add(a, turn)
+			a = number().Add(a, turn)
 		default:
 			return a
 		}

@@ -22,9 +22,9 @@ func someVec(rng *rand.Rand, part float64) (v enclose.Vec) {
 
 // bigDot is the exact dot product.
 func bigDot(x, y [3]*big.Float) *big.Float {
-	sum := real()
+	sum := number()
 	for c := range x {
-		sum.Add(sum, real().Mul(x[c], y[c]))
+		sum.Add(sum, number().Mul(x[c], y[c]))
 	}
 	return sum
 }
@@ -39,7 +39,7 @@ func TestVectorsHoldTheTruth(t *testing.T) {
 		}
 	}
 	rng := rand.New(rand.NewPCG(4, 2))
-	place := at{sum: real(), one: real()}
+	place := at{sum: number(), one: number()}
 	most := map[string]float64{}
 	check := func(what string, z *enclose.Form, want *big.Float) {
 		t.Helper()
@@ -67,28 +67,28 @@ func TestVectorsHoldTheTruth(t *testing.T) {
 		var f enclose.Form
 		check("dot", f.Dot(&x, &y), bigDot(a, b))
 		check("along", f.Along(&x, v), bigDot(a, w))
-		length := real().Sqrt(bigDot(a, a))
+		length := number().Sqrt(bigDot(a, a))
 		check("norm", f.Norm(&x), length)
 		var z enclose.Vec
 		z.Unit(&x)
 		for c := range z {
 			if length.Sign() != 0 {
-				check("unit", &z[c], real().Quo(a[c], length))
+				check("unit", &z[c], number().Quo(a[c], length))
 			}
 		}
 		z = x
 		z.Cross(&z, &y)
 		for c := range z {
 			i, j := (c+1)%3, (c+2)%3
-			check("cross", &z[c], real().Sub(real().Mul(a[i], b[j]), real().Mul(a[j], b[i])))
+			check("cross", &z[c], number().Sub(number().Mul(a[i], b[j]), number().Mul(a[j], b[i])))
 		}
 		z.Mul(&x, &y[0])
 		for c := range z {
-			check("mul", &z[c], real().Mul(a[c], b[0]))
+			check("mul", &z[c], number().Mul(a[c], b[0]))
 		}
 		z.Sub(z.AddConst(z.Add(z.Scale(&x, v.Z), &y), v), &x)
 		for c := range z {
-			check("sums", &z[c], real().Add(real().Add(a[c], b[c]), w[c]))
+			check("sums", &z[c], number().Add(number().Add(a[c], b[c]), w[c]))
 		}
 	}
 	for what, s := range most {
@@ -122,7 +122,7 @@ func TestRotationHoldsTheTruth(t *testing.T) {
 		n = 1000
 	}
 	rng := rand.New(rand.NewPCG(4, 3))
-	place := at{sum: real(), one: real()}
+	place := at{sum: number(), one: number()}
 	most := 0.
 	for range n {
 		b := someBox(rng, math.Exp2(-20*rng.Float64()*rng.Float64()))
@@ -134,7 +134,7 @@ func TestRotationHoldsTheTruth(t *testing.T) {
 		var sin, cos [3]*big.Float
 		for k := range 3 {
 			var f enclose.Form
-			sin[k], cos[k] = bigSincos(real().Set(place.tangent(f.Coordinate(&b, 3+k))))
+			sin[k], cos[k] = bigSincos(number().Set(place.tangent(f.Coordinate(&b, 3+k))))
 		}
 		mul := func(x ...*big.Float) *big.Float {
 			p := exactly(1)
@@ -145,9 +145,9 @@ func TestRotationHoldsTheTruth(t *testing.T) {
 		}
 		sr, sp, sy, cr, cp, cy := sin[0], sin[1], sin[2], cos[0], cos[1], cos[2]
 		want := [9]*big.Float{ // ISO 9787: Rz(yaw) Ry(pitch) Rx(roll) multiplied out
-			mul(cy, cp), real().Sub(mul(cy, sp, sr), mul(sy, cr)), real().Add(mul(cy, sp, cr), mul(sy, sr)),
-			mul(sy, cp), real().Add(mul(sy, sp, sr), mul(cy, cr)), real().Sub(mul(sy, sp, cr), mul(cy, sr)),
-			real().Neg(sp), mul(cp, sr), mul(cp, cr),
+			mul(cy, cp), number().Sub(mul(cy, sp, sr), mul(sy, cr)), number().Add(mul(cy, sp, cr), mul(sy, sr)),
+			mul(sy, cp), number().Add(mul(sy, sp, sr), mul(cy, cr)), number().Sub(mul(sy, sp, cr), mul(cy, sr)),
+			number().Neg(sp), mul(cp, sr), mul(cp, cr),
 		}
 		for c := range want {
 			s := place.used(&r[c], want[c])
@@ -183,11 +183,11 @@ func TestTurnHoldsTheTruth(t *testing.T) {
 		own := [3]bool{rng.IntN(4) > 0, rng.IntN(4) > 0, rng.IntN(4) > 0}
 		turn.Set(&b, own)
 		for k := range q {
-			q[k] = real()
+			q[k] = number()
 			if own[k] {
 				c, h := b.Normal(3 + k)
 				at[k] = pick(rng)
-				q[k].Add(exactly(c), real().Mul(exactly(h), exactly(at[k])))
+				q[k].Add(exactly(c), number().Mul(exactly(h), exactly(at[k])))
 			}
 		}
 		v := r3.Vec{X: rng.NormFloat64(), Y: rng.NormFloat64(), Z: rng.NormFloat64()}
@@ -197,8 +197,8 @@ func TestTurnHoldsTheTruth(t *testing.T) {
 		for k := range 3 {
 			sin, cos := bigSincos(q[k])
 			i, j := (k+1)%3, (k+2)%3
-			y := real().Sub(real().Mul(cos, w[i]), real().Mul(sin, w[j]))
-			w[j] = real().Add(real().Mul(sin, w[i]), real().Mul(cos, w[j]))
+			y := number().Sub(number().Mul(cos, w[i]), number().Mul(sin, w[j]))
+			w[j] = number().Add(number().Mul(sin, w[i]), number().Mul(cos, w[j]))
 			w[i] = y
 		}
 		// far from the rounding of these plain sums, the boxes being large
@@ -245,19 +245,19 @@ func TestCoordinateCoversTheBox(t *testing.T) {
 
 // What is not known is said to be unknown, and stays so.
 func TestUnknown(t *testing.T) {
-	var one, wide, nan, big enclose.Form
+	var one, wide, nan, huge enclose.Form
 	one.Const(1)
 	wide = enclose.Form{C: 0.5, G: [6]float64{0.4, 0.2}}
 	nan.Const(math.NaN())
-	big.Const(math.MaxFloat64)
+	huge.Const(math.MaxFloat64)
 	for what, f := range map[string]*enclose.Form{
 		"1/0":       new(enclose.Form).Inv(&wide),
 		"√-0.1":     new(enclose.Form).Sqrt(&wide),
 		"acos 1.1":  new(enclose.Form).Acos(&wide),
 		"atan2 0,0": new(enclose.Form).Atan2(&wide, &wide),
 		"NaN":       &nan,
-		"overflow":  new(enclose.Form).Mul(&big, &big),
-		"sum":       new(enclose.Form).Add(&big, &big),
+		"overflow":  new(enclose.Form).Mul(&huge, &huge),
+		"sum":       new(enclose.Form).Add(&huge, &huge),
 	} {
 		z := func() *enclose.Form { return new(enclose.Form) }
 		for _, g := range []*enclose.Form{

@@ -1,0 +1,100 @@
+package enclose
+
+import (
+	"math"
+
+	"gonum.org/v1/gonum/spatial/r3"
+)
+
+// Set sets z to the vector of forms.
+func (z *Vec2) Set(x *Vec) *Vec2 {
+	for c := range z {
+		z[c].Set(&x[c])
+	}
+	return z
+}
+
+// Quads sets z to the vector of quads.
+func (z *Vec) Quads(x *Vec2) *Vec {
+	for c := range z {
+		z[c].Quad(&x[c])
+	}
+	return z
+}
+
+// Arm sets z to the vector v turned as t has it.
+func (z *Vec2) Arm(t *Turn, v r3.Vec) *Vec2 {
+	var a Arm
+	t.Apply(v, &a)
+	size := r3.Norm(v)
+	for c := range z {
+		q := &z[c]
+		*q = Quad{C: component(a.At, c)}
+		for k := range a.First {
+			q.G[3+k] = component(a.First[k], c)
+		}
+		for k := range a.Second {
+			q.H[pairsOf-len(a.Second)+k] = component(a.Second[k], c)
+		}
+		l, h := q.sizes()
+		q.settle(t.Rest*size, math.Abs(q.C)+l+h+size)
+	}
+	return z
+}
+
+func component(v r3.Vec, c int) float64 { return [3]float64{v.X, v.Y, v.Z}[c] }
+
+// Add sets z to x + y.
+func (z *Vec2) Add(x, y *Vec2) *Vec2 {
+	for c := range z {
+		z[c].Add(&x[c], &y[c])
+	}
+	return z
+}
+
+// Sub sets z to x - y.
+func (z *Vec2) Sub(x, y *Vec2) *Vec2 {
+	for c := range z {
+		z[c].Sub(&x[c], &y[c])
+	}
+	return z
+}
+
+// AddConst sets z to x + v.
+func (z *Vec2) AddConst(x *Vec2, v r3.Vec) *Vec2 {
+	for c := range z {
+		z[c].AddConst(&x[c], component(v, c))
+	}
+	return z
+}
+
+// Scale sets z to a·x.
+func (z *Vec2) Scale(x *Vec2, a float64) *Vec2 {
+	for c := range z {
+		z[c].Scale(&x[c], a)
+	}
+	return z
+}
+
+// Mul sets z to f·x.
+func (z *Vec2) Mul(x *Vec2, f *Quad) *Vec2 {
+	g := *f
+	for c := range z {
+		z[c].Mul(&x[c], &g)
+	}
+	return z
+}
+
+// Cross sets z to the cross product x×y.
+func (z *Vec2) Cross(x, y *Vec2) *Vec2 {
+	var p [3]products2
+	for c := range p {
+		a, b := (c+1)%3, (c+2)%3
+		p[c].add(&x[a], &y[b], 1)
+		p[c].add(&x[b], &y[a], -1)
+	}
+	for c := range p {
+		p[c].quad(&z[c])
+	}
+	return z
+}
