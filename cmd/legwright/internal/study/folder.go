@@ -28,6 +28,9 @@ const (
 	tableFile      = "front.csv"
 	progressFile   = "progress.csv"
 	checkpointFile = "checkpoint.json"
+	logFile        = "checkpoint.log"
+	lockFile       = "checkpoint.lock"
+	partFile       = "part.json"
 	designsFolder  = "designs"
 )
 
@@ -47,6 +50,9 @@ func inspect(dir string) (State, error) {
 	if err != nil {
 		return Empty, fmt.Errorf("%s: cannot be read (%w); give another folder", Clean(dir), bare(err))
 	}
+	entries = slices.DeleteFunc(entries, func(e fs.DirEntry) bool { // what an open or a killed process leaves
+		return e.Type().IsRegular() && (e.Name() == lockFile || strings.HasPrefix(e.Name(), halfWritten))
+	})
 	if len(entries) == 0 {
 		return Empty, nil
 	}
@@ -82,17 +88,19 @@ func own(checkpoint []byte) bool {
 type Folder struct {
 	dir   string
 	state State // when it was opened
+	lock  *lock // nil if there is nothing to write
 }
 
 // Intent is what to do with a study that the folder holds already.
 type Intent struct {
 	Force  bool // begin anew, also over a finished one
-	Resume bool // replay an unfinished one, leave a finished one
+	Resume bool // go on with an unfinished one, leave a finished one
 }
 
 // Create opens a folder to write a study into, making it if it is not there. It refuses a folder that
-// holds other things, and a study unless the intent allows it. With Resume a finished study is no
-// error: the caller sees State() == Finished and leaves it alone.
+// holds other things, one that another process has open, and a study unless the intent allows it. With
+// Resume a finished study is no error: the caller sees State() == Finished and leaves it alone. Whoever
+// opens a folder closes it.
 func Create(dir string, intent Intent) (*Folder, error) {
 	state, err := inspect(dir)
 	if err != nil {
@@ -105,7 +113,12 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	case state == Finished && !intent.Force && !intent.Resume:
 		return nil, fmt.Errorf("%s: the folder holds a finished study; give another folder, or --force to replace the study", name)
 	case state == Unfinished && !intent.Force && !intent.Resume:
-		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to replay it from the start and on to its end, or --force to replace it", name)
+		if l, err := takeLock(dir); err == nil {
+			l.free()
+		} else if errors.Is(err, errBusy) {
+			return nil, err
+		}
+		return nil, fmt.Errorf("%s: the folder holds an unfinished study; write --resume to go on with it, or --force to replace it", name)
 	}
 	f := &Folder{dir: dir, state: state}
 	if state == Finished && !intent.Force {
@@ -114,11 +127,31 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	if err := os.MkdirAll(dir, 0o777); err != nil {
 		return nil, fmt.Errorf("%s: the folder cannot be made (%w); give a folder that you may write to", name, bare(err))
 	}
-	if err := f.writable(); err != nil {
+	if f.lock, err = takeLock(dir); errors.Is(err, errBusy) {
+		return nil, err
+	} else if err != nil {
 		return nil, fmt.Errorf("%s: the folder cannot be written to (%w); give a folder that you may write to", name, bare(err))
 	}
+	if now, err := inspect(dir); err != nil || now != state { // another process came and went
+		f.Close()
+		if err != nil {
+			return nil, err
+		}
+		return Create(dir, intent)
+	}
+	if err := f.writable(); err != nil {
+		f.Close()
+		return nil, fmt.Errorf("%s: the folder cannot be written to (%w); give a folder that you may write to", name, bare(err))
+	}
+	f.sweep()
 	return f, nil
 }
+
+// Close lets other processes have the folder.
+func (f *Folder) Close() error { return f.lock.free() }
+
+// Locked tells whether other processes are kept out: some file systems know no locks.
+func (f *Folder) Locked() bool { return f.lock != nil && f.lock.held }
 
 // State is what the folder held when it was opened.
 func (f *Folder) State() State { return f.state }

@@ -65,6 +65,9 @@ func TestSaveStudy(t *testing.T) {
 	if err := f.Save(r); err != nil {
 		t.Fatal(err)
 	}
+	if err := f.Close(); err != nil {
+		t.Fatal(err)
+	}
 	got := files(t, dir)
 	want := []string{"brief.yaml", "designs/001.yaml", "designs/002.yaml", "designs/003.yaml", "designs/004.yaml",
 		"designs/005.yaml", "duty/more.csv", "front.csv", "front.json", "poses.csv", "progress.csv"}
@@ -145,6 +148,9 @@ func TestFolderRules(t *testing.T) {
 			t.Errorf("%s: %v", c.why, err)
 		case c.want == "" && f.State() != c.state:
 			t.Errorf("%s: state %v, want %v", c.why, f.State(), c.state)
+			f.Close()
+		case c.want == "":
+			f.Close()
 		case c.want != "" && (err == nil || !strings.Contains(err.Error(), c.want) || !strings.Contains(err.Error(), c.dir)):
 			t.Errorf("%s: got %v, want %q and the folder's name", c.why, err, c.want)
 		}
@@ -187,6 +193,7 @@ func TestForceLeavesNothingStale(t *testing.T) {
 			t.Fatal(err)
 		}
 	}
+	f.Close()
 	f, err = Create(dir, Intent{Force: true})
 	if err != nil {
 		t.Fatal(err)
@@ -197,6 +204,7 @@ func TestForceLeavesNothingStale(t *testing.T) {
 	if err := f.Save(r); err != nil {
 		t.Fatal(err)
 	}
+	f.Close()
 	want := []string{"brief.json", "designs/001/sketch.txt", "designs/002.yaml", "designs/003.yaml", "designs/1234.yaml", "designs/2024/keep.txt",
 		"designs/my notes.txt", "duty/more.csv", "front.csv", "front.json", "notes.txt", "poses.csv", "progress.csv"}
 	if got := slices.Sorted(maps.Keys(files(t, dir))); !slices.Equal(got, want) {

@@ -37,6 +37,7 @@ type Front struct {
 	Title          string             `json:"title"`
 	Seed           int64              `json:"seed"`
 	Status         string             `json:"status"`
+	StoppedBy      string             `json:"stopped_by,omitempty"` // evaluations, time, stall, interrupt or exhausted
 	Evaluations    int                `json:"evaluations"`
 	Budget         int                `json:"budget,omitempty"` // evaluations allowed; 0 if not recorded
 	Feasible       int                `json:"feasible"`         // feasible designs among the evaluated
@@ -49,7 +50,18 @@ type Front struct {
 	Designs        []Design           `json:"designs"`            // best rank first
 	Families       []FamilyLine       `json:"families,omitempty"` // a line for each, where a brief names several
 	Help           *Help              `json:"infeasible,omitempty"`
-	Notes          []string           `json:"notes"` // what holds for the whole study
+	Part           *PartName          `json:"part,omitempty"`     // where the study is a part of another
+	Parts          *Parts             `json:"parts,omitempty"`    // what a merged front is made of
+	Failures       int                `json:"failures,omitempty"` // designs that could not be judged, of the evaluated
+	Failed         []Failed           `json:"failed,omitempty"`   // the first of them
+	Notes          []string           `json:"notes"`              // what holds for the whole study
+}
+
+// Failed is a design that could not be judged. Sized dimensions are unknown.
+type Failed struct {
+	Family     string            `json:"family"`
+	Dimensions map[string]Number `json:"dimensions"`
+	Why        string            `json:"why"`
 }
 
 // Goal is one goal of the study.

@@ -12,8 +12,6 @@ import (
 	"strings"
 
 	"legwright/opt"
-
-	"github.com/natefinch/atomic"
 )
 
 // File is a file that a brief came from or names, with the path as written and its bytes.
@@ -50,7 +48,7 @@ func inside(name string) bool {
 	}
 	first, _, _ := strings.Cut(filepath.ToSlash(filepath.Clean(name)), "/")
 	switch first {
-	case frontFile, tableFile, progressFile, checkpointFile, designsFolder, ".":
+	case frontFile, tableFile, progressFile, checkpointFile, logFile, lockFile, partFile, pageFile, designsFolder, ".":
 		return false
 	}
 	return !slices.Contains(briefNames, first)
@@ -77,6 +75,8 @@ type Result struct {
 	Encode func(Design) ([]byte, error)
 	// Sheets gives the sheets of a design, by the names of SheetNames; nil for a study without any.
 	Sheets func(Design) (map[string][]byte, error)
+	// Part is what merging needs of a part of a study; nil for a whole one.
+	Part *Part
 	// Unfinished leaves the checkpoint where it is.
 	Unfinished bool
 }
@@ -111,6 +111,9 @@ func (f *Folder) Save(r *Result) error {
 	var b bytes.Buffer
 	writeProgress(&b, r.History)
 	if err := f.write(progressFile, b.Bytes()); err != nil {
+		return err
+	}
+	if err := f.savePart(r.Part); err != nil {
 		return err
 	}
 	if err := f.saveFront(r.Front); err != nil {
@@ -210,21 +213,6 @@ func (f *Folder) write(name string, b []byte) error {
 	return WriteFile(path, b)
 }
 
-// WriteFile writes a file whole or not at all. A new file may be read by whoever may read its folder.
-func WriteFile(path string, b []byte) error {
-	_, err := os.Stat(path)
-	fresh := errors.Is(err, fs.ErrNotExist)
-	if err := atomic.WriteFile(path, bytes.NewReader(b)); err != nil {
-		return fmt.Errorf("%s: cannot be written (%w); the disk may be full or the folder closed to you", Clean(path), bare(err))
-	}
-	if fresh {
-		if info, err := os.Stat(filepath.Dir(path)); err == nil {
-			return os.Chmod(path, info.Mode().Perm()&0o666)
-		}
-	}
-	return nil
-}
-
 // Checkpoint reads the checkpoint of an unfinished study; nil if there is none.
 func (f *Folder) Checkpoint() ([]byte, error) {
 	b, err := os.ReadFile(filepath.Join(f.dir, checkpointFile))
@@ -237,8 +225,13 @@ func (f *Folder) Checkpoint() ([]byte, error) {
 // SaveCheckpoint writes the checkpoint.
 func (f *Folder) SaveCheckpoint(b []byte) error { return f.write(checkpointFile, b) }
 
-// RemoveCheckpoint removes the checkpoint if there is one.
-func (f *Folder) RemoveCheckpoint() error { return f.remove(checkpointFile) }
+// RemoveCheckpoint removes the checkpoint and its log if there are any.
+func (f *Folder) RemoveCheckpoint() error {
+	if err := f.remove(checkpointFile); err != nil {
+		return err
+	}
+	return f.remove(logFile)
+}
 
 func (f *Folder) remove(name string) error {
 	err := os.Remove(filepath.Join(f.dir, filepath.FromSlash(name)))
