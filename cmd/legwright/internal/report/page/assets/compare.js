@@ -6,13 +6,13 @@ function compareView(store, place) {
   const options = model.designs.map((d, i) => [i, `${d.id}  ${d.family}`]);
   const first = choice("picked", options, store.picked, (v) => store.pick(Number(v)));
   const second = choice("held against it", [[-1, "none"], ...options], store.other, (v) => store.against(Number(v)));
-  const figure = h("div", {}), numbers = h("div", {}), none = h("p", { class: "note" }, "Choose a second design here, or with “hold” in the ranked table.");
+  const figure = h("div", { class: "stay" }), numbers = h("div", {}), none = h("p", { class: "note" }, "Choose a second design here, or with “hold” in the ranked table.");
   const view = machineView(figure, "Two machines laid over each other", model.unit("m"));
   const legend = h("p", { class: "legend" });
   const slider = h("input", { type: "range", min: 0, max: Math.max(data.path.length / 6 - 1, 0), value: 0, step: 1, oninput: () => show() });
   const path = h("label", { class: "path" }, h("span", {}, "both through the duty"), slider);
   add(figure, [legend, path]);
-  const body = h("div", { class: "pair" }, figure, numbers);
+  const body = h("div", { class: "pair sheet" }, figure, numbers);
   add(place, [h("div", { class: "fields screen" }, first, second, button("swap", () => {
     const [a, b] = [store.picked, store.other];
     if (b < 0) return;
@@ -39,7 +39,7 @@ function compareView(store, place) {
     slider.value = 0;
     empty(legend, h("b", { class: "ina" }, `${a.id} full lines`), ", ", h("b", { class: "inb" }, `${b.id} dashed`), path.hidden ? "; both at home, on one base frame" : "; on one base frame");
     show([...allPoints(model, a), ...allPoints(model, b)]);
-    empty(numbers, wide("differences", table("Differences are those from the first to the second; ▲ better, ▼ worse", ["", num(a.id), num(b.id), num("difference"), ""], differences(model, a, b), { class: "differences" })));
+    empty(numbers, table("Differences are those from the first to the second; ▲ better, ▼ worse", ["", num(a.id), num(b.id), num("difference"), ""], differences(model, a, b), { class: "differences" }));
   }
   store.on("pick", draw);
   draw();

@@ -59,17 +59,28 @@ const button = (text, press, attrs) => h("button", { type: "button", onclick: pr
 // wide puts a table or a drawing that may be broader than the page into a frame that scrolls.
 const wide = (label, node) => h("div", { class: "wide", role: "region", tabindex: "0", "aria-label": label }, node);
 
-// table makes a table from head cells and rows of cells; the first cell of a row heads it.
-function table(caption, head, rows, attrs) {
+// onWidth calls draw with the width of a node, now and whenever it changes.
+function onWidth(node, draw) {
+  let last = 0;
+  new ResizeObserver(() => {
+    const width = node.clientWidth;
+    if (width > 0 && Math.abs(width - last) > 1) draw(last = width);
+  }).observe(node);
+}
+
+// table makes a table with a note above it from head cells and rows of cells; the first cell of a row heads it.
+function table(note, head, rows, attrs) {
   const cell = (c, tag, scope) => {
     const { node, ...rest } = c !== null && typeof c === "object" && "node" in c ? c : { node: c };
     return h(tag, { scope, ...rest }, node);
   };
-  return h("table", attrs || {},
-    h("caption", {}, caption),
+  return noted(note, h("table", { ...attrs, "aria-label": note },
     h("thead", {}, h("tr", {}, head.map((c) => cell(c, "th", "col")))),
-    h("tbody", {}, rows.map((r) => h("tr", {}, r.map((c, i) => (i === 0 ? cell(c, "th", "row") : cell(c, "td")))))));
+    h("tbody", {}, rows.map((r) => h("tr", {}, r.map((c, i) => (i === 0 ? cell(c, "th", "row") : cell(c, "td"))))))));
 }
+
+// noted is a table in a frame with a note above it.
+const noted = (note, node) => h("div", { class: "noted" }, h("p", { class: "note" }, note), wide(note, node));
 
 // num is a table cell of a number.
 const num = (text, more) => ({ node: text, class: "num", ...more });

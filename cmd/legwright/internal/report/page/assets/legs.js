@@ -6,14 +6,16 @@ function legsView(model, d, place) {
   const word = f.rotary ? "actuator" : "leg";
   const [low, high] = d.range;
   const ticksOf = [];
+  const reached = column(d.legs.flatMap((l) => [l[0] ?? NaN, l[2] ?? NaN]), coordinate, 5);
+  const levels = [3, 4, 5, 6, 7].map((c) => column(d.legs.map((l) => l[c] ?? NaN), c < 5 ? effort : c === 5 ? rate : angle, 4));
   const used = (leg, k) => {
     const bounded = low !== null && high !== null && k < f.bounded;
     const bar = bounded ? rangeBar(low, high, f.reserve, leg[0], leg[2], leg[1]) : null;
     ticksOf.push(bar ? bar.tick : null);
-    return h("td", { class: "num" }, bar ? bar.node : null, `${quantity(leg[0], coordinate, 5)} … ${quantity(leg[2], coordinate, 5)}`);
+    return h("td", { class: "num" }, bar ? bar.node : null, `${reached[2 * k]} … ${reached[2 * k + 1]}`);
   };
-  const against = (v, limit, unit) => h("td", { class: limit !== null && v > limit * (1 + 1e-9) ? "num bad" : "num" },
-    limit !== null && v !== null ? levelBar(v, limit) : null, v === null ? "none" : quantity(v, unit, 4));
+  const against = (v, limit, text) => h("td", { class: limit !== null && v > limit * (1 + 1e-9) ? "num bad" : "num" },
+    limit !== null && v !== null ? levelBar(v, limit) : null, h("span", { class: "figure" }, text));
   const columns = [
     [`${f.rotary ? "angle" : "length"} used`, coordinate, low === null ? "" : `of ${quantity(low, coordinate, 5)} … ${quantity(high, coordinate, 5)}`],
     [f.rotary ? "torque +" : "push", effort, f.push === null ? "" : `of ${quantity(f.push, effort)}`],
@@ -24,14 +26,12 @@ function legsView(model, d, place) {
   ];
   const now = d.legs.map(() => h("td", { class: "num" }));
   const rows = d.legs.map((leg, k) => h("tr", {}, h("th", { scope: "row" }, k + 1), used(leg, k), now[k],
-    against(leg[3], f.push, effort), against(leg[4], f.pull, effort), against(leg[5], f.speed, rate),
-    against(leg[6], f.base_swing, angle), against(leg[7], f.platform_swing, angle)));
+    [f.push, f.pull, f.speed, f.base_swing, f.platform_swing].map((limit, c) => against(leg[3 + c], limit, levels[c][k]))));
   const head = columns.map(([name, unit, of]) => h("th", { scope: "col", class: "num" }, name, h("small", {}, ` ${unit.symbol} ${of}`)));
   head.splice(1, 0, h("th", { scope: "col", class: "num" }, "as drawn", h("small", {}, ` ${coordinate.symbol}`)));
   add(place, [
     h("h3", {}, `What each ${word} does`),
-    wide("legs", h("table", { class: "legs" },
-      h("caption", {}, `Least and greatest over all required poses and cases${f.reserve ? `; ${withUnit(f.reserve, coordinate)} kept free at each end` : ""}. Bars: share of the limit that is used.`),
+    noted(`Least and greatest over all required poses and cases${f.reserve ? `; ${withUnit(f.reserve, coordinate)} kept free at each end` : ""}. Bars: share of the limit that is used.`, h("table", { class: "legs", "aria-label": `what each ${word} does` },
       h("thead", {}, h("tr", {}, h("th", { scope: "col" }, word), head)), h("tbody", {}, rows))),
   ]);
   // The returned function marks the coordinates of the posture drawn.

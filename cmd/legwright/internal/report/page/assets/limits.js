@@ -6,33 +6,31 @@ function limitsView(model, d, place, showPose) {
   const rest = new Set(model.measures.map((m) => m.index));
   const where = (index) => {
     const w = index === undefined ? null : deciding(d, index);
-    if (!w) return ["", ""];
+    if (!w) return "";
     const m = model.measures[index];
     const parts = [w.leg ? (w.mate ? `legs ${w.leg} and ${w.mate}` : `leg ${w.leg}`) : "", model.case(w.case), model.zone(w.zone)].filter(Boolean);
-    return [given(parts.join(", ")), button("show", () => showPose(index, m.label), { "data-pose": m.name, "aria-label": `show the pose that decides ${m.label}` })];
+    return button(given(parts.join(", ") || "a pose"), () => showPose(index, m.label), { class: "posed", "data-pose": m.name, title: `show the pose that decides ${m.label}` });
   };
   const goalText = (m) => {
     const g = m && model.goals.find((x) => x.measure === m.index);
-    return g ? h("small", {}, g.more ? " goal, more is better" : " goal, less is better") : "";
+    return g ? h("small", {}, " goal") : "";
   };
   const rows = [];
   const sorted = [...d.limits].sort((x, y) => (x.margin ?? Infinity) - (y.margin ?? Infinity));
   for (const l of sorted) {
     const m = byName.get(l.measure), unit = l.shown;
     if (m) rest.delete(m.index);
-    const [why, show] = where(m ? m.index : undefined);
     rows.push([[given(words(l.measure)), goalText(m)], num(withUnit(l.value ?? (m ? d.measures[m.index] : NaN), unit, 5)),
       num(`${l.sense === "at_least" ? "at least" : "at most"} ${withUnit(l.bound, unit, 5)}`),
       { node: [l.holds ? "holds " : "fails ", marginText(l)], class: l.holds ? "num" : "num bad" },
-      why, show]);
+      where(m ? m.index : undefined)]);
   }
   for (const m of model.measures) {
     const v = d.measures[m.index];
     if (!rest.has(m.index) || Number.isNaN(v)) continue;
-    const [why, show] = where(m.index);
-    rows.push([[h("span", { title: m.text }, given(m.label)), goalText(m)], num(withUnit(v, m.shown, 5)), num("no limit"), "", why, show]);
+    rows.push([[h("span", { title: m.text }, given(m.label)), goalText(m)], num(withUnit(v, m.shown, 5)), num("–"), "", where(m.index)]);
   }
   add(place, [h("h3", {}, "Measures and limits"),
-    wide("measures and limits", table("Tightest limit first. Every figure is the worst over all required poses and cases.",
-      ["measure", num("value"), num("wanted"), num("margin"), "decided by", { node: "pose", class: "screen" }], rows, { class: "limits" }))]);
+    table("Tightest limit first. Every figure is the worst over all required poses and cases; press what decides it to see the pose.",
+      ["measure", num("value"), num("wanted"), num("margin"), "decided by"], rows, { class: "limits" })]);
 }

@@ -74,15 +74,16 @@ function thumbnails(figures, hanging, labels) {
 
 // machineView is a drawing that can be turned and zoomed.
 function machineView(place, label, unit) {
-  const W = 640, H = 500;
+  let W = 640, H = 500;
   const eye = camera();
   const group = s("g", {}), rule = s("g", { class: "rule" });
-  const svg = s("svg", { viewBox: `${-W / 2} ${-H / 2} ${W} ${H}`, class: "view", tabindex: "0", role: "img", "aria-label": `${label}. Arrow keys turn it, plus and minus zoom, 0 resets.` }, group, rule);
+  const svg = s("svg", { class: "view", tabindex: "0", role: "img", "aria-label": `${label}. Arrow keys turn it, plus and minus zoom, 0 resets.` }, group, rule);
   let layers = [], ball = { centre: [0, 0, 0], radius: 1 }, ground = groundOf([]), hanging = false;
 
   function draw() {
+    svg.setAttribute("viewBox", `${-W / 2} ${-H / 2} ${W} ${H}`);
     const see = sight(eye, hanging);
-    const k = eye.zoom * (H / 2 - 30) / ball.radius, c = see(ball.centre);
+    const k = eye.zoom * (H / 2 - 26) / ball.radius, c = see(ball.centre);
     plot(group, layers, see, (q) => [(q[0] - c[0]) * k, (q[1] - c[1]) * k], ground, "numbered");
     const width = ground.step * k, x = 14 - W / 2, y = H / 2 - 12;
     empty(rule, s("path", { d: `M${x} ${y - 6}v6h${width}v-6` }),
@@ -90,7 +91,13 @@ function machineView(place, label, unit) {
   }
   const hand = steer(svg, eye, draw);
   const go = (view) => { Object.assign(eye, view); draw(); };
-  add(place, [h("div", { class: "stage" }, svg),
+  const stage = h("div", { class: "stage" }, svg);
+  onWidth(stage, (width) => {
+    W = Math.max(300, width);
+    H = Math.round(Math.min(W * 0.82, 560));
+    draw();
+  });
+  add(place, [stage,
     h("div", { class: "fields screen", role: "group", "aria-label": "turn and zoom" },
       VIEWS.map(([name, view]) => button(name, () => go(view))),
       button("+", () => hand.zoom(1.25), { "aria-label": "closer" }), button("−", () => hand.zoom(0.8), { "aria-label": "farther" }),

@@ -15,9 +15,10 @@ function mapView(model, d, place) {
   const all = maps.flatMap((m) => m.values.filter((v) => v >= 0));
   const top = Math.max(...all) * 1e-4, low = Math.min(...all) * 1e-4;
 
-  function draw(which) {
+  let which = 0, full = 560;
+  function draw() {
     const m = maps[which];
-    const W = 560, H = 430, L = 66, R = 86, T = 12, B = 46, w = W - L - R, hh = H - T - B;
+    const W = Math.max(300, Math.min(full, 760)), H = Math.round(Math.min(430, W * 0.85)), L = 58, R = 80, T = 12, B = 46, w = W - L - R, hh = H - T - B;
     const ux = model.unit(COORDINATES.indexOf(m.x) < 3 ? "m" : "rad"), uy = model.unit(COORDINATES.indexOf(m.y) < 3 ? "m" : "rad");
     const dx = (m.x_range[1] - m.x_range[0]) / (m.n - 1), dy = (m.y_range[1] - m.y_range[0]) / (m.n - 1);
     // Each value stands for a cell about its point.
@@ -81,7 +82,7 @@ function mapView(model, d, place) {
   }
 
   add(place, [h("h3", {}, "Conditioning over the duty"),
-    h("div", { class: "fields" }, choice("over", maps.map((m, k) => [k, names(m)]), 0, (k) => draw(Number(k)))),
-    chart, read, h("p", { class: "note" }, "Bright is good. Struck through: a pose limit fails. Empty: out of reach. Outlines: zones of the duty.")]);
-  draw(0);
+    h("div", { class: "fields" }, choice("over", maps.map((m, k) => [k, names(m)]), 0, (k) => { which = Number(k); draw(); })),
+    chart, read, h("p", { class: "note" }, "Bright is good; one scale for all maps of this design. Struck through: a pose limit fails. Empty: out of reach. Outlines: zones of the duty.")]);
+  onWidth(chart, (width) => { full = width; draw(); });
 }

@@ -10,6 +10,7 @@ function rankedView(store, place) {
   const text = new Map(columns.map((a) => [a.key, column(a.values, a.unit)]));
   let most = 25, sortKey = "", down = false;
   const open = new Set();
+  const proofs = model.designs.some((d) => d.proof); // else all are as checked as each other
   const count = h("p", { class: "note", "aria-live": "polite" });
   const body = h("tbody", {});
   const heads = new Map();
@@ -18,14 +19,13 @@ function rankedView(store, place) {
     if (key !== null) heads.set(key, th);
     return th;
   };
-  const grid = h("table", { class: "ranked" },
-    h("caption", {}, "Designs in the order of rank under the weights above; a heading sorts by its column"),
+  const grid = h("table", { class: "ranked", "aria-label": "designs in the order of rank under the weights" },
     h("thead", {}, h("tr", {},
-      head("", "rank", { class: "num" }), head(null, "design"), head(null, "compare"),
+      head("", "rank", { class: "num" }), head(null, "design"),
       model.families.length > 1 ? head(null, "family") : null, head(null, "marks"),
       head("score", "score", { class: "num" }),
       columns.map((a) => head(a.key, a.label + (a.unit.symbol ? `, ${a.unit.symbol}` : ""), { class: "num" })),
-      head("margin", "tightest limit"), head(null, "checked"))),
+      head("margin", "tightest limit"), proofs ? head(null, "checked") : null)),
     body);
 
   const rows = model.designs.map((d, i) => {
@@ -34,12 +34,12 @@ function rankedView(store, place) {
     const twin = button("", () => { open.has(i) ? open.delete(i) : open.add(i); draw(); }, { class: "twin", hidden: true });
     const rank = h("td", { class: "num" }), score = h("td", { class: "num" });
     const node = h("tr", { "data-design": i }, rank,
-      h("th", { scope: "row" }, pick, " ", twin), h("td", {}, against),
+      h("th", { scope: "row" }, pick, " ", against, " ", twin),
       model.families.length > 1 ? h("td", {}, familyTag(model, d.family)) : null,
       h("td", { class: "marked" }, given(d.marks.map(words).join(", "))),
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), h("td", {}, d.short));
+      h("td", {}, tightest(d)), proofs ? h("td", {}, d.short) : null);
     return { node, rank, score, pick, against, twin };
   });
 
@@ -85,7 +85,7 @@ function rankedView(store, place) {
       rows[i].rank.textContent = store.place[i];
       rows[i].score.textContent = store.score[i].toFixed(4);
     }
-    count.textContent = `${list.length} of ${model.designs.length} designs kept, ${groups.length} of them apart from each other; ${now.length} listed.`;
+    count.textContent = `${list.length} of ${model.designs.length} designs kept, ${groups.length} of them apart from each other; ${now.length} listed. A heading sorts by its column; “hold” puts a design beside the picked one.`;
     more.hidden = now.length === out.length;
     for (const [key, th] of heads) {
       if (key === sortKey) th.setAttribute("aria-sort", down ? "descending" : "ascending");

@@ -2,7 +2,8 @@
 
 function scatterView(store, place) {
   const { model } = store;
-  const W = 640, H = 440, L = 66, R = 20, T = 16, B = 50;
+  const L = 62, R = 20, T = 14, B = 48;
+  let W = 640, H = 440;
   const axes = model.axes;
   const goals = axes.filter((a) => a.goal);
   const at = {
@@ -15,7 +16,7 @@ function scatterView(store, place) {
   const frame = s("g", { class: "frame" });
   const dots = s("g", {});
   const halo = s("g", { class: "halo", "aria-hidden": "true" });
-  const svg = s("svg", { viewBox: `0 0 ${W} ${H}`, class: "scatter", role: "img", "aria-label": "Scatter of the front; the table below lists the same designs" }, frame, dots, halo);
+  const svg = s("svg", { class: "scatter", role: "img", "aria-label": "Scatter of the front; the table below lists the same designs" }, frame, dots, halo);
   const tip = h("p", { class: "tip", "aria-hidden": "true" });
   let xy = [];
 
@@ -37,12 +38,13 @@ function scatterView(store, place) {
   }
 
   function draw() {
+    svg.setAttribute("viewBox", `0 0 ${W} ${H}`);
     const x = scale(at.x, L, W - R), y = scale(at.y, H - B, T);
     const size = at.size ? axis(at.size) : null;
     empty(frame);
     for (const [c, across] of [[x, true], [y, false]]) {
       const f = c.a.unit.factor;
-      const marks = ticks(c.low * f, c.high * f, across ? 6 : 5);
+      const marks = ticks(c.low * f, c.high * f, across ? W / 110 : 5);
       for (const t of marks) {
         const p = c.of(t / f);
         add(frame, [
@@ -118,6 +120,11 @@ function scatterView(store, place) {
   store.on("filter", filter);
   store.on("pick", mark);
   draw();
+  onWidth(place, (width) => {
+    W = Math.max(300, Math.min(width, 900));
+    H = Math.round(Math.max(300, W * 0.66));
+    draw();
+  });
   return { position: (i) => xy[i] };
 }
 

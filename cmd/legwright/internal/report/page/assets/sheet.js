@@ -2,7 +2,7 @@
 
 function sheetView(store, place) {
   const { model } = store;
-  const figure = h("div", {}), tables = h("div", {}), legs = h("div", {}), left = h("div", {}), right = h("div", {});
+  const figure = h("div", { class: "stay" }), tables = h("div", {}), legs = h("div", {}), left = h("div", {}), right = h("div", {}), below = h("div", {});
   const name = h("p", { class: "which" });
   const view = machineView(figure, "The machine in lines", model.unit("m"));
   let follow = () => {}, drawn = -1;
@@ -18,7 +18,7 @@ function sheetView(store, place) {
   add(place, [
     h("div", { class: "fields screen" }, select, button("better rank", () => step(-1)), button("next rank", () => step(1)),
       button("hold against others", () => store.against(store.picked), { class: "hold" })),
-    name, h("div", { class: "pair" }, figure, tables), legs, h("div", { class: "pair" }, left, right),
+    name, h("div", { class: "pair sheet" }, figure, tables), legs, h("div", { class: "pair" }, left, right), below,
   ]);
 
   function showPose(index, label) {
@@ -38,12 +38,12 @@ function sheetView(store, place) {
     const d = model.designs[drawn];
     list.value = drawn;
     title();
-    for (const part of [tables, legs, left, right]) empty(part);
+    for (const part of [tables, legs, left, right, below]) empty(part);
     dimensionsView(model, d, tables);
     limitsView(model, d, tables, showPose);
     follow = legsView(model, d, legs);
     excursionsView(model, d, left);
-    sensitivityView(model, d, left);
+    sensitivityView(model, d, below);
     mapView(model, d, right);
     if (d.raw.notes && d.raw.notes.length) add(right, [h("h3", {}, "Notes"), h("ul", {}, d.raw.notes.map((t) => h("li", {}, given(t))))]);
     poses.design(d);
@@ -64,5 +64,5 @@ function dimensionsView(model, d, place) {
     const edge = v !== null && c.low !== c.high && (v === c.low || v === c.high) ? ", at its end" : "";
     return [h("span", { title: c.text }, given(words(c.name))), num(withUnit(v ?? NaN, unit, 6)), given(range + edge)];
   });
-  add(place, [h("h3", {}, "Dimensions"), wide("dimensions", table(d.fam.text, ["dimension", num("value"), "allowed"], rows))]);
+  add(place, [h("h3", {}, "Dimensions"), table(d.fam.text, ["dimension", num("value"), "allowed"], rows)]);
 }

@@ -14,17 +14,17 @@ function titleView(model, place) {
 
 function studyView(model, place) {
   const { data } = model;
-  const list = (title, items) => (items && items.length ? [h("h3", {}, title), h("ul", {}, items.map((t) => h("li", {}, given(t))))] : []);
+  const list = (title, items) => (items && items.length ? h("div", {}, h("h3", {}, title), h("ul", {}, items.map((t) => h("li", {}, given(t))))) : null);
+  const spent = `Seed ${data.seed}; ${data.evaluations}${data.budget ? ` of ${data.budget}` : ""} designs tried (${data.status || "finished"}), ${data.evaluations > 0 ? digits(100 * data.feasible / data.evaluations, 2) : 0} % of them feasible; ${data.poses} sampled poses; legwright `;
   add(place, [
-    h("p", {}, given(data.brief.paragraph)),
-    h("div", { class: "asked" },
-      h("div", {}, list("Zones of required poses", data.brief.zones)), h("div", {}, list("Load cases", data.brief.cases)),
-      h("div", {}, list("Limits", data.brief.limits)), h("div", {}, list("What the search could vary", data.brief.open))),
-    data.families.length > 1 ? list("Families", data.families.map((f) => `${f.name}: ${f.summary || f.text}`)) : null,
-    list("Notes", data.notes), list("What the figures leave out", data.left_out),
-    h("h3", {}, "The run"),
-    h("p", {}, `Seed ${data.seed}; ${data.evaluations}${data.budget ? ` of ${data.budget}` : ""} evaluations spent (${data.status || "finished"}); ${data.poses} sampled poses; brief `, given(data.brief.file), ` with hash `, h("code", {}, data.brief_hash || "–"), `; legwright `, given(data.program), "."),
-    h("aside", { class: "caution", "aria-label": "caution" }, h("p", {}, h("b", {}, given(data.caution))), data.full_caution && data.full_caution !== data.caution ? h("p", {}, given(data.full_caution)) : null),
+    h("div", { class: "pair" },
+      h("div", {}, h("p", {}, given(data.brief.paragraph)),
+        h("p", {}, spent, given(data.program), "; brief ", given(data.brief.file), " with hash ", h("code", {}, data.brief_hash ? data.brief_hash.slice(0, 16) : "–"), ".")),
+      h("aside", { class: "caution", "aria-label": "caution" }, h("p", {}, h("b", {}, "Caution. "), given(data.full_caution || data.caution)))),
+    h("details", {}, h("summary", {}, "The brief as a list, notes, and what the figures leave out"),
+      h("div", { class: "asked" }, list("Zones of required poses", data.brief.zones), list("Load cases", data.brief.cases), list("Limits", data.brief.limits),
+        list("What the search could vary", data.brief.open), data.families.length > 1 ? list("Families", data.families.map((f) => `${f.name}: ${f.summary || f.text}`)) : null,
+        list("Notes", data.notes), list("What the figures leave out", data.left_out))),
   ]);
 }
 

@@ -32,7 +32,7 @@ function weightsView(store, place) {
     const number = h("input", { type: "number", min: 0, step: "any", value: g.weight, "aria-labelledby": `weight-${k}`,
       oninput: () => { slider.value = number.value; read(); } });
     inputs.push([number, slider]);
-    return h("div", { class: "weight" }, name, slider, number);
+    return h("div", { class: "weight" }, name, h("span", { class: "slide" }, slider, number));
   });
 
   add(place, [
