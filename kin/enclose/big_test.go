@@ -8,7 +8,7 @@ import (
 // bits is the precision of the exact side of the tests.
 const bits = 224
 
-func number() *big.Float             { return new(big.Float).SetPrec(bits) }
+func number() *big.Float           { return new(big.Float).SetPrec(bits) }
 func exactly(x float64) *big.Float { return number().SetFloat64(x) }
 
 // less than 2^-bits of 1: where a series stops.
