@@ -10,8 +10,8 @@ import (
 // detail, the last of them first. The page shows the command that brings it back.
 func Fit(d *Data, bytes int, keep []string) {
 	designs := d.Designs
-	d.Designs = nil
-	total := size(d)
+	d.Designs = []Design{}
+	total := size(d) - 1 // one comma less than designs
 	d.Designs = designs
 	sizes := make([]int, len(designs))
 	for i := range designs {
