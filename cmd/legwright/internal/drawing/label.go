@@ -85,7 +85,11 @@ func (d *Drawing) crossed(b box) int {
 			n++
 		}
 	}
+	reach := math.Hypot(b.half.X, b.half.Y)
 	round := func(c Point, r, from, to float64) {
+		if math.Abs(math.Hypot(c.X-b.mid.X, c.Y-b.mid.Y)-r) > reach {
+			return
+		}
 		steps := 90
 		for i := range steps {
 			a := from + (to-from)*float64(i)/float64(steps)

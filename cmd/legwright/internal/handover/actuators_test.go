@@ -1,0 +1,51 @@
+package handover
+
+import (
+	"math"
+	"testing"
+
+	"legwright/cmd/legwright/internal/study"
+	"legwright/cmd/legwright/internal/units"
+	"legwright/kin"
+)
+
+// The schedule has each leg's figures of the appraisal in the units of its headings; a sized stroke leaves the
+// reserve at both ends, and the row of all legs is the worst of them. 1e-9 of the unit; forces have nine digits.
+func TestActuators(t *testing.T) {
+	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
+		f := d.a.Plan.Family
+		coordinate, effort, rate := study.DriveKinds(f.Name)
+		c, e, r := units.Suffix(coordinate), units.Suffix(effort), units.Suffix(rate)
+		push, pull := "push_"+e, "pull_"+e
+		if f.Drive == kin.Rotary {
+			push, pull = "torque_positive_"+e, "torque_negative_"+e
+		}
+		_, _, rows := read(t, files["actuators.csv"])
+		in := func(k units.Kind, si float64) float64 { return units.Display(k).From(si) }
+		ranged := f.Index("upper_arm") < 0
+		for i := range d.a.Legs {
+			l, row := &d.a.Legs[i], rows[i]
+			near(t, "shortest", cell(t, row, "shortest_"+c), in(coordinate, l.Least), 1e-9)
+			near(t, "home", cell(t, row, "home_"+c), in(coordinate, l.Home), 1e-9)
+			near(t, "longest", cell(t, row, "longest_"+c), in(coordinate, l.Most), 1e-9)
+			near(t, "push", cell(t, row, push), in(effort, l.Push), 1e-8*math.Abs(l.Push))
+			near(t, "pull", cell(t, row, pull), in(effort, l.Pull), 1e-8*math.Abs(l.Pull))
+			near(t, "speed", cell(t, row, "speed_"+r), in(rate, l.Speed), 1e-8*in(rate, l.Speed))
+		}
+		if !ranged {
+			if len(rows) != 4 {
+				t.Errorf("%d rows", len(rows))
+			}
+			return
+		}
+		all := rows[len(rows)-1]
+		if all["leg"] != "all" || len(rows) != len(d.a.Legs)+1 {
+			t.Fatalf("last of %d rows: %v", len(rows), all)
+		}
+		reserve := in(coordinate, d.task.Actuator.Reserve)
+		near(t, "reserve", cell(t, all, "reserve_low_"+c), reserve, 1e-8)
+		near(t, "reserve", cell(t, all, "reserve_high_"+c), reserve, 1e-8)
+		near(t, "range", cell(t, all, "range_most_"+c)-cell(t, all, "range_least_"+c), cell(t, all, "stroke_"+c), 2e-9)
+		near(t, "used and reserves", cell(t, all, "used_"+c)+2*reserve, cell(t, all, "stroke_"+c), 1e-8)
+	})
+}

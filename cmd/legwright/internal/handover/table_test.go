@@ -1,0 +1,199 @@
+package handover
+
+import (
+	"bytes"
+	"encoding/csv"
+	"encoding/json"
+	"os"
+	"os/exec"
+	"path/filepath"
+	"slices"
+	"strconv"
+	"strings"
+	"testing"
+	"unicode/utf8"
+
+	"legwright/cmd/legwright/internal/study"
+)
+
+// read is a sheet as encoding/csv reads it: the rows of the title block, and the table, whose rows are all as long as its
+// headings.
+func read(t *testing.T, b []byte) (block map[string]string, heads []string, rows []map[string]string) {
+	t.Helper()
+	r := csv.NewReader(bytes.NewReader(b))
+	r.Comment = '#'
+	all, err := r.ReadAll() // all rows of one length
+	if err != nil {
+		t.Fatal(err)
+	}
+	block = map[string]string{}
+	for _, line := range strings.SplitAfter(string(b), "\n") {
+		if !strings.HasPrefix(line, "# ") {
+			break
+		}
+		cells, err := csv.NewReader(strings.NewReader(line)).Read()
+		if err != nil || len(cells) != 2 {
+			t.Fatalf("%q: %v", line, err)
+		}
+		block[strings.TrimPrefix(cells[0], "# ")] += cells[1]
+	}
+	heads = all[0]
+	for _, cells := range all[1:] {
+		row := map[string]string{}
+		for i, c := range cells {
+			row[heads[i]] = c
+		}
+		rows = append(rows, row)
+	}
+	return block, heads, rows
+}
+
+// cell is the number in a cell.
+func cell(t *testing.T, row map[string]string, head string) float64 {
+	t.Helper()
+	v, err := strconv.ParseFloat(row[head], 64)
+	if err != nil {
+		t.Fatalf("%s of %v: %v", head, row, err)
+	}
+	return v
+}
+
+// Every file is one that a study folder knows, and says what it is: units, datum, hash, program, design, caution, status.
+func TestTitleBlocks(t *testing.T) {
+	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
+		if len(files) != len(study.SheetNames()) {
+			t.Errorf("%d files, study knows %d", len(files), len(study.SheetNames()))
+		}
+		total := 0
+		for name, b := range files {
+			total += len(b)
+			if !slices.Contains(study.SheetNames(), name) {
+				t.Errorf("study does not know %s", name)
+			}
+			if filepath.Ext(name) == ".csv" {
+				block, _, rows := read(t, b)
+				for key, want := range map[string]string{
+					"status": statusText, "design": "007, " + d.a.Plan.Family.Name, "brief SHA-256": wicked.Hash, "program": wicked.Program,
+					"caution": "not an assessment of safety", "units": "mm", "datum": "origin", "mounting": "z points up", "sheet": "",
+				} {
+					if !strings.Contains(block[key], want) || block[key] == "" {
+						t.Errorf("%s: %s is %q", name, key, block[key])
+					}
+				}
+				if len(rows) == 0 {
+					t.Errorf("%s has no rows", name)
+				}
+				continue
+			}
+			for _, want := range []string{"007", d.a.Plan.Family.Name, wicked.Hash, wicked.Program, "assessment of safety", "Units mm", "Datum", "NOT FOR CONSTRUCTION UNTIL CHECKED"} {
+				if !strings.Contains(string(b), want) {
+					t.Errorf("%s does not say %q", name, want)
+				}
+			}
+		}
+		if total > 120_000 {
+			t.Errorf("%d bytes in all", total)
+		}
+	})
+}
+
+// No cell is a formula: what begins with = + - @ or a tab is a number, whether a reader cuts cells at commas, semicolons
+// or tabs, in the title block too.
+func TestNoCellIsAFormula(t *testing.T) {
+	everyFamily(t, func(t *testing.T, d *design, _ map[string][]byte) {
+		if f := d.a.Plan.Family; testing.Short() && f.Name != "delta-4" {
+			t.Skip("one family is enough for a short run")
+		}
+		for i, z := range []string{"=1+1", "+1", "-1+1;@x", "@SUM(1)", "\t=1", "\r=1", "a;=cmd", " =1", "＝1", "x\n=1"} {
+			d.task.Cases[i%2].Name, d.task.Zones[0].Name = z, z
+			d.title = Title{Program: z, Design: z, Brief: z, Hash: z}
+			for name, b := range Files(d.task, d.a, d.title) {
+				if filepath.Ext(name) != ".csv" {
+					continue
+				}
+				for _, comma := range ",;\t" {
+					r := csv.NewReader(bytes.NewReader(b))
+					r.Comma, r.FieldsPerRecord, r.LazyQuotes = comma, -1, true
+					all, err := r.ReadAll()
+					if err != nil {
+						t.Fatal(err)
+					}
+					for _, row := range all {
+						for _, c := range row {
+							first, _ := utf8.DecodeRuneInString(strings.TrimLeft(c, " "))
+							if !strings.ContainsRune("=+-@\t\r＝＋－＠", first) || c == "" {
+								continue
+							}
+							if comma != ',' { // whole lines begin with the first cell, a name
+								t.Fatalf("%s cut at %q: %q", name, comma, c)
+							}
+							if _, err := strconv.ParseFloat(c, 64); err != nil {
+								t.Fatalf("%s: %q", name, c)
+							}
+						}
+					}
+				}
+			}
+		}
+	})
+}
+
+// Texts keep what they say.
+func TestText(t *testing.T) {
+	for in, want := range map[string]string{
+		"running": "running", "": "", "=x": "'=x", "a;b": "a,b", "\u202eevil": "evil", "-3": "'-3", "100 %": "100 %",
+	} {
+		if got := text(in); got != want {
+			t.Errorf("text(%q) = %q, want %q", in, got, want)
+		}
+	}
+}
+
+// readBack reads a CSV by Python's own reader, which knows no comments.
+const readBack = `
+import csv, json, sys
+print(json.dumps({f: list(csv.reader(open(f, newline="", encoding="utf-8"), strict=True)) for f in sys.argv[1:]}))
+`
+
+// An independent parser finds the same cells.
+func TestCSVReadByAnother(t *testing.T) {
+	python, err := exec.LookPath("python3")
+	if err != nil {
+		if os.Getenv("CI") != "" {
+			t.Fatal("no python3")
+		}
+		t.Skip("no python3: install it to have the tables read by another program")
+	}
+	everyFamily(t, func(t *testing.T, _ *design, files map[string][]byte) {
+		dir := t.TempDir()
+		args := []string{"-c", readBack}
+		for name, b := range files {
+			if filepath.Ext(name) == ".csv" {
+				path := filepath.Join(dir, name)
+				if err := os.WriteFile(path, b, 0o666); err != nil {
+					t.Fatal(err)
+				}
+				args = append(args, path)
+			}
+		}
+		out, err := exec.Command(python, args...).Output()
+		if err != nil {
+			t.Fatal(err)
+		}
+		var got map[string][][]string
+		if err := json.Unmarshal(out, &got); err != nil {
+			t.Fatal(err)
+		}
+		for path, rows := range got {
+			r := csv.NewReader(bytes.NewReader(files[filepath.Base(path)]))
+			r.FieldsPerRecord = -1
+			want, err := r.ReadAll()
+			if err != nil {
+				t.Fatal(err)
+			}
+			if !slices.EqualFunc(rows, want, slices.Equal) {
+				t.Errorf("%s: read differently", filepath.Base(path))
+			}
+		}
+	})
+}
