@@ -8,116 +8,121 @@ import (
 
 // Enclose encloses the column, the links and the tool's motor over the box.
 //
-// The elbow's angle, from acos of its cosine, and those at shoulder and wrist depend on the distance from shoulder
-// to wrist alone; the links' directions are that to the wrist, turned by them.
+// The angles at elbow, shoulder and wrist depend on the distance from shoulder to wrist alone; the links' directions
+// are that to the wrist, turned by the latter two.
 func (m *arm) Enclose(b *enclose.Box, e *Enclosure) {
 	var (
-		c                                       [6]enclose.Form
-		tool                                    enclose.Vec
-		plan, reach                             enclose.Vec // from the column's axis to the platform origin; from shoulder to wrist
-		r, invR2, d2, along, room, elbow, slant enclose.Form
-		bend                                    enclose.Form
+		c                      [6]enclose.Form
+		reached, elbow         enclose.Form
+		p, tool, plan          enclose.QuadVec // plan is from the column's axis to the platform origin
+		turn                   enclose.Turn
+		out, up                enclose.Quad // from shoulder to wrist
+		r, invR, d2, along     enclose.Quad
+		short, room, s, k, x   enclose.Quad
+		across, slant, upper   enclose.Quad
+		column, fore, sin, yaw enclose.Quad
 	)
 	f := &m.frame
 	f.coordinates(b, &c)
 	e.start()
 	e.P = enclose.Vec(c[:3])
 	e.heading(&c[Yaw])
-	tool.Turn(&e.R, m.tool)
-	plan.AddConst(plan.Sub(&e.P, &tool), m.home)
-	plan[2].Const(m.wrong)
-	r.Norm(&plan)
-	invR2.Dot(&plan, &plan)
-	invR2.Inv(&invR2)
-	reach[0].AddConst(&r, -m.inner)
-	reach[1].AddConst(&c[Z], m.home.Z-m.tool.Z-m.height)
-	d2.Dot(&reach, &reach)
+	turn.Set(b, f.turns())
+	tool.Arm(&turn, Vec{X: m.tool.X, Y: m.tool.Y})
+	p.Set(&e.P)
+	plan.AddConst(plan.Sub(&p, &tool), m.home)
+	r.Sum2(&plan[0], &plan[0], &plan[1], &plan[1])
+	r.AddConst(&r, m.wrong)
+	invR.InvSqrt(&r)
+	e.decide(0, reached.Quad(&r), rounding*(r.C+m.inner*m.inner))
+	r.Sqrt(&r)
+	out.AddConst(&r, -m.inner)
+	up.AddConst(&p[2], m.home.Z-m.tool.Z-m.height)
+	d2.Sum2(&out, &out, &up, &up)
 
-	// How far the third side is from its least and its greatest.
+	// How far the third side is from its greatest and its least.
 	sum, diff := m.upper+m.fore, m.upper-m.fore
 	edge := rounding * sum * sum
-	room.AddConst(room.Neg(&d2), sum*sum)
-	e.decide(0, &r, 0)
-	e.decide(1, &room, edge)
-	room.AddConst(&d2, -diff*diff)
-	e.decide(1, &room, edge)
-
+	short.AddConst(short.Neg(&d2), sum*sum)
+	e.decide(1, reached.Quad(&short), edge)
+	x.AddConst(&d2, -diff*diff)
+	e.decide(1, reached.Quad(&x), edge)
 	fold := 1 / (2 * m.upper * m.fore)
-	along.AddConst(&d2, -(m.upper*m.upper + m.fore*m.fore))
-	elbow.Acos(elbow.Scale(&along, fold))
-	slant.Atan2(&reach[1], &reach[0])
-	var sin, cos enclose.Form
-	sin.Scale(sin.Sin(&elbow), m.fore)
-	cos.AddConst(cos.Scale(&along, fold*m.fore), m.upper)
-	bend.Atan2(&sin, &cos) // at the shoulder, between the upper arm and the line to the wrist
-	wrap(&slant, 0)
-	e.Q[0].Atan2(&plan[1], &plan[0])
-	e.Q[1].AddScaled(&slant, m.mode, &bend)
-	bend.Sub(&elbow, &bend) // at the wrist
-	e.Q[2].AddScaled(&slant, -m.mode, &bend)
-	e.Q[3].Sub(&c[Yaw], &e.Q[0])
+	room.Scale(room.Mul(&short, &x), fold*fold)
+	sin.Sqrt(&room)
+	along.Scale(along.AddConst(&d2, -(m.upper*m.upper+m.fore*m.fore)), fold)
+
+	// across is a link's length times the elbow's sine
+	elbow.Quad(x.Atan2(&sin, &along))
+	slant.Atan2(&up, &out)
+	bend := func(z *enclose.Quad, near, far, sign float64) {
+		across.Scale(&sin, far)
+		x.AddConst(x.Scale(&along, far), near)
+		z.AddScaled(&slant, sign*m.mode, x.Atan2(&across, &x))
+	}
+	bend(&upper, m.upper, m.fore, 1)
+	bend(&fore, m.fore, m.upper, -1)
+	column.Atan2(&plan[1], &plan[0])
+	e.Q[0].Quad(&column)
+	e.Q[1].Quad(&upper)
+	e.Q[2].Quad(&fore)
+	e.Q[3].Quad(x.Sub(yaw.Set(&c[Yaw]), &column))
 	wrap(&e.Q[3], 0)
 
 	e.BaseChord, e.PlatformChord = [6]enclose.Form{}, [6]enclose.Form{}
-	m.rates(e, &plan, &tool, &r, &invR2, &elbow)
+	k.Scale(s.InvSqrt(&room), m.mode)
+	m.columnRates(e, &plan, &tool, &r, &invR)
+	m.barRates(1, e, &plan, &tool, &invR, &fore, -1, k.Scale(&k, 1/m.upper))
+	m.barRates(2, e, &plan, &tool, &invR, &upper, 1, k.Scale(&k, m.upper/m.fore))
 	e.held(f)
 	e.stopAt(1, &m.upperStop, &e.Q[1], "upper arm")
 	e.stopAt(2, &m.foreStop, &e.Q[2], "forearm")
 	e.stopAt(1, &m.elbowStop, &elbow, "parallelogram")
 }
 
-// rates fills the rows of J, and the rows of e.Wrenches that are their unit wrenches. The links' rows have the parts
-// of a force along the other link, at the platform origin.
-func (m *arm) rates(e *Enclosure, plan, tool *enclose.Vec, r, invR2, elbow *enclose.Form) {
-	var (
-		lead, side, inv enclose.Form
-		out, cross      enclose.Vec // outward and leftward
-	)
-	out.Unit(plan)
-	cross[0].Neg(&out[1])
-	cross[1] = out[0]
-	flat := enclose.Vec{tool[0], tool[1]}
-	lead.Scale(lead.Dot(&flat, &out), -m.invLc)
-	side.Scale(side.Dot(&flat, &cross), m.invLc)
-
-	column := e.J[0:6]
-	column[0].Neg(column[0].Mul(&plan[1], invR2))
-	column[1].Mul(&plan[0], invR2)
-	flat2 := enclose.Vec{plan[0], plan[1]}
-	column[5].Dot(&flat, &flat2)
-	column[5].Scale(column[5].Mul(&column[5], invR2), -m.invLc)
-	turn := e.J[18:24]
-	turn[0].Neg(&column[0])
-	turn[1].Neg(&column[1])
-	turn[5].AddConst(turn[5].Neg(&column[5]), m.invLc)
-
+// columnRates fills the rows of the column and of the tool's motor, in J and as unit wrenches. lead and side are, in the plane
+// of the arm and across it, how the platform origin moves as the platform turns.
+func (m *arm) columnRates(e *Enclosure, plan, tool *enclose.QuadVec, r, invR *enclose.Quad) {
+	var x, y, lead, turn enclose.Quad
+	x.Mul(&plan[0], invR)
+	y.Mul(&plan[1], invR)
+	lead.Scale(lead.Sum2(&tool[0], &x, &tool[1], &y), -m.invLc)
 	clear(e.Wrenches[:24])
-	copy(e.Wrenches[0:], cross[:2])
-	e.Wrenches[5] = lead
-	e.Wrenches[18].Neg(&cross[0])
-	e.Wrenches[19].Neg(&cross[1])
-	e.Wrenches[23].Sub(e.Wrenches[23].Scale(r, m.invLc), &lead)
+	e.Wrenches[1].Quad(&x)
+	e.Wrenches[0].Quad(turn.Neg(&y))
+	e.Wrenches[5].Quad(&lead)
+	e.Wrenches[18].Neg(&e.Wrenches[0])
+	e.Wrenches[19].Neg(&e.Wrenches[1])
+	e.Wrenches[23].Quad(turn.Sub(turn.Scale(r, m.invLc), &lead))
 
-	inv.Sin(elbow)
-	inv.Scale(inv.Inv(&inv), m.mode)
-	bar := func(leg int, q *enclose.Form, s, length float64) {
-		var c, sn, k enclose.Form
-		c.Scale(c.Cos(q), s)
-		sn.Scale(sn.Sin(q), s)
-		unit := e.Wrenches[6*leg : 6*leg+6]
-		unit[0].Mul(&c, &out[0])
-		unit[1].Mul(&c, &out[1])
-		unit[2] = sn
-		unit[5].Mul(&c, &side)
-		k.Scale(&inv, 1/length)
-		row := e.J[6*leg : 6*leg+6]
-		for j := range row {
-			row[j].Mul(&unit[j], &k)
-			unit[j].Scale(&unit[j], m.mode)
-		}
+	column, motor := e.J[:6], e.J[18:24]
+	column[1].Quad(x.Mul(&x, invR))
+	column[0].Quad(y.Neg(y.Mul(&y, invR)))
+	lead.Mul(&lead, invR)
+	column[5].Quad(&lead)
+	motor[0].Neg(&column[0])
+	motor[1].Neg(&column[1])
+	motor[5].Quad(lead.AddConst(lead.Neg(&lead), m.invLc))
+}
+
+// barRates fills the rows of one link: s times the other link's direction, whose angle is q, of which k is the rate.
+func (m *arm) barRates(leg int, e *Enclosure, plan, tool *enclose.QuadVec, invR, q *enclose.Quad, s float64, k *enclose.Quad) {
+	var cos, sin, side, z enclose.Quad
+	cos.Scale(cos.Cos(q), s)
+	sin.Scale(sin.Sin(q), s)
+	cos.Mul(&cos, invR)
+	side.Sum2(&tool[1], &plan[0], z.Neg(&tool[0]), &plan[1])
+	side.Scale(&side, m.invLc)
+	row, unit := e.J[6*leg:6*leg+6], e.Wrenches[6*leg:6*leg+6]
+	set := func(i int, part *enclose.Quad) {
+		unit[i].Quad(part)
+		unit[i].Scale(&unit[i], m.mode)
+		row[i].Quad(part.Mul(part, k))
 	}
-	bar(1, &e.Q[2], -1, m.upper)
-	bar(2, &e.Q[1], 1, m.fore)
+	set(0, z.Mul(&cos, &plan[0]))
+	set(1, z.Mul(&cos, &plan[1]))
+	set(2, &sin)
+	set(5, z.Mul(&cos, &side))
 }
 
 // stopAt puts the angle a on the turn that starts at the stop and decides whether it is within the range.

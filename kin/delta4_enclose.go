@@ -1,35 +1,42 @@
 package kin
 
-import "legwright/kin/enclose"
+import (
+	"gonum.org/v1/gonum/spatial/r3"
+
+	"legwright/kin/enclose"
+)
 
 // Enclose encloses the postures of the arms and of the shaft over the box.
 func (m *toolDelta) Enclose(b *enclose.Box, e *Enclosure) {
 	var (
-		c       [6]enclose.Form
-		d, tool enclose.Vec // the platform's way from home; the tool point from the platform origin
+		c                  [6]enclose.Form
+		p, d, tool, arm, v enclose.QuadVec // d is the platform's way from home, tool the tool point from the platform origin
+		u                  enclose.QuadVec
+		about              enclose.Quad
+		turn               enclose.Turn
+		o                  loop
 	)
 	f := &m.frame
 	f.coordinates(b, &c)
 	e.start()
 	e.P = enclose.Vec(c[:3])
 	e.heading(&c[Yaw])
-	tool.Turn(&e.R, f.Tool)
+	turn.Set(b, f.turns())
+	tool.Arm(&turn, Vec{X: f.Tool.X, Y: f.Tool.Y})
 	tool[2].Const(f.Tool.Z)
-	d.AddConst(d.Sub(&e.P, &tool), f.Tool)
-	d[2] = e.P[2]
-	m.shifted(&d, e)
-
-	var arm enclose.Vec
+	p.Set(&e.P)
+	d.AddConst(d.Sub(&p, &tool), f.Tool)
+	d[2] = p[2]
+	arm.Scale(&tool, -m.invLc)
 	for i := range 3 {
-		// u × tool about z, of the rate's force and of the unit one
-		row := e.J[6*i : 6*i+6]
-		about(&row[5], row, &tool, m.invLc)
-		arm.AddConst(arm.Scale(&tool, -1), f.Platform[i])
-		row = e.Wrenches[6*i : 6*i+6]
-		u := enclose.Vec(row[:3])
-		force(row, &u, &arm, m.invLc)
-		about(&row[5], row, &tool, m.invLc)
+		m.shifted(i, &d, &o, &u, e)
+		v.AddConst(&arm, r3.Scale(m.invLc, f.Platform[i]))
+		v.Cross(&v, &u)
+		quads(e.Wrenches[6*i+3:6*i+6], &v)
+		e.Wrenches[6*i+5].Quad(moment(&about, &u, &arm))
+		e.J[6*i+5].Quad(moment(&about, &o.rate, &arm))
 	}
+	m.links.pairs(e, true)
 	e.Q[3] = c[Yaw]
 	e.J[23].Const(m.invLc)
 	e.BaseChord[3], e.PlatformChord[3] = enclose.Form{}, enclose.Form{}
@@ -38,21 +45,19 @@ func (m *toolDelta) Enclose(b *enclose.Box, e *Enclosure) {
 	m.within(&d, e)
 }
 
-// about sets z to the moment about z of the force u at minus r, over Lc.
-func about(z *enclose.Form, u []enclose.Form, r *enclose.Vec, invLc float64) {
-	var x, y, o enclose.Vec
-	x[0], x[1] = u[0], u[1]
-	y[0] = r[1]
-	y[1].Neg(&r[0])
-	o[0].Dot(&x, &y)
-	z.Scale(&o[0], invLc)
+// moment sets z to that of the force u at r about z.
+func moment(z *enclose.Quad, u, r *enclose.QuadVec) *enclose.Quad {
+	var y enclose.Quad
+	return z.Sum2(&r[0], &u[1], y.Neg(&r[1]), &u[0])
 }
 
 // within decides whether the shaft is within its stops, with the platform moved by d.
-func (m *toolDelta) within(d *enclose.Vec, e *Enclosure) {
-	var shaft enclose.Vec
-	var length, room enclose.Form
-	shaft.AddConst(d, m.frame.Home)
+func (m *toolDelta) within(d *enclose.QuadVec, e *Enclosure) {
+	var (
+		shaft        enclose.Vec
+		length, room enclose.Form
+	)
+	shaft.AddConst(shaft.Quads(d), m.frame.Home)
 	length.Norm(&shaft)
 	was := e.Reach
 	room.AddConst(&length, -m.least*(1-stopSlack))

@@ -10,15 +10,15 @@ import (
 
 // loop encloses the posture of one leg of a drive and a rod.
 type loop struct {
-	w     enclose.Vec  // given: from drive.at to the platform joint
-	room  enclose.Form // square of the rod's part along which the drive moves its end: positive where the loop closes
-	edge  float64      // what rounding can make of it
-	q     enclose.Form
-	end   enclose.Vec  // of the crank, or the carriage, from drive.at
-	rod   enclose.Vec  // along the rod, as long as it
-	rate  enclose.Vec  // u/(u·c'(q)), u the unit vector along the rod
-	chord enclose.Form // of the joint at the drive
-	side  enclose.Form // part of the unit vector along the rod along the drive's e3
+	w    enclose.QuadVec // given: from drive.at to the platform joint
+	room enclose.Quad    // square of the rod's part along which the drive moves its end: positive where the loop closes
+	edge float64         // what rounding can make of it
+	q    enclose.Quad
+	end  enclose.QuadVec // of the crank, or the carriage, from drive.at
+	rod  enclose.QuadVec // along the rod, as long as it
+	rate enclose.QuadVec // u/(u·c'(q)), u the unit vector along the rod
+	dot  enclose.Quad    // of u and the mounting axis of the joint at the drive
+	sine enclose.Quad    // of u and e3
 }
 
 // rounding is more than the relative error of rooms in plain arithmetic.
@@ -37,16 +37,13 @@ func (l *rodLeg) enclose(o *loop) {
 // the cosine rule gives 2 length g = w² - length² - rod², and c is that of w: h² = rod² - g² - c² has each of them
 // once. The crank's angle is that of w less that of (length + g, h), the same point seen from the crank.
 func (l *rodLeg) turn(o *loop) {
-	var a, b, g, h, inv, seen, cos, sin enclose.Form
-	var part enclose.Vec
+	var a, b, g, c, h, seen, inv, cos, sin enclose.Quad
 	g.Dot(&o.w, &o.w)
-	o.edge = rounding * (g.Upper() + l.length*l.length + l.rod*l.rod)
+	_, far := g.Bounds()
+	o.edge = rounding * (far + l.length*l.length + l.rod*l.rod)
 	g.AddConst(g.Scale(&g, l.k), l.k0-l.length)
-	c := &part[1]
 	c.Along(&o.w, l.e3)
-	part[0] = g
-	o.room.Dot(&part, &part)
-	o.room.AddConst(o.room.Neg(&o.room), l.rod*l.rod)
+	o.room.AddConst(o.room.Neg(o.room.Sum2(&g, &g, &c, &c)), l.rod*l.rod)
 	h.Scale(h.Sqrt(&o.room), l.mode)
 
 	a.Along(&o.w, l.e1)
@@ -54,64 +51,59 @@ func (l *rodLeg) turn(o *loop) {
 	seen.AddConst(&g, l.length)
 	seen.Atan2(&h, &seen)
 	o.q.Sub(o.q.Atan2(&b, &a), &seen)
-	wrap(&o.q, 0)
+	if turns := math.Round(o.q.C / (2 * math.Pi)); turns != 0 {
+		o.q.AddConst(&o.q, -2*math.Pi*turns)
+	}
 	cos.Cos(&o.q)
 	sin.Sin(&o.q)
 	o.q.AddConst(&o.q, l.zero)
 
-	plane := [3][2]float64{{l.e1.X, l.e2.X}, {l.e1.Y, l.e2.Y}, {l.e1.Z, l.e2.Z}}
-	for i, e := range plane {
+	for i, e := range [3][2]float64{{l.e1.X, l.e2.X}, {l.e1.Y, l.e2.Y}, {l.e1.Z, l.e2.Z}} {
 		z := &o.end[i]
 		z.Scale(&cos, l.length*e[0])
 		z.AddScaled(z, l.length*e[1], &sin)
 	}
 	o.rod.Sub(&o.w, &o.end)
-	inv.Scale(inv.Inv(&h), 1/l.length)
+	inv.Scale(inv.InvSqrt(&o.room), l.mode/l.length)
 	o.rate.Mul(&o.rod, &inv)
 
-	dot := &a
-	dot.Scale(&g, l.invRod*l.ua.X)
-	dot.AddScaled(dot, l.invRod*l.ua.Y, &h)
-	dot.AddScaled(dot, l.invRod*l.ua.Z, c)
-	chord(&o.chord, dot, r3.Norm2(l.ua))
-	o.side.Scale(c, l.invRod)
+	o.dot.Scale(&g, l.invRod*l.ua.X)
+	o.dot.AddScaled(&o.dot, l.invRod*l.ua.Y, &h)
+	o.dot.AddScaled(&o.dot, l.invRod*l.ua.Z, &c)
+	o.sine.Scale(&c, l.invRod)
 }
 
 // slide is enclose for carriages. The rod is w less what it has along the rail, and h along the rail.
 func (l *rodLeg) slide(o *loop) {
-	var a, h, inv enclose.Form
-	var part enclose.Vec
+	var a, h, x, y, inv enclose.Quad
 	f1, f2 := square(l.e1)
-	part[0].Along(&o.w, f1)
-	part[1].Along(&o.w, f2)
-	o.room.Dot(&part, &part)
-	o.room.AddConst(o.room.Neg(&o.room), l.rod*l.rod)
+	x.Along(&o.w, f1)
+	y.Along(&o.w, f2)
+	o.room.AddConst(o.room.Neg(o.room.Sum2(&x, &x, &y, &y)), l.rod*l.rod)
 	h.Scale(h.Sqrt(&o.room), l.mode)
 	a.Along(&o.w, l.e1)
-	far := max(math.Abs(a.Lower()), math.Abs(a.Upper())) + l.rod
+	low, high := a.Bounds()
+	far := max(-low, high) + l.rod
 	o.edge = rounding * far * far
 	o.q.Add(&a, &h)
 
-	inv.Inv(&h)
-	f := [3][3]float64{{f1.X, f2.X, l.e1.X}, {f1.Y, f2.Y, l.e1.Y}, {f1.Z, f2.Z, l.e1.Z}}
-	for i, e := range f {
+	inv.Scale(inv.InvSqrt(&o.room), l.mode)
+	for i, e := range [3][3]float64{{f1.X, f2.X, l.e1.X}, {f1.Y, f2.Y, l.e1.Y}, {f1.Z, f2.Z, l.e1.Z}} {
 		z := &o.rod[i]
-		z.Scale(&part[0], e[0])
-		z.AddScaled(z, e[1], &part[1])
+		z.Scale(&x, e[0])
+		z.AddScaled(z, e[1], &y)
 		o.rate[i].Mul(z, &inv)
 		o.rate[i].AddConst(o.rate[i].Neg(&o.rate[i]), e[2])
 		z.AddScaled(z, -e[2], &h)
 		o.end[i].Scale(&o.q, e[2])
 	}
-	dot := &a
-	dot.Scale(dot.Along(&o.rod, l.ua), l.invRod)
-	chord(&o.chord, dot, r3.Norm2(l.ua))
+	o.dot.Scale(o.dot.Along(&o.rod, l.ua), l.invRod)
 
 	// The short sides of a parallelogram are square to the rail, up to rounding.
-	o.side.Scale(&part[0], r3.Dot(f1, l.e3))
-	o.side.AddScaled(&o.side, r3.Dot(f2, l.e3), &part[1])
-	o.side.AddScaled(&o.side, -r3.Dot(l.e1, l.e3), &h)
-	o.side.Scale(&o.side, l.invRod)
+	o.sine.Scale(&x, r3.Dot(f1, l.e3))
+	o.sine.AddScaled(&o.sine, r3.Dot(f2, l.e3), &y)
+	o.sine.AddScaled(&o.sine, -r3.Dot(l.e1, l.e3), &h)
+	o.sine.Scale(&o.sine, l.invRod)
 }
 
 // square gives two unit vectors square to the unit vector e and to each other.

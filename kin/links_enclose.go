@@ -20,8 +20,8 @@ func (ps *linkPairs) perLeg(crank bool) int {
 func (ps *linkPairs) enclose(e *Enclosure, m *rods, i int, o *loop) {
 	l := &m.leg[i]
 	var from, to enclose.Vec
-	from.AddConst(&o.end, l.at)
-	to.AddConst(&o.w, l.at)
+	from.AddConst(from.Quads(&o.end), l.at)
+	to.AddConst(to.Quads(&o.w), l.at)
 	if l.crank {
 		e.Links = append(e.Links, Link{Leg: i, To: from, Radius: ps.crankCrank / 2})
 		e.Links[len(e.Links)-1].From.Const(l.at)

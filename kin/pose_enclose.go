@@ -56,15 +56,32 @@ func (e *Enclosure) held(f *Frame) {
 }
 
 // force sets a row of e.Wrenches to the unit force u at r from the tool point.
-func force(row []enclose.Form, u, r *enclose.Vec, invLc float64) {
-	var moment enclose.Vec
+func force(row []enclose.Form, u, r *enclose.QuadVec, invLc float64) {
+	var moment enclose.QuadVec
 	moment.Scale(moment.Cross(r, u), invLc)
-	copy(row, u[:])
-	copy(row[3:], moment[:])
+	quads(row[:3], u)
+	quads(row[3:], &moment)
+}
+
+// quads sets forms to the components of v.
+func quads(forms []enclose.Form, v *enclose.QuadVec) {
+	for c := range v {
+		forms[c].Quad(&v[c])
+	}
+}
+
+// turns tells which of roll, pitch and yaw the family has.
+func (f *Frame) turns() (own [3]bool) {
+	for _, q := range f.Freedoms {
+		if q.Angular() {
+			own[q-Roll] = true
+		}
+	}
+	return own
 }
 
 // crossed sets z to r×u.
-func crossed(z *enclose.Vec, r Vec, u *enclose.Vec) {
+func crossed(z *enclose.QuadVec, r Vec, u *enclose.QuadVec) {
 	v := *u
 	z[0].Along(&v, Vec{Y: -r.Z, Z: r.Y})
 	z[1].Along(&v, Vec{X: r.Z, Z: -r.X})

@@ -8,10 +8,11 @@ import (
 
 // tilt encloses a tripod's settled rotation and what follows from it.
 type tilt struct {
-	asm  enclose.Vec        // R11+R22, R21+R12, R22-R11
-	tie  [3][2]enclose.Form // as follow gives it
-	tool enclose.Vec        // from the platform origin to the tool point
-	base enclose.Vec        // the tool point, base frame
+	asm  enclose.QuadVec    // R11+R22, R21+R12, R22-R11
+	rot  [9]enclose.Quad    // the rotation, row by row
+	tie  [3][2]enclose.Quad // as follow gives it
+	tool enclose.QuadVec    // from the platform origin to the tool point
+	base enclose.QuadVec    // the tool point, base frame
 }
 
 // Enclose encloses the legs' postures, each in its own vertical plane, over the box.
@@ -22,8 +23,23 @@ func (m *tripod) Enclose(b *enclose.Box, e *Enclosure) {
 	)
 	m.frame.coordinates(b, &c)
 	e.start()
-	m.turn(&c, &t, e)
-	m.tied(&t, e)
+	m.turn(&c, &t)
+	for i := range t.rot {
+		e.R[i].Quad(&t.rot[i])
+	}
+	tool := m.frame.Tool
+	e.P[0].AddConst(e.P[0].Quad(&t.base[0]), -tool.X)
+	e.P[1].AddConst(e.P[1].Quad(&t.base[1]), -tool.Y)
+	e.P[2] = c[Z]
+	m.tied(&t)
+	e.T = [36]enclose.Form{}
+	e.T[6*2].Const(1)
+	e.T[6*3+1].Const(1)
+	e.T[6*4+2].Const(1)
+	for i, row := range [3]int{0, 1, 5} {
+		e.T[6*row+1].Quad(&t.tie[i][0])
+		e.T[6*row+2].Quad(&t.tie[i][1])
+	}
 	for i := range 3 {
 		m.enclose(i, &t, e)
 	}
@@ -34,12 +50,14 @@ func (m *tripod) Enclose(b *enclose.Box, e *Enclosure) {
 }
 
 // turn settles the pose, as settle does: the rotation, and where the tool point goes.
-func (m *tripod) turn(c *[6]enclose.Form, t *tilt, e *Enclosure) {
-	var sr, cr, sp, cp, ar, ai, br, bi, gr, gi, psi enclose.Form
-	sr.Sin(&c[Roll])
-	cr.Cos(&c[Roll])
-	sp.Sin(&c[Pitch])
-	cp.Cos(&c[Pitch])
+func (m *tripod) turn(c *[6]enclose.Form, t *tilt) {
+	var roll, pitch, sr, cr, sp, cp, ar, ai, br, bi, gr, gi, psi, cos, sin enclose.Quad
+	roll.Set(&c[Roll])
+	pitch.Set(&c[Pitch])
+	sr.Sin(&roll)
+	cr.Cos(&roll)
+	sp.Sin(&pitch)
+	cp.Cos(&pitch)
 	bi.Mul(&sp, &sr)
 	ai.Neg(&bi)
 	ar.Add(&cp, &cr)
@@ -49,31 +67,36 @@ func (m *tripod) turn(c *[6]enclose.Form, t *tilt, e *Enclosure) {
 	gi.AddScaled(&ai, -m.yawS, &bi)
 	gi.AddScaled(&gi, m.yawM, &br)
 	psi.Neg(psi.Atan2(&gi, &gr))
-	enclose.Turned(&c[Roll], &c[Pitch], &psi, &e.R)
 
 	// The rotation by psi multiplies ar + i ai and br + i bi.
-	var x, y enclose.Vec
-	x[0].Cos(&psi)
-	x[1].Sin(&psi)
-	y[0] = ar
-	y[1].Neg(&ai)
-	t.asm[0].Dot(&x, &y)
-	y[0], y[1] = bi, br
-	t.asm[1].Dot(&x, &y)
-	y[0].Neg(&br)
-	y[1] = bi
-	t.asm[2].Dot(&x, &y)
+	cos.Cos(&psi)
+	sin.Sin(&psi)
+	t.asm[0].Sum2(&cos, &ar, &sin, ai.Neg(&ai))
+	t.asm[1].Sum2(&cos, &bi, &sin, &br)
+	t.asm[2].Sum2(&sin, &bi, &cos, br.Neg(&br))
+
+	// R21 - R12 = yawS S + yawM M.
+	r := &t.rot
+	r[0].Scale(r[0].Sub(&t.asm[0], &t.asm[2]), 0.5)
+	r[1].Along(&t.asm, Vec{Y: (1 - m.yawS) / 2, Z: -m.yawM / 2})
+	r[3].Along(&t.asm, Vec{Y: (1 + m.yawS) / 2, Z: m.yawM / 2})
+	r[4].Scale(r[4].Add(&t.asm[0], &t.asm[2]), 0.5)
+	ar.Mul(&sp, &cr)
+	r[2].Sum2(&cos, &ar, &sin, &sr)
+	r[5].Sum2(&sin, &ar, &cos, sr.Neg(&sr))
+	r[6].Neg(&sp)
+	r[7].Neg(r[7].Mul(&cp, &sr))
+	r[8].Mul(&cp, &cr)
 
 	tool := m.frame.Tool
-	t.tool.Turn(&e.R, tool)
+	for k := range t.tool {
+		t.tool[k].Along((*enclose.QuadVec)(r[3*k:3*k+3]), tool)
+	}
 	t.base[0].Along(&t.asm, Vec{Y: m.shift[0], Z: m.shift[1]})
 	t.base[1].Along(&t.asm, Vec{Y: m.shift[2], Z: m.shift[3]})
 	t.base[0].Add(&t.base[0], &t.tool[0])
 	t.base[1].Add(&t.base[1], &t.tool[1])
-	t.base[2].AddConst(&c[Z], m.home.Z)
-	e.P[0].AddConst(&t.base[0], -tool.X)
-	e.P[1].AddConst(&t.base[1], -tool.Y)
-	e.P[2] = c[Z]
+	t.base[2].AddConst(t.base[2].Set(&c[Z]), m.home.Z)
 }
 
 // out gives the factors of tilt.asm in the platform joint's distance, in its leg's plane, from the axis through
@@ -86,13 +109,13 @@ func (m *tripod) out(i int) Vec {
 	return Vec{X: half, Y: 2 * s * c * half, Z: (s*s - c*c) * half}
 }
 
-// tied fills t.tie and e.T, as follow does. Sums over the legs are taken before forms come in.
-func (m *tripod) tied(t *tilt, e *Enclosure) {
+// tied fills t.tie, as follow does. Sums over the legs are taken before quads come in.
+func (m *tripod) tied(t *tilt) {
 	var (
-		all, inv, level, wide enclose.Form
+		all, inv, level, wide enclose.Quad
 		around                Vec
 	)
-	up := (*enclose.Vec)(e.R[6:9])
+	up := (*enclose.QuadVec)(t.rot[6:9])
 	for i := range 3 {
 		around = r3.Add(around, r3.Scale(m.turns[i], m.out(i)))
 	}
@@ -117,76 +140,4 @@ func (m *tripod) tied(t *tilt, e *Enclosure) {
 			t.tie[axis][k].Sub(level.Along(up, high), wide.Mul(&wide, turn))
 		}
 	}
-	e.T = [36]enclose.Form{}
-	e.T[6*2].Const(1)
-	e.T[6*3+1].Const(1)
-	e.T[6*4+2].Const(1)
-	for i, row := range [3]int{0, 1, 5} {
-		e.T[6*row+1], e.T[6*row+2] = t.tie[i][0], t.tie[i][1]
-	}
-}
-
-// enclose encloses leg i.
-func (m *tripod) enclose(i int, t *tilt, e *Enclosure) {
-	var (
-		out, across, dot enclose.Form
-		leg, in, v       enclose.Vec // in the leg's plane: outward and up
-		u, r, side       enclose.Vec
-	)
-	l := &m.leg[i]
-	c, s := m.cos[i], m.sin[i]
-
-	// r, from the tool point to the joint: outward in the leg's plane, square to it, up.
-	out.Along(&t.asm, m.out(i))
-	dot.Along(&t.tool, Vec{X: c, Y: s})
-	out.Sub(&out, &dot)
-	across.Along(&t.base, Vec{X: s, Y: -c})
-	r[0].Scale(&out, c)
-	r[0].AddScaled(&r[0], -s, &across)
-	r[1].Scale(&out, s)
-	r[1].AddScaled(&r[1], c, &across)
-	r[2].Along((*enclose.Vec)(e.R[6:9]), l.b)
-
-	from := m.out(i)
-	from.Y += c*m.shift[0] + s*m.shift[2]
-	from.Z += c*m.shift[1] + s*m.shift[3]
-	leg[0].AddConst(leg[0].Along(&t.asm, from), -(l.a.X*c + l.a.Y*s))
-	leg[1].AddConst(leg[1].Add(&t.base[2], &r[2]), -l.a.Z)
-	e.Q[i].Norm(&leg)
-	e.decide(i, &e.Q[i], 0)
-	in.Unit(&leg)
-	u[0].Scale(&in[0], c)
-	u[1].Scale(&in[0], s)
-	u[2] = in[1]
-
-	force(e.Wrenches[6*i:6*i+6], &u, &r, m.invLc)
-	side.Const(Vec{X: -s, Y: c})
-	force(e.Wrenches[18+6*i:24+6*i], &side, &r, m.invLc)
-
-	// The joint's velocity in the leg's plane, per unit of Lc·ω about x and about y.
-	row := e.J[6*i : 6*i+6]
-	row[2] = in[1]
-	for k := range 2 {
-		v[0].Scale(&t.tie[0][k], c)
-		v[0].AddScaled(&v[0], s, &t.tie[1][k])
-		v[0].AddScaled(&v[0], [2]float64{-s, c}[k]*m.invLc, &r[2])
-		dot.Mul(&across, &t.tie[2][k])
-		v[0].AddScaled(&v[0], -m.invLc, &dot)
-		v[1].Scale(&r[1-k], [2]float64{1, -1}[k]*m.invLc)
-		row[3+k].Dot(&in, &v)
-	}
-
-	dot.Along(&u, l.ua)
-	chord(&e.BaseChord[i], &dot, r3.Norm2(l.ua))
-	side.Turn(&e.R, l.ub)
-	dot.Dot(&u, &side)
-	chord(&e.PlatformChord[i], &dot, r3.Norm2(l.ub))
-
-	e.Links = append(e.Links, Link{Leg: i, Radius: m.pairs.diameter / 2})
-	link := &e.Links[len(e.Links)-1]
-	link.From.Const(l.a)
-	link.To[0].AddConst(&leg[0], l.a.X*c+l.a.Y*s)
-	link.To[1].Scale(&link.To[0], s)
-	link.To[0].Scale(&link.To[0], c)
-	link.To[2].AddConst(&leg[1], l.a.Z)
 }

@@ -23,8 +23,8 @@ type Quad struct {
 	R float64
 }
 
-// Vec2 is a vector of quads.
-type Vec2 [3]Quad
+// QuadVec is a vector of quads.
+type QuadVec [3]Quad
 
 // Quad sets z to the form.
 func (z *Quad) Set(x *Form) *Quad {
@@ -194,7 +194,7 @@ func (z *Quad) Sum2(a, x, b, y *Quad) *Quad {
 }
 
 // Dot sets z to the dot product x·y.
-func (z *Quad) Dot(x, y *Vec2) *Quad {
+func (z *Quad) Dot(x, y *QuadVec) *Quad {
 	var p products2
 	for c := range x {
 		p.add(&x[c], &y[c], 1)
@@ -203,7 +203,7 @@ func (z *Quad) Dot(x, y *Vec2) *Quad {
 }
 
 // Along sets z to the dot product of x with a vector of numbers.
-func (z *Quad) Along(x *Vec2, v r3.Vec) *Quad {
+func (z *Quad) Along(x *QuadVec, v r3.Vec) *Quad {
 	var p Quad
 	p.Scale(&x[0], v.X)
 	p.AddScaled(&p, v.Y, &x[1])

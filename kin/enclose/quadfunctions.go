@@ -3,16 +3,16 @@ package enclose
 import "math"
 
 // taylor sets z to φ(x): φ, its slope and half its second derivative at x.C are v, d1 and d2, and what is left out of
-// Taylor's series is at most t. Each of them is within 2⁻⁴⁸ of m or of its own size.
+// Taylor's series lies between low and high. Each of them is within 2⁻⁴⁸ of m or of its own size.
 //
 // With the parts of x beyond C of sizes l, q and R, the square of their sum differs from that of
 // the first part by at most (q+R)(2l+q+R).
-func (z *Quad) taylor(x *Quad, v, d1, d2, t, m float64) *Quad {
+func (z *Quad) taylor(x *Quad, v, d1, d2, low, high, m float64) *Quad {
 	l, q := x.sizes()
 	w := q + x.R
-	r := math.Abs(d1)*x.R + math.Abs(d2)*(w*(2*l+w)) + t
-	m += math.Abs(v) + math.Abs(d1)*(l+q) + math.Abs(d2)*l*l
-	z.C = v
+	r := math.Abs(d1)*x.R + math.Abs(d2)*(w*(2*l+w)) + 0.5*(high-low)
+	m += math.Abs(v) + math.Abs(d1)*(l+q) + math.Abs(d2)*l*l + math.Abs(low) + math.Abs(high)
+	z.C = v + 0.5*(low+high)
 	n := 0
 	g := x.G
 	for j := range g {
@@ -36,28 +36,52 @@ func (z *Quad) away() float64 {
 
 // Inv sets z to 1/x; unknown where x can be 0.
 //
-// With x = c(1+e), 1/x is (1 - e + e²)/c and less than |e|³/(1-|e|) of 1/c more.
+// With x = c(1+e), 1/x is (1 - e + e² - e³/(1+e))/c, and the last part falls all the way from e = -d to d.
 func (z *Quad) Inv(x *Quad) *Quad {
 	c := math.Abs(x.C)
-	e := x.away() / c * (1 + widen)
-	if !(e < 1 && c >= least && c <= most) {
+	d := x.away() / c * (1 + widen)
+	if !(d < 1 && c >= least && c <= most) {
 		return z.unknown()
 	}
 	v := 1 / x.C
-	return z.taylor(x, v, -v*v, v*v*v, e*e*e/(1-e)*math.Abs(v), 0)
+	q := v * d * d * d
+	a, b := -q/(1+d), q/(1-d)
+	return z.taylor(x, v, -v*v, v*v*v, min(a, b), max(a, b), 0)
 }
 
 // Sqrt sets z to the square root of x; unknown where x can be below 0.
 //
-// With x = c(1+e) the series is √c (1 + e/2 - e²/8 + …). The sizes of its other coefficients, that of e³ being
-// 1/16, fall, and their sum is 3/8: they give less than |e|³ times the lesser of 3/8 and 1/16/(1-|e|).
+// With x = c(1+e) and s = √(1+e), s is 1 + e/2 - e²/8 + e³ (3+s)/(8(1+s)³), and the last part
+// grows all the way from e = -d to d.
 func (z *Quad) Sqrt(x *Quad) *Quad {
-	e := x.away() / x.C * (1 + widen)
-	if !(e >= 0 && e <= 1 && x.C >= least && x.C <= most) {
+	d := x.away() / x.C * (1 + widen)
+	if !(d >= 0 && d <= 1 && x.C >= least && x.C <= most) {
 		return z.unknown()
 	}
 	v := math.Sqrt(x.C)
-	return z.taylor(x, v, 0.5/v, -0.125/(v*x.C), e*e*e*v*min(0.375, 0.0625/(1-e)), 0)
+	rest := func(s float64) float64 {
+		t := 1 + s
+		return v * (d * d * d * (3 + s) / (8 * t * t * t))
+	}
+	return z.taylor(x, v, 0.5/v, -0.125/(v*x.C), -rest(math.Sqrt(1-d)), rest(math.Sqrt(1+d)), 0)
+}
+
+// InvSqrt sets z to 1 over the square root of x; unknown where x can be 0 or below.
+//
+// With x = c(1+e) and s = √(1+e), 1/s is 1 - e/2 + 3e²/8 - e³ (8+9s+3s²)/(8s(1+s)³), and the last part
+// falls all the way from e = -d to d.
+func (z *Quad) InvSqrt(x *Quad) *Quad {
+	d := x.away() / x.C * (1 + widen)
+	if !(d >= 0 && d < 1 && x.C >= least && x.C <= most) {
+		return z.unknown()
+	}
+	v := 1 / math.Sqrt(x.C)
+	rest := func(s float64) float64 {
+		t := 1 + s
+		return v * (d * d * d * (8 + s*(9+3*s)) / (8 * s * (t * t * t)))
+	}
+	d1 := -0.5 * v / x.C
+	return z.taylor(x, v, d1, -0.75*d1/x.C, -rest(math.Sqrt(1+d)), rest(math.Sqrt(1-d)), 0)
 }
 
 // Sin sets z to the sine of x.
@@ -82,7 +106,7 @@ func (z *Quad) wave(x *Quad, v, d float64) *Quad {
 		*z = Quad{R: 1}
 		return z
 	}
-	return z.taylor(x, v, d, -0.5*v, w*w*w/6, 2*(1+w+w*w))
+	return z.taylor(x, v, d, -0.5*v, -w*w*w/6, w*w*w/6, 2*(1+w+w*w))
 }
 
 // Atan2 sets z to the angle of the point (x, y), as Form.Atan2.

@@ -7,7 +7,7 @@ import (
 )
 
 // Set sets z to the vector of forms.
-func (z *Vec2) Set(x *Vec) *Vec2 {
+func (z *QuadVec) Set(x *Vec) *QuadVec {
 	for c := range z {
 		z[c].Set(&x[c])
 	}
@@ -15,7 +15,7 @@ func (z *Vec2) Set(x *Vec) *Vec2 {
 }
 
 // Quads sets z to the vector of quads.
-func (z *Vec) Quads(x *Vec2) *Vec {
+func (z *Vec) Quads(x *QuadVec) *Vec {
 	for c := range z {
 		z[c].Quad(&x[c])
 	}
@@ -23,7 +23,7 @@ func (z *Vec) Quads(x *Vec2) *Vec {
 }
 
 // Arm sets z to the vector v turned as t has it.
-func (z *Vec2) Arm(t *Turn, v r3.Vec) *Vec2 {
+func (z *QuadVec) Arm(t *Turn, v r3.Vec) *QuadVec {
 	var a Arm
 	t.Apply(v, &a)
 	size := r3.Norm(v)
@@ -45,7 +45,7 @@ func (z *Vec2) Arm(t *Turn, v r3.Vec) *Vec2 {
 func component(v r3.Vec, c int) float64 { return [3]float64{v.X, v.Y, v.Z}[c] }
 
 // Add sets z to x + y.
-func (z *Vec2) Add(x, y *Vec2) *Vec2 {
+func (z *QuadVec) Add(x, y *QuadVec) *QuadVec {
 	for c := range z {
 		z[c].Add(&x[c], &y[c])
 	}
@@ -53,7 +53,7 @@ func (z *Vec2) Add(x, y *Vec2) *Vec2 {
 }
 
 // Sub sets z to x - y.
-func (z *Vec2) Sub(x, y *Vec2) *Vec2 {
+func (z *QuadVec) Sub(x, y *QuadVec) *QuadVec {
 	for c := range z {
 		z[c].Sub(&x[c], &y[c])
 	}
@@ -61,7 +61,7 @@ func (z *Vec2) Sub(x, y *Vec2) *Vec2 {
 }
 
 // AddConst sets z to x + v.
-func (z *Vec2) AddConst(x *Vec2, v r3.Vec) *Vec2 {
+func (z *QuadVec) AddConst(x *QuadVec, v r3.Vec) *QuadVec {
 	for c := range z {
 		z[c].AddConst(&x[c], component(v, c))
 	}
@@ -69,7 +69,7 @@ func (z *Vec2) AddConst(x *Vec2, v r3.Vec) *Vec2 {
 }
 
 // Scale sets z to a·x.
-func (z *Vec2) Scale(x *Vec2, a float64) *Vec2 {
+func (z *QuadVec) Scale(x *QuadVec, a float64) *QuadVec {
 	for c := range z {
 		z[c].Scale(&x[c], a)
 	}
@@ -77,7 +77,7 @@ func (z *Vec2) Scale(x *Vec2, a float64) *Vec2 {
 }
 
 // Mul sets z to f·x.
-func (z *Vec2) Mul(x *Vec2, f *Quad) *Vec2 {
+func (z *QuadVec) Mul(x *QuadVec, f *Quad) *QuadVec {
 	g := *f
 	for c := range z {
 		z[c].Mul(&x[c], &g)
@@ -86,7 +86,7 @@ func (z *Vec2) Mul(x *Vec2, f *Quad) *Vec2 {
 }
 
 // Cross sets z to the cross product x×y.
-func (z *Vec2) Cross(x, y *Vec2) *Vec2 {
+func (z *QuadVec) Cross(x, y *QuadVec) *QuadVec {
 	var p [3]products2
 	for c := range p {
 		a, b := (c+1)%3, (c+2)%3
