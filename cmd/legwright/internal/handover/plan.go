@@ -65,7 +65,7 @@ func (d *design) basePlan() *drawing.Drawing {
 				p.lines, what = append(p.lines, [2]mark{from, to}), "Lines from the joints: cranks or arms at home."
 			}
 		case "travel":
-			p.lines, what = append(p.lines, [2]mark{at[l.from], at[l.to]}), "Lines from the joints: the carriages' travel along the rails."
+			p.lines, what = append(p.lines, [2]mark{at[l.from], at[l.to]}), "Lines by the joints: travel of the carriages."
 		}
 	}
 	for _, a := range d.plan.axes {
@@ -256,7 +256,8 @@ func (d *design) column(p *plan, name, datum string, notes []string) *drawing.Bl
 		"Design " + orDash(d.title.Design) + " · " + d.a.Plan.Family.Name,
 		cut(orDash(d.title.Brief), 120),
 		"Units mm, degrees · scale " + ratio(p.Scale) + " on " + p.Paper.Name,
-		"Datum " + datum + " · machine " + d.mounting(),
+		"Datum: " + datum,
+		"Machine " + d.mounting(),
 		"Brief SHA-256 " + cut(orDash(d.title.Hash), 20),
 		d.title.Program,
 	}
