@@ -198,6 +198,7 @@ func (r *run) fixReference() {
 func (r *run) count(g *genome) {
 	order := r.evaluations
 	r.evaluations++
+	r.stop.fresh = r.stop.fresh || !g.recalled
 	if r.set.Record != nil && !g.recalled {
 		r.set.Record(g.space, g.x, &Result{Goals: g.goals, Excess: g.excess, Violation: g.violation, Fault: g.fault})
 	}

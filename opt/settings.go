@@ -17,7 +17,7 @@ type Settings struct {
 	// it is laid out for; 0 means all of them. At least the first sample.
 	StopAt int
 	// Time ends the search at the first generation barrier after so long, 0
-	// means never. Outcome.Evaluations then depends on the machine; the search
+	// means never; while all results are recalled it does not count. Outcome.Evaluations then depends on the machine; the search
 	// with StopAt set to it has the same Outcome but for Status.
 	Time time.Duration
 	// Stall ends the search when the front has ceased to grow.

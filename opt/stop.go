@@ -23,6 +23,7 @@ const stallLooks = 10
 // waits for what is under way.
 type stopper struct {
 	began   time.Time
+	fresh   bool   // a result was not recalled: time counts
 	most    int    // evaluations given out at one time, at most
 	next    int    // evaluations at the next look
 	looks   []look // of the last stretch, oldest first
@@ -48,13 +49,16 @@ func (r *run) gave() { r.stop.most = max(r.stop.most, r.given()) }
 func (r *run) stops() bool {
 	s := &r.stop
 	s.stalled = s.stalled || r.stalls()
+	if !s.fresh {
+		s.began = time.Now()
+	}
 	if r.left == 0 || r.given() < s.most { // about to end, or a part of what was given out came back unused
 		return false
 	}
 	switch {
 	case s.stalled:
 		s.stopped, s.by = true, Stalled
-	case r.set.Time > 0 && time.Since(s.began) >= r.set.Time:
+	case r.set.Time > 0 && s.fresh && time.Since(s.began) >= r.set.Time:
 		s.stopped, s.by = true, TimeSpent
 	}
 	return s.stopped
