@@ -9,19 +9,28 @@ import (
 	"legwright/cmd/legwright/internal/study"
 )
 
-// Checkpoint tells what an unfinished study was working on. The search has no state to go on
-// from: the same brief, seed and budget lead it to the same designs again.
+// Checkpoint tells what an unfinished study was working on; the log beside it holds what was
+// evaluated (Journal).
 type Checkpoint struct {
 	Program     string `json:"program"`
 	Brief       string `json:"brief"` // SHA-256 of the brief and its pose files
 	Seed        int64  `json:"seed"`
 	Budget      int    `json:"budget"`
-	Evaluations int    `json:"evaluations"` // spent when it was stopped
+	Part        string `json:"part,omitempty"`
+	Evaluations int    `json:"evaluations"` // spent when it was interrupted
 }
+
+// Merging is the part of a checkpoint that stands for a merge under way.
+const Merging = "merge"
 
 // NewCheckpoint is the checkpoint of a run that has not begun.
 func NewCheckpoint(s *study.Sources, r Run) *Checkpoint {
-	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations}
+	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations, Part: r.Part.String()}
+}
+
+// Key tells apart the runs that a log may belong to.
+func (c *Checkpoint) Key() [32]byte {
+	return sha256.Sum256(fmt.Appendf(nil, "%s\n%s\n%d\n%d\n%s", c.Program, c.Brief, c.Seed, c.Budget, c.Part))
 }
 
 // sourcesHash is the SHA-256 of the brief and its pose files, in hex.
@@ -51,7 +60,19 @@ func (c *Checkpoint) Bytes() ([]byte, error) { return study.Encode(c) }
 
 // Continues says why a run does not go on with the study that old was written for, or gives nil.
 func (c *Checkpoint) Continues(old *Checkpoint) error {
+	part := func(c *Checkpoint) string {
+		if c.Part == "" {
+			return "a whole study"
+		}
+		return "part " + study.Clean(c.Part)
+	}
 	switch {
+	case old.Part == Merging:
+		return fmt.Errorf("the study there is a merge that was broken off; merge again, or give --force to search anew")
+	case old.Program != c.Program:
+		return fmt.Errorf("the unfinished study there is by %s, this is %s; go on with that version, or give --force to begin anew", study.Clean(old.Program), c.Program)
+	case old.Part != c.Part:
+		return fmt.Errorf("the unfinished study there is %s, this run is %s; give the same --part, or --force to begin anew", part(old), part(c))
 	case old.Brief != c.Brief:
 		return fmt.Errorf("the unfinished study there is of another brief; give that brief, or --force to begin anew")
 	case old.Seed != c.Seed:

@@ -4,6 +4,7 @@ import (
 	"context"
 	"runtime"
 	"sync"
+	"time"
 
 	"legwright/cmd/legwright/internal/brief"
 	"legwright/cmd/legwright/internal/study"
@@ -14,11 +15,16 @@ import (
 
 // Run is how a search is to run: the brief's own settings with those of the command line put over them.
 type Run struct {
-	Evaluations int
+	Evaluations int // that the search is laid out for; of the whole study if it is cut into parts
+	StopAt      int // evaluations at which it ends all the same, 0 for none
+	Time        time.Duration
+	Stall       opt.Stall
+	Part        Part
 	Population  int
 	Seed        int64
 	Workers     int // 0 for all processors; it never changes the result
 	Polish      float64
+	Journal     *Journal // nil for a run that cannot be gone on with
 	Progress    func(opt.Progress)
 }
 
@@ -27,6 +33,7 @@ type Found struct {
 	Front   *study.Front
 	History []opt.Point
 	Status  opt.Status
+	Part    *study.Part // of a part, once it has ended
 }
 
 // Search runs the search and judges its front completely. When ctx ends it
@@ -38,22 +45,53 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	if len(s.goals()) == 1 && r.Polish == 0 {
 		r.Polish = 0.5 // a single optimum is for Nelder-Mead to finish
 	}
-	out, err := opt.Search(ctx, s.problem(r.Workers), opt.Settings{
-		Evaluations: r.Evaluations,
+	problem := s.problem(r.Workers)
+	set := opt.Settings{
+		Evaluations: r.Part.Share(r.Evaluations),
+		StopAt:      r.StopAt,
+		Time:        r.Time,
+		Stall:       r.Stall,
 		Population:  r.Population,
-		Seed:        uint64(r.Seed),
+		Seed:        r.Part.stream(r.Seed),
 		Workers:     r.Workers,
 		Front:       s.Brief.Search.Front,
 		Reference:   s.reference(),
 		Polish:      r.Polish,
+		Archive:     !r.Part.Whole(),
 		Progress:    r.Progress,
-	})
+	}
+	if r.Journal != nil {
+		var end context.CancelFunc
+		ctx, end = context.WithCancel(ctx)
+		defer end()
+		r.Journal.attach(&problem, &set, end)
+	}
+	out, err := opt.Search(ctx, problem, set)
+	if r.Journal != nil {
+		r.Journal.Flush() // a failure was told of
+		if r.Journal.err != nil {
+			return nil, r.Journal.err
+		}
+	}
 	if err != nil {
 		return nil, err
 	}
+	found := &Found{Front: s.front(out, &r), History: out.History, Status: out.Status}
+	if !r.Part.Whole() {
+		name := r.Part.name(r.Seed)
+		found.Front.Part = &name
+		if out.Status != opt.Interrupted {
+			found.Part = s.part(out, &r, found.Front)
+		}
+	}
+	return found, nil
+}
+
+// front is the front of a study with all that files say of it.
+func (s *Study) front(out *opt.Outcome, r *Run) *study.Front {
 	f := &study.Front{
 		Format: study.Format, Program: Program(), Title: s.Brief.Title, Seed: r.Seed,
-		Status: out.Status.String(), Evaluations: out.Evaluations, Budget: r.Evaluations, Feasible: out.Feasible, Population: out.Population,
+		Status: out.Status.String(), StoppedBy: stoppedBy(out.Status), Evaluations: out.Evaluations, Budget: r.Part.Share(r.Evaluations), Feasible: out.Feasible, Population: out.Population,
 		Poses: len(s.Tasks[0].Samples()), Hypervolume: study.Number(out.Hypervolume),
 		Weights: s.Brief.Ranking.Weights,
 		Designs: []study.Design{},
@@ -75,8 +113,9 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	if len(f.Designs) == 0 {
 		f.Help = s.help(out, r.Workers)
 	}
+	f.Failures, f.Failed = out.Failures, s.failed(out)
 	study.Rank(f, f.Weights)
-	return &Found{Front: f, History: out.History, Status: out.Status}, nil
+	return f
 }
 
 // goals are those of the brief.
@@ -128,6 +167,12 @@ func (s *Study) problem(workers int) opt.Problem {
 		}
 	}
 	p.Evaluate = func(worker, space int, x []float64, r *opt.Result) {
+		defer func() {
+			if p := recover(); p != nil { // the scratch may be left half done
+				screens[worker][space] = objective.NewScreen(s.Tasks[space], s.Plans[space])
+				r.Fault = fault(p)
+			}
+		}()
 		score := &scores[worker]
 		screens[worker][space].Judge(x, score)
 		copy(r.Goals, score.Goals)

@@ -71,6 +71,29 @@ func (f *Folder) OpenLog(key [32]byte, fresh bool) (*Log, *Kept, error) {
 	return l, kept, nil
 }
 
+// ownLog tells whether the folder has a log of a checkpoint that this program wrote, whatever became of
+// the rest of the checkpoint.
+func ownLog(dir string) bool { return logHeader(dir, len(logMagic)) == logMagic }
+
+// LogFits tells whether the folder has a log of the run with the key.
+func (f *Folder) LogFits(key [32]byte) bool {
+	return logHeader(f.dir, logHead) == logMagic+string(key[:])
+}
+
+// logHeader reads the first n bytes of a folder's log; "" if there are no such.
+func logHeader(dir string, n int) string {
+	file, err := os.Open(filepath.Join(dir, logFile))
+	if err != nil {
+		return ""
+	}
+	defer file.Close()
+	b := make([]byte, n)
+	if _, err := io.ReadFull(file, b); err != nil {
+		return ""
+	}
+	return string(b)
+}
+
 // settle cuts the log to its whole blocks and writes the header if there is none.
 func (l *Log) settle(key [32]byte) error {
 	if err := l.file.Truncate(l.size); err != nil {
