@@ -24,13 +24,10 @@ type SheetRun struct {
 	Workers int      // 0 for all processors; they change nothing
 }
 
-// inFull is the number of best designs that are shown in full.
-const inFull = 20
-
 // sheetBytes is how large the data may become, to stay below 3 MB with the page around them.
 const sheetBytes = 2_700_000
 
-// Sheet is everything that the page of a finished study shows. Figures are those of the
+// Sheet is everything that the page of a finished study shows. In full are the designs of study.HandedOver. Figures are those of the
 // front's records; what is drawn comes from the machines, built anew from their dimensions. An error says that the brief is
 // not the one that the front was found with, or that a design of Detail is not there.
 func (s *Study) Sheet(f *study.Front, r SheetRun) (*sheet.Data, error) {

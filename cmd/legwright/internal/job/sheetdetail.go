@@ -32,12 +32,11 @@ func (b *sheetBuilder) way(d *sheet.Data) {
 	b.scout = t.Scouted(cornerPoses)
 	d.Path, d.Way, d.Corners = flat(b.path.Coords), b.path.Required, flat(b.scout)
 	b.full = make([]bool, len(b.front.Designs))
-	for i := range b.full {
-		r := &b.front.Designs[i]
-		b.full[i] = i < inFull || len(r.Marks) > 0 || slices.Contains(b.run.Detail, r.ID)
+	for _, i := range b.front.HandedOver() {
+		b.full[i] = true
 	}
-	for _, c := range d.First {
-		b.full[c.Design] = true
+	for i := range b.full {
+		b.full[i] = b.full[i] || slices.Contains(b.run.Detail, b.front.Designs[i].ID)
 	}
 }
 
