@@ -164,6 +164,7 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 		Encode: func(d study.Design) ([]byte, error) {
 			return job.EncodeDesign(d, "../"+sources.BriefName()), nil
 		},
+		Sheets: func(d study.Design) (map[string][]byte, error) { return s.Sheets(d, sources) },
 	})
 	if err = errors.Join(err, pageErr); err != nil {
 		return err
