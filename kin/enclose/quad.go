@@ -15,7 +15,8 @@ const pairsOf = Coords * (Coords + 1) / 2
 //
 // A chain of operations on quads that ends in a Form takes the size of the part of second degree once, at the end,
 // after all that cancels in it has done so; its remainder comes out nearly as small as one of second order can be, at
-// two or three times the cost. The rule of rounding is that of forms, H being coefficients too.
+// two or three times the cost. The rule of rounding is that of forms, H being coefficients too. (Taylor models of second
+// degree: M. Berz and K. Makino 1998, as the package.)
 type Quad struct {
 	C float64
 	G [Coords]float64
@@ -26,7 +27,7 @@ type Quad struct {
 // QuadVec is a vector of quads.
 type QuadVec [3]Quad
 
-// Quad sets z to the form.
+// Set sets z to the form.
 func (z *Quad) Set(x *Form) *Quad {
 	*z = Quad{C: x.C, G: x.G, R: x.R}
 	return z

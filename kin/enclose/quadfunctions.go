@@ -2,6 +2,14 @@ package enclose
 
 import "math"
 
+// Divisors and radicands of quads lie within these: third powers of their inverses then neither overflow nor underflow, and a
+// product of a second derivative and a slope that underflows, times another slope, is less than 2⁻⁴⁸ of the
+// first derivative times that slope.
+const (
+	quadLeast = 0x1p-100
+	quadMost  = 0x1p100
+)
+
 // taylor sets z to φ(x): φ, its slope and half its second derivative at x.C are v, d1 and d2, and what is left out of
 // Taylor's series lies between low and high. Each of them is within 2⁻⁴⁸ of m or of its own size.
 //
@@ -40,7 +48,7 @@ func (z *Quad) away() float64 {
 func (z *Quad) Inv(x *Quad) *Quad {
 	c := math.Abs(x.C)
 	d := x.away() / c * (1 + widen)
-	if !(d < 1 && c >= least && c <= most) {
+	if !(d < 1 && c >= quadLeast && c <= quadMost) {
 		return z.unknown()
 	}
 	v := 1 / x.C
@@ -55,7 +63,7 @@ func (z *Quad) Inv(x *Quad) *Quad {
 // grows all the way from e = -d to d.
 func (z *Quad) Sqrt(x *Quad) *Quad {
 	d := x.away() / x.C * (1 + widen)
-	if !(d >= 0 && d <= 1 && x.C >= least && x.C <= most) {
+	if !(d >= 0 && d <= 1 && x.C >= quadLeast && x.C <= quadMost) {
 		return z.unknown()
 	}
 	v := math.Sqrt(x.C)
@@ -72,7 +80,7 @@ func (z *Quad) Sqrt(x *Quad) *Quad {
 // falls all the way from e = -d to d.
 func (z *Quad) InvSqrt(x *Quad) *Quad {
 	d := x.away() / x.C * (1 + widen)
-	if !(d >= 0 && d < 1 && x.C >= least && x.C <= most) {
+	if !(d >= 0 && d < 1 && x.C >= quadLeast && x.C <= quadMost) {
 		return z.unknown()
 	}
 	v := 1 / math.Sqrt(x.C)
@@ -115,7 +123,7 @@ func (z *Quad) wave(x *Quad, v, d float64) *Quad {
 // e - e²/2 and at most |e|³/3/(1-|e|) more; the imaginary part of e - e²/2 is b - ab.
 func (z *Quad) Atan2(y, x *Quad) *Quad {
 	s := x.C*x.C + y.C*y.C
-	if !(s >= least && s <= most) {
+	if !(s >= quadLeast && s <= quadMost) {
 		return z.unknown()
 	}
 	wx, wy := x.away(), y.away()
