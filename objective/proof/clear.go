@@ -16,7 +16,7 @@ import (
 func (b *bench) clear(i int) bool {
 	least := math.Inf(1)
 	for _, p := range b.e.Pairs {
-		d := b.distance(&b.e.Links[p[0]], &b.e.Links[p[1]])
+		d := b.distance(&b.e.Links[p[0]], &b.e.Links[p[1]], b.target[i])
 		least = min(least, d)
 		if !(least >= b.target[i]) {
 			return false
@@ -26,8 +26,9 @@ func (b *bench) clear(i int) bool {
 	return true
 }
 
-// distance is a lower bound of the distance of two links' surfaces over the box.
-func (b *bench) distance(u, v *kin.Link) float64 {
+// distance is a lower bound of the distance of two links' surfaces over the box, a sharper one where it would be below enough.
+func (b *bench) distance(u, v *kin.Link, enough float64) float64 {
+	want := enough + u.Radius + v.Radius
 	s, t := between(&u.From, &u.To), between(&v.From, &v.To)
 	e, inU, inV := nearest(&u.From, &s, &v.From, &t)
 	if e == [3]float64{} {
@@ -63,15 +64,24 @@ func (b *bench) distance(u, v *kin.Link) float64 {
 		for _, q := range [2]*enclose.Vec{&v.From, &v.To} {
 			w := [3]float64{p[0].C - q[0].C, p[1].C - q[1].C, p[2].C - q[2].C}
 			value, moved, extent := dot3(&e, &w), 0.0, math.Sqrt(dot3(&w, &w))
+			var g [6][3]float64
 			for k, c := range moving {
-				g := [3]float64{p[0].G[c] - q[0].G[c], p[1].G[c] - q[1].G[c], p[2].G[c] - q[2].G[c]}
-				value -= math.Abs(dot3(&e, &g) + dot3(&ek[k], &w))
-				moved += math.Sqrt(dot3(&g, &g))
+				g[k] = [3]float64{p[0].G[c] - q[0].G[c], p[1].G[c] - q[1].G[c], p[2].G[c] - q[2].G[c]}
+				value -= math.Abs(dot3(&e, &g[k]) + dot3(&ek[k], &w))
+				moved += math.Sqrt(dot3(&g[k], &g[k]))
 			}
 			r := [3]float64{p[0].R + q[0].R, p[1].R + q[1].R, p[2].R + q[2].R}
-			rest := (1 + turned) * math.Sqrt(dot3(&r, &r))
-			value -= turned*moved + rest
-			value -= slack * (1 + turned) * (extent + moved + coordinates(p) + coordinates(q))
+			value -= (1+turned)*math.Sqrt(dot3(&r, &r)) + slack*(1+turned)*(extent+moved+coordinates(p)+coordinates(q))
+			if low := (value - turned*moved) / size; low >= want {
+				value -= turned * moved
+			} else { // the part of second degree, t_k t_l in [-1, 1] and t_k² in [0, 1]
+				for k := range moving {
+					value += min(dot3(&ek[k], &g[k]), 0)
+					for l := range k {
+						value -= math.Abs(dot3(&ek[k], &g[l]) + dot3(&ek[l], &g[k]))
+					}
+				}
+			}
 			least = min(least, max(value/size, 0))
 		}
 	}

@@ -121,19 +121,36 @@ func (p *prover) finish(gap float64, left []string, progress func(Progress)) *Re
 		}
 	}
 	p.depend()
-	res.trees = make([]tree, len(all))
 	for k := range all {
-		if p.alive == 0 {
-			break
+		for _, g := range p.groups() {
+			res.trees = append(res.trees, plant(&all[k], k, g))
 		}
-		p.run(&all[k], &res.trees[k], func(share float64) {
-			if progress != nil {
-				progress(Progress{Settled: (float64(k) + share) / float64(len(all)), Boxes: p.boxes})
-			}
-		})
 	}
-	p.conclude(res, len(all))
+	p.run(res.trees, progress)
+	p.conclude(res)
 	return res
+}
+
+// groups are the properties in question that are proved in one tree: those that need large boxes alone, those of
+// matrices, and the distance of the legs.
+func (p *prover) groups() (out []uint64) {
+	var g [3]uint64
+	for i := range p.props {
+		k := 1
+		switch p.props[i].kind {
+		case reach, shortest, longest, regular, held, baseSwing, otherSwing, rate:
+			k = 0
+		case apart:
+			k = 2
+		}
+		g[k] |= 1 << i & p.alive
+	}
+	for _, x := range g {
+		if x != 0 {
+			out = append(out, x)
+		}
+	}
+	return out
 }
 
 // depend takes out of question what means nothing where a refuted property fails.
@@ -157,18 +174,21 @@ func (p *prover) depend() {
 }
 
 // conclude fills the answers.
-func (p *prover) conclude(res *Result, regions int) {
+func (p *prover) conclude(res *Result) {
 	res.Boxes, res.OutOfTime, res.Interrupted, res.Worst = p.boxes, p.late, p.halted, p.rest
 	res.Answer = Proved
 	for i := range p.out {
 		o := &p.out[i]
-		if regions > 0 {
-			o.Left /= float64(regions)
+		if res.Regions > 0 {
+			o.Left /= float64(res.Regions)
 		}
 		if o.Answer != Refuted {
 			if o.Left = max(o.Left, 0); o.Left < 1e-12 && o.Needs == "" {
 				o.Left, o.Answer = 0, Proved
 			}
+		}
+		if o.kind == regular && o.Answer == Proved && !p.sameSide(regions(p.task.Zones)) {
+			o.Answer = Undecided // no pose of the zones is singular, but which side of home they are on is in doubt
 		}
 		if k := o.kind; k == baseSwing || k == otherSwing {
 			o.Bound = swing(o.Bound)

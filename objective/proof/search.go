@@ -77,6 +77,10 @@ func (v *prober) refutes(i int, c *Counter) bool {
 	return p.off(w.Value) > objective.Tolerance
 }
 
+// easyGap is the relative distance from which on limits of coordinates, swings and rates are proved as they are,
+// whatever the gap: few boxes do.
+const easyGap = 1e-4
+
 // search drives every property to its worst over every zone and home, and refutes what fails there. What is left is
 // proved of its limit or, where the worst value comes nearer to that than the gap, of the limit moved out by the gap.
 func (p *prover) search(gap float64) {
@@ -99,7 +103,11 @@ func (p *prover) search(gap float64) {
 			p.meet(i, v)
 		}
 		o.Target, o.Gapped = o.Limit, false
-		if o.Bounded && o.off(o.Found) > -gap {
+		near := gap
+		if o.kind <= longest || o.kind == baseSwing || o.kind == otherSwing || o.kind == rate {
+			near = min(gap, easyGap)
+		}
+		if o.Bounded && o.off(o.Found) > -near {
 			o.Target, o.Gapped = o.within(gap), true
 		}
 	}

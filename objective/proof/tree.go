@@ -40,11 +40,19 @@ const (
 	unsettled
 )
 
-// tree is the record of one region.
+// tree is the record of the boxes of one region, tested for some of the properties.
 type tree struct {
-	region region
+	region *region
+	number int // of the region
+	props  uint64
 	nodes  []node
+	stack  []cell // not tested yet
+	share  float64
 }
+
+// turns is how many batches of a tree are tested before the next tree has its turn, so that one hard
+// property does not keep the others from being settled.
+const turns = 8
 
 // slot takes the result of a test.
 type slot struct {
@@ -62,7 +70,7 @@ type prover struct {
 	bench  []*bench
 	probe  []*prober
 	slots  []slot
-	stack  []cell
+	cells  []cell
 	alive  uint64 // properties in question
 	out    []Outcome
 	boxes  int64
@@ -74,32 +82,56 @@ type prover struct {
 	rest   *Rest
 }
 
-// run proves the properties alive over the region, tree being its record. done gets the share of the volume that is settled.
-func (p *prover) run(g *region, t *tree, done func(share float64)) {
-	for _, b := range p.bench {
-		b.enter(g)
+// run tests all trees by turns until each is settled or it is time to stop.
+func (p *prover) run(trees []tree, progress func(Progress)) {
+	for open := true; open; {
+		open = false
+		for k := range trees {
+			t := &trees[k]
+			if len(t.stack) == 0 || t.props&p.alive == 0 {
+				t.stack = t.stack[:0]
+				continue
+			}
+			for _, b := range p.bench {
+				b.enter(t.region)
+			}
+			for range turns {
+				if p.stop() {
+					for i := range trees {
+						p.leave(&trees[i])
+					}
+					return
+				}
+				p.step(t)
+				if progress != nil {
+					sum := 0.0
+					for i := range trees {
+						sum += trees[i].share
+					}
+					progress(Progress{Settled: sum / float64(len(trees)), Boxes: p.boxes})
+				}
+				if len(t.stack) == 0 {
+					break
+				}
+			}
+			open = open || len(t.stack) > 0
+		}
 	}
-	t.region = *g
-	t.nodes = append(t.nodes[:0], node{split: unsettled})
-	p.stack = append(p.stack[:0], cell{box: g.box, open: p.alive})
-	share := 0.0
-	for len(p.stack) > 0 {
-		if p.stop() {
-			p.leave(g)
-			return
-		}
-		n := min(batch, len(p.stack))
-		cells := p.stack[len(p.stack)-n:]
-		p.test(g, cells)
-		p.stack = p.stack[:len(p.stack)-n]
-		taken := append([]cell(nil), cells...) // children overwrite their place
-		for i := range taken {
-			share += p.merge(g, t, &taken[i], &p.slots[i])
-		}
-		if p.alive == 0 {
-			return
-		}
-		done(share)
+}
+
+// plant starts a tree.
+func plant(g *region, number int, props uint64) tree {
+	return tree{region: g, number: number, props: props, nodes: []node{{split: unsettled}}, stack: []cell{{box: g.box, open: props}}}
+}
+
+// step tests the boxes on top of a tree's stack.
+func (p *prover) step(t *tree) {
+	n := min(batch, len(t.stack))
+	p.cells = append(p.cells[:0], t.stack[len(t.stack)-n:]...)
+	t.stack = t.stack[:len(t.stack)-n]
+	p.test(t.region, p.cells)
+	for i := range p.cells {
+		t.share += p.merge(t, &p.cells[i], &p.slots[i])
 	}
 }
 
@@ -186,7 +218,7 @@ func (p *prover) look(w int, g *region, at kin.Coords, open uint64, s *slot) {
 
 // merge takes the result of a cell into the record and puts its halves on the stack. It gives the share of the volume
 // that is settled now and was not before.
-func (p *prover) merge(g *region, t *tree, c *cell, s *slot) float64 {
+func (p *prover) merge(t *tree, c *cell, s *slot) float64 {
 	share := math.Ldexp(1, -int(c.depth))
 	n := &t.nodes[c.node]
 	p.boxes++
@@ -218,8 +250,8 @@ func (p *prover) merge(g *region, t *tree, c *cell, s *slot) float64 {
 	case open == 0:
 		n.split = settled
 		return share
-	case int(c.depth) >= finest*len(g.moving):
-		p.keep(g, c, open)
+	case int(c.depth) >= finest*len(t.region.moving):
+		p.keep(t.region, c, open)
 		return 0
 	}
 	q := s.split
@@ -232,14 +264,14 @@ func (p *prover) merge(g *region, t *tree, c *cell, s *slot) float64 {
 	low.open, high.open = open, open
 	low.node, high.node = first, first+1
 	low.depth, high.depth = c.depth+1, c.depth+1
-	p.stack = append(p.stack, high, low)
+	t.stack = append(t.stack, high, low)
 	return 0
 }
 
-// leave notes the worst of the boxes on the stack.
-func (p *prover) leave(g *region) {
-	for i := range p.stack {
-		p.keep(g, &p.stack[i], p.stack[i].open&p.alive)
+// leave notes the largest of the boxes that were not tested.
+func (p *prover) leave(t *tree) {
+	for i := range t.stack {
+		p.keep(t.region, &t.stack[i], t.stack[i].open&p.alive)
 	}
 }
 
