@@ -135,6 +135,15 @@ type Search struct {
 	Seed        int64              `json:"seed" mapstructure:"seed"`
 	Front       int                `json:"front" mapstructure:"front"`
 	Reference   map[string]float64 `json:"reference" mapstructure:"reference"` // SI, of every goal; nil: not given
+	Time        float64            `json:"time" mapstructure:"time"`           // s; 0: no end
+	Stall       Stall              `json:"stall" mapstructure:"stall"`
+}
+
+// Stall ends a search whose hypervolume has grown by less than Gain, relative to what it was, over so
+// many evaluations; 0 evaluations: it does not.
+type Stall struct {
+	Evaluations int     `json:"evaluations" mapstructure:"evaluations"`
+	Gain        float64 `json:"gain" mapstructure:"gain"`
 }
 
 // Fault is a fault of the brief at the place of the key (a dotted path as in "duty.zones[0].box" or

@@ -287,6 +287,8 @@ func searchKeys() []key {
 		{name: "population", read: readPopulation},
 		{name: "seed", read: counted(0, 1<<62)},
 		{name: "front", read: counted(1, 100_000)},
+		{name: "time", read: readTime},
+		{name: "stall", keys: stallKeys()},
 		{name: "reference", read: readReference},
 	}
 }

@@ -113,8 +113,23 @@ func unknownFormat(file string) error {
 	return Faults{{Position{File: file}, "", fmt.Sprintf("%q is no known ending", filepath.Ext(file)), "name the file .yaml, .toml or .json"}}
 }
 
+// maxPath bounds the path of a file, in bytes; systems have such a bound, too.
+const maxPath = 4000
+
+// ReadText reads the text of a brief for Parse.
+func ReadText(file string) ([]byte, error) {
+	text, err := readFile(file, maxFile)
+	if err != nil {
+		return nil, fmt.Errorf("%w; give the path of a brief", err)
+	}
+	return text, nil
+}
+
 // readFile reads a plain file of bounded size.
 func readFile(file string, bound int64) ([]byte, error) {
+	if len(file) > maxPath {
+		return nil, fmt.Errorf("the path %q has %d bytes, more than %d", short(file), len(file), maxPath)
+	}
 	info, err := os.Stat(file)
 	switch {
 	case errors.Is(err, os.ErrNotExist):

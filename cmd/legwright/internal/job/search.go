@@ -253,5 +253,9 @@ func (s *Study) values(d *opt.Design) []float64 {
 
 // Settings are the brief's own settings of the search.
 func Settings(b *brief.Brief) Run {
-	return Run{Evaluations: b.Search.Evaluations, Population: b.Search.Population, Seed: b.Search.Seed}
+	return Run{
+		Evaluations: b.Search.Evaluations, Population: b.Search.Population, Seed: b.Search.Seed,
+		Time:  time.Duration(b.Search.Time * float64(time.Second)),
+		Stall: opt.Stall{Evaluations: b.Search.Stall.Evaluations, Gain: b.Search.Stall.Gain},
+	}
 }

@@ -28,6 +28,7 @@ const (
 	TurnStiffness
 	Pressure
 	Gain // metres of platform motion per radian of a crank
+	Duration
 	kinds
 )
 
@@ -59,6 +60,7 @@ var forms = [kinds]form{
 	TurnStiffness:       {"turning stiffness", "N m/rad", "N m/rad", "Nm_rad", "5000 N m/rad"},
 	Pressure:            {"pressure", "Pa", "GPa", "GPa", "210 GPa"},
 	Gain:                {"gain", "m/rad", "mm/rad", "mm_rad", "200 mm/rad"},
+	Duration:            {"duration", "s", "s", "s", "2 h"},
 }
 
 // String is the kind in words.

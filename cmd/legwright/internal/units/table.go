@@ -93,6 +93,10 @@ var table = [...]Unit{
 
 	{Gain, "m/rad", 0, 1},
 	{Gain, "mm/rad", -3, 1},
+
+	{Duration, "h", 0, 3600},
+	{Duration, "min", 0, 60},
+	{Duration, "s", 0, 1},
 }
 
 // respell maps the usual spellings of a unit to one: no blanks, dots, stars or carets between or
