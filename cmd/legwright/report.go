@@ -33,6 +33,7 @@ With --json the data of the page go to standard output too.`,
 			if err != nil {
 				return inputError{err}
 			}
+			defer folder.Close()
 			s, sources, err := studyOf(folder)
 			if err != nil {
 				return inputError{err}

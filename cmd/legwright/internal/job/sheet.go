@@ -25,7 +25,7 @@ type SheetRun struct {
 }
 
 // sheetBytes is how large the data may become, to stay below 3 MB with the page around them.
-const sheetBytes = 2_700_000
+const sheetBytes = 2_800_000
 
 // Sheet is everything that the page of a finished study shows. In full are the designs of study.HandedOver. Figures are those of the
 // front's records; what is drawn comes from the machines, built anew from their dimensions. An error says that the brief is

@@ -6,8 +6,8 @@ import (
 )
 
 // Fit makes the data small enough, as far as it can, without touching the designs kept: first designs that are not
-// shown in full lose the poses that decide none of the goals, the last of them first; then unmarked designs lose their
-// detail, the last of them first. The page shows the command that brings it back.
+// shown in full lose the poses that decide none of the goals, the last of them first; then unmarked designs lose all maps
+// but one, then their detail, the last of them first. The page shows the command that brings it back.
 func Fit(d *Data, bytes int, keep []string) {
 	designs := d.Designs
 	d.Designs = []Design{}
@@ -29,9 +29,14 @@ func Fit(d *Data, bytes int, keep []string) {
 			shrink(i, func(v *Design) { v.thin(d.Goals) })
 		}
 	}
-	for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
-		if v := &designs[i]; v.Detail != nil && len(v.Marks) == 0 && !slices.Contains(keep, v.ID) {
-			shrink(i, func(v *Design) { v.Detail = nil })
+	for _, by := range []func(*Design){
+		func(v *Design) { v.Detail.Maps = v.Detail.Maps[:min(1, len(v.Detail.Maps))] },
+		func(v *Design) { v.Detail = nil },
+	} {
+		for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
+			if v := &designs[i]; v.Detail != nil && len(v.Marks) == 0 && !slices.Contains(keep, v.ID) {
+				shrink(i, by)
+			}
 		}
 	}
 }

@@ -14,7 +14,7 @@ func many() *Data {
 			v.Poses[k].At[0] = Num(k)
 		}
 		if i < 10 {
-			v.Detail = &Detail{Path: Track{Place: make([]int, 1000)}}
+			v.Detail = &Detail{Path: Track{Place: make([]int, 1000)}, Maps: make([]Map, 3)}
 		}
 		if i == 2 {
 			v.Marks = []string{"knee"}
@@ -65,6 +65,16 @@ func TestFit(t *testing.T) {
 		}
 	}
 	d := many()
+	for i := range d.Designs[10:] {
+		d.Designs[10+i].thin(d.Goals)
+	}
+	thinned := size(d)
+	d = many()
+	Fit(d, thinned-100, nil)
+	if n := len(d.Designs[9].Detail.Maps); n != 1 || len(full(d)) != 10 || len(d.Designs[0].Detail.Maps) != 3 {
+		t.Errorf("%d maps of the last design in full, %d in full", n, len(full(d)))
+	}
+	d = many()
 	Fit(d, size(d)-200, nil)
 	if n := len(d.Designs[50].Poses); n != 4 {
 		t.Errorf("a design in the middle has %d poses", n)

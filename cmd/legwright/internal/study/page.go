@@ -1,6 +1,7 @@
 package study
 
 import (
+	"errors"
 	"fmt"
 	"os"
 	"path/filepath"
@@ -9,19 +10,30 @@ import (
 // pageFile is the report page.
 const pageFile = "report.html"
 
-// Open opens the folder of a study, finished or interrupted, to write what follows from its front again.
+// Open opens the folder of a study, finished or interrupted, to write what follows from its front again. It
+// refuses one that another process has open. Whoever opens a folder closes it.
 func Open(dir string) (*Folder, *Front, error) {
-	front, err := Read(dir)
-	if err != nil {
+	if _, err := Read(dir); err != nil { // not to leave a lock in a folder that is none of ours
 		return nil, nil, err
 	}
-	state, err := inspect(dir)
-	if err != nil {
+	f := &Folder{dir: dir}
+	var err error
+	if f.lock, err = takeLock(dir); errors.Is(err, errBusy) {
 		return nil, nil, err
+	} else if err == nil {
+		err = f.writable()
 	}
-	f := &Folder{dir: dir, state: state}
-	if err := f.writable(); err != nil {
+	if err != nil {
+		f.Close()
 		return nil, nil, fmt.Errorf("%s: the folder cannot be written to (%w); make it yours to write, or copy it", Clean(dir), bare(err))
+	}
+	front, err := Read(dir)
+	if err == nil {
+		f.state, err = inspect(dir)
+	}
+	if err != nil {
+		f.Close()
+		return nil, nil, err
 	}
 	return f, front, nil
 }

@@ -24,6 +24,9 @@ func TestPageOfAFolder(t *testing.T) {
 	if err != nil || front.Goals[0].Measure != "footprint" {
 		t.Fatalf("%v, %+v", err, front)
 	}
+	if _, _, err := Open(dir); err == nil || !strings.Contains(err.Error(), "is at work in the folder") {
+		t.Errorf("opened twice: %v", err)
+	}
 	if _, err := f.Brief(); err == nil || !strings.Contains(err.Error(), "copy of the brief is missing") {
 		t.Errorf("no brief: %v", err)
 	}
@@ -41,6 +44,14 @@ func TestPageOfAFolder(t *testing.T) {
 		if b, err := os.ReadFile(f.Page()); string(b) != page || err != nil {
 			t.Errorf("%q, %v", b, err)
 		}
+	}
+	if err := f.Close(); err != nil {
+		t.Error(err)
+	}
+	if f, _, err = Open(dir); err != nil {
+		t.Errorf("opened again: %v", err)
+	} else if err := f.Close(); err != nil {
+		t.Error(err)
 	}
 	if s := (&Sources{Poses: []File{{Name: pageFile}}}); len(s.Apart()) != 1 {
 		t.Error("a pose file takes the page's name")
