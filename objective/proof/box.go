@@ -189,7 +189,7 @@ func (b *bench) matrices(open uint64) (closed uint64) {
 		switch k := b.props[i].kind; {
 		case k == regular:
 			ok = b.inv.regular(&b.j, b.task.Singular) || b.axes() && b.holds(&b.j, 0, b.task.Singular*b.j.size)
-		case k == conditioned || k == wrenches:
+		case k == conditioned || k == wrenches && b.six:
 			ok = b.axes() && b.holds(&b.j, b.target[i], 0)
 		case k == slowest:
 			ok = b.axes()
