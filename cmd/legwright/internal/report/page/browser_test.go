@@ -22,7 +22,7 @@ import (
 
 // tab is the page in a browser, with what went wrong in it.
 type tab struct {
-	t    *testing.T
+	t    testing.TB
 	ctx  context.Context
 	path string // of the file
 
@@ -33,8 +33,11 @@ type tab struct {
 
 // chromium finds a browser. Without one the test is skipped, but fails where the variable
 // LEGWRIGHT_CI says that one must be there.
-func chromium(t *testing.T) string {
+func chromium(t testing.TB) string {
 	t.Helper()
+	if testing.Short() {
+		t.Skip("a browser takes its time")
+	}
 	for _, name := range []string{"chromium", "chromium-browser", "google-chrome"} {
 		if path, err := exec.LookPath(name); err == nil {
 			return path
@@ -47,10 +50,41 @@ func chromium(t *testing.T) string {
 	return ""
 }
 
-// open writes the page of the data to a file and opens it in a window of the given size.
-func open(t *testing.T, d *sheet.Data, width, height int64, dark bool) *tab {
+// browser is one browser for all tests of the package; each opens its own tab.
+var browser struct {
+	once sync.Once
+	ctx  context.Context
+	stop func()
+	err  error
+}
+
+func TestMain(m *testing.M) {
+	code := m.Run()
+	if browser.stop != nil {
+		browser.stop()
+	}
+	os.Exit(code)
+}
+
+func started(path string) (context.Context, error) {
+	browser.once.Do(func() {
+		options := append(chromedp.DefaultExecAllocatorOptions[:], chromedp.ExecPath(path), chromedp.NoSandbox, chromedp.DisableGPU,
+			chromedp.Flag("disable-background-networking", true))
+		allocator, end := chromedp.NewExecAllocator(context.Background(), options...)
+		ctx, cancel := chromedp.NewContext(allocator, chromedp.WithErrorf(func(string, ...any) {}))
+		browser.ctx, browser.stop = ctx, func() { cancel(); end() }
+		browser.err = chromedp.Do(ctx)
+	})
+	return browser.ctx, browser.err
+}
+
+// open writes the page of the data to a file and opens it in a tab of the given size.
+func open(t testing.TB, d *sheet.Data, width, height int64, dark bool) *tab {
 	t.Helper()
-	browser := chromium(t)
+	whole, err := started(chromium(t))
+	if err != nil {
+		t.Fatal(err)
+	}
 	b, err := WritePage(d)
 	if err != nil {
 		t.Fatal(err)
@@ -59,22 +93,18 @@ func open(t *testing.T, d *sheet.Data, width, height int64, dark bool) *tab {
 	if err := os.WriteFile(path, b, 0o666); err != nil {
 		t.Fatal(err)
 	}
-	options := append(chromedp.DefaultExecAllocatorOptions[:], chromedp.ExecPath(browser), chromedp.NoSandbox, chromedp.DisableGPU,
-		chromedp.Flag("disable-background-networking", true))
-	allocator, stop := chromedp.NewExecAllocator(context.Background(), options...)
-	ctx, cancel := chromedp.NewContext(allocator, chromedp.WithErrorf(func(string, ...any) {}))
+	ctx, cancel := chromedp.NewContext(whole)
 	ctx, late := context.WithTimeout(ctx, 2*time.Minute)
 	t.Cleanup(func() {
 		late()
 		cancel()
-		stop()
 	})
 	p := &tab{t: t, ctx: ctx, path: path}
 	if err := chromedp.Listen(ctx, p.hear); err != nil {
 		t.Fatal(err)
 	}
 	p.scheme(dark)
-	p.do(chromedp.EmulateViewport(width, height), chromedp.Navigate("file://"+path), chromedp.WaitReady("#foot p"))
+	p.do(chromedp.EmulateViewport(width, height), chromedp.Navigate("file://"+path), chromedp.WaitReady(chromedp.CSS("#foot p")))
 	return p
 }
 
@@ -130,11 +160,14 @@ func (p *tab) do(steps ...chromedp.Action[chromedp.Void]) {
 }
 
 // eval is the value of a JavaScript expression in the page.
-func eval[T any](p *tab, expression string) T {
+func eval[T any](p *tab, expression string, options ...chromedp.EvaluateOption) T {
 	p.t.Helper()
-	v, err := chromedp.Run(p.ctx, chromedp.Evaluate[T](expression))
+	v, err := chromedp.Run(p.ctx, chromedp.Evaluate[T](expression, options...))
 	if err != nil {
 		p.t.Fatalf("%s: %v", expression, err)
 	}
 	return v
 }
+
+// awaited waits for the promise that an expression gives.
+var awaited = chromedp.EvalAwaitPromise

@@ -17,6 +17,7 @@ import (
 type searched struct {
 	front *study.Front
 	data  *sheet.Data
+	tool  [3]float64 // of the brief
 }
 
 // tilt is the example brief, searched with a small budget; once for all tests.
@@ -47,11 +48,11 @@ func search(name string, evaluations int) (*searched, error) {
 	}
 	sources := &study.Sources{Brief: study.File{Name: path, Bytes: text}}
 	d, err := s.Sheet(found.Front, job.SheetRun{Sources: sources, Folder: "out"})
-	return &searched{found.Front, d}, err
+	return &searched{found.Front, d, b.Tool}, err
 }
 
 // need gives a study or ends the test.
-func need(t *testing.T, get func() (*searched, error)) *searched {
+func need(t testing.TB, get func() (*searched, error)) *searched {
 	t.Helper()
 	v, err := get()
 	if err != nil {

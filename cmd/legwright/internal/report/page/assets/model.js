@@ -1,6 +1,7 @@
 // What the page knows, read once from the data that the program put in.
 
 function newModel(data) {
+  for (const list of ["designs", "first", "steps", "notes", "goals", "measures", "limits", "zones", "cases", "families", "path", "way", "corners", "left_out"]) data[list] ||= [];
   const unit = (key) => data.units[key] || BARE;
   const measures = data.measures.map((m, index) => ({ ...m, index, label: words(m.name), shown: unit(m.unit) }));
   const designs = data.designs.map((d, index) => newDesign(data, d, index));

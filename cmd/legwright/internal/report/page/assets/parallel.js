@@ -4,6 +4,10 @@ function parallelView(store, place) {
   const { model } = store;
   const axes = model.axes.filter((a) => a.parallel && a.high > a.low);
   const same = model.axes.filter((a) => a.parallel && a.high === a.low);
+  if (axes.length < 2) {
+    add(place, [h("p", { class: "note" }, "The designs do not differ enough to be drawn as lines.")]);
+    return;
+  }
   const box = { top: 62, bottom: 316, height: 346, side: 62, least: 98 };
   const lines = s("g", { class: "lines" });
   const top = s("g", { class: "top" });
