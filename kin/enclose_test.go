@@ -1,6 +1,7 @@
 package kin_test
 
 import (
+	"flag"
 	"math"
 	"math/rand/v2"
 	"testing"
@@ -10,6 +11,13 @@ import (
 
 	"gonum.org/v1/gonum/spatial/r3"
 )
+
+// The long run, with 10⁶ poses of each family, is
+//
+//	go test ./kin -run EnclosuresHold -boxes 40000
+//
+// and takes some minutes on one core.
+var enclosedBoxes = flag.Int("boxes", 0, "boxes of each family in TestEnclosuresHoldAllPostures; 0 stands for 4000, or 400 in short runs")
 
 // encloser is the machine as one that encloses its postures, which every family's must be.
 func encloser(t *testing.T, f *kin.Family, m kin.Machine) kin.Encloser {
@@ -207,9 +215,12 @@ func (x *enclosed) links(m kin.Machine, e *kin.Enclosure, p *kin.Pose, s *kin.St
 // No posture of any family's machine, at any pose of any box, lies outside its enclosure, and no answer about reach is wrong.
 func TestEnclosuresHoldAllPostures(t *testing.T) {
 	const poses = 25
-	boxes := 400
-	if !testing.Short() {
-		boxes = 40000
+	boxes := *enclosedBoxes
+	if boxes == 0 {
+		boxes = 4000
+		if testing.Short() {
+			boxes = 400
+		}
 	}
 	for _, f := range kin.Families() {
 		t.Run(f.Name, func(t *testing.T) {

@@ -58,13 +58,15 @@ func (z *Form) Quad(x *Quad) *Form {
 
 // sizes are those of the parts of first and of second degree, up to rounding.
 func (z *Quad) sizes() (l, q float64) {
-	for _, g := range z.G {
-		l += math.Abs(g)
+	g, h := &z.G, &z.H
+	l = (math.Abs(g[0]) + math.Abs(g[1]) + math.Abs(g[2])) + (math.Abs(g[3]) + math.Abs(g[4]) + math.Abs(g[5]))
+	var a, b, c float64 // three sums at a time
+	for k := range pairsOf / 3 {
+		a += math.Abs(h[k])
+		b += math.Abs(h[k+pairsOf/3])
+		c += math.Abs(h[k+2*(pairsOf/3)])
 	}
-	for _, h := range z.H {
-		q += math.Abs(h)
-	}
-	return l, q
+	return l, a + b + c
 }
 
 // settle is that of forms.
@@ -205,8 +207,20 @@ func (z *Quad) Dot(x, y *QuadVec) *Quad {
 
 // Along sets z to the dot product of x with a vector of numbers.
 func (z *Quad) Along(x *QuadVec, v r3.Vec) *Quad {
-	var p Quad
-	p.Scale(&x[0], v.X)
-	p.AddScaled(&p, v.Y, &x[1])
-	return z.AddScaled(&p, v.Z, &x[2])
+	r, m := 0., 0.
+	for c := range x {
+		l, q := x[c].sizes()
+		a := math.Abs(component(v, c))
+		r += a * x[c].R
+		m += a * (math.Abs(x[c].C) + l + q)
+	}
+	y0, y1, y2 := &x[0], &x[1], &x[2]
+	z.C = v.X*y0.C + v.Y*y1.C + v.Z*y2.C
+	for k := range z.G {
+		z.G[k] = v.X*y0.G[k] + v.Y*y1.G[k] + v.Z*y2.G[k]
+	}
+	for k := range z.H {
+		z.H[k] = v.X*y0.H[k] + v.Y*y1.H[k] + v.Z*y2.H[k]
+	}
+	return z.settle(r, m)
 }
