@@ -150,7 +150,11 @@ func loadInWords(l *brief.CaseLoad) string {
 		accelerations = append(accelerations, t)
 	}
 	if len(accelerations) > 0 {
-		parts = append(parts, "accelerated at "+strings.Join(accelerations, " and "))
+		t := "accelerated at " + strings.Join(accelerations, " and ")
+		if l.Acceleration.AtTool {
+			t += " of the tool point"
+		}
+		parts = append(parts, t)
 	}
 	for _, p := range []struct {
 		name         string
@@ -163,6 +167,9 @@ func loadInWords(l *brief.CaseLoad) string {
 		t := p.name + " " + vector(p.mean, p.kind)
 		if p.spread != [3]float64{} {
 			t += " ± " + vector(p.spread, p.kind)
+		}
+		if l.At != nil && p.kind == units.Force {
+			t += " at " + vector(*l.At, units.Length)
 		}
 		parts = append(parts, t)
 	}
