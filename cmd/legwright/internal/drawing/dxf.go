@@ -136,7 +136,7 @@ func (w *dxfWriter) tables(d *Drawing) {
 	w.pair(2, "STANDARD")
 	w.whole(70, 0)
 	w.real(40, 0)
-	w.real(41, 1)
+	w.real(41, narrow)
 	w.real(50, 0)
 	w.whole(71, 0)
 	w.real(42, 2.5*d.Scale)
@@ -156,6 +156,7 @@ func (w *dxfWriter) text(e *Text) {
 	w.entity("TEXT", e.Layer)
 	w.point(0, e.At)
 	w.real(40, e.Height)
+	w.real(41, narrow)
 	w.pair(1, dxfText(e.Text))
 	w.real(50, e.Angle*180/math.Pi)
 	if e.Align != Left {
@@ -163,6 +164,9 @@ func (w *dxfWriter) text(e *Text) {
 		w.point(1, e.At)
 	}
 }
+
+// narrow is the width of letters over that of the font txt, which is wider than a sans-serif face.
+const narrow = 0.8
 
 // degrees is an angle from 0 to 360.
 func degrees(a float64) float64 {

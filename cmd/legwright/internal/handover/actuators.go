@@ -19,7 +19,6 @@ func (d *design) actuators() []byte {
 	}
 	t := d.sheet("actuator schedule", "leg", "range_least_"+c, "range_most_"+c, "stroke_"+c, "shortest_"+c, "home_"+c, "longest_"+c,
 		"used_"+c, "reserve_low_"+c, "reserve_high_"+c, names[0]+e, names[1]+e, "speed_"+r)
-	low, high := d.rangeOf()
 	t.note("figures", "worst over the sampled poses of the duty and home, not a proof between them; legs, arms and rods are massless, without friction, play and terms in ω²")
 	t.note("reserve", "wanted free at each end of the stroke: "+number(d.task.Actuator.Reserve, coordinate)+" "+units.Display(coordinate).Symbol)
 	switch {
@@ -31,16 +30,18 @@ func (d *design) actuators() []byte {
 		t.note("coordinate", "distance between the leg's joint centres; push: the leg is in compression")
 	}
 	bounded := len(d.a.Legs) - f.Free
-	if math.IsNaN(low) {
-		t.note("range", "the actuators have no range in common: see the design's dimensions")
-	} else if f.Free > 0 {
+	if f.Free > 0 {
 		t.note("range", "the last actuator turns the tool and has no range of this kind")
+	}
+	if f.Index("upper_arm") >= 0 {
+		t.note("range", "of the two links, by their own stops; the elbow's stops may bind first; column and tool turn within half a turn of home")
 	}
 	type worst struct{ least, most, push, pull, speed float64 }
 	w := worst{least: math.Inf(1), most: math.Inf(-1)}
-	line := func(name string, x worst, home string, ranged bool) {
+	line := func(name string, x worst, home string, leg int) {
+		low, high := d.rangeOf(leg)
 		cells := []string{name, "", "", "", number(x.least, coordinate), home, number(x.most, coordinate), number(x.most-x.least, coordinate), "", "", figure(x.push, effort), figure(x.pull, effort), figure(x.speed, rate)}
-		if ranged && !math.IsNaN(low) {
+		if !math.IsNaN(low) {
 			cells[1], cells[2], cells[3] = number(low, coordinate), number(high, coordinate), number(high-low, coordinate)
 			cells[8], cells[9] = number(x.least-low, coordinate), number(high-x.most, coordinate)
 		}
@@ -49,20 +50,28 @@ func (d *design) actuators() []byte {
 	for i := range d.a.Legs {
 		l := &d.a.Legs[i]
 		x := worst{l.Least, l.Most, l.Push, l.Pull, l.Speed}
-		line(legName(i), x, number(l.Home, coordinate), i < bounded)
+		line(legName(i), x, number(l.Home, coordinate), i)
 		if i < bounded {
 			w = worst{math.Min(w.least, x.least), math.Max(w.most, x.most), math.Max(w.push, x.push), math.Max(w.pull, x.pull), math.Max(w.speed, x.speed)}
 		}
 	}
-	if !math.IsNaN(low) {
-		line("all", w, "", true)
+	if least, _ := f.Range(); least >= 0 {
+		line("all", w, "", 0)
 	}
 	return t.bytes()
 }
 
-// rangeOf is the actuators' range, NaN without one.
-func (d *design) rangeOf() (low, high float64) {
-	least, span := d.a.Plan.Family.Range()
+// rangeOf is the range of a leg's actuator, NaN without one.
+func (d *design) rangeOf(leg int) (low, high float64) {
+	f := d.a.Plan.Family
+	least, span := f.Range()
+	switch {
+	case f.Index("upper_arm") >= 0 && (leg == 1 || leg == 2): // a palletising arm's links have stops of their own
+		name := [3]string{1: "upper_angle", 2: "forearm_angle"}[leg]
+		least, span = f.Index(name+"_min"), f.Index(name+"_range")
+	case leg >= d.legs():
+		least = -1
+	}
 	if least < 0 {
 		return math.NaN(), math.NaN()
 	}

@@ -33,8 +33,16 @@ func TestActuators(t *testing.T) {
 			near(t, "speed", cell(t, row, "speed_"+r), in(rate, l.Speed), 1e-8*in(rate, l.Speed))
 		}
 		if !ranged {
-			if len(rows) != 4 {
-				t.Errorf("%d rows", len(rows))
+			for i, name := range [3]string{1: "upper_angle", 2: "forearm_angle"} { // the links' own stops
+				if name == "" {
+					continue
+				}
+				low := d.a.Values[f.Index(name+"_min")] * 180 / math.Pi
+				near(t, name, cell(t, rows[i], "range_least_deg"), low, 1e-9)
+				near(t, name, cell(t, rows[i], "reserve_low_deg"), cell(t, rows[i], "shortest_deg")-low, 1e-8)
+			}
+			if len(rows) != 4 || rows[0]["range_least_deg"] != "" {
+				t.Errorf("%d rows, first %v", len(rows), rows[0])
 			}
 			return
 		}

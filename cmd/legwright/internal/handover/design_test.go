@@ -35,6 +35,11 @@ func starterTask(f *kin.Family) *objective.Task {
 
 // appraised is a regular design within the family's usual ranges, part of the way up each, its actuators sized.
 func appraised(t testing.TB, f *kin.Family, task *objective.Task, part float64) *objective.Appraisal {
+	return appraisedWith(t, f, task, part, "", 0)
+}
+
+// appraisedWith is the same with one dimension set otherwise.
+func appraisedWith(t testing.TB, f *kin.Family, task *objective.Task, part float64, dimension string, value float64) *objective.Appraisal {
 	t.Helper()
 	values := make([]float64, len(f.Dimensions))
 	specs := make([]objective.Spec, len(values))
@@ -43,6 +48,9 @@ func appraised(t testing.TB, f *kin.Family, task *objective.Task, part float64) 
 		values[i] = d.Low + part*(d.High-d.Low)
 		if d.Unit == kin.Sign {
 			values[i] = d.Default
+		}
+		if d.Name == dimension {
+			values[i] = value
 		}
 		specs[i] = objective.Spec{Kind: objective.Fixed, Values: values[i : i+1]}
 		if i == least || i == span {
