@@ -122,3 +122,6 @@ func properties(t *objective.Task, p *objective.Plan, values []float64, f *kin.F
 	}
 	return out, left
 }
+
+// Slack is how far the value keeps from the limit, relative to Scale; negative beyond it.
+func (p *Property) Slack(value float64) float64 { return -p.off(value) }

@@ -46,7 +46,8 @@ const (
 	plainBeat = 10 * time.Second
 )
 
-// NewProgress starts to tell of a search with a budget of evaluations. Quiet makes it tell nothing.
+// NewProgress starts to tell of a search with a budget of evaluations, or of phases alone where it is below zero. Quiet
+// makes it tell nothing.
 func NewProgress(w io.Writer, budget int, quiet bool) *Progress {
 	if quiet {
 		return nil
@@ -113,6 +114,9 @@ func (p *Progress) tell() {
 // words is the state in a line.
 func (p *Progress) words() string {
 	c := p.last
+	if p.budget < 0 {
+		return study.Clean(c.Phase)
+	}
 	parts := []string{fmt.Sprintf("%d of %d evaluations", c.Evaluations, p.budget)}
 	if p.budget <= 0 {
 		parts[0] = fmt.Sprintf("%d evaluations", c.Evaluations)

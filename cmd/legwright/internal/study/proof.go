@@ -1,0 +1,171 @@
+package study
+
+import (
+	"encoding/json"
+	"fmt"
+	"math"
+
+	"legwright/kin"
+	"legwright/objective"
+	"legwright/objective/proof"
+)
+
+// CertificateFormat names the layout of a certificate.
+const CertificateFormat = "legwright-proof/1"
+
+// Certificate is what a proof has shown of one design under one brief, complete enough to be checked anew.
+type Certificate struct {
+	Format  string        `json:"format"`
+	Program string        `json:"program"`
+	Family  string        `json:"family"`
+	Design  string        `json:"design"` // SHA-256 of the design file
+	Brief   string        `json:"brief"`  // SHA-256 of the brief, its pose files after it
+	Boxes   int64         `json:"boxes"`
+	Claims  []ProofLine   `json:"properties"` // what was proved, in words
+	Record  *proof.Record `json:"record"`
+}
+
+// ReadCertificate reads what Encode wrote.
+func ReadCertificate(b []byte) (*Certificate, error) {
+	c := new(Certificate)
+	if err := json.Unmarshal(b, c); err != nil {
+		return nil, fmt.Errorf("it is no certificate: %w", err)
+	}
+	if c.Format != CertificateFormat || c.Record == nil {
+		return nil, fmt.Errorf("its format is %q; this program reads %q", Clean(c.Format), CertificateFormat)
+	}
+	return c, nil
+}
+
+// Proof is what prove prints.
+type Proof struct {
+	Family      string      `json:"family"`
+	Answer      string      `json:"answer"` // proved, refuted or undecided
+	Gap         float64     `json:"gap"`
+	Properties  []ProofLine `json:"properties"`
+	NotCovered  []string    `json:"not_covered"` // limits of the brief that a proof over boxes does not cover
+	Boxes       int64       `json:"boxes"`
+	Regions     int         `json:"regions"`      // connected parts of the continuous zones
+	SinglePoses int         `json:"single_poses"` // listed poses, checked one by one in plain arithmetic
+	OutOfTime   bool        `json:"out_of_time"`
+	Interrupted bool        `json:"interrupted"`
+	WorstBox    *ProofBox   `json:"worst_box,omitempty"` // the largest that was not settled
+	Resized     *Resized    `json:"resized,omitempty"`
+	Certificate string      `json:"certificate,omitempty"` // path
+	Outside     []string    `json:"outside_model"`
+	Notes       []string    `json:"notes,omitempty"`
+}
+
+// ProofLine is one property.
+type ProofLine struct {
+	Property string  `json:"property"`
+	Origin   string  `json:"origin"`
+	Answer   string  `json:"answer"`
+	Unit     string  `json:"unit,omitempty"`
+	Sense    string  `json:"sense,omitempty"` // at_least or at_most; absent where there is no limit
+	Limit    *Number `json:"limit,omitempty"`
+	Target   *Number `json:"target,omitempty"` // the bound that was to be proved: the limit, or that less the gap
+	Gapped   bool    `json:"to_the_gap,omitempty"`
+	Bound    *Number `json:"bound,omitempty"`  // proved for every pose
+	Margin   *Number `json:"margin,omitempty"` // of bound to limit, relative
+	Found    *Number `json:"found,omitempty"`  // worst value met in plain arithmetic
+	At       *Worst  `json:"at,omitempty"`     // where that is, or what refutes it
+	Other    *Pose   `json:"other,omitempty"`  // where the determinant has the other sign
+	Stop     string  `json:"stop,omitempty"`   // the passive part that is beyond its stop there
+	Boxes    int64   `json:"boxes"`
+	Left     Number  `json:"left,omitempty"`  // share of the volume in which it is not settled
+	Needs    string  `json:"needs,omitempty"` // the refuted property without which it means nothing
+}
+
+// ProofBox is a box of poses about home.
+type ProofBox struct {
+	Zone  string   `json:"zone"`
+	Low   Pose     `json:"low"`
+	High  Pose     `json:"high"`
+	Open  []string `json:"open"`
+	Share float64  `json:"share"` // of its region's volume
+}
+
+// Resized is an actuator range that was widened to the proved enclosure of what the duty needs.
+type Resized struct {
+	File     string `json:"file"`
+	Unit     string `json:"unit"`
+	Least    Number `json:"least_needed"` // proved
+	Most     Number `json:"most_needed"`
+	MetLeast Number `json:"least_met"` // at poses
+	MetMost  Number `json:"most_met"`
+	Low      Number `json:"low"` // of the widened design
+	High     Number `json:"high"`
+}
+
+// OutsideModel is what no proof speaks of.
+func OutsideModel() []string {
+	return []string{
+		"elasticity of legs, plates and joints, and play",
+		"tolerances of dimensions and joints: the proof is for the dimensions as they are written",
+		"the payload's shape: clearances are those of legs alone",
+		"faults of drives, brakes, sensors or control",
+		"poses outside the duty, and the way to and from it",
+		"the accuracy of sine and cosine in the machine's arithmetic, taken to be right to 1e-15",
+	}
+}
+
+// FromProof is the record of a proof.
+func FromProof(t *objective.Task, family string, r *proof.Result) Proof {
+	p := Proof{
+		Family: family, Answer: r.Answer.String(), Gap: r.Gap, NotCovered: append([]string{}, r.Left...), Boxes: r.Boxes,
+		Regions: r.Regions, SinglePoses: r.Listed, OutOfTime: r.OutOfTime, Interrupted: r.Interrupted, Outside: OutsideModel(),
+	}
+	for i := range r.Outcomes {
+		p.Properties = append(p.Properties, proofLine(t, &r.Outcomes[i]))
+	}
+	if w := r.Worst; w != nil {
+		p.WorstBox = &ProofBox{Zone: t.Zones[w.Zone].Name, Low: poseAt(w.Box.Low), High: poseAt(w.Box.High), Open: w.Open, Share: w.Share}
+	}
+	return p
+}
+
+func proofLine(t *objective.Task, o *proof.Outcome) ProofLine {
+	l := ProofLine{Property: o.Name, Origin: o.Origin, Answer: o.Answer.String(), Gapped: o.Gapped, Boxes: o.Boxes, Left: Number(o.Left), Needs: o.Needs}
+	if o.Bounded {
+		if l.Sense = "at_most"; o.AtLeast {
+			l.Sense = "at_least"
+		}
+		l.Unit = UnitKind(o.Unit).SI()
+		l.Limit, l.Target, l.Bound = number(o.Limit), number(o.Target), number(o.Bound)
+		if l.Bound != nil {
+			l.Margin = number(o.Slack(o.Bound))
+		}
+	}
+	if o.Bounded || o.Answer == proof.Refuted && o.Name != "reach" {
+		l.Found = number(o.Found)
+	}
+	if c := o.At; c != nil && (o.Bounded || o.Answer == proof.Refuted) {
+		at := poseAt(c.Pose)
+		l.At = &Worst{Pose: &at, Leg: c.Leg + 1, Mate: c.Mate + 1}
+		if c.Zone >= 0 {
+			l.At.Zone = t.Zones[c.Zone].Name
+		}
+		if c.Case >= 0 {
+			l.At.Case = t.Cases[c.Case].Name
+		}
+		if l.Stop = c.What; c.Other != nil {
+			other := poseAt(*c.Other)
+			l.Other = &other
+		}
+	}
+	return l
+}
+
+// number is nil for what is not known.
+func number(v float64) *Number {
+	if math.IsNaN(v) {
+		return nil
+	}
+	n := Number(v)
+	return &n
+}
+
+func poseAt(c kin.Coords) Pose {
+	return Pose{X: c[kin.X], Y: c[kin.Y], Z: c[kin.Z], Roll: c[kin.Roll], Pitch: c[kin.Pitch], Yaw: c[kin.Yaw]}
+}
