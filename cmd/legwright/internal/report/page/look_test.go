@@ -32,5 +32,12 @@ func TestLook(t *testing.T) {
 			t.Fatal(err)
 		}
 		p.quiet()
+		pdf, err := chromedp.Run(p.ctx, chromedp.PrintToPDF(chromedp.PDFPreferCSSPageSize(), chromedp.PDFPrintBackground()))
+		if err != nil {
+			t.Fatal(err)
+		}
+		if err := os.WriteFile(filepath.Join(dir, c.name+".pdf"), pdf, 0o666); err != nil {
+			t.Fatal(err)
+		}
 	}
 }

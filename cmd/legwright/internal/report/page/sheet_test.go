@@ -3,6 +3,7 @@ package page
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 	"testing"
@@ -196,6 +197,36 @@ func TestPoseControl(t *testing.T) {
 			}
 			break
 		}
+	}
+	p.quiet()
+}
+
+// The files that the page links to are those that a study holds, for the designs that have them.
+func TestHandOverLinks(t *testing.T) {
+	s := need(t, tilt)
+	p := open(t, s.data, 1280, 900, false)
+	has := map[int]bool{}
+	for _, i := range s.front.HandedOver() {
+		has[i] = true
+	}
+	names := study.SheetNames()
+	slices.Sort(names)
+	for i, d := range s.data.Designs {
+		links := eval[[]string](p, fmt.Sprintf(`legwright.store.pick(%d), [...document.querySelectorAll(".files a")].map((a) => a.getAttribute("href"))`, i))
+		want := []string{"designs/" + d.ID + ".yaml"}
+		if has[i] {
+			for _, n := range names {
+				want = append(want, "designs/"+d.ID+"/"+n)
+			}
+		}
+		slices.Sort(links)
+		slices.Sort(want)
+		if !slices.Equal(links, want) {
+			t.Fatalf("design %s: links %q, want %q", d.ID, links, want)
+		}
+	}
+	if len(has) == len(s.data.Designs) {
+		t.Error("every design has sheets, which tests nothing")
 	}
 	p.quiet()
 }

@@ -1,12 +1,32 @@
-// The files of the picked design that go to those who draw, buy and build.
+// The files of the picked design that go to those who draw, buy and build. The
+// study folder has them beside this page.
+
+const SHEETS = [
+  ["base.svg", "plan of the base, to scale"], ["base.dxf", "the same for drawing programs (DXF R12)"],
+  ["platform.svg", "plan of the platform, to scale"], ["platform.dxf", "the same for drawing programs (DXF R12)"],
+  ["joints.csv", "joint centres at home, in base and platform axes"], ["axes.csv", "mounting axes: directions and angles"],
+  ["links.csv", "lengths between joint centres"], ["holes.csv", "hole table"],
+  ["actuators.csv", "actuator schedule: lengths, stroke, reserve, forces, speed"],
+  ["forces.csv", "forces at each joint and case, largest"], ["forces-together.csv", "forces at each joint and case, acting together"],
+  ["heights.csv", "lowest and highest platform, collapsed height"],
+];
+
+// BEST is the number of best designs that have sheets; marked designs and those of the first screen have them too.
+const BEST = 20;
+
+const hasSheets = (model, d) => d.index < BEST || d.marks.length > 0 || model.data.first.some((f) => f.design === d.index);
 
 function handoverView(store, place) {
   const { model } = store;
-  const { data } = model;
+  const link = (path, text) => h("li", {}, h("a", { href: path }, path), h("small", {}, ` ${text}`));
   function draw() {
-    const d = model.designs[store.picked];
-    const files = (data.files || []).map(([name, text]) => h("li", {}, h("a", { href: `designs/${encodeURIComponent(d.id)}/${name}` }, `designs/${d.id}/${name}`), ` ${text}`));
-    empty(place, h("p", {}, "For design ", h("b", {}, d.id), ", in the study folder beside this page. Each sheet says what it is drawn from; not for construction until checked."), h("ul", { class: "files" }, files));
+    const d = model.designs[store.picked], at = `designs/${d.id}`;
+    const sheets = hasSheets(model, d);
+    empty(place,
+      h("p", {}, "Design ", h("b", {}, d.id), ". The files lie in the study folder beside this page. Not for construction until checked."),
+      h("ul", { class: "files" }, link(`${at}.yaml`, "design file, for legwright appraise, prove and locate"),
+        sheets ? SHEETS.map(([name, text]) => link(`${at}/${name}`, text)) : null),
+      sheets ? null : h("p", { class: "note" }, `Plans and tables are written for the best ${BEST} designs, the marked ones and those of the first table above.`));
   }
   store.on("pick", draw);
   draw();

@@ -8,7 +8,7 @@ function rankedView(store, place) {
     ...model.axes.filter((a) => !a.goal && a.table && a.high > a.low),
   ];
   const text = new Map(columns.map((a) => [a.key, column(a.values, a.unit)]));
-  let most = 25, sortKey = "", down = false;
+  let most = 25, sortKey = "", down = false, listed = [];
   const open = new Set();
   const proofs = model.designs.some((d) => d.proof); // else all are as checked as each other
   const count = h("p", { class: "note", "aria-live": "polite" });
@@ -80,7 +80,10 @@ function rankedView(store, place) {
       }
     }
     const now = out.slice(0, most);
-    body.replaceChildren(...now.map((i) => rows[i].node));
+    if (now.length !== listed.length || now.some((i, k) => i !== listed[k])) { // a table is slow to lay out
+      body.replaceChildren(...now.map((i) => rows[i].node));
+      listed = now;
+    }
     for (const i of now) {
       rows[i].rank.textContent = store.place[i];
       rows[i].score.textContent = store.score[i].toFixed(4);
