@@ -136,7 +136,7 @@ It is a geometry study, not a safety assessment: README, "What it is not".`,
 		return inputError{fmt.Errorf("%w; see legwright help %s", err, cmd.Name())}
 	})
 	root.AddCommand(
-		newSearch(c), newRank(c), newAppraise(c), newProve(c), newLocate(c), newReport(c), newFamilies(c), newStarter(c),
+		newSearch(c), newRank(c), newAppraise(c), newProve(c), newLocate(c), newReport(c), newMerge(c), newFamilies(c), newStarter(c),
 	)
 	for _, cmd := range root.Commands() {
 		args, work := cmd.Args, cmd.RunE

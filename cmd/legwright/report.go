@@ -3,7 +3,6 @@ package main
 import (
 	"errors"
 	"fmt"
-	"os"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -92,7 +91,12 @@ func studyOf(folder *study.Folder) (*job.Study, *study.Sources, error) {
 	if err != nil {
 		return nil, nil, err
 	}
-	text, err := os.ReadFile(name)
+	return studyFrom(name)
+}
+
+// studyFrom reads the study of a brief.
+func studyFrom(name string) (*job.Study, *study.Sources, error) {
+	text, err := brief.ReadText(name)
 	if err != nil {
 		return nil, nil, err
 	}

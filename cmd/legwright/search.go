@@ -25,9 +25,8 @@ var example []byte
 
 func newSearch(c *common) *cobra.Command {
 	var (
-		dir           string
-		run           job.Run
-		force, resume bool
+		dir   string
+		flags runFlags
 	)
 	cmd := &cobra.Command{
 		Use:   "search [BRIEF] -o DIR",
@@ -35,7 +34,16 @@ func newSearch(c *common) *cobra.Command {
 		Long: `search reads a brief and searches the dimensions that it leaves open. The study
 folder DIR then holds the front, its designs and a copy of the brief. Without BRIEF
 it works on an embedded example. The same brief and seed give the same files,
-whatever the number of workers.`,
+whatever the number of workers.
+
+A search ends when its evaluations are spent, when its --time is over, or when its
+hypervolume stalls (search.stall of the brief), whichever comes first. What was
+evaluated is saved at a slow beat: a search that was interrupted, killed or cut off
+goes on with --resume and gives the same files as one that was not. Time counts over
+all its runs.
+
+--part 3/16 searches one part of a study by itself, with its own random numbers and
+its share of the evaluations; legwright merge joins the parts.`,
 		Args: cobra.MaximumNArgs(1),
 		RunE: func(cmd *cobra.Command, args []string) error {
 			if dir == "" {
@@ -49,16 +57,11 @@ whatever the number of workers.`,
 					return err
 				}
 			}
-			return search(cmd, c, name, text, dir, run, force, resume)
+			return search(cmd, c, name, text, dir, &flags)
 		},
 	}
-	f := cmd.Flags()
-	f.StringVarP(&dir, "output", "o", "", "folder for the study (required)")
-	f.IntVar(&run.Evaluations, "evaluations", 0, "designs to look at (default: the brief's, else 20000)")
-	f.Int64Var(&run.Seed, "seed", 0, "seed of the random numbers (default: the brief's, else 1)")
-	f.IntVar(&run.Workers, "workers", 0, "designs judged side by side (default: all processors); never changes the result")
-	f.BoolVar(&force, "force", false, "replace the study that the folder holds, finished or not")
-	f.BoolVar(&resume, "resume", false, "replay an interrupted study from the start (the same seed meets the same designs) and on to its end; leave a finished one as it is")
+	cmd.Flags().StringVarP(&dir, "output", "o", "", "folder for the study (required)")
+	flags.add(cmd)
 	return cmd
 }
 
@@ -71,38 +74,22 @@ func readBrief(name string) ([]byte, error) {
 	if err != nil {
 		return nil, inputError{err}
 	}
-	text, err := os.ReadFile(name)
+	text, err := brief.ReadText(name)
 	if err != nil {
 		return nil, inputError{err}
 	}
 	return text, nil
 }
 
-func search(cmd *cobra.Command, c *common, name string, text []byte, dir string, run job.Run, force, resume bool) error {
+func search(cmd *cobra.Command, c *common, name string, text []byte, dir string, flags *runFlags) error {
 	b, err := brief.Parse(name, text, *job.Known())
 	if err != nil {
 		return inputError{err}
 	}
-	given := job.Settings(b)
-	if cmd.Flags().Changed("evaluations") {
-		given.Evaluations = run.Evaluations
+	given, err := flags.run(cmd, b)
+	if err != nil {
+		return err
 	}
-	if cmd.Flags().Changed("seed") {
-		given.Seed = run.Seed
-	}
-	if force && resume {
-		return inputError{fmt.Errorf("--force replaces a study and --resume replays it; give one of them")}
-	}
-	if least := leastEvaluations * len(b.Families); given.Evaluations < least || given.Evaluations > 1e9 {
-		return inputError{fmt.Errorf("%d evaluations: write a whole number from %d to 1000000000", given.Evaluations, least)}
-	}
-	if given.Seed < 0 {
-		return inputError{fmt.Errorf("--seed %d: write a whole number from 0 on", given.Seed)}
-	}
-	if run.Workers < 0 || run.Workers > 4096 || run.Workers == 0 && cmd.Flags().Changed("workers") {
-		return inputError{fmt.Errorf("--workers %d: write a whole number from 1 to 4096, or leave it out", run.Workers)}
-	}
-	given.Workers = run.Workers
 	s, err := job.New(b)
 	if err != nil {
 		return inputError{err}
@@ -111,16 +98,20 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	if err != nil {
 		return inputError{err}
 	}
-	folder, err := study.Create(dir, study.Intent{Force: force, Resume: resume})
+	folder, err := study.Create(dir, study.Intent{Force: flags.force, Resume: flags.resume})
 	if err != nil {
 		return inputError{err}
 	}
-	if folder.State() == study.Finished && !force {
+	defer folder.Close()
+	if folder.State() == study.Finished && !flags.force {
 		c.hint("%s holds a finished study; nothing to do", dir)
 		return nil
 	}
+	if !folder.Locked() {
+		c.hint("note: %s is on a file system without locks; let no other process work in it", dir)
+	}
 	here := job.NewCheckpoint(sources, given)
-	before, err := goOn(folder, here, force)
+	before, err := goOn(c, folder, here, flags.force)
 	if err != nil {
 		return inputError{fmt.Errorf("%s: %w", dir, err)}
 	}
@@ -135,21 +126,34 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 			return err
 		}
 	}
-	bar := report.NewProgress(c.err, given.Evaluations, c.quiet)
+	log, kept, err := folder.OpenLog(here.Key(), before == nil)
+	if err != nil {
+		return err
+	}
+	if before != nil {
+		c.goesOn(dir, kept)
+	}
+	given.Journal = job.NewJournal(log, kept, flags.beat, func(text string) { c.hint("warning: %s", text) })
+	bar := report.NewProgress(c.err, given.Part.Share(given.Evaluations), c.quiet)
 	given.Progress = func(p opt.Progress) {
-		bar.Show(report.Count{Evaluations: p.Evaluations, Feasible: p.Feasible, Hypervolume: p.Hypervolume, Phase: p.Phase})
+		n := report.Count{Evaluations: p.Evaluations, Feasible: p.Feasible, Hypervolume: p.Hypervolume, Phase: p.Phase}
+		if p.Evaluations < kept.Records {
+			n.Phase = "from the checkpoint"
+		}
+		bar.Show(n)
 	}
 	found, err := s.Search(cmd.Context(), given)
 	bar.Done()
+	log.Close()
 	if err != nil {
 		if folder.State() != study.Unfinished { // as it was
 			err = errors.Join(err, folder.RemoveCheckpoint())
 		}
 		return err
 	}
-	stopped := found.Status == opt.Interrupted
+	stopped := found.Interrupted()
 	if stopped && before != nil && before.Evaluations > found.Front.Evaluations {
-		c.hint("interrupted after %d evaluations; %s keeps the result of the %d that were made before. --resume replays the study from the start.", found.Front.Evaluations, dir, before.Evaluations)
+		c.hint("interrupted after %d evaluations; %s keeps the result of the %d that were made before. --resume goes on with it.", found.Front.Evaluations, dir, before.Evaluations)
 		return status(exitInterrupted)
 	}
 	if stopped {
@@ -158,29 +162,22 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 			return err
 		}
 	}
-	pageErr := savePage(folder, s, found.Front, job.SheetRun{Sources: sources, Folder: dir, Workers: given.Workers})
-	err = folder.Save(&study.Result{
-		Front: found.Front, History: found.History, Sources: *sources, Unfinished: stopped,
-		Encode: func(d study.Design) ([]byte, error) {
-			return job.EncodeDesign(d, "../"+sources.BriefName()), nil
-		},
-		Sheets: func(d study.Design) (map[string][]byte, error) { return s.Sheets(d, sources) },
-	})
-	if err = errors.Join(err, pageErr); err != nil {
+	if found.Part != nil {
+		found.Part.Brief = here.Brief
+	}
+	if err := put(folder, s, sources, found, dir, given.Workers); err != nil {
+		if text, e := folder.Checkpoint(); e == nil && text != nil {
+			err = fmt.Errorf("%w\nwhat was evaluated is safe in the checkpoint; mend this and go on with --resume", err)
+		}
 		return err
 	}
-	if c.json {
-		err = printJSON(c.out, found.Front)
-	} else {
-		page := report.PageOf(c.out)
-		page.Dir = dir
-		err = report.FirstScreen(c.out, found.Front, page)
-	}
+	c.ended(found, &given)
+	err = c.show(found.Front, dir)
 	switch {
 	case err != nil:
 		return err
 	case stopped:
-		c.hint("interrupted after %d evaluations; what was found is in %s. --resume replays this study from the start: with its seed it meets the same designs, then goes on to the rest.", found.Front.Evaluations, dir)
+		c.hint("interrupted after %d evaluations; what was found is in %s. --resume goes on with it, to the same files as those of a search that was not interrupted.", found.Front.Evaluations, dir)
 		return status(exitInterrupted)
 	case len(found.Front.Designs) == 0:
 		return status(exitLimit)
@@ -192,17 +189,33 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 const leastEvaluations = 4
 
 // goOn gives the checkpoint of the unfinished study that the folder holds, nil for none. It refuses a
-// study of another brief, seed or budget.
-func goOn(folder *study.Folder, here *job.Checkpoint, force bool) (*job.Checkpoint, error) {
+// study of another brief, part, seed or budget.
+func goOn(c *common, folder *study.Folder, here *job.Checkpoint, force bool) (*job.Checkpoint, error) {
 	text, err := folder.Checkpoint()
 	if err != nil || force {
 		return nil, err
 	}
 	old, err := job.ReadCheckpoint(text)
-	if err != nil || old == nil {
-		return nil, err
+	if err == nil && old != nil {
+		err = here.Continues(old)
 	}
-	return old, here.Continues(old)
+	if (err != nil || old == nil) && folder.LogFits(here.Key()) {
+		c.hint("warning: checkpoint.json is missing or damaged; checkpoint.log is of this study, which goes on with it")
+		mended := *here
+		return &mended, save(folder, here)
+	}
+	return old, err
+}
+
+// goesOn tells what an interrupted study has left, and what of it is lost.
+func (c *common) goesOn(dir string, k *study.Kept) {
+	switch {
+	case k.Other:
+		c.hint("warning: the log of the checkpoint in %s is damaged at its beginning or of another run; the search begins anew", dir)
+	case k.Lost > 0:
+		c.hint("warning: the last %d bytes of the checkpoint in %s are not whole: a process was killed while it wrote them, or the disk has damaged them. What they held is evaluated again.", k.Lost, dir)
+	}
+	c.hint("goes on after %d evaluations of the checkpoint, from %v of work", k.Records, k.Spent)
 }
 
 // save writes the checkpoint into the folder.

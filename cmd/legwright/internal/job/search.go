@@ -36,6 +36,9 @@ type Found struct {
 	Part    *study.Part // of a part, once it has ended
 }
 
+// Interrupted tells whether the search was broken off, to be gone on with.
+func (f *Found) Interrupted() bool { return f.Status == opt.Interrupted }
+
 // Search runs the search and judges its front completely. When ctx ends it
 // returns what was found until then.
 func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {

@@ -72,6 +72,8 @@ func inspect(dir string) (State, error) {
 		return Unfinished, nil
 	case has(frontFile):
 		return Finished, nil
+	case ownLog(dir):
+		return Unfinished, nil
 	}
 	return Foreign, nil
 }
@@ -122,6 +124,7 @@ func Create(dir string, intent Intent) (*Folder, error) {
 	}
 	f := &Folder{dir: dir, state: state}
 	if state == Finished && !intent.Force {
+		f.tidy()
 		return f, nil
 	}
 	if err := os.MkdirAll(dir, 0o777); err != nil {
@@ -152,6 +155,21 @@ func (f *Folder) Close() error { return f.lock.free() }
 
 // Locked tells whether other processes are kept out: some file systems know no locks.
 func (f *Folder) Locked() bool { return f.lock != nil && f.lock.held }
+
+// tidy removes the log of a study that was finished by a process that was killed in its last moment.
+func (f *Folder) tidy() {
+	if !ownLog(f.dir) {
+		return
+	}
+	l, err := takeLock(f.dir)
+	if err != nil {
+		return
+	}
+	defer l.free()
+	if state, err := inspect(f.dir); err == nil && state == Finished {
+		f.remove(logFile)
+	}
+}
 
 // State is what the folder held when it was opened.
 func (f *Folder) State() State { return f.state }

@@ -183,6 +183,9 @@ func ReadPart(dir string) (*Part, error) {
 	return p, nil
 }
 
+// BriefCopy is the path of the brief's copy in a part's folder.
+func BriefCopy(dir string) (string, error) { return (&Folder{dir: dir}).Brief() }
+
 // DecodePart reads the text of a part.json.
 func DecodePart(b []byte) (*Part, error) {
 	p := new(Part)
