@@ -4,7 +4,6 @@
 package handover
 
 import (
-	"legwright/cmd/legwright/internal/drawing"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/objective"
 )
@@ -47,12 +46,9 @@ func Files(t *objective.Task, a *objective.Appraisal, title Title) map[string][]
 		study.ForcesSheet:           d.forces(),
 		study.TogetherSheet:         d.together(),
 		study.HeightsSheet:          d.heights(),
-		study.BasePlan + ".svg":     svg(base),
-		study.BasePlan + ".dxf":     dxf(base),
-		study.PlatformPlan + ".svg": svg(platform),
-		study.PlatformPlan + ".dxf": dxf(platform),
+		study.BasePlan + ".svg":     base.SVG(),
+		study.BasePlan + ".dxf":     base.DXF(),
+		study.PlatformPlan + ".svg": platform.SVG(),
+		study.PlatformPlan + ".dxf": platform.DXF(),
 	}
 }
-
-func svg(d *drawing.Drawing) []byte { return d.SVG() }
-func dxf(d *drawing.Drawing) []byte { return d.DXF() }

@@ -51,7 +51,6 @@ type model struct {
 	home   bool // home can be reached: crank ends and carriages are known
 	origin kin.Vec
 	rot    kin.Rot
-	rails  [][2]kin.Vec // ends of each rail within the actuator range, base frame
 }
 
 func newModel(a *objective.Appraisal) model {
@@ -73,8 +72,8 @@ func newModel(a *objective.Appraisal) model {
 	if f.Free > 0 {
 		foot, top := "B"+strconv.Itoa(legs+1), "P"+strconv.Itoa(legs+1)
 		m.points = append(m.points,
-			point{foot, onBase, legs, "universal joint of the shaft", kin.Vec{}, kin.Vec{}, true},
-			point{top, onPlatform, legs, "universal joint of the shaft", fr.Home, kin.Vec{}, true})
+			point{name: foot, plate: onBase, leg: legs, what: "universal joint of the shaft", hole: true},
+			point{name: top, plate: onPlatform, leg: legs, what: "universal joint of the shaft", base: fr.Home, hole: true})
 		m.axes = append(m.axes, axis{foot, "shaft upright", onBase, kin.Vec{Z: 1}, kin.Vec{Z: 1}})
 		m.links = append(m.links, link{legs, "shaft at home", foot, top, r3.Norm(fr.Home)})
 	}
@@ -86,7 +85,7 @@ func newModel(a *objective.Appraisal) model {
 }
 
 // words are what a family's joints are called.
-type words struct{ base, drive, platform, prismatic string }
+type words struct{ base, drive, platform string }
 
 func wordsOf(f *kin.Family, fr *kin.Frame) words {
 	planar := !f.Has(kin.Z) && !f.Has(kin.Roll)
@@ -113,7 +112,7 @@ func wordsOf(f *kin.Family, fr *kin.Frame) words {
 func (m *model) leg(i int, fr *kin.Frame, s *kin.State, mt *kin.Mounting, w *words) {
 	n := strconv.Itoa(i + 1)
 	b, k, p := "B"+n, "K"+n, "P"+n
-	m.points = append(m.points, point{b, onBase, i, w.base, fr.Base[i], kin.Vec{}, true})
+	m.points = append(m.points, point{name: b, plate: onBase, leg: i, what: w.base, base: fr.Base[i], hole: true})
 	if mt.Hinge != (kin.Vec{}) {
 		m.axes = append(m.axes, axis{b, "hinge", onBase, mt.Hinge, mt.Hinge})
 	}
@@ -124,7 +123,7 @@ func (m *model) leg(i int, fr *kin.Frame, s *kin.State, mt *kin.Mounting, w *wor
 	start := b
 	if fr.Rods != nil && m.home {
 		start = k
-		m.points = append(m.points, point{k, onDrive, i, w.drive, s.End[i], kin.Vec{}, false})
+		m.points = append(m.points, point{name: k, plate: onDrive, leg: i, what: w.drive, base: s.End[i]})
 		if fr.Rails == nil {
 			m.links = append(m.links, link{i, "crank", b, k, r3.Norm(r3.Sub(s.End[i], fr.Base[i]))})
 		} else {
@@ -142,26 +141,9 @@ func (m *model) leg(i int, fr *kin.Frame, s *kin.State, mt *kin.Mounting, w *wor
 		m.axes = append(m.axes, a)
 	}
 	mount(start, onBase, mt.Base)
-	m.points = append(m.points, point{p, onPlatform, i, w.platform, m.place(fr.Platform[i]), fr.Platform[i], !twin})
+	m.points = append(m.points, m.carried(p, i, w.platform, fr.Platform[i], !twin))
 	if twin {
-		side := mt.Side
-		for _, e := range []struct {
-			end  string
-			sign float64
-		}{{"a", 1}, {"b", -1}} {
-			off := r3.Scale(e.sign, side)
-			if m.home {
-				m.points = append(m.points, point{k + e.end, onDrive, i, "rod end, at home", r3.Add(s.End[i], off), kin.Vec{}, false})
-			}
-			own := r3.Add(fr.Platform[i], m.rot.Unapply(off))
-			m.points = append(m.points, point{p + e.end, onPlatform, i, "rod end", m.place(own), own, true})
-			if m.home {
-				m.links = append(m.links, link{i, "rod", k + e.end, p + e.end, fr.Rods[i]})
-			}
-		}
-		unit := r3.Unit(side)
-		m.axes = append(m.axes, axis{p, "short side of the parallelogram", onPlatform, m.rot.Unapply(unit), unit})
-		m.links = append(m.links, link{i, "distance of the two rods", p + "a", p + "b", 2 * r3.Norm(side)})
+		m.parallelogram(i, fr, s, mt.Side)
 		return
 	}
 	mount(p, onPlatform, mt.Platform)
@@ -171,6 +153,28 @@ func (m *model) leg(i int, fr *kin.Frame, s *kin.State, mt *kin.Mounting, w *wor
 	case fr.Rods == nil && m.home:
 		m.links = append(m.links, link{i, "leg at home", b, p, s.Q[i]})
 	}
+}
+
+// parallelogram adds the two rods of a leg; side runs from their middle to the first.
+func (m *model) parallelogram(i int, fr *kin.Frame, s *kin.State, side kin.Vec) {
+	n := strconv.Itoa(i + 1)
+	k, p := "K"+n, "P"+n
+	for e, end := range [2]string{"a", "b"} {
+		off := r3.Scale(float64(1-2*e), side)
+		m.points = append(m.points, m.carried(p+end, i, "rod end", r3.Add(fr.Platform[i], m.rot.Unapply(off)), true))
+		if m.home {
+			m.points = append(m.points, point{name: k + end, plate: onDrive, leg: i, what: "rod end, at home", base: r3.Add(s.End[i], off)})
+			m.links = append(m.links, link{i, "rod", k + end, p + end, fr.Rods[i]})
+		}
+	}
+	unit := r3.Unit(side)
+	m.axes = append(m.axes, axis{p, "short side of the parallelogram", onPlatform, m.rot.Unapply(unit), unit})
+	m.links = append(m.links, link{i, "distance of the two rods", p + "a", p + "b", 2 * r3.Norm(side)})
+}
+
+// carried is a point of the platform, given in its frame.
+func (m *model) carried(name string, leg int, what string, own kin.Vec, hole bool) point {
+	return point{name: name, plate: onPlatform, leg: leg, what: what, base: m.place(own), own: own, hole: hole}
 }
 
 // place is a point of the platform in the base frame at home.
@@ -186,10 +190,9 @@ func (m *model) railEnds(a *objective.Appraisal, fr *kin.Frame) {
 	for i, u := range fr.Rails {
 		n := strconv.Itoa(i + 1)
 		ends := [2]kin.Vec{r3.Add(fr.Base[i], r3.Scale(low, u)), r3.Add(fr.Base[i], r3.Scale(high, u))}
-		m.rails = append(m.rails, ends)
 		m.points = append(m.points,
-			point{"R" + n + "a", onBase, i, "rail, carriage at its least", ends[0], kin.Vec{}, false},
-			point{"R" + n + "b", onBase, i, "rail, carriage at its most", ends[1], kin.Vec{}, false})
+			point{name: "R" + n + "a", plate: onBase, leg: i, what: "rail, carriage at its least", base: ends[0]},
+			point{name: "R" + n + "b", plate: onBase, leg: i, what: "rail, carriage at its most", base: ends[1]})
 		m.links = append(m.links, link{i, "travel", "R" + n + "a", "R" + n + "b", high - low})
 	}
 }
@@ -207,24 +210,13 @@ func (m *model) order() {
 	m.points = out
 }
 
-// of lists a plate's points.
-func (m *model) of(plate string) []point {
-	var out []point
-	for _, p := range m.points {
-		if p.plate == plate {
-			out = append(out, p)
-		}
-	}
-	return out
-}
-
 // levelArm is the model of the palletising arm: its column, shoulder, elbow, wrist and tool axis in the plane y = 0.
 func (m *model) levelArm(a *objective.Appraisal, s *kin.State) {
 	dim := func(name string) float64 { return a.Values[a.Plan.Family.Index(name)] }
 	shoulder := kin.Vec{X: dim("base_offset"), Z: dim("base_height")}
 	m.points = append(m.points,
-		point{"B1", onBase, 0, "column's axis at floor level", kin.Vec{}, kin.Vec{}, true},
-		point{"B2", onBase, 1, "shoulder (both links), on the column at home", shoulder, kin.Vec{}, false})
+		point{name: "B1", plate: onBase, what: "column's axis at floor level", hole: true},
+		point{name: "B2", plate: onBase, leg: 1, what: "shoulder (both links), on the column at home", base: shoulder})
 	m.axes = append(m.axes,
 		axis{"B1", "hinge", onBase, kin.Vec{Z: 1}, kin.Vec{Z: 1}},
 		axis{"B2", "hinge", onBase, kin.Vec{Y: -1}, kin.Vec{Y: -1}})
@@ -240,10 +232,10 @@ func (m *model) levelArm(a *objective.Appraisal, s *kin.State) {
 		sin, cos = math.Sincos(s.Q[2])
 		wrist := r3.Add(elbow, kin.Vec{X: dim("forearm") * cos, Z: dim("forearm") * sin})
 		m.points = append(m.points,
-			point{"K1", onDrive, 1, "elbow at home", elbow, kin.Vec{}, false},
-			point{"K2", onDrive, 2, "wrist at home", wrist, kin.Vec{}, false})
+			point{name: "K1", plate: onDrive, leg: 1, what: "elbow at home", base: elbow},
+			point{name: "K2", plate: onDrive, leg: 2, what: "wrist at home", base: wrist})
 	}
-	m.points = append(m.points, point{"P1", onPlatform, 3, "tool's axis", m.origin, kin.Vec{}, true})
+	m.points = append(m.points, point{name: "P1", plate: onPlatform, leg: 3, what: "tool's axis", base: m.origin, hole: true})
 	m.axes = append(m.axes, axis{"P1", "hinge", onPlatform, kin.Vec{Z: 1}, kin.Vec{Z: 1}})
 }
 
