@@ -49,6 +49,10 @@ type Appraisal struct {
 	Feasible   bool
 	Notes      []string
 	Poses      int
+
+	ends   *[12]spot // where extreme coordinates lie between the samples
+	failed *Sample   // a pose between the samples that is out of reach or singular; nil if none was met
+	lost   bool      // it is out of reach
 }
 
 // Reading is the reading of the named measure, or nil.
@@ -108,7 +112,9 @@ next:
 
 // Appraise judges a design completely. values holds every dimension; those that
 // the plan derives from the duty are overwritten. Excursions are left to Excurse.
-// It costs some microseconds per pose.
+// Worst values over boxes, ellipsoids and single excursions are driven beyond the sampled poses (see Refiner), but not
+// where a sampled pose fails, nor in a task in which poses may fail. Coverage and means are over the samples.
+// It costs some microseconds per pose and some milliseconds for the refinement.
 func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	a := &Appraisal{Plan: p, Values: append([]float64(nil), values...), Poses: len(t.samples)}
 	d := Design{Family: p.Family, Values: a.Values}
@@ -141,22 +147,28 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 		}
 	} else {
 		v.walk(0, len(t.samples), need, ts)
+		if t.refined() && v.refinable() {
+			a.refine(v, ts)
+		}
 		least, most := v.span()
 		p.size(&t.Actuator, least, most, a.Values)
 		good = l.count(len(t.samples), nil)
 	}
-	a.Legs = a.legs(t, l)
+	a.Legs = a.legs(t, l, ts)
 	k := 0
 	for _, m := range measures {
 		r := Reading{Measure: m, Leg: -1, Mate: -1, Case: -1}
 		switch {
 		case m.Scan != nil:
 			w := &ts[k].w
-			k++
 			r.Value, r.Leg, r.Mate, r.Case = m.value(w), w.Leg, w.Mate, w.Case
 			if w.Pose >= 0 && !m.Mean {
 				r.Pose = &t.samples[w.Pose]
 			}
+			if ts[k].set {
+				r.Pose = &ts[k].at
+			}
+			k++
 		case m.Design != nil:
 			r.Value = m.Design(&d)
 		default:
@@ -179,8 +191,18 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	return a
 }
 
-// legs walks the poses once more for what each leg must do.
-func (a *Appraisal) legs(t *Task, pl *poseLimits) []Leg {
+// refine drives worst values beyond the samples.
+func (a *Appraisal) refine(v *View, ts []tracker) {
+	r := newRefiner(v, thorough)
+	if !r.extend(ts) {
+		at := r.here
+		a.failed, a.lost = &at, r.lost
+	}
+	a.ends = &r.legs
+}
+
+// legs walks the poses once more for what each leg must do, and those between the samples at which worst values are met.
+func (a *Appraisal) legs(t *Task, pl *poseLimits, ts []tracker) []Leg {
 	v := pl.v
 	out := make([]Leg, v.n)
 	for i := range out {
@@ -194,10 +216,9 @@ func (a *Appraisal) legs(t *Task, pl *poseLimits) []Leg {
 		}
 	}
 	v.keep = 0
-	for k := range t.samples {
-		s := &t.samples[k]
-		if !pl.counts(k) || !v.at(s, k, NeedMatrix|NeedEfforts|NeedRates) {
-			continue
+	look := func(s *Sample) {
+		if !v.at(s, -1, NeedMatrix|NeedEfforts|NeedRates) {
+			return
 		}
 		for i := range out {
 			l := &out[i]
@@ -207,6 +228,28 @@ func (a *Appraisal) legs(t *Task, pl *poseLimits) []Leg {
 				l.Push = math.Max(l.Push, v.hi[c][i])
 				l.Pull = math.Max(l.Pull, -v.lo[c][i])
 				l.Speed = math.Max(l.Speed, v.rate[c][i])
+			}
+		}
+	}
+	for k := range t.samples {
+		if pl.counts(k) {
+			look(&t.samples[k])
+		}
+	}
+	for i := range ts {
+		if ts[i].set {
+			look(&ts[i].at)
+		}
+	}
+	if a.ends != nil {
+		for i := range out {
+			if e := &a.ends[2*i]; e.set {
+				out[i].LeastAt = &e.at
+				look(&e.at)
+			}
+			if e := &a.ends[2*i+1]; e.set {
+				out[i].MostAt = &e.at
+				look(&e.at)
 			}
 		}
 	}
@@ -226,6 +269,9 @@ func (a *Appraisal) judge(t *Task, good int, v *View) {
 		a.Verdicts = append(a.Verdicts, w)
 	}
 	add(Verdict{Name: "coverage", Origin: "limits", AtLeast: true, Bound: t.Coverage, Value: t.share(good)}, t.shortfall(good))
+	if a.failed != nil && a.lost {
+		add(Verdict{Name: failReach, Origin: "duty.zones", Bound: 0, Value: 1}, 1)
+	}
 	if p.least >= 0 {
 		unit := Metre
 		if p.Family.Drive == kin.Rotary {

@@ -115,6 +115,7 @@ func TestDerivedRangeIsTheBest(t *testing.T) {
 		free := p.Free()
 		try := func(x []float64) {
 			s.Judge(x, &r)
+			s.Confirm(&r)
 			got = got || r.Violation == 0
 			if r.Violation == 0 {
 				if ap := Appraise(task, p, s.Values()); !ap.Feasible {

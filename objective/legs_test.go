@@ -14,6 +14,7 @@ func TestLegsOfAnAppraisal(t *testing.T) {
 		for range 3 {
 			task := richTask(rng, f)
 			task.Prepare()
+			task = pinned(task)
 			a := appraise(task, f, randomDesign(rng, f))
 			home := staticsOf(a.Machine.Frame(), kin.Coords{}).leng
 			rows := Poses(task, a)

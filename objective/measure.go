@@ -161,10 +161,12 @@ func inf() float64 { return math.Inf(1) }
 
 // tracker follows one measure through a walk.
 type tracker struct {
-	m *Measure
-	w Worst
+	m    *Measure
+	w    Worst
+	spot // where the worst value lies, if not at a sample
 }
 
 func (t *tracker) reset() {
 	t.w = Worst{Value: t.m.Start, Pose: -1, Leg: -1, Mate: -1, Case: -1}
+	t.set = false
 }

@@ -19,6 +19,16 @@ func (a *Appraisal) notes(t *Task, l *poseLimits) {
 	if t.soft() {
 		a.left(l, note)
 	}
+	if t.soft() && t.continuous() {
+		note("worst values are those of the sampled poses that count: they are not searched for between the samples")
+	}
+	switch s := a.failed; {
+	case s == nil:
+	case a.lost:
+		note("a pose between the sampled ones is out of reach: %s of zone %q", poseText(s), t.Zones[s.Zone].Name)
+	default:
+		note("a pose between the sampled ones is singular or lies behind a singularity of the kind %s: %s of zone %q", kindText(v.kindAt(s)), poseText(s), t.Zones[s.Zone].Name)
+	}
 	if v.singular > 0 && v.singularAt >= 0 && v.homeSign != 0 {
 		s := &t.samples[v.singularAt]
 		note("%d of the %d poses are singular or lie behind a singularity; the first met is of the kind %s", v.singular, len(t.samples), kindText(v.kindAt(s)))
@@ -39,6 +49,24 @@ func (a *Appraisal) notes(t *Task, l *poseLimits) {
 				t.Cases[c].Name, left, unit, leg+1, effort, unit)
 		}
 	}
+}
+
+// poseText writes the coordinates of a pose that are not 0.
+func poseText(s *Sample) string {
+	var out []string
+	for q, c := range s.Coords {
+		switch f := kin.Freedom(q); {
+		case c == 0:
+		case f.Angular():
+			out = append(out, fmt.Sprintf("%s %.5g°", f, c*180/math.Pi))
+		default:
+			out = append(out, fmt.Sprintf("%s %.5g mm", f, 1000*c))
+		}
+	}
+	if out == nil {
+		return "home"
+	}
+	return strings.Join(out, ", ")
 }
 
 // spinning is the leg with the largest share of what centripetal forces may add in a case to the

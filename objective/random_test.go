@@ -121,6 +121,21 @@ func listed(rng *rand.Rand, f *kin.Family, part float64, n int) Zone {
 	return z
 }
 
+// pinned is the task with the sampled poses of every zone listed outright: nothing is then refined.
+func pinned(t *Task) *Task {
+	p := *t
+	p.Zones = append([]Zone(nil), t.Zones...)
+	for i := range p.Zones {
+		z := Zone{Name: p.Zones[i].Name, Kind: Listed}
+		for _, s := range sampleZone(&p.Zones[i], i) {
+			z.Poses = append(z.Poses, s.Coords)
+		}
+		p.Zones[i] = z
+	}
+	p.Prepare()
+	return &p
+}
+
 // anyWay and perAxis are sets of about the size r.
 func anyWay(rng *rand.Rand, r float64) Set { return Set{Kind: AnyWay, Radius: between(rng, r/2, r)} }
 

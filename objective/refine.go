@@ -32,20 +32,26 @@ type Extreme struct {
 // is met at a pose, so never more than the true worst; that it is no less is likely, not certain. Poses of
 // Listed zones are not left. It is scratch for one goroutine; driving allocates nothing.
 type Refiner struct {
-	v    *View
-	ends []end // of the climbs so far from one ranking
-	gain ranking
+	v     *View
+	try   diligence
+	gain  ranking
+	field []end // starts of climbs
+	ends  []end // ends of the climbs so far from one ranking
 
 	// The climb in work.
 	reg  region
-	zone *Zone
 	m    *Measure // nil for an actuator coordinate
 	leg  int
 	most bool
 	need Need
 	here Sample
+	goal float64 // what a climb is to pass
 	sight
 	evaluations int
+
+	by    []ranking // zone·props + property
+	props int
+	legs  [12]spot // where the least and the greatest coordinate of each leg lie, if not at samples or at home
 }
 
 // sight is what was seen at one pose: the worst over the legs and cases.
@@ -57,8 +63,9 @@ type sight struct {
 // refineGain is how much worse, relatively, a pose must be to take the place of a sample.
 const refineGain = 1e-10
 
-// end is where a climb ended.
+// end is where a climb starts or ends.
 type end struct {
+	reg region
 	u   [6]float64
 	bad float64
 }
@@ -67,11 +74,12 @@ type end struct {
 func NewRefiner(t *Task, f *kin.Family) *Refiner {
 	v := newView(t)
 	v.serve(f)
-	return newRefiner(v)
+	return newRefiner(v, thorough)
 }
 
-func newRefiner(v *View) *Refiner {
-	return &Refiner{v: v, ends: make([]end, 0, refineStarts)}
+// newRefiner is a Refiner that goes on where a walk of the view ends.
+func newRefiner(v *View, try diligence) *Refiner {
+	return &Refiner{v: v, try: try, field: make([]end, 0, rankPlaces), ends: make([]end, 0, try.starts)}
 }
 
 // Begin makes m the machine whose worst values are wanted. It reports false where home is singular or out of reach:
@@ -101,13 +109,16 @@ func (r *Refiner) Worst(zone int, p Property) (Extreme, bool) {
 			continue
 		}
 		r.here = *s
-		b, ok := r.judge(k)
+		b, ok := math.Inf(1), true
+		if r.look(k, r.need) {
+			b, ok = r.read()
+		} else if r.m != nil {
+			r.w.Value = r.m.Lost
+		}
 		if !ok {
 			continue
 		}
-		if b > r.gain.least() {
-			r.gain.enter(b, k)
-		}
+		r.gain.enter(b, k)
 		if !found || b > bad {
 			best, bad, found = r.extreme(), b, true
 		}
@@ -132,28 +143,30 @@ func (r *Refiner) aim(p Property) {
 	}
 }
 
-// drive climbs from every start of the ranking and reports whether it met anything worse than worst; the worst pose is
+// drive climbs from the starts of the ranking and reports whether it met anything worse than worst; the worst pose is
 // then the one in work.
 func (r *Refiner) drive(zone int, from *ranking, worst float64) bool {
-	v := r.v
-	r.zone = &v.task.Zones[zone]
-	r.ends = r.ends[:0]
+	r.line(zone, from)
 	var most sight
 	var at Sample
-	found := false
-	for i := range from.n {
-		s := &v.task.samples[from.at[i].sample]
-		r.reg = regionOf(r.zone, s)
-		r.here = Sample{Zone: zone, Row: -1}
-		u := r.reg.from(&s.Coords)
-		f := r.climb(&u, from.at[i].bad)
-		r.ends = append(r.ends, end{u, f})
-		if f <= worst+refineGain*math.Abs(worst) {
+	found, still := false, true
+	for i := range min(len(r.field), r.try.starts) {
+		e := r.field[i]
+		if i == r.try.still && still {
+			break
+		}
+		r.reg = e.reg
+		u := e.u
+		r.goal = worst
+		e.bad = r.climb(&e.u, e.bad)
+		still = still && e.u == u
+		r.ends = append(r.ends, e)
+		if e.bad <= worst+refineGain*math.Abs(worst) {
 			continue
 		}
-		r.bad(&u)
-		most, at, worst, found = r.sight, r.here, f, true
-		if math.IsInf(f, 1) {
+		r.bad(&e.u)
+		most, at, worst, found = r.sight, r.here, e.bad, true
+		if math.IsInf(e.bad, 1) {
 			break
 		}
 	}
@@ -163,45 +176,94 @@ func (r *Refiner) drive(zone int, from *ranking, worst float64) bool {
 	return found
 }
 
-// bad is how bad the property is at u: +Inf where the pose is out of reach or singular, -Inf where it has no value.
-func (r *Refiner) bad(u *[6]float64) float64 {
-	r.here.Coords = r.reg.coords(u)
-	r.here.Pose = kin.NewPose(r.here.Coords)
-	r.evaluations++
-	b, _ := r.judge(-1)
-	return b
+// line makes the field: the ranked poses that are not neighbours of a worse one, which a climb from there passes. In an ellipsoid, where
+// none is a corner, each first makes a step.
+func (r *Refiner) line(zone int, from *ranking) {
+	z := &r.v.task.Zones[zone]
+	r.ends, r.field = r.ends[:0], r.field[:0]
+	r.here = Sample{Zone: zone, Row: -1}
+next:
+	for i := range from.n {
+		s := &r.v.task.samples[from.at[i].sample]
+		e := end{reg: regionOf(z, s), bad: from.at[i].bad}
+		e.u = e.reg.from(&s.Coords)
+		if z.Kind == Box && len(r.field) < r.try.starts {
+			for k := range r.field {
+				if e.reg.neighbours(&r.field[k].u, &e.u) {
+					continue next
+				}
+			}
+		}
+		k := len(r.field)
+		r.field = append(r.field, e)
+		if z.Kind != Ellipsoid {
+			continue
+		}
+		r.reg = e.reg
+		r.first(&e.u, &e.bad)
+		for ; k > 0 && r.field[k-1].bad < e.bad; k-- {
+			r.field[k] = r.field[k-1]
+		}
+		r.field[k] = e
+	}
 }
 
-// judge looks at the pose r.here; it reports false where the property has no value.
-func (r *Refiner) judge(index int) (float64, bool) {
-	v := r.v
-	v.keep, v.near = math.Inf(1), math.Inf(1)
-	r.sight = sight{w: Worst{Pose: -2, Leg: -1, Mate: -1, Case: -1}}
-	if !v.at(&r.here, index, r.need) {
-		r.lost = true
-		r.w.Leg = v.S.Leg
+// bad is how bad the property is at u: +Inf where the pose is out of reach or singular, -Inf where it has no value.
+func (r *Refiner) bad(u *[6]float64) float64 {
+	if !r.stand(u, r.need) {
 		if r.m != nil {
 			r.w.Value = r.m.Lost
 		}
-		return math.Inf(1), true
+		return math.Inf(1)
 	}
+	b, _ := r.read()
+	return b
+}
+
+// stand moves to u and reports false if that is out of reach.
+func (r *Refiner) stand(u *[6]float64, need Need) bool {
+	r.here.Coords = r.reg.coords(u)
+	r.here.Pose = kin.NewPose(r.here.Coords)
+	r.evaluations++
+	return r.look(-1, need)
+}
+
+// look looks at the pose r.here and reports false if it is out of reach.
+func (r *Refiner) look(index int, need Need) bool {
+	v := r.v
+	v.keep, v.near = math.Inf(1), math.Inf(1)
+	r.sight = sight{w: Worst{Pose: -1, Leg: -1, Mate: -1, Case: -1}}
+	if r.lost = !v.at(&r.here, index, need); r.lost {
+		r.w.Leg = v.S.Leg
+		return false
+	}
+	r.singular = need&(NeedMatrix|NeedEfforts|NeedExact) != 0 && v.isSingular()
+	return true
+}
+
+// read is how bad the property is at the pose in work; it reports false where it has no value.
+func (r *Refiner) read() (float64, bool) {
 	if r.m == nil {
-		r.w.Value, r.w.Leg = v.S.Q[r.leg], r.leg
+		r.w.Value, r.w.Leg = r.v.S.Q[r.leg], r.leg
 		if r.most {
 			return r.w.Value, true
 		}
 		return -r.w.Value, true
 	}
-	r.w.Value = r.m.Start
-	r.m.Scan(v, &r.w)
-	if r.need&(NeedMatrix|NeedEfforts|NeedExact) != 0 && v.isSingular() {
-		r.singular = true
+	b, ok := r.scan(r.m)
+	if r.singular {
 		return math.Inf(1), true
 	}
-	if r.w.Pose == -2 {
+	return b, ok
+}
+
+// scan is how bad a measure is at the pose in work, over the legs and cases; it reports false, and -Inf, where it has no value.
+func (r *Refiner) scan(m *Measure) (float64, bool) {
+	r.w = Worst{Value: m.Start, Pose: -2, Leg: -1, Mate: -1, Case: -1}
+	if m.Scan(r.v, &r.w); r.w.Pose == -2 {
 		return math.Inf(-1), false
 	}
-	return r.m.bad(r.w.Value), true
+	return m.bad(r.w.Value), true
 }
 
 // extreme is the pose judged last.

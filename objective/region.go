@@ -84,6 +84,18 @@ func (g *region) project(u *[6]float64) {
 	}
 }
 
+// aside is the point by which the slope along coordinate k is found, on the side on which the region lies, and how far it is.
+func (g *region) aside(u *[6]float64, k int) (t [6]float64, h float64) {
+	h = climbStep
+	if u[k] > 0 {
+		h = -h
+	}
+	t = *u
+	t[k] += h
+	g.project(&t)
+	return t, h
+}
+
 // farthest is the point of the region that lies farthest in the direction d. Of a cube, coordinates in
 // which d is within idle of zero stay as they are in u.
 func (g *region) farthest(u, d *[6]float64, idle float64) [6]float64 {
@@ -101,6 +113,32 @@ func (g *region) farthest(u, d *[6]float64, idle float64) [6]float64 {
 		}
 	}
 	return t
+}
+
+// rise is the most that a linear function with the gradient d gains from u to anywhere in a cube; without bound for a ball.
+func (g *region) rise(u, d *[6]float64) float64 {
+	if g.ball {
+		return math.Inf(1)
+	}
+	sum := 0.0
+	for k := range g.n {
+		sum += math.Max(d[k]*(1-u[k]), -d[k]*(1+u[k]))
+	}
+	return sum
+}
+
+// tangent takes out of a gradient at a point of a ball's surface the part that points outward.
+func (g *region) tangent(u, d *[6]float64) {
+	if !g.ball || length6(u) < 1-1e-9 {
+		return
+	}
+	out := 0.0
+	for k := range u {
+		out += u[k] * d[k]
+	}
+	for k := range u {
+		d[k] -= math.Max(out, 0) * u[k]
+	}
 }
 
 func length6(u *[6]float64) float64 {

@@ -18,6 +18,7 @@ type Screen struct {
 	geoLimit []bool      // the limit can be judged without the inverse Jacobian
 	late     []bool      // the limit can be judged only after all poses: further ones may mend it
 	limits   *poseLimits // of a soft task, nil otherwise
+	refiner  *Refiner    // nil where nothing is refined
 }
 
 // The first constraints of every task, before its limits.
@@ -113,6 +114,9 @@ func NewScreen(t *Task, p *Plan) *Screen {
 			s.geoNeed |= s.all[i].m.Need
 		}
 	}
+	if t.refined() {
+		s.refiner = newRefiner(s.v, quick)
+	}
 	return s
 }
 
@@ -138,6 +142,45 @@ func (s *Screen) Judge(x []float64, r *Score) {
 	} else {
 		s.look(r, own)
 	}
+	s.total(r)
+}
+
+// Refines tells whether Confirm has anything to do.
+func (s *Screen) Refines() bool { return s.refiner != nil }
+
+// Confirm scores the design judged last anew, by worst values that are driven beyond the sampled poses as those
+// of Appraise are (see Refiner). It is for designs that Judge found feasible, and costs
+// about as much as judging one to the end. The score is never better than before.
+func (s *Screen) Confirm(r *Score) {
+	if s.refiner == nil || r.Violation > 0 || !s.v.refinable() {
+		return
+	}
+	s.confirm(r)
+	s.judge(r)
+	s.total(r)
+}
+
+// confirm drives what decides the score, what is cheap and what has limits first, until a limit fails.
+func (s *Screen) confirm(r *Score) {
+	s.refiner.prepare(s.all)
+	if !s.refiner.stretch() || s.geometry(r, s.all) > 0 {
+		return
+	}
+	for i := range s.all { // limits come first
+		if !s.refiner.worsen(s.all, i) {
+			return
+		}
+		for k, at := range s.limitAt {
+			if l := &s.task.Limits[k]; at == i && !l.Holds(s.task, l.Measure.value(&s.all[i].w)) {
+				return
+			}
+		}
+	}
+}
+
+// total fills the violation and, of a feasible design, the goals.
+func (s *Screen) total(r *Score) {
+	t := s.task
 	r.Violation = r.total()
 	if r.Violation > 0 {
 		return

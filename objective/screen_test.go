@@ -19,7 +19,9 @@ func goalsOf(ms []*Measure) (goals []Goal) {
 // screened judges the same design as appraise.
 func screened(t *Task, p *Plan) *Score {
 	var r Score
-	NewScreen(t, p).Judge(nil, &r)
+	s := NewScreen(t, p)
+	s.Judge(nil, &r)
+	s.Confirm(&r)
 	return &r
 }
 
@@ -139,6 +141,7 @@ func TestScreenAgreesOnLimits(t *testing.T) {
 			s := NewScreen(task, p)
 			var r Score
 			s.Judge(nil, &r)
+			s.Confirm(&r)
 			sameGoals(t, task, &r, a)
 			if a.Feasible {
 				for i, x := range s.Values() {
@@ -177,8 +180,11 @@ func TestScreenHasNoMemory(t *testing.T) {
 				x[k] = between(rng, f.Dimensions[i].Low, f.Dimensions[i].High)
 			}
 			s.Judge(x, &again)
+			s.Confirm(&again)
 			var fresh Score
-			NewScreen(task, p).Judge(x, &fresh)
+			n := NewScreen(task, p)
+			n.Judge(x, &fresh)
+			n.Confirm(&fresh)
 			if again.Violation != fresh.Violation {
 				t.Fatalf("violation %g, by a fresh screen %g", again.Violation, fresh.Violation)
 			}

@@ -111,6 +111,9 @@ func (s *Screen) whatever(values []float64) (goals []float64, fails string) {
 		s.survey(&r)
 	} else {
 		s.v.walk(0, len(t.samples), s.allNeed, s.all)
+		if t.refined() && s.v.refinable() {
+			newRefiner(s.v, thorough).extend(s.all)
+		}
 		s.judge(&r)
 	}
 	for i := range t.Goals {

@@ -48,6 +48,7 @@ func TestSizedRange(t *testing.T) {
 			task.Actuator.Reserve = between(rng, 0, 0.02)
 			task.Cases = nil
 			task.Prepare()
+			task = pinned(task)
 			d := randomDesign(rng, f)
 			short, long := extremeLengths(task, f, d)
 			a := appraise(task, f, d)

@@ -2,9 +2,22 @@ package objective
 
 import "math"
 
-// refineStarts is the number of sampled poses from which a worst value is driven on: 8 found the true
-// one in every trial, 5 fell short by up to 17 %.
-const refineStarts = 8
+// diligence is how hard a Refiner tries.
+type diligence struct {
+	starts int     // climbs at most: 8 found the true worst in every trial of some thousands
+	still  int     // climbs after which it stops if none has left its start, a corner whose slopes all point outward
+	hope   float64 // climbs go on while this times the linear prediction of what is left to gain passes the worst so far; 0 for always
+}
+
+// thorough is for appraisals. In a search it would take about half of all time; quick is short of it by a ten-thousandth of the value
+// in one of a hundred worst values that lie between the samples.
+var (
+	thorough = diligence{starts: 8, still: 8}
+	quick    = diligence{starts: 5, still: 2, hope: 1}
+)
+
+// rankPlaces is from how many of the worst poses starts are chosen.
+const rankPlaces = 24
 
 // start is a sampled pose and how bad a property is there.
 type start struct {
@@ -15,53 +28,21 @@ type start struct {
 // ranking holds the worst samples of one zone by one property, worst first.
 type ranking struct {
 	n  int
-	at [refineStarts]start
+	at [rankPlaces]start
 }
 
-// least is what a sample must exceed to enter.
-func (k *ranking) least() float64 {
-	if k.n < refineStarts {
-		return math.Inf(-1)
-	}
-	return k.at[refineStarts-1].bad
-}
-
-// enter adds a sample; of equally bad ones the first met stays ahead.
+// enter offers a sample; of equally bad ones the first met stays ahead.
 func (k *ranking) enter(bad float64, sample int) {
-	i := min(k.n, refineStarts-1)
+	if k.n == rankPlaces && bad <= k.at[rankPlaces-1].bad {
+		return
+	}
+	i := min(k.n, rankPlaces-1)
 	for ; i > 0 && k.at[i-1].bad < bad; i-- {
 		k.at[i] = k.at[i-1]
 	}
 	k.at[i] = start{bad, sample}
-	k.n = min(k.n+1, refineStarts)
+	k.n = min(k.n+1, rankPlaces)
 }
-
-// starts are the rankings that a walk fills: of each zone that can be refined, by each tracker, then by the
-// least and the greatest coordinate of each leg.
-type starts struct {
-	open  []bool // by zone
-	props int
-	by    []ranking // zone·props + property
-}
-
-// newStarts makes rankings for a number of trackers.
-func newStarts(t *Task, trackers int) *starts {
-	s := &starts{open: make([]bool, len(t.Zones)), props: trackers + 12}
-	for i := range t.Zones {
-		s.open[i] = t.Zones[i].refinable()
-	}
-	s.by = make([]ranking, len(t.Zones)*s.props)
-	return s
-}
-
-func (s *starts) clear() {
-	for i := range s.by {
-		s.by[i].n = 0
-	}
-}
-
-// of are the rankings of a zone.
-func (s *starts) of(zone int) []ranking { return s.by[zone*s.props : (zone+1)*s.props] }
 
 // refinable tells whether worst values over the zone can be driven beyond its samples: it is continuous
 // and something moves in it.
@@ -71,10 +52,10 @@ func (z *Zone) refinable() bool {
 
 // refined tells whether worst values are driven beyond the samples in any zone: not in zones of listed poses, nor in a
 // task in which single poses may fail, since those do not count.
-func (t *Task) refined() bool {
-	if t.soft() {
-		return false
-	}
+func (t *Task) refined() bool { return !t.soft() && t.continuous() }
+
+// continuous tells whether any zone holds more poses than its samples.
+func (t *Task) continuous() bool {
 	for i := range t.Zones {
 		if t.Zones[i].refinable() {
 			return true
@@ -83,7 +64,7 @@ func (t *Task) refined() bool {
 	return false
 }
 
-// bad turns a raw value of the measure into one of which larger is worse.
+// bad turns a raw value of the measure into one of which larger is worse; it is its own inverse.
 func (m *Measure) bad(raw float64) float64 {
 	if m.Sense == Larger {
 		return -raw
@@ -91,40 +72,14 @@ func (m *Measure) bad(raw float64) float64 {
 	return raw
 }
 
-// climbs tells whether the measure is one whose worst value can be driven on pose by pose.
-func (m *Measure) climbs() bool { return m.perPose() }
-
-// rank enters the pose in work, a sample, into the rankings of its zone and brings the trackers up to date.
-func (v *View) rank(ts []tracker) {
-	by := v.starts.of(v.pose.Zone)
-	for i := range ts {
-		t := &ts[i]
-		if !t.m.climbs() {
-			if !t.m.Scouts || v.index < v.task.scouts {
-				t.m.Scan(v, &t.w)
-			}
-			continue
-		}
-		// The worst over the legs and cases of this pose, if it is bad enough for a place.
-		w := Worst{Value: t.m.Start, Pose: -1}
-		if by[i].n == refineStarts {
-			w.Value = t.m.bad(by[i].least()) // bad is its own inverse
-		}
-		if t.m.Scan(v, &w); w.Pose != v.index {
-			continue
-		}
-		by[i].enter(t.m.bad(w.Value), v.index)
-		if t.m.bad(w.Value) > t.m.bad(t.w.Value) {
-			t.w = w
+// neighbours tells whether a climb from one pose of the region would pass the other: at most one coordinate differs by
+// more than a quarter of its range, as at corners of a box that share an edge.
+func (g *region) neighbours(a, b *[6]float64) bool {
+	differ := 0
+	for k := range g.n {
+		if math.Abs(a[k]-b[k]) > 0.5 {
+			differ++
 		}
 	}
-	legs := by[len(ts):]
-	for i := range v.n {
-		if q := v.S.Q[i]; -q > legs[2*i].least() {
-			legs[2*i].enter(-q, v.index)
-		}
-		if q := v.S.Q[i]; q > legs[2*i+1].least() {
-			legs[2*i+1].enter(q, v.index)
-		}
-	}
+	return differ < 2
 }

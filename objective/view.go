@@ -44,7 +44,6 @@ type View struct {
 	own    [36]float64
 	tie    [36]float64
 	unit   [36]float64 // unit wrenches
-	starts *starts     // where the walk ranks the worst samples; nil for nowhere
 
 	// Over the walk so far.
 	least, most     [6]float64 // actuator coordinates, home included
@@ -214,13 +213,13 @@ func (v *View) isSingular() bool {
 func (v *View) walk(from, to int, need Need, ts []tracker) {
 	matrix := need&(NeedMatrix|NeedEfforts|NeedExact) != 0
 	floor := v.task.Singular * v.task.Singular
-	cond, clear := -1, -1
+	var cond, clear *Worst
 	for i := range ts {
 		switch ts[i].m.Name {
 		case "conditioning":
-			cond = i
+			cond = &ts[i].w
 		case "leg_clearance":
-			clear = i
+			clear = &ts[i].w
 		}
 	}
 	defer func() { v.near = math.Inf(1) }()
@@ -232,11 +231,11 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 		v.keep = floor
 		if need&NeedExact != 0 {
 			v.keep = math.Inf(1)
-		} else if cond >= 0 {
-			v.keep = math.Max(floor, v.wanted(s.Zone, cond, ts))
+		} else if cond != nil && cond.Value > floor {
+			v.keep = cond.Value
 		}
-		if clear >= 0 {
-			v.near = v.wanted(s.Zone, clear, ts)
+		if clear != nil {
+			v.near = clear.Value
 		}
 		v.seen++
 		if !v.at(s, k, need) {
@@ -256,17 +255,6 @@ func (v *View) walk(from, to int, need Need, ts []tracker) {
 		v.follow(ts)
 	}
 }
-
-// wanted is the value below which that of tracker i is wanted exactly at a sample of the zone.
-func (v *View) wanted(zone, i int, ts []tracker) float64 {
-	if v.ranks(zone) {
-		return -v.starts.of(zone)[i].least()
-	}
-	return ts[i].w.Value
-}
-
-// ranks tells whether the walk ranks the samples of the zone.
-func (v *View) ranks(zone int) bool { return v.starts != nil && v.starts.open[zone] }
 
 // home asks at home the measures that want it.
 func (v *View) home(ts []tracker) {
@@ -291,10 +279,6 @@ func (v *View) follow(ts []tracker) {
 		if q > v.most[i] {
 			v.most[i], v.mostAt[i] = q, k
 		}
-	}
-	if v.ranks(v.pose.Zone) {
-		v.rank(ts)
-		return
 	}
 	for i := range ts {
 		if !ts[i].m.Scouts || k < v.task.scouts {

@@ -20,13 +20,15 @@ type evaluator struct {
 }
 
 type task struct {
-	g    *genome
-	done *sync.WaitGroup
+	g     *genome
+	front *Archive
+	done  *sync.WaitGroup
 }
 
 // batch is a set of designs handed in together.
 type batch struct {
 	designs []*genome
+	front   *Archive // as it was when they were handed in; nil where nothing is confirmed
 	wait    sync.WaitGroup
 }
 
@@ -41,7 +43,7 @@ func newEvaluator(ctx context.Context, p *Problem, workers int) *evaluator {
 		go func() {
 			defer e.workers.Done()
 			for t := range e.queue {
-				e.run(w, t.g)
+				e.run(w, t.g, t.front)
 				t.done.Done()
 			}
 		}()
@@ -64,7 +66,7 @@ func (e *evaluator) submit(b *batch) {
 	}
 	b.wait.Add(len(b.designs))
 	for _, g := range b.designs {
-		e.queue <- task{g, &b.wait}
+		e.queue <- task{g, b.front, &b.wait}
 	}
 }
 
@@ -78,19 +80,20 @@ func (e *evaluator) finish(b *batch) {
 	e.inline.Lock()
 	defer e.inline.Unlock()
 	for _, g := range b.designs {
-		e.run(0, g)
+		e.run(0, g, b.front)
 	}
 }
 
 // one evaluates a single design and waits for it.
-func (e *evaluator) one(g *genome) {
-	b := batch{designs: []*genome{g}}
+func (e *evaluator) one(g *genome, front *Archive) {
+	b := batch{designs: []*genome{g}, front: front}
 	e.submit(&b)
 	e.finish(&b)
 }
 
-// run evaluates g unless that was done before or the context has ended.
-func (e *evaluator) run(worker int, g *genome) {
+// run evaluates g unless that was done before or the context has ended, and
+// confirms it if it is feasible and the front does not beat it.
+func (e *evaluator) run(worker int, g *genome, front *Archive) {
 	if g.done || e.ctx.Err() != nil {
 		return
 	}
@@ -99,24 +102,36 @@ func (e *evaluator) run(worker int, g *genome) {
 		r.Goals[k] = math.NaN()
 	}
 	clear(r.Excess)
-	if text := e.call(worker, g, &r); text != "" {
+	e.settle(g, &r, call(e.problem.Evaluate, worker, g, &r))
+	g.recalled = r.Recalled // confirmed then, if it was to be
+	if front != nil && g.feasible() {
+		if g.beaten = front.beats(g.goals); !g.beaten && !g.recalled {
+			r.Goals, r.Excess = g.goals, g.excess
+			e.settle(g, &r, call(e.problem.Confirm, worker, g, &r))
+			g.beaten = g.feasible() && front.beats(g.goals)
+		}
+	}
+	g.done = true
+}
+
+// settle takes a result into the design; text says that it came of a panic.
+func (e *evaluator) settle(g *genome, r *Result, text string) {
+	if text != "" {
 		r.Violation, r.Fault = math.Inf(1), text
 	}
 	copy(g.goals, r.Goals)
 	copy(g.excess, r.Excess)
-	g.violation, g.fault = verdict(&r, g)
-	g.recalled = r.Recalled
-	g.done = true
+	g.violation, g.fault = verdict(r, g)
 }
 
 // call turns a panic into text.
-func (e *evaluator) call(worker int, g *genome, r *Result) (text string) {
+func call(f func(worker, space int, x []float64, r *Result), worker int, g *genome, r *Result) (text string) {
 	defer func() {
 		if p := recover(); p != nil {
 			text = fmt.Sprintf("panic: %v", p)
 		}
 	}()
-	e.problem.Evaluate(worker, g.space, g.x, r)
+	f(worker, g.space, g.x, r)
 	return ""
 }
 

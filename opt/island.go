@@ -118,6 +118,7 @@ func (l *island) generation(pop *eaopt.Population) error {
 		l.turn -= len(next.designs)
 		l.done = len(next.designs) == 0
 	}
+	next.front = r.snapshot
 	r.ev.submit(next)
 	r.ev.finish(l.pending)
 	kids := l.collect(l.pending)

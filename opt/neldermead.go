@@ -32,7 +32,7 @@ func (j *job) run(r *run) {
 		for k, i := range d.real {
 			g.x[i] = x[k]
 		}
-		r.ev.one(g)
+		r.ev.one(g, r.snapshot)
 		if !g.done {
 			return math.Inf(1)
 		}

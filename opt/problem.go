@@ -95,6 +95,13 @@ type Problem struct {
 	// infinite goal of a feasible design, makes the design a failed one and
 	// the search goes on.
 	Evaluate func(worker, space int, x []float64, r *Result)
+	// Confirm, if set, looks closer at a feasible design that would have been
+	// on the front when it was handed in: it is called right after Evaluate, for
+	// the same design on the same worker, and what it makes of the result, which it
+	// finds in r, takes the place of it everywhere. It must never make a design
+	// better: one that the front beats is not confirmed, and never joins it.
+	// What holds for Evaluate holds for Confirm.
+	Confirm func(worker, space int, x []float64, r *Result)
 }
 
 // check returns what is wrong with the problem, all of it, or nil.

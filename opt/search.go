@@ -48,6 +48,7 @@ type run struct {
 	left    int // evaluations not yet given out
 
 	archive     Archive
+	snapshot    *Archive // goals of archive after the last merge, for designs handed in since; nil without Problem.Confirm
 	misses      misses
 	reference   []float64
 	early       [][]float64 // goals of the feasible designs until reference is fixed
@@ -83,7 +84,11 @@ func archiveLimit(front int) int { return max(1000, 7*front) }
 // evolve lets eaopt run the generations: one population per space, which it
 // sets up, applies the model to side by side, and orders.
 func (r *run) evolve() error {
+	if r.problem.Confirm != nil {
+		r.snapshot = new(Archive)
+	}
 	for _, l := range r.islands {
+		l.pending.front = r.snapshot
 		r.ev.submit(l.pending)
 	}
 	for _, l := range r.islands {
@@ -166,6 +171,9 @@ func (r *run) merge() {
 	}
 	if r.feasible >= referenceSample {
 		r.fixReference()
+	}
+	if r.snapshot != nil {
+		r.snapshot = &Archive{goals: slices.Clone(r.archive.goals), m: r.archive.m}
 	}
 }
 

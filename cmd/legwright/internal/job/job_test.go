@@ -48,7 +48,8 @@ func TestSearchFindsTheBestConditionNumber(t *testing.T) {
 	}
 }
 
-// A box and the file of its poses are the same duty.
+// A box and the file of its poses are the same duty, but for what lies between the poses of the box: there
+// values may be worse, never better.
 func TestBoxAndPoseFileAgree(t *testing.T) {
 	box, file := load(t, studyA+"box.yaml"), load(t, studyA+"ranges.yaml")
 	values := []float64{0.65, 0.40, 18 * math.Pi / 180, 12 * math.Pi / 180, 0.85, 0.62, 0.40}
@@ -58,8 +59,19 @@ func TestBoxAndPoseFileAgree(t *testing.T) {
 		if r.Measure.Mean { // a file's corners count in averages, a box's do not
 			continue
 		}
-		if o == nil || math.Abs(o.Value-r.Value) > 1e-12*math.Abs(r.Value) {
-			t.Errorf("%s: box %v, file %v", r.Measure.Name, r.Value, o)
+		if o == nil {
+			t.Errorf("%s: box %v, file none", r.Measure.Name, r.Value)
+			continue
+		}
+		worse := r.Value - o.Value
+		if r.Measure.Sense == objective.Larger {
+			worse = -worse
+		}
+		if r.Measure.Sense == objective.Either { // leg_min falls, the stroke grows
+			worse = math.Abs(worse)
+		}
+		if worse < -1e-12*math.Abs(r.Value) || worse > 0.05*math.Abs(o.Value) {
+			t.Errorf("%s: box %v, file %v", r.Measure.Name, r.Value, o.Value)
 		}
 	}
 }

@@ -3,6 +3,7 @@ package job
 import (
 	"context"
 	"runtime"
+	"slices"
 	"sync"
 	"time"
 
@@ -95,7 +96,7 @@ func (s *Study) front(out *opt.Outcome, r *Run) *study.Front {
 	f := &study.Front{
 		Format: study.Format, Program: Program(), Title: s.Brief.Title, Seed: r.Seed,
 		Status: out.Status.String(), StoppedBy: stoppedBy(out.Status), Evaluations: out.Evaluations, Budget: r.Part.Share(r.Evaluations), Feasible: out.Feasible, Population: out.Population,
-		Poses: len(s.Tasks[0].Samples()), Hypervolume: study.Number(out.Hypervolume),
+		Poses:   len(s.Tasks[0].Samples()),
 		Weights: s.Brief.Ranking.Weights,
 		Designs: []study.Design{},
 		Notes:   s.Notes(),
@@ -110,7 +111,8 @@ func (s *Study) front(out *opt.Outcome, r *Run) *study.Front {
 			f.ReferencePoint = append(f.ReferencePoint, study.Number(s.turn(i, out.Reference[i])))
 		}
 	}
-	f.Designs = s.records(s.appraise(out.Front, r.Workers))
+	front, volume := s.settle(s.appraise(out.Front, r.Workers), out)
+	f.Designs, f.Hypervolume = s.records(front), study.Number(volume)
 	f.Notes = append(f.Notes, s.ends(f.Designs)...)
 	f.Compare(s.families(out, r.Workers))
 	if len(f.Designs) == 0 {
@@ -169,18 +171,24 @@ func (s *Study) problem(workers int) opt.Problem {
 			screens[w] = append(screens[w], objective.NewScreen(s.Tasks[i], plan))
 		}
 	}
-	p.Evaluate = func(worker, space int, x []float64, r *opt.Result) {
-		defer func() {
-			if p := recover(); p != nil { // the scratch may be left half done
-				screens[worker][space] = objective.NewScreen(s.Tasks[space], s.Plans[space])
-				r.Fault = fault(p)
-			}
-		}()
-		score := &scores[worker]
-		screens[worker][space].Judge(x, score)
-		copy(r.Goals, score.Goals)
-		copy(r.Excess, score.Excess)
-		r.Violation = score.Violation
+	with := func(judge func(sc *objective.Screen, x []float64, score *objective.Score)) func(worker, space int, x []float64, r *opt.Result) {
+		return func(worker, space int, x []float64, r *opt.Result) {
+			defer func() {
+				if p := recover(); p != nil { // the scratch may be left half done
+					screens[worker][space] = objective.NewScreen(s.Tasks[space], s.Plans[space])
+					r.Fault = fault(p)
+				}
+			}()
+			score := &scores[worker]
+			judge(screens[worker][space], x, score)
+			copy(r.Goals, score.Goals)
+			copy(r.Excess, score.Excess)
+			r.Violation = score.Violation
+		}
+	}
+	p.Evaluate = with((*objective.Screen).Judge)
+	if slices.ContainsFunc(screens[0], (*objective.Screen).Refines) {
+		p.Confirm = with(func(sc *objective.Screen, _ []float64, score *objective.Score) { sc.Confirm(score) })
 	}
 	return p
 }
