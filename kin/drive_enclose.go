@@ -21,7 +21,8 @@ type loop struct {
 	sine enclose.Quad    // of u and e3
 }
 
-// rounding is more than the relative error of rooms in plain arithmetic.
+// rounding is more than the relative error of rooms in plain arithmetic, a drive's unit vectors being so up to rounding; a
+// 16th of it is more than the latter alone.
 const rounding = 0x1p-44
 
 // enclose closes the loop over the box.
@@ -44,6 +45,7 @@ func (l *rodLeg) turn(o *loop) {
 	g.AddConst(g.Scale(&g, l.k), l.k0-l.length)
 	c.Along(&o.w, l.e3)
 	o.room.AddConst(o.room.Neg(o.room.Sum2(&g, &g, &c, &c)), l.rod*l.rod)
+	o.room.R += o.edge / 16
 	h.Scale(h.Sqrt(&o.room), l.mode)
 
 	a.Along(&o.w, l.e1)
@@ -79,12 +81,13 @@ func (l *rodLeg) slide(o *loop) {
 	f1, f2 := square(l.e1)
 	x.Along(&o.w, f1)
 	y.Along(&o.w, f2)
-	o.room.AddConst(o.room.Neg(o.room.Sum2(&x, &x, &y, &y)), l.rod*l.rod)
-	h.Scale(h.Sqrt(&o.room), l.mode)
 	a.Along(&o.w, l.e1)
 	low, high := a.Bounds()
 	far := max(-low, high) + l.rod
 	o.edge = rounding * far * far
+	o.room.AddConst(o.room.Neg(o.room.Sum2(&x, &x, &y, &y)), l.rod*l.rod)
+	o.room.R += o.edge / 16
+	h.Scale(h.Sqrt(&o.room), l.mode)
 	o.q.Add(&a, &h)
 
 	inv.Scale(inv.InvSqrt(&o.room), l.mode)
