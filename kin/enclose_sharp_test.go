@@ -119,3 +119,35 @@ func TestEnclosuresAreSharp(t *testing.T) {
 		})
 	}
 }
+
+// Where Move finds a dimension that is no finite number, nothing is known of a box.
+func TestEnclosureOfDimensionsThatAreNoNumbers(t *testing.T) {
+	for _, f := range kin.Families() {
+		wrong := 0
+		for i := range f.Dimensions {
+			for _, v := range []float64{math.NaN(), math.Inf(1), math.Inf(-1)} {
+				d := sound(f)
+				d[i] = v
+				m := f.Build(d, offCentre())
+				var (
+					s kin.State
+					e kin.Enclosure
+					b = about(f, kin.Coords{}, 0.01)
+					p = atHome()
+				)
+				m.Move(&p, &s)
+				encloser(t, f, m).Enclose(&b, &e)
+				if s.Fail == kin.Reached {
+					continue
+				}
+				wrong++
+				if e.Reach == kin.AllReach {
+					t.Errorf("%s: all reached with %s %g, where Move fails", f.Name, f.Dimensions[i].Name, v)
+				}
+			}
+		}
+		if wrong < 6 {
+			t.Errorf("%s: Move failed only %d times", f.Name, wrong)
+		}
+	}
+}
