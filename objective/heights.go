@@ -6,8 +6,8 @@ import (
 	"legwright/kin"
 )
 
-// Heights are how high the platform stands above the base origin, along z of the base frame: over the required poses
-// that count (Task.Coverage), and where all actuators are at one end of their range.
+// Heights are how high the platform stands above the base origin, along z of the base frame: over the sampled poses
+// that count (Task.Coverage) and those that decide worst values, and where all actuators are at one end of their range.
 type Heights struct {
 	Home             float64 // platform origin
 	Lowest, Highest  float64 // platform origin over the duty; infinite where no pose counts
@@ -44,10 +44,9 @@ func PlatformHeights(t *Task, a *Appraisal) Heights {
 	l := newPoseLimits(t, v, a.Plan, &d)
 	f := a.Machine.Frame()
 	h := Heights{Home: f.Home.Z, Lowest: inf(), Highest: -inf(), Under: inf(), Over: -inf()}
-	for k := range t.samples {
-		s := &t.samples[k]
-		if t.soft() && l.fails(s) != "" || !v.at(s, k, 0) {
-			continue
+	look := func(s *Sample) {
+		if !v.at(s, -1, 0) {
+			return
 		}
 		origin, rot := a.Machine.Place(v.stand)
 		if origin.Z < h.Lowest {
@@ -60,6 +59,14 @@ func PlatformHeights(t *Task, a *Appraisal) Heights {
 			z := origin.Z + rot.Apply(b).Z
 			h.Under, h.Over = math.Min(h.Under, z), math.Max(h.Over, z)
 		}
+	}
+	for k := range t.samples {
+		if s := &t.samples[k]; !t.soft() || l.fails(s) == "" {
+			look(s)
+		}
+	}
+	for _, s := range a.deciding() {
+		look(s)
 	}
 	for i := range h.Ends {
 		h.Ends[i] = a.end(v, float64(i))

@@ -6,8 +6,8 @@ import (
 	"legwright/kin"
 )
 
-// JointLoad is what one joint exerts on its plate in one case, over the required poses that count
-// (Task.Coverage) in the case's zones: three forces (N) and three moments about the joint's centre (N m), base
+// JointLoad is what one joint exerts on its plate in one case, over the sampled poses that count
+// (Task.Coverage) in the case's zones, and the poses that decide the appraisal's worst values: three forces (N) and three moments about the joint's centre (N m), base
 // axes. Least and Most are exact at each pose, for each load's sets taken independently. They are infinite where
 // a pose is singular.
 type JointLoad struct {
@@ -51,16 +51,10 @@ func JointForces(t *Task, a *Appraisal) []CaseLoads {
 		out[c] = newCaseLoads(c, s.joints)
 	}
 	var w spread
-	for k := range t.samples {
-		p := &t.samples[k]
-		if t.soft() {
-			if l.fails(p) != "" {
-				continue
-			}
-		}
+	look := func(p *Sample) {
 		v.keep = 0
-		if !v.at(p, k, NeedMatrix) {
-			continue
+		if !v.at(p, -1, NeedMatrix) {
+			return
 		}
 		held := s.at(v)
 		for _, c := range v.active[p.Zone] {
@@ -71,6 +65,34 @@ func JointForces(t *Task, a *Appraisal) []CaseLoads {
 			w.at(&v.demands[c], v.stand, t.Gravity, v.invLc)
 			out[c].look(&w, s, p, v)
 		}
+	}
+	for k := range t.samples {
+		if p := &t.samples[k]; !t.soft() || l.fails(p) == "" {
+			look(p)
+		}
+	}
+	for _, p := range a.deciding() {
+		look(p)
+	}
+	return out
+}
+
+// deciding are the poses at which worst values are met: samples, and poses between them.
+func (a *Appraisal) deciding() []*Sample {
+	var out []*Sample
+	put := func(s *Sample) {
+		if s != nil {
+			out = append(out, s)
+		}
+	}
+	for i := range a.Readings {
+		if a.Readings[i].Measure.Scan != nil {
+			put(a.Readings[i].Pose)
+		}
+	}
+	for i := range a.Legs {
+		put(a.Legs[i].LeastAt)
+		put(a.Legs[i].MostAt)
 	}
 	return out
 }

@@ -1,7 +1,9 @@
 package handover
 
 import (
+	"cmp"
 	"math"
+	"slices"
 
 	"legwright/cmd/legwright/internal/drawing"
 )
@@ -16,11 +18,14 @@ func (p *plan) dimensions(d *design, first float64, low drawing.Point) {
 	switch {
 	case p.radius > 0:
 		p.Distance(drawing.Point{X: -p.radius}, drawing.Point{X: p.radius}, low.Y-17*k, "Ø "+mm(2*p.radius))
-		if len(p.ring) == 6 {
-			p.paired(first)
-		} else {
+		switch {
+		case len(p.ring) < 6:
 			p.single()
+		case !p.paired(first):
+			p.chain()
 		}
+	case len(p.ring) > 2:
+		p.chain()
 	case len(p.ring) == 2 && p.ring[0].Point != p.ring[1].Point: // the pivots of a five-bar
 		p.Distance(p.ring[0].Point, p.ring[1].Point, low.Y-12*k, mm(apart(p.ring[0], p.ring[1])))
 	case len(p.holes) == 2 && len(p.ring) == 1: // column and shoulder
@@ -43,8 +48,8 @@ func apart(a, b mark) float64 { return math.Hypot(a.X-b.X, a.Y-b.Y) }
 func angleOf(m mark) float64 { return azimuth(m.X/1000, m.Y/1000) }
 
 // paired dimensions six joints in three pairs that are centred 120° apart, the first at the azimuth: the half-angle
-// and the distances within a pair and between pairs. Of joints that do not stand so, the table has the places.
-func (p *plan) paired(first float64) {
+// and the distances within a pair and between pairs. It reports false where they do not stand so.
+func (p *plan) paired(first float64) bool {
 	const third = 2 * math.Pi / 3
 	// the joints before and after the first pair's centre, and the one after that
 	var before, after, next *mark
@@ -61,7 +66,7 @@ func (p *plan) paired(first float64) {
 		a := math.Remainder(angleOf(*m)-first, 2*math.Pi)
 		turn := math.Remainder(a, third)
 		if math.Abs(math.Abs(turn)-half) > 1e-9 {
-			return // not in equal pairs
+			return false // not in equal pairs
 		}
 		if math.Abs(a+half) < 1e-9 {
 			before = m
@@ -71,7 +76,7 @@ func (p *plan) paired(first float64) {
 		}
 	}
 	if before == nil || after == nil || next == nil {
-		return
+		return false
 	}
 	for i := range 3 {
 		a := first + float64(i)*third
@@ -81,6 +86,18 @@ func (p *plan) paired(first float64) {
 	p.Angle(drawing.Point{}, 0.3*p.radius, first+third, first+2*third, deg(third))
 	p.outside(*before, *after)
 	p.outside(*after, *next)
+	return true
+}
+
+// chain dimensions the distance of each joint from the next one about the origin. The table has their places.
+func (p *plan) chain() {
+	round := slices.Clone(p.ring)
+	slices.SortStableFunc(round, func(a, b mark) int { return cmp.Compare(angleOf(a), angleOf(b)) })
+	for i, a := range round {
+		if b := round[(i+1)%len(round)]; apart(a, b) > 1e-6 {
+			p.Distance(a.Point, b.Point, -6*p.Scale, mm(apart(a, b)))
+		}
+	}
 }
 
 // single dimensions a few joints by their angles, each from the one before, the first from +x, and the distance of the first two.

@@ -43,7 +43,7 @@ func (d *design) forces() []byte {
 	}
 	t := d.sheet("joint forces, largest", append(heads, poseHeads...)...)
 	t.note("forces", signs)
-	t.note("least and most", "of each component over the case's sets and the sampled poses in its zones: exact at each pose, each load's sets taken independently; not simultaneous")
+	t.note("least and most", "of each component over the case's sets, the sampled poses in its zones and the worst poses found between them: exact at each pose, each load's sets taken independently; not simultaneous, and not a proof for all poses")
 	t.note("resultant", "largest size of the force (fx fy fz), with the components then and the pose about home; exact: the joint's force has one direction at a pose; found: it has not, a climb over the sets found this one")
 	d.open(t)
 	cases := d.loads()

@@ -11,7 +11,7 @@ import (
 // heights is the table of how high the platform stands.
 func (d *design) heights() []byte {
 	t := d.sheet("heights of the platform", append([]string{"what", "height_mm", "remark"}, poseHeads...)...)
-	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top; over the sampled poses of the duty, not a proof between them")
+	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top; over the sampled poses of the duty and the worst poses found between them, not a proof")
 	if f := d.a.Plan.Family; !f.Has(kin.Z) {
 		t.note("plane", "the platform moves in its plane alone")
 	}

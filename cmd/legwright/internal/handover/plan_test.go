@@ -181,7 +181,7 @@ func TestPlansAgainstCoordinates(t *testing.T) {
 	}
 }
 
-// A machine by its joint centres, which stand on no circle: the plan has them, and no pitch circle.
+// A machine by its joint centres, which stand on no circle: the plan has them and their distances, and no pitch circle.
 func TestPlanOfAnAsymmetricMachine(t *testing.T) {
 	f := kin.FamilyNamed("6-UPS")
 	task := starterTask(f)
@@ -208,6 +208,8 @@ func TestPlanOfAnAsymmetricMachine(t *testing.T) {
 			}
 		}
 	}
+	checkPlan(t, files["base.svg"], drawn(t, files, onBase))
+	checkPlan(t, files["platform.svg"], drawn(t, files, onPlatform))
 	_, _, joints := read(t, files["joints.csv"])
 	for _, row := range joints {
 		if row["point"] == "B3" {
