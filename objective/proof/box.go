@@ -40,6 +40,7 @@ type bench struct {
 	cond    conditioner
 	rest    rests
 	s       [6]support
+	speed   support
 	half    [6]line
 	rot     [9]line
 	tie     [36]line

@@ -162,13 +162,13 @@ func sided(k kind, high, low float64) float64 {
 
 // speeds tests the properties about rates and power.
 func (b *bench) speeds(c *payload, left uint64) uint64 {
-	var s support
+	s := &b.speed
 	var row [6]line
 	for i := range b.legs {
 		for k := range row {
 			row[k].take(&b.e.J[6*i+k], b.region.moving)
 		}
-		c.rate(&row, &s)
+		c.rate(&row, s)
 		h, excess := s.half()
 		speed := h.most()
 		for p := range b.props {

@@ -246,3 +246,27 @@ func mustSubject(t *objective.Task, family string, values []float64) *subject {
 	s, _ := newSubject(t, planOf(t, family, values), values)
 	return s
 }
+
+func TestBoxesAllocateNothing(t *testing.T) {
+	task := studyA(1)
+	task.Cases = loads()
+	limited(task, kin.FamilyNamed("6-UPS"), "base_swing", "leg_clearance", "conditioning", "leg_force", "leg_speed", "leg_power")
+	values := front(t, 20)
+	s := mustSubject(task, "6-UPS", values)
+	b := newBench(s)
+	g := regions(task.Zones)
+	b.enter(&g[0])
+	for i := range s.props {
+		s.aim(i, s.props[i].Limit)
+		if s.props[i].kind == conditioned {
+			s.aim(i, 0.1)
+		}
+	}
+	box := g[0].box
+	for q := range box.Low {
+		box.Low[q], box.High[q] = 0.2*box.Low[q], 0.2*box.High[q]
+	}
+	if n := testing.AllocsPerRun(20, func() { b.prove(&box, 1<<len(s.props)-1) }); n != 0 {
+		t.Errorf("a box allocates %g times", n)
+	}
+}
