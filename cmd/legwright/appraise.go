@@ -16,7 +16,7 @@ import (
 func newAppraise(c *common) *cobra.Command {
 	var (
 		briefFile, posesFile string
-		modes                bool
+		modes, strokes       bool
 	)
 	cmd := &cobra.Command{
 		Use:   "appraise DESIGN",
@@ -51,6 +51,14 @@ with 3 if a limit does not hold.`,
 				c.hint("wrote %d poses to %s", a.Poses, posesFile)
 			}
 			d := study.FromAppraisal(task, a)
+			if strokes {
+				w, ok := objective.Strokes(task, plan, a.Values)
+				if !ok {
+					c.hint("--whole-stroke: the design has no actuator range, or home is singular; nothing was followed")
+				} else {
+					d.WholeStroke = study.WholeStrokeOf(w)
+				}
+			}
 			if c.json {
 				err = printJSON(c.out, d)
 			} else {
@@ -68,5 +76,6 @@ with 3 if a limit does not hold.`,
 	cmd.Flags().StringVar(&briefFile, "brief", "", "brief to judge by, in place of the one that the design file names")
 	cmd.Flags().StringVar(&posesFile, "poses", "", "write what the design does at every pose to a CSV `file`")
 	cmd.Flags().BoolVar(&modes, "modes", false, "also the distance to other assembly modes of a platform that tilts, which takes some seconds")
+	cmd.Flags().BoolVar(&strokes, "whole-stroke", false, "also where the platform goes when actuators run to the ends of their strokes, outside the duty")
 	return cmd
 }

@@ -120,6 +120,7 @@ func (s *Study) front(out *opt.Outcome, r *Run) *study.Front {
 	}
 	f.Failures, f.Failed = out.Failures, s.failed(out)
 	study.Rank(f, f.Weights)
+	s.strokes(f)
 	return f
 }
 

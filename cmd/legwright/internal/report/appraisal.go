@@ -27,6 +27,7 @@ func Appraisal(w io.Writer, d *study.Design, p Page) error {
 	s.legs(d, poses)
 	s.poses(poses)
 	s.excursions(d)
+	s.wholeStroke(d)
 	s.leftOut(d.Poses, d.Notes, study.FullCaution)
 	return s.to(w)
 }

@@ -69,6 +69,11 @@ func (f *Front) mark(values [][]float64, maximise []bool) {
 		}
 	}
 	give(f.roomiest(), MarkMargin)
+	for i := range f.Designs {
+		if w := f.Designs[i].WholeStroke; w != nil && w.Singular+w.AloneCross > 0 {
+			give(i, MarkCrosses)
+		}
+	}
 }
 
 // roomiest is the design whose tightest limit has the largest margin, -1 if that tells no one apart.

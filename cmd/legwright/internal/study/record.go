@@ -73,22 +73,23 @@ type Goal struct {
 
 // Design is one design of the front, or one that was appraised alone.
 type Design struct {
-	ID         string            `json:"id"` // 001, 002, …
-	Rank       int               `json:"rank"`
-	Score      Number            `json:"score"` // TOPSIS closeness, 0 to 1
-	Family     string            `json:"family"`
-	Feasible   bool              `json:"feasible"`
-	Dimensions map[string]Number `json:"dimensions"`
-	Measures   map[string]Number `json:"measures"`
-	Unbounded  map[string]bool   `json:"unbounded,omitempty"` // measures that are null
-	Worst      map[string]Worst  `json:"worst"`
-	Joints     Joints            `json:"joints"`
-	Limits     []Limit           `json:"limits"`
-	Legs       []Leg             `json:"legs"`
-	Excursions []Excursion       `json:"excursions,omitempty"`
-	Marks      []string          `json:"marks"`
-	Notes      []string          `json:"notes,omitempty"`
-	Poses      int               `json:"poses,omitempty"` // required poses at which it was judged
+	ID          string            `json:"id"` // 001, 002, …
+	Rank        int               `json:"rank"`
+	Score       Number            `json:"score"` // TOPSIS closeness, 0 to 1
+	Family      string            `json:"family"`
+	Feasible    bool              `json:"feasible"`
+	Dimensions  map[string]Number `json:"dimensions"`
+	Measures    map[string]Number `json:"measures"`
+	Unbounded   map[string]bool   `json:"unbounded,omitempty"` // measures that are null
+	Worst       map[string]Worst  `json:"worst"`
+	Joints      Joints            `json:"joints"`
+	Limits      []Limit           `json:"limits"`
+	Legs        []Leg             `json:"legs"`
+	Excursions  []Excursion       `json:"excursions,omitempty"`
+	WholeStroke *WholeStroke      `json:"whole_stroke,omitempty"`
+	Marks       []string          `json:"marks"`
+	Notes       []string          `json:"notes,omitempty"`
+	Poses       int               `json:"poses,omitempty"` // required poses at which it was judged
 }
 
 // Worst is what decides a measure.
