@@ -12,7 +12,7 @@ func BenchmarkFiles(b *testing.B) {
 		b.Run(name, func(b *testing.B) {
 			f := kin.FamilyNamed(name)
 			task := starterTask(f)
-			a := appraised(b, f, task, 0.3)
+			a := appraised(f, task, 0.3)
 			for b.Loop() {
 				Files(task, a, wicked)
 			}

@@ -2,6 +2,7 @@ package handover
 
 import (
 	"math"
+	"sync"
 	"testing"
 
 	"legwright/kin"
@@ -34,13 +35,12 @@ func starterTask(f *kin.Family) *objective.Task {
 }
 
 // appraised is a regular design within the family's usual ranges, part of the way up each, its actuators sized.
-func appraised(t testing.TB, f *kin.Family, task *objective.Task, part float64) *objective.Appraisal {
-	return appraisedWith(t, f, task, part, "", 0)
+func appraised(f *kin.Family, task *objective.Task, part float64) *objective.Appraisal {
+	return appraisedWith(f, task, part, "", 0)
 }
 
 // appraisedWith is the same with one dimension set otherwise.
-func appraisedWith(t testing.TB, f *kin.Family, task *objective.Task, part float64, dimension string, value float64) *objective.Appraisal {
-	t.Helper()
+func appraisedWith(f *kin.Family, task *objective.Task, part float64, dimension string, value float64) *objective.Appraisal {
 	values := make([]float64, len(f.Dimensions))
 	specs := make([]objective.Spec, len(values))
 	least, span := f.Range()
@@ -64,13 +64,25 @@ func appraisedWith(t testing.TB, f *kin.Family, task *objective.Task, part float
 var wicked = Title{Program: "legwright 0.1.0", Design: "007", Hash: "0123456789abcdef",
 	Brief: "=HYPERLINK(\"x\") </text><script>alert(1)</script> & 100 %%c ^J \\U+0041 ;=1+1 \u202e\n0\nEOF Ä €"}
 
+// made is a design of every family with its sheets, made once for all tests; they do not change it.
+var made = sync.OnceValue(func() (out []handed) {
+	for _, f := range kin.Families() {
+		task := starterTask(f)
+		a := appraised(f, task, 0.3)
+		out = append(out, handed{f.Name, &design{task: task, a: a, title: wicked, plan: newModel(a)}, Files(task, a, wicked)})
+	}
+	return out
+})
+
+type handed struct {
+	family string
+	d      *design
+	files  map[string][]byte
+}
+
 // everyFamily runs check on a design of every family.
 func everyFamily(t *testing.T, check func(t *testing.T, d *design, files map[string][]byte)) {
-	for _, f := range kin.Families() {
-		t.Run(f.Name, func(t *testing.T) {
-			task := starterTask(f)
-			a := appraised(t, f, task, 0.3)
-			check(t, &design{task: task, a: a, title: wicked, plan: newModel(a)}, Files(task, a, wicked))
-		})
+	for _, h := range made() {
+		t.Run(h.family, func(t *testing.T) { check(t, h.d, h.files) })
 	}
 }

@@ -121,7 +121,7 @@ func TestDesignThatReachesNothing(t *testing.T) {
 	for name, dimension := range map[string]string{"delta": "home_height", "6-RUS": "home_height", "linear-delta": "rail_radius", "five-bar": "home_y", "level-arm": "home_reach"} {
 		f := kin.FamilyNamed(name)
 		task := starterTask(f)
-		a := appraisedWith(t, f, task, 0.3, dimension, 20)
+		a := appraisedWith(f, task, 0.3, dimension, 20)
 		files := Files(task, a, wicked)
 		block, _, joints := read(t, files["joints.csv"])
 		if !strings.Contains(block["home"], "does not reach home") {

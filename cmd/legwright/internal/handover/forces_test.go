@@ -116,7 +116,7 @@ func TestNoCases(t *testing.T) {
 	f := kin.FamilyNamed("6-UPS")
 	task := starterTask(f)
 	task.Cases = nil
-	files := Files(task, appraised(t, f, task, 0.3), wicked)
+	files := Files(task, appraised(f, task, 0.3), wicked)
 	for _, name := range []string{"forces.csv", "forces-together.csv"} {
 		block, _, rows := read(t, files[name])
 		if len(rows) != 0 || !strings.Contains(block["cases"], "no cases") {

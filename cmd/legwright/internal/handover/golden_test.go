@@ -23,7 +23,7 @@ func TestGolden(t *testing.T) {
 		f := kin.FamilyNamed(name)
 		task := starterTask(f)
 		title := Title{Program: "legwright 0.1.0", Design: "001", Brief: f.Starter.Title, Hash: "2c26b46b68ffc68ff99b453c1d30413413422d706483bfa0f98a5e886266e7ae"}
-		files := Files(task, appraised(t, f, task, 0.3), title)
+		files := Files(task, appraised(f, task, 0.3), title)
 		for _, s := range sheets {
 			path := filepath.Join("testdata", name, s)
 			if *update {
