@@ -1,6 +1,10 @@
 package proof
 
-import "math"
+import (
+	"math"
+
+	"legwright/kin/linalg"
+)
 
 // conditioner proves bounds of the singular values of a family of matrices.
 //
@@ -119,13 +123,19 @@ func (z *conditioner) below(m *family, p *polar, most float64) (ok bool, vertex 
 	}
 }
 
-// stretch is an upper bound of σmax at the vertex in work: the linear guess where it holds, else something larger.
+// stretch is an upper bound of σmax at the vertex in work: the linear guess where it holds. Where several singular values
+// are near to each other it does not; then σmax is worked out, and the bound holds a little above that.
 func (z *conditioner) stretch(n int, guess, eta, rounding float64) float64 {
-	for range 4 {
-		if most := guess + eta; z.within(n, most) {
-			return most + rounding
-		}
-		eta *= 3
+	if most := guess + eta; z.within(n, most) {
+		return most + rounding
+	}
+	var own [36]float64
+	for i := range n {
+		copy(own[n*i:n*i+n], z.j[6*i:6*i+n])
+	}
+	_, hi := linalg.Singular(n, &own)
+	if most := hi * (1 + 1e-9); z.within(n, most) {
+		return most + rounding
 	}
 	return z.j.norm() + rounding
 }
