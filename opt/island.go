@@ -47,6 +47,11 @@ func newIsland(r *run, index int) *island {
 		xs[i] = g.x
 	}
 	l.dom.latin(xs, rng)
+	for i, d := range r.set.startsOf(index) {
+		if i < len(xs) {
+			l.dom.fit(xs[i], d)
+		}
+	}
 	for _, g := range l.sample {
 		if l.breed.fresh(g) {
 			l.pending.designs = append(l.pending.designs, g)

@@ -44,6 +44,10 @@ type Settings struct {
 	// Polish is the largest share of the budget that Nelder-Mead may take,
 	// below 1. 0 means the default of 0.05; negative means none.
 	Polish float64
+	// Start are designs that the first sample holds, as many as fit: what an
+	// earlier search of a similar problem has found. Values out of range are
+	// brought into it. They are evaluated anew and count like others.
+	Start []Start
 	// NearMisses is how many infeasible designs to keep, 0 means 50.
 	NearMisses int
 	// Archive asks for Outcome.Kept.
@@ -112,6 +116,11 @@ func (s Settings) resolve(p *Problem) (Settings, error) {
 	count("Workers", &s.Workers, runtime.GOMAXPROCS(0), 1)
 	count("Front", &s.Front, defaultFront, 1)
 	count("NearMisses", &s.NearMisses, defaultNearMisses, 1)
+	for i, d := range s.Start {
+		if d.Space < 0 || d.Space >= len(p.Spaces) || len(d.X) != len(p.Spaces[d.Space].Vars) {
+			bad("Start[%d] is of space %d with %d variables; the problem has no such space", i, d.Space, len(d.X))
+		}
+	}
 	if s.Reference != nil && len(s.Reference) != p.Goals {
 		bad("Reference has %d values; one per goal, %d, are needed", len(s.Reference), p.Goals)
 	}

@@ -10,12 +10,16 @@ const (
 	mostOf4    = 60 // volumes of four goals are dear
 )
 
-// startSize returns the population per space at the start of a search.
+// startSize returns the population per space at the start of a search: with
+// start designs, room for them and for half of them in others.
 func startSize(p *Problem, s *Settings) int {
 	budget := s.Evaluations / len(p.Spaces)
 	start := s.Population
 	if start == 0 {
 		start = min(usualStart, max(leastPerSpace, budget/10))
+	}
+	for i := range p.Spaces {
+		start = max(start, 3*len(s.startsOf(i))/2)
 	}
 	return min(start, budget)
 }
