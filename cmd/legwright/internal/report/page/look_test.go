@@ -32,6 +32,7 @@ func TestLook(t *testing.T) {
 			t.Fatal(err)
 		}
 		p.quiet()
+		p.do(chromedp.EmulateReset(), chromedp.Sleep(200e6))
 		pdf, err := chromedp.Run(p.ctx, chromedp.PrintToPDF(chromedp.PDFPreferCSSPageSize(), chromedp.PDFPrintBackground()))
 		if err != nil {
 			t.Fatal(err)

@@ -54,6 +54,7 @@ func search(name string, evaluations int) (*searched, error) {
 // need gives a study or ends the test.
 func need(t testing.TB, get func() (*searched, error)) *searched {
 	t.Helper()
+	chromium(t) // nothing to search for without a browser
 	v, err := get()
 	if err != nil {
 		t.Fatal(err)

@@ -36,16 +36,21 @@ function reach(points) {
   return { centre, radius: radius || 1 };
 }
 
+const ABOVE = { turn: 0, tilt: Math.PI / 2, zoom: 1 };
+
+// usualView is where a design is looked at from first: machines that stay in a plane from above.
+const usualView = (d) => (["z", "roll", "pitch"].some((c) => d.fam.freedoms.includes(c)) ? SLANTED : ABOVE);
+
 // VIEWS are the directions that buttons look from.
 const VIEWS = [
   ["slanted", SLANTED],
   ["from the front", { turn: 0, tilt: 0, zoom: 1 }],
   ["from the side", { turn: -Math.PI / 2, tilt: 0, zoom: 1 }],
-  ["from above", { turn: 0, tilt: Math.PI / 2, zoom: 1 }],
+  ["from above", ABOVE],
 ];
 
-// steer lets pointer and keys turn and zoom a drawing; changed draws it again.
-function steer(node, eye, changed) {
+// steer lets pointer and keys turn and zoom a drawing; changed draws it again, usual is the view that 0 sets.
+function steer(node, eye, usual, changed) {
   let from = null;
   const turn = (right, up) => {
     eye.turn += right;
@@ -76,7 +81,7 @@ function steer(node, eye, changed) {
     ArrowLeft: () => turn(0.1, 0), ArrowRight: () => turn(-0.1, 0),
     ArrowUp: () => turn(0, 0.1), ArrowDown: () => turn(0, -0.1),
     "+": () => zoom(1.2), "=": () => zoom(1.2), "-": () => zoom(1 / 1.2),
-    0: () => { Object.assign(eye, SLANTED); changed(); },
+    0: () => { Object.assign(eye, usual()); changed(); },
   };
   node.addEventListener("keydown", (e) => {
     if (!keys[e.key] || e.ctrlKey || e.metaKey || e.altKey) return;

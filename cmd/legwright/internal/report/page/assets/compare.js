@@ -38,6 +38,7 @@ function compareView(store, place) {
     path.hidden = !(a.detail && b.detail && data.path.length);
     slider.value = 0;
     empty(legend, h("b", { class: "ina" }, `${a.id} full lines`), ", ", h("b", { class: "inb" }, `${b.id} dashed`), path.hidden ? "; both at home, on one base frame" : "; on one base frame");
+    view.look(usualView(a));
     show([...allPoints(model, a), ...allPoints(model, b)]);
     empty(numbers, table("Differences are those from the first to the second; ▲ better, ▼ worse", ["", num(a.id), num(b.id), num("difference"), ""], differences(model, a, b), { class: "differences" }));
   }

@@ -8,7 +8,7 @@ function firstView(store, place) {
     const d = model.designs[f.design];
     return { d, figure: atPose(d, 0).figure, why: [...d.marks, ...(f.near || []).map((m) => `near ${m}`)] };
   });
-  const drawings = thumbnails(few.map((c) => c.figure), data.hanging, few.map(({ d }) => `${d.family} ${d.id} at home; all are drawn to one scale`));
+  const drawings = thumbnails(few.map((c) => c.figure), few.some(({ d }) => usualView(d) === SLANTED) ? SLANTED : ABOVE, data.hanging, few.map(({ d }) => `${d.family} ${d.id} at home; all are drawn to one scale`));
   const picks = few.map(({ d }) => button(d.id, () => store.pick(d.index), { class: "pick big", "aria-pressed": "false", "data-pick": d.id, "aria-label": `design ${d.id}: open its sheet below` }));
   const heads = few.map((_, k) => h("th", { scope: "col" }, picks[k], drawings[k]));
   const row = (name, cells, attrs) => h("tr", attrs || {}, h("th", { scope: "row" }, name), cells);

@@ -58,8 +58,8 @@ function groundOf(points) {
 }
 
 // thumbnails are small drawings of machines at home, all to one scale and with their bases at one height.
-function thumbnails(figures, hanging, labels) {
-  const see = sight(SLANTED, hanging), zero = see([0, 0, 0]);
+function thumbnails(figures, view, hanging, labels) {
+  const see = sight(view, hanging), zero = see([0, 0, 0]);
   const seen = figures.map((f) => f.points.map((p) => { const q = see(p); return [q[0] - zero[0], q[1] - zero[1]]; }));
   const xs = seen.map((list) => [Math.min(...list.map((q) => q[0])), Math.max(...list.map((q) => q[0]))]);
   const ys = seen.flat().map((q) => q[1]);
@@ -78,7 +78,7 @@ function machineView(place, label, unit) {
   const eye = camera();
   const group = s("g", {}), rule = s("g", { class: "rule" });
   const svg = s("svg", { class: "view", tabindex: "0", role: "img", "aria-label": `${label}. Arrow keys turn it, plus and minus zoom, 0 resets.` }, group, rule);
-  let layers = [], ball = { centre: [0, 0, 0], radius: 1 }, ground = groundOf([]), hanging = false;
+  let usual = SLANTED, layers = [], ball = { centre: [0, 0, 0], radius: 1 }, ground = groundOf([]), hanging = false;
 
   function draw() {
     svg.setAttribute("viewBox", `${-W / 2} ${-H / 2} ${W} ${H}`);
@@ -89,7 +89,7 @@ function machineView(place, label, unit) {
     empty(rule, s("path", { d: `M${x} ${y - 6}v6h${width}v-6` }),
       s("text", { x: x + width + 8, y }, withUnit(ground.step, unit) + (eye.tilt > 1.57 || Math.abs(eye.tilt) < 1e-9 ? "" : ", also the step of the grid")));
   }
-  const hand = steer(svg, eye, draw);
+  const hand = steer(svg, eye, () => usual, draw);
   const go = (view) => { Object.assign(eye, view); draw(); };
   const stage = h("div", { class: "stage" }, svg);
   onWidth(stage, (width) => {
@@ -101,10 +101,14 @@ function machineView(place, label, unit) {
     h("div", { class: "fields screen", role: "group", "aria-label": "turn and zoom" },
       VIEWS.map(([name, view]) => button(name, () => go(view))),
       button("+", () => hand.zoom(1.25), { "aria-label": "closer" }), button("−", () => hand.zoom(0.8), { "aria-label": "farther" }),
-      button("reset", () => go(SLANTED), { "data-do": "reset" }),
+      button("reset", () => go(usual), { "data-do": "reset" }),
       h("span", { class: "note" }, "drag turns; Ctrl with the wheel zooms"))]);
   return {
     eye, svg,
+    // look sets the view that the drawing starts from and that reset goes back to.
+    look(view) {
+      if (view !== usual) Object.assign(eye, usual = view);
+    },
     // show takes layers {figure, cls, hot}; points, if given, must fit whatever is shown later.
     show(list, points, hangs) {
       layers = list;

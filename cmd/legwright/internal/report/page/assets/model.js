@@ -12,7 +12,7 @@ function newModel(data) {
   const model = {
     data, unit, measures, designs, goals,
     families: data.families.map((f) => f.name).filter((name) => designs.some((d) => d.family === name)),
-    folder: data.folder || "DIR",
+    folder: shellWord(data.folder || "DIR"),
     zone: (k) => (k >= 0 && data.zones[k] ? data.zones[k].name : ""),
     case: (k) => (k >= 0 && data.cases[k] !== undefined ? data.cases[k] : ""),
   };
@@ -20,6 +20,9 @@ function newModel(data) {
   model.scaled = scaledGoals(designs, goals);
   return model;
 }
+
+// shellWord quotes a path so that it can be pasted into a shell.
+const shellWord = (path) => (/^[\w./-]+$/.test(path) ? path : `'${path.replaceAll("'", "'\\''")}'`);
 
 function newDesign(data, d, index) {
   const fam = data.families[d.family];

@@ -61,6 +61,7 @@ function poseControl(store, view, changed) {
     place, status,
     design(next) {
       d = next;
+      view.look(usualView(d));
       view.show([], allPoints(model, d), data.hanging);
       build();
       show("pose", 0, "home");
