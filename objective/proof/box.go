@@ -46,7 +46,8 @@ type bench struct {
 	tie     [36]line
 	unit    [36]enclose.Form
 	worst   []float64 // bound met by each property that the last test proved
-	corner  int       // vertex at which a property seems to fail, -1 for none
+	ball    ball
+	corner  int // vertex at which a property seems to fail, -1 for none
 	polared bool
 }
 
@@ -65,6 +66,9 @@ func (b *bench) enter(g *region) {
 func (b *bench) prove(box *enclose.Box, open uint64) (closed uint64, split int) {
 	b.corner = -1
 	b.machine.Enclose(box, &b.e)
+	if b.region.ball {
+		b.ball.place(b.region, box)
+	}
 	split = b.widest(box)
 	if b.e.Reach != kin.AllReach {
 		return 0, split
@@ -135,9 +139,9 @@ func (b *bench) ranges(i int) bool {
 	}
 	for l := range b.ranged {
 		if low {
-			worst = min(worst, b.e.Q[l].Lower())
+			worst = min(worst, b.lower(&b.e.Q[l]))
 		} else {
-			worst = max(worst, b.e.Q[l].Upper())
+			worst = max(worst, b.upper(&b.e.Q[l]))
 		}
 	}
 	b.worst[i] = worst
@@ -148,7 +152,7 @@ func (b *bench) ranges(i int) bool {
 func (b *bench) swings(i int, chords *[6]enclose.Form) bool {
 	worst := 0.0
 	for l := range b.legs {
-		worst = max(worst, chords[l].Upper())
+		worst = max(worst, b.upper(&chords[l]))
 	}
 	b.worst[i] = worst
 	return worst <= b.target[i]
