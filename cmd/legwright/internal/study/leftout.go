@@ -6,7 +6,7 @@ import "fmt"
 // shows figures says it.
 func LeftOut(poses int) []string {
 	return []string{
-		fmt.Sprintf("every figure is the worst over %d sampled poses of the duty, not a proof for the poses between them", poses),
+		fmt.Sprintf("every figure is the worst over %d sampled poses of the duty and, in boxes, ellipsoids and single excursions, the worst that a search between them finds: not a proof", poses),
 		"legs, arms and rods are massless in the efforts; payload, cables and motors are not in the clearances",
 		"efforts are quasi-static: without friction, play, vibration and terms in ω²",
 	}
