@@ -101,8 +101,11 @@ func prove(ctx context.Context, c *common, file string, flags *proveFlags) error
 	p := study.FromProof(s.Task, s.Plan.Family.Name, r)
 	p.Resized = resized
 	p.Notes = study.LeftOut(0)[1:]
+	if s.Task.Coverage < 1 || s.Task.CoverageGoal {
+		p.Notes = append(p.Notes, "the brief lets poses fail (coverage); the proof is about all of them")
+	}
 	if r.Answer != proof.Refuted && r.Regions > 0 {
-		if p.Certificate, err = writeCertificate(s, r, file+".proof.json"); err != nil {
+		if p.Certificate, err = writeCertificate(s, r, file+study.CertificateEnding); err != nil {
 			return err
 		}
 	}
