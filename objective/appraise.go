@@ -193,7 +193,7 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 
 // refine drives worst values beyond the samples.
 func (a *Appraisal) refine(v *View, ts []tracker) {
-	r := newRefiner(v, thorough)
+	r := newRefiner(v, thorough())
 	if !r.extend(ts) {
 		at := r.here
 		a.failed, a.lost = &at, r.lost

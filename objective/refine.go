@@ -74,7 +74,7 @@ type end struct {
 func NewRefiner(t *Task, f *kin.Family) *Refiner {
 	v := newView(t)
 	v.serve(f)
-	return newRefiner(v, thorough)
+	return newRefiner(v, thorough())
 }
 
 // newRefiner is a Refiner that goes on where a walk of the view ends.

@@ -115,7 +115,7 @@ func NewScreen(t *Task, p *Plan) *Screen {
 		}
 	}
 	if t.refined() {
-		s.refiner = newRefiner(s.v, quick)
+		s.refiner = newRefiner(s.v, quick())
 	}
 	return s
 }
@@ -149,7 +149,7 @@ func (s *Screen) Judge(x []float64, r *Score) {
 func (s *Screen) Refines() bool { return s.refiner != nil }
 
 // Confirm scores the design judged last anew, by worst values that are driven beyond the sampled poses as those
-// of Appraise are (see Refiner). It is for designs that Judge found feasible, and costs
+// of Appraise are (see Refiner), less thoroughly. It is for designs that Judge found feasible, and costs
 // about as much as judging one to the end. The score is never better than before.
 func (s *Screen) Confirm(r *Score) {
 	if s.refiner == nil || r.Violation > 0 || !s.v.refinable() {

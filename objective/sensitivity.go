@@ -112,7 +112,7 @@ func (s *Screen) whatever(values []float64) (goals []float64, fails string) {
 	} else {
 		s.v.walk(0, len(t.samples), s.allNeed, s.all)
 		if t.refined() && s.v.refinable() {
-			newRefiner(s.v, thorough).extend(s.all)
+			newRefiner(s.v, thorough()).extend(s.all)
 		}
 		s.judge(&r)
 	}

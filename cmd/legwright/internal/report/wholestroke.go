@@ -48,8 +48,19 @@ func (s *sheet) wholeStroke(d *study.Design) {
 	case "":
 		s.say("Parked, all actuators at their shortest, is reached from home.")
 	default:
-		s.say(fmt.Sprintf("Parked, all actuators at their shortest, is not reached from home: the way ends after %.3g %%, by %s.", 100*float64(p.Share), study.Clean(p.Stops)))
+		s.say(fmt.Sprintf("Parked, all actuators at their shortest, is not reached from home: the way ends after %.3g %%, %s.", 100*float64(p.Share), stopped(p.Stops)))
 	}
 	s.say("Other ways, on which actuators do not start and arrive together, are not looked at.")
 	s.gap()
+}
+
+// stopped says what ended a way.
+func stopped(by string) string {
+	switch by {
+	case "singular":
+		return "at a singularity"
+	case "reach":
+		return "where a leg cannot follow"
+	}
+	return "by " + study.Clean(by)
 }
