@@ -13,6 +13,9 @@ func put(folder *study.Folder, s *job.Study, sources *study.Sources, found *job.
 	pageErr := savePage(folder, s, found.Front, job.SheetRun{Sources: sources, Folder: dir, Workers: workers})
 	return errors.Join(pageErr, folder.Save(&study.Result{
 		Front: found.Front, History: found.History, Sources: *sources, Part: found.Part, Unfinished: found.Interrupted(),
+		Certificate: func(d study.Design, text []byte) (*study.Certificate, error) {
+			return found.Certificate(d, text, sources)
+		},
 		Encode: func(d study.Design) ([]byte, error) {
 			return job.EncodeDesign(d, "../"+sources.BriefName()), nil
 		},

@@ -19,12 +19,14 @@ type runFlags struct {
 	time, beat          time.Duration
 	part                string
 	force, resume       bool
+	prove               int
 }
 
 // Bounds on the flags.
 const (
 	mostEvaluations = 1_000_000_000
 	mostWorkers     = 4096
+	mostProved      = 500
 	leastBeat       = 10 * time.Millisecond
 )
 
@@ -36,6 +38,7 @@ func (r *runFlags) add(cmd *cobra.Command) {
 	f.Int64Var(&r.seed, "seed", 0, "seed of the random numbers (default: the brief's, else 1)")
 	f.IntVar(&r.workers, "workers", 0, "designs judged side by side (default: all processors); never changes the result")
 	f.StringVar(&r.part, "part", "", "K/N: search part K of N, an independent search with its share of the evaluations, for merge")
+	f.IntVar(&r.prove, "prove", 0, "designs of best rank to prove over the continuous duty; what refutes one joins the duty for the rest of the search")
 	f.DurationVar(&r.beat, "checkpoint", 30*time.Second, "time between checkpoints")
 	f.BoolVar(&r.force, "force", false, "replace the study that the folder holds, finished or not")
 	f.BoolVar(&r.resume, "resume", false, "go on with an interrupted study from its last checkpoint; leave a finished one as it is")
@@ -77,10 +80,14 @@ func (r *runFlags) run(cmd *cobra.Command, b *brief.Brief) (job.Run, error) {
 		return refuse("--workers %d: write a whole number from 1 to %d, or leave it out", r.workers, mostWorkers)
 	case set("time") && (r.time <= 0 || r.time.Seconds() > brief.LongestTime):
 		return refuse("--time %v: write a time such as 2h or 90s, of at most ten years", r.time)
+	case r.prove < 0 || r.prove > mostProved || r.prove == 0 && set("prove"):
+		return refuse("--prove %d: write a whole number from 1 to %d, or leave it out", r.prove, mostProved)
+	case r.prove > 0 && set("part"):
+		return refuse("--prove goes with a whole study; prove designs of the merged front with legwright prove")
 	case r.beat < leastBeat:
 		return refuse("--checkpoint %v: write a time such as 30s, of at least %v", r.beat, leastBeat)
 	}
-	given.Workers = r.workers
+	given.Workers, given.Prove = r.workers, r.prove
 	if set("budget") && r.budget > given.Evaluations {
 		given.StopAt, given.Evaluations = given.Evaluations, r.budget
 	}

@@ -14,6 +14,7 @@ import (
 	"legwright/cmd/legwright/internal/job"
 	"legwright/cmd/legwright/internal/report"
 	"legwright/cmd/legwright/internal/study"
+	"legwright/objective/proof"
 	"legwright/opt"
 )
 
@@ -41,6 +42,11 @@ hypervolume stalls (search.stall of the brief), whichever comes first. What was
 evaluated is saved at a slow beat: a search that was interrupted, killed or cut off
 goes on with --resume and gives the same files as one that was not. Time counts over
 all its runs.
+
+--prove N proves the N designs of best rank over the continuous duty, their sized
+ranges widened to what all poses need for certain. It does so when three quarters of
+the evaluations are spent, and again at the end. A pose that refutes a design joins
+the required ones for the rest of the search.
 
 --part 3/16 searches one part of a study by itself, with its own random numbers and
 its share of the evaluations; legwright merge joins the parts.`,
@@ -135,13 +141,16 @@ func search(cmd *cobra.Command, c *common, name string, text []byte, dir string,
 	}
 	given.Journal = job.NewJournal(log, kept, flags.beat, func(text string) { c.hint("warning: %s", text) })
 	bar := report.NewProgress(c.err, given.Part.Share(given.Evaluations), c.quiet)
+	var last report.Count
 	given.Progress = func(p opt.Progress) {
 		n := report.Count{Evaluations: p.Evaluations, Feasible: p.Feasible, Hypervolume: p.Hypervolume, Phase: p.Phase}
 		if p.Evaluations < kept.Records {
 			n.Phase = "from the checkpoint"
 		}
+		last = n
 		bar.Show(n)
 	}
+	given.Proving = func(done, of int, p proof.Progress) { bar.Show(report.Proving(last, done, of, p.Settled)) }
 	found, err := s.Search(cmd.Context(), given)
 	bar.Done()
 	log.Close()

@@ -17,7 +17,8 @@ type Checkpoint struct {
 	Seed        int64  `json:"seed"`
 	Budget      int    `json:"budget"`
 	Part        string `json:"part,omitempty"`
-	Evaluations int    `json:"evaluations"` // spent when it was interrupted
+	Prove       int    `json:"prove,omitempty"` // designs that are proved on the way
+	Evaluations int    `json:"evaluations"`     // spent when it was interrupted
 }
 
 // Merging is the part of a checkpoint that stands for a merge under way.
@@ -25,12 +26,12 @@ const Merging = "merge"
 
 // NewCheckpoint is the checkpoint of a run that has not begun.
 func NewCheckpoint(s *study.Sources, r Run) *Checkpoint {
-	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations, Part: r.Part.String()}
+	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations, Part: r.Part.String(), Prove: r.Prove}
 }
 
 // Key tells apart the runs that a log may belong to.
 func (c *Checkpoint) Key() [32]byte {
-	return sha256.Sum256(fmt.Appendf(nil, "%s\n%s\n%d\n%d\n%s", c.Program, c.Brief, c.Seed, c.Budget, c.Part))
+	return sha256.Sum256(fmt.Appendf(nil, "%s\n%s\n%d\n%d\n%s\n%d", c.Program, c.Brief, c.Seed, c.Budget, c.Part, c.Prove))
 }
 
 // sourcesHash is the SHA-256 of the brief and its pose files, in hex.
@@ -77,6 +78,8 @@ func (c *Checkpoint) Continues(old *Checkpoint) error {
 		return fmt.Errorf("the unfinished study there is of another brief; give that brief, or --force to begin anew")
 	case old.Seed != c.Seed:
 		return fmt.Errorf("the unfinished study there has seed %d, this run %d; give the same seed, or --force to begin anew", old.Seed, c.Seed)
+	case old.Prove != c.Prove:
+		return fmt.Errorf("the unfinished study there proves %d designs, this run %d; give the same --prove, or --force to begin anew", old.Prove, c.Prove)
 	case old.Budget != c.Budget:
 		return fmt.Errorf("the unfinished study there was to run %d evaluations, this run %d; give the same number, or --force to begin anew", old.Budget, c.Budget)
 	}

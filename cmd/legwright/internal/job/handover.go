@@ -17,16 +17,13 @@ func (s *Study) Sheets(r study.Design, sources *study.Sources) (map[string][]byt
 		return nil, fmt.Errorf("the family %s is not in the brief; put the brief back that the front was found with", study.Clean(r.Family))
 	}
 	f := s.Plans[k].Family
-	values := make([]float64, len(f.Dimensions))
-	specs := make([]objective.Spec, len(values))
-	for i := range values {
-		v, ok := r.Dimensions[f.Dimensions[i].Name]
-		if values[i] = float64(v); !ok || math.IsInf(values[i], 0) {
+	values := dimensionsOf(s.Plans[k], &r)
+	for i, v := range values {
+		if math.IsNaN(v) || math.IsInf(v, 0) {
 			return nil, fmt.Errorf("the dimension %s is missing; search again", f.Dimensions[i].Name)
 		}
-		specs[i] = objective.Spec{Kind: objective.Fixed, Values: values[i : i+1]}
 	}
 	t := s.Tasks[k]
-	a := objective.Appraise(t, objective.NewPlan(t, f, specs), values)
+	a := objective.Appraise(t, fixed(t, s.Plans[k], values), values)
 	return handover.Files(t, a, handover.Title{Program: Program(), Design: r.ID, Brief: s.Brief.Title, Hash: sourcesHash(sources)}), nil
 }

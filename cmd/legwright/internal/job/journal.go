@@ -36,6 +36,8 @@ type Journal struct {
 	lost   func() // ends the search: the log is none of it
 	err    error
 
+	salt uint64 // of the stage: see Stage
+
 	buf     []byte // records that the log does not hold yet
 	records int
 	begun   time.Time // when the first new record came
@@ -83,7 +85,7 @@ func key(space int, x []float64) uint64 {
 func (j *Journal) recall(space int, x []float64, r *opt.Result) bool {
 	j.mu.Lock()
 	defer j.mu.Unlock()
-	k := key(space, x)
+	k := key(space, x) ^ j.salt
 	for j.ahead[k] == nil {
 		if j.blocks == nil || j.err != nil || !j.read() {
 			return false
@@ -162,7 +164,7 @@ func (j *Journal) record(space int, x []float64, r *opt.Result) {
 	}
 	at := len(j.buf)
 	j.buf = append(j.buf, 0, 0, 0, 0)
-	j.buf = binary.LittleEndian.AppendUint64(j.buf, key(space, x))
+	j.buf = binary.LittleEndian.AppendUint64(j.buf, key(space, x)^j.salt)
 	j.buf = encode(j.buf, r)
 	binary.LittleEndian.PutUint32(j.buf[at:], uint32(len(j.buf)-at-4))
 	j.records++
@@ -170,6 +172,22 @@ func (j *Journal) record(space int, x []float64, r *opt.Result) {
 	if due || len(j.buf) >= fullBlock && (len(j.buf) < 2*fullBlock) {
 		j.Flush()
 	}
+}
+
+// Rewind makes the next search of the run take its results from the beginning of the log on: it repeats the one before, and
+// goes further.
+func (j *Journal) Rewind() {
+	j.Flush()
+	j.mu.Lock()
+	defer j.mu.Unlock()
+	j.blocks, j.rest, j.ahead, j.count = j.log.Blocks(), nil, map[uint64]*waiting{}, 0
+}
+
+// Stage tells that the next search of the run is another one, of another duty: equal designs have other results.
+func (j *Journal) Stage() {
+	j.mu.Lock()
+	defer j.mu.Unlock()
+	j.salt = mix(j.salt)
 }
 
 // Flush writes what is not in the log yet. A log that cannot be written is told of, and tried again at

@@ -91,13 +91,17 @@ func (s *Subject) Prove(ctx context.Context, set proof.Settings) *proof.Result {
 
 // Certificate is the certificate of what r has proved, nil where that is nothing.
 func (s *Subject) Certificate(r *proof.Result) (*study.Certificate, error) {
+	return certificate(s.Task, s.Plan.Family.Name, s.designHash, s.briefHash, r)
+}
+
+func certificate(t *objective.Task, family, designHash, briefHash string, r *proof.Result) (*study.Certificate, error) {
 	rec, err := r.Record()
 	if err != nil || len(rec.Claims) == 0 {
 		return nil, err
 	}
-	c := &study.Certificate{Format: study.CertificateFormat, Program: Program(), Family: s.Plan.Family.Name,
-		Design: s.designHash, Brief: s.briefHash, Boxes: r.Boxes, Record: rec}
-	p := study.FromProof(s.Task, s.Plan.Family.Name, r)
+	c := &study.Certificate{Format: study.CertificateFormat, Program: Program(), Family: family,
+		Design: designHash, Brief: briefHash, Boxes: r.Boxes, Record: rec}
+	p := study.FromProof(t, family, r)
 	for _, l := range p.Properties {
 		if l.Answer == proof.Proved.String() {
 			c.Claims = append(c.Claims, l)

@@ -11,6 +11,7 @@ import (
 	"legwright/cmd/legwright/internal/study"
 	"legwright/kin"
 	"legwright/objective"
+	"legwright/objective/proof"
 	"legwright/opt"
 )
 
@@ -25,6 +26,8 @@ type Run struct {
 	Seed        int64
 	Workers     int // 0 for all processors; it never changes the result
 	Polish      float64
+	Prove       int // designs of best rank that are proved, 0 for none
+	Proving     func(done, of int, p proof.Progress)
 	Journal     *Journal // nil for a run that cannot be gone on with
 	Progress    func(opt.Progress)
 }
@@ -35,6 +38,8 @@ type Found struct {
 	History []opt.Point
 	Status  opt.Status
 	Part    *study.Part // of a part, once it has ended
+
+	book *proofs // of a search with proofs
 }
 
 // Interrupted tells whether the search was broken off, to be gone on with.
@@ -49,6 +54,20 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 	if len(s.goals()) == 1 && r.Polish == 0 {
 		r.Polish = 0.5 // a single optimum is for Nelder-Mead to finish
 	}
+	if r.Prove > 0 && r.Part.Whole() {
+		return s.searchProved(ctx, r)
+	}
+	out, err := s.run(ctx, &r, nil)
+	if err != nil {
+		return nil, err
+	}
+	f := s.front(out, &r)
+	s.strokes(f)
+	return s.found(out, &r, f), nil
+}
+
+// run runs the search alone, from the designs in start if there are any.
+func (s *Study) run(ctx context.Context, r *Run, start []opt.Start) (*opt.Outcome, error) {
 	problem := s.problem(r.Workers)
 	set := opt.Settings{
 		Evaluations: r.Part.Share(r.Evaluations),
@@ -61,6 +80,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 		Front:       s.Brief.Search.Front,
 		Reference:   s.reference(),
 		Polish:      r.Polish,
+		Start:       start,
 		Archive:     !r.Part.Whole(),
 		Progress:    r.Progress,
 	}
@@ -77,18 +97,20 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 			return nil, r.Journal.err
 		}
 	}
-	if err != nil {
-		return nil, err
-	}
-	found := &Found{Front: s.front(out, &r), History: out.History, Status: out.Status}
+	return out, err
+}
+
+// found is what a search gives, with the part that it is of a study.
+func (s *Study) found(out *opt.Outcome, r *Run, f *study.Front) *Found {
+	found := &Found{Front: f, History: out.History, Status: out.Status}
 	if !r.Part.Whole() {
 		name := r.Part.name(r.Seed)
 		found.Front.Part = &name
 		if out.Status != opt.Interrupted {
-			found.Part = s.part(out, &r, found.Front)
+			found.Part = s.part(out, r, found.Front)
 		}
 	}
-	return found, nil
+	return found
 }
 
 // front is the front of a study with all that files say of it.
@@ -120,7 +142,6 @@ func (s *Study) front(out *opt.Outcome, r *Run) *study.Front {
 	}
 	f.Failures, f.Failed = out.Failures, s.failed(out)
 	study.Rank(f, f.Weights)
-	s.strokes(f)
 	return f
 }
 

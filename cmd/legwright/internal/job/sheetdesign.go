@@ -5,6 +5,7 @@ import (
 	"math"
 	"slices"
 
+	"legwright/cmd/legwright/internal/report"
 	"legwright/cmd/legwright/internal/sheet"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/kin"
@@ -44,6 +45,12 @@ func (b *sheetBuilder) design(d *sheet.Data, i int) error {
 	*v = sheet.Design{
 		ID: r.ID, Rank: r.Rank, Score: sheet.Exact(r.Score), Family: plan, Feasible: r.Feasible, Marks: append([]string{}, r.Marks...),
 		Twins: b.twins[i], Notes: r.Notes, Tightest: -1,
+	}
+	if r.Proof != nil {
+		v.Proof, v.Proved = r.Proof.Answer, report.ProofSentence(r.Proof)
+	}
+	if r.WholeStroke != nil {
+		v.Stroke = report.StrokeSentence(r.WholeStroke)
 	}
 	for k := range p.Family.Dimensions {
 		v.Dimensions = append(v.Dimensions, sheet.Exact(a.Values[k]))

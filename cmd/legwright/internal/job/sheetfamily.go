@@ -102,13 +102,7 @@ func dimensionColumn(p *objective.Plan, k int) sheet.Column {
 // machine builds the machine of a record, and its lines, with rails over the range that its dimensions allow.
 func (b *sheetBuilder) machine(plan int, r *study.Design) (*objective.Appraisal, *kin.Outline) {
 	p := b.study.Plans[plan]
-	values := make([]float64, len(p.Family.Dimensions))
-	for i := range values {
-		values[i] = math.NaN()
-		if v, ok := r.Dimensions[p.Family.Dimensions[i].Name]; ok {
-			values[i] = float64(v)
-		}
-	}
+	values := dimensionsOf(p, r)
 	a := objective.Unjudged(b.study.Tasks[plan], p, values)
 	low, high := actuatorRange(p, values)
 	return a, kin.NewOutline(a.Machine, low, high)

@@ -222,3 +222,9 @@ func Checked(w io.Writer, cert *study.Certificate, boxes int64, page Page) error
 func Settled(share float64, boxes int64) Count {
 	return Count{Phase: fmt.Sprintf("%s of the volume settled, %d boxes", percent(share), boxes)}
 }
+
+// Proving says how far the proofs within a search have come, after what the search did before.
+func Proving(c Count, done, of int, share float64) Count {
+	c.Phase = fmt.Sprintf("proving design %d of %d, %s of the volume settled", done+1, of, percent(share))
+	return c
+}

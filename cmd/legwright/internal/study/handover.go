@@ -34,10 +34,9 @@ const handedOver = 20
 // and those of the first screen.
 func (f *Front) HandedOver() []int {
 	var out []int
-	first := Choose(f, firstShown)
+	first := f.First()
 	for i := range f.Designs {
-		shown := slices.ContainsFunc(first, func(c Choice) bool { return c.Index == i })
-		if i < handedOver || len(f.Designs[i].Marks) > 0 || shown {
+		if i < handedOver || len(f.Designs[i].Marks) > 0 || slices.Contains(first, i) {
 			out = append(out, i)
 		}
 	}
@@ -46,6 +45,14 @@ func (f *Front) HandedOver() []int {
 
 // firstShown is the number of designs of the first screen.
 const firstShown = 7
+
+// First are the places of the designs of the first screen.
+func (f *Front) First() (out []int) {
+	for _, c := range Choose(f, firstShown) {
+		out = append(out, c.Index)
+	}
+	return out
+}
 
 // SaveSheets writes the sheets of a design into designs/ID, each whole or not at all, and removes sheets of
 // that design that files does not hold. Other files there stay. The names are among SheetNames.

@@ -70,6 +70,9 @@ func (f *Front) mark(values [][]float64, maximise []bool) {
 	}
 	give(f.roomiest(), MarkMargin)
 	for i := range f.Designs {
+		if p := f.Designs[i].Proof; p != nil {
+			give(i, p.Mark())
+		}
 		if w := f.Designs[i].WholeStroke; w != nil && w.Singular+w.AloneCross > 0 {
 			give(i, MarkCrosses)
 		}

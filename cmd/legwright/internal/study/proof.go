@@ -13,6 +13,9 @@ import (
 // CertificateFormat names the layout of a certificate.
 const CertificateFormat = "legwright-proof/1"
 
+// CertificateEnding is added to the name of a design's file for the name of its certificate.
+const CertificateEnding = ".proof.json"
+
 // Certificate is what a proof has shown of one design under one brief, complete enough to be checked anew.
 type Certificate struct {
 	Format  string        `json:"format"`
@@ -54,6 +57,19 @@ type Proof struct {
 	Certificate string      `json:"certificate,omitempty"` // path
 	Outside     []string    `json:"outside_model"`
 	Notes       []string    `json:"notes,omitempty"`
+}
+
+// Mark is the word for the answer among a design's marks: proved, "proved to 1 %" where limits were proved less the gap,
+// refuted or undecided.
+func (p *Proof) Mark() string {
+	if p.Answer == proof.Proved.String() {
+		for i := range p.Properties {
+			if p.Properties[i].Gapped {
+				return fmt.Sprintf("%s to %.3g %%", p.Answer, 100*p.Gap)
+			}
+		}
+	}
+	return p.Answer
 }
 
 // ProofLine is one property.

@@ -55,6 +55,8 @@ type Front struct {
 	Failures       int                `json:"failures,omitempty"` // designs that could not be judged, of the evaluated
 	Failed         []Failed           `json:"failed,omitempty"`   // the first of them
 	Notes          []string           `json:"notes"`              // what holds for the whole study
+
+	Counterexamples []Counterexample `json:"counterexamples,omitempty"` // poses that refuted designs on the way, and are required since
 }
 
 // Failed is a design that could not be judged. Sized dimensions are unknown.
@@ -86,6 +88,7 @@ type Design struct {
 	Limits      []Limit           `json:"limits"`
 	Legs        []Leg             `json:"legs"`
 	Excursions  []Excursion       `json:"excursions,omitempty"`
+	Proof       *Proof            `json:"proof,omitempty"` // of the continuous duty
 	WholeStroke *WholeStroke      `json:"whole_stroke,omitempty"`
 	Marks       []string          `json:"marks"`
 	Notes       []string          `json:"notes,omitempty"`

@@ -75,6 +75,8 @@ type Result struct {
 	Encode func(Design) ([]byte, error)
 	// Sheets gives the sheets of a design, by the names of SheetNames; nil for a study without any.
 	Sheets func(Design) (map[string][]byte, error)
+	// Certificate gives what was proved of a design whose file holds text; nil for nothing. The field is nil for a search without proofs.
+	Certificate func(d Design, text []byte) (*Certificate, error)
 	// Part is what merging needs of a part of a study; nil for a whole one.
 	Part *Part
 	// Unfinished leaves the checkpoint where it is.
@@ -143,7 +145,8 @@ func (f *Folder) clear(r *Result) error {
 		return nil // broken off before its front was written
 	}
 	for i := range before.Designs {
-		if err := f.remove(designName(before.Designs[i].ID)); err != nil {
+		name := designName(before.Designs[i].ID)
+		if err := errors.Join(f.remove(name), f.remove(name+CertificateEnding)); err != nil {
 			return err
 		}
 		if err := f.removeSheets(before.Designs[i].ID); err != nil {
@@ -165,6 +168,22 @@ func (f *Folder) saveDesigns(r *Result) error {
 			return fmt.Errorf("design %s: %w", d.ID, err)
 		}
 		if err := f.write(designName(d.ID), b); err != nil {
+			return err
+		}
+		if r.Certificate == nil {
+			continue
+		}
+		c, err := r.Certificate(*d, b)
+		if err != nil {
+			return fmt.Errorf("design %s: %w", d.ID, err)
+		}
+		if c == nil {
+			continue
+		}
+		if b, err = Encode(c); err != nil {
+			return err
+		}
+		if err := f.write(designName(d.ID)+CertificateEnding, b); err != nil {
 			return err
 		}
 	}

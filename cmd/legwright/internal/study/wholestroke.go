@@ -7,7 +7,7 @@ import (
 )
 
 // MarkCrosses is the mark of a design whose platform meets a singularity within its strokes, outside the duty or in it.
-const MarkCrosses = "crosses a singularity within its strokes"
+const MarkCrosses = "singular within strokes"
 
 // WholeStroke is where the platform can go within the strokes, whatever the duty is.
 type WholeStroke struct {
