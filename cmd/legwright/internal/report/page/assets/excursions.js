@@ -21,7 +21,7 @@ function excursionsView(model, d, place) {
   }
   if (!d.detail) add(place, [h("p", { class: "note" }, "Excursions: ", h("code", {}, `legwright report ${model.folder} --detail ${d.id}`))]);
   add(place, [h("p", {}, h("b", {}, "Whole stroke: "), given(d.raw.whole_stroke || "not looked at; the figures hold for the duty only.")),
-    h("p", {}, h("b", {}, "Proof: "), given(d.raw.proved || `every figure is the worst over ${data.poses} sampled poses, not a proof for the poses between them.`))]);
+    h("p", {}, h("b", {}, "Proof: "), given(d.raw.proved || `${d.checked}; ${data.left_out[0] || ""}`))]);
 }
 
 // sensitivityView says what a small change of each dimension does to the goals.

@@ -31,7 +31,7 @@ function legsView(model, d, place) {
   head.splice(1, 0, h("th", { scope: "col", class: "num" }, "as drawn", h("small", {}, ` ${coordinate.symbol}`)));
   add(place, [
     h("h3", {}, `What each ${word} does`),
-    noted(`Least and greatest over all required poses and cases${f.reserve ? `; ${withUnit(f.reserve, coordinate)} kept free at each end` : ""}. Bars: share of the limit that is used.`, h("table", { class: "legs", "aria-label": `what each ${word} does` },
+    noted(`Least and greatest that the duty asks${f.reserve ? `; ${withUnit(f.reserve, coordinate)} kept free at each end` : ""}. Bars: share of the limit that is used.`, h("table", { class: "legs", "aria-label": `what each ${word} does` },
       h("thead", {}, h("tr", {}, h("th", { scope: "col" }, word), head)), h("tbody", {}, rows))),
   ]);
   // The returned function marks the coordinates of the posture drawn.

@@ -31,6 +31,6 @@ function limitsView(model, d, place, showPose) {
     rows.push([[h("span", { title: m.text }, given(m.label)), goalText(m)], num(withUnit(v, m.shown, 5)), num("–"), "", where(m.index)]);
   }
   add(place, [h("h3", {}, "Measures and limits"),
-    table("Tightest limit first. Every figure is the worst over all required poses and cases; press what decides it to see the pose.",
+    table("Tightest limit first, each with the worst that the duty asks. Press what decides a figure to see the pose.",
       ["measure", num("value"), num("wanted"), num("margin"), "decided by"], rows, { class: "limits" })]);
 }

@@ -24,6 +24,9 @@ function newModel(data) {
 // shellWord quotes a path so that it can be pasted into a shell.
 const shellWord = (path) => (/^[\w./-]+$/.test(path) ? path : `'${path.replaceAll("'", "'\\''")}'`);
 
+// CHECKED says how far the limits of a design are known to hold.
+const CHECKED = { "": "not proved", proved: "proved", refuted: "refuted: a limit fails", undecided: "proof undecided" };
+
 function newDesign(data, d, index) {
   const fam = data.families[d.family];
   const unbounded = new Set(d.unbounded || []);
@@ -35,8 +38,7 @@ function newDesign(data, d, index) {
     raw: d, index, id: d.id, fam, family: fam.name, marks: d.marks || [], limits, legs: d.legs, range: d.range,
     measures: d.measures.map((v, k) => (v !== null ? v : unbounded.has(k) ? Infinity : NaN)),
     tightest: d.tightest >= 0 ? limits[d.tightest] : null,
-    checked: d.proof === "proved" ? "proved" : d.proof === "refuted" ? "refuted: fails between the sampled poses" : d.proof === "undecided" ? "at sampled poses; proof undecided" : "at sampled poses, not proved",
-    short: d.proof || "sampled",
+    checked: CHECKED[d.proof] || d.proof,
     proof: d.proof,
     detail: d.detail || null,
   };

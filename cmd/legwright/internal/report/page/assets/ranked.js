@@ -39,7 +39,7 @@ function rankedView(store, place) {
       h("td", { class: "marked" }, given(d.marks.map(words).join(", "))),
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), proofs ? h("td", {}, d.short) : null);
+      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null);
     return { node, rank, score, pick, against, twin };
   });
 

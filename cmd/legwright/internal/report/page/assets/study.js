@@ -9,7 +9,7 @@ function titleView(model, place) {
   add(place, [h("h1", { dir: "auto" }, given(title)),
     h("p", { class: "note" }, `${data.evaluations} designs tried${feasible}; ${n} ${n === 1 ? "is" : "are"} left of which none is beaten by another in every goal`,
       model.families.length ? [" (", model.families.map((f, k) => [k ? ", " : "", given(f)]), ")"] : "", ". ",
-      proved ? `Limits proved for ${proved} of them.` : "Nothing proved: limits hold at the sampled poses.")]);
+      proved ? `Limits proved for ${proved} of them.` : "No design is proved.")]);
 }
 
 function studyView(model, place) {
@@ -20,11 +20,12 @@ function studyView(model, place) {
     h("div", { class: "pair" },
       h("div", {}, h("p", {}, given(data.brief.paragraph)),
         h("p", {}, spent, given(data.program), "; brief ", given(data.brief.file), " with hash ", h("code", {}, data.brief_hash ? data.brief_hash.slice(0, 16) : "–"), ".")),
-      h("aside", { class: "caution", "aria-label": "caution" }, h("p", {}, h("b", {}, "Caution. "), given(data.full_caution || data.caution)))),
-    h("details", {}, h("summary", {}, "The brief as a list, notes, and what the figures leave out"),
+      h("div", {}, h("aside", { class: "caution", "aria-label": "caution" }, h("p", {}, h("b", {}, "Caution. "), given(data.full_caution || data.caution))),
+        list("What the figures leave out", data.left_out))),
+    h("details", {}, h("summary", {}, "The brief as a list, and notes"),
       h("div", { class: "asked" }, list("Zones of required poses", data.brief.zones), list("Load cases", data.brief.cases), list("Limits", data.brief.limits),
         list("What the search could vary", data.brief.open), data.families.length > 1 ? list("Families", data.families.map((f) => `${f.name}: ${f.summary || f.text}`)) : null,
-        list("Notes", data.notes), list("What the figures leave out", data.left_out))),
+        list("Notes", data.notes))),
   ]);
 }
 
