@@ -190,7 +190,7 @@ func (s *Screen) total(r *Score) {
 		if t.Goals[i].Maximise {
 			g = -g
 		}
-		if math.IsNaN(g) { // unknown
+		if math.IsNaN(g) && t.Goals[i].Measure.Scouts { // unknown; any other is a fault, and stays one
 			g = beyond
 		}
 		r.Goals[i] = math.Max(-beyond, math.Min(beyond, g))

@@ -258,6 +258,19 @@ func TestDamagedCheckpoint(t *testing.T) {
 	}
 }
 
+// waitFor waits until the file is there.
+func waitFor(t *testing.T, path string) {
+	t.Helper()
+	for deadline := time.Now().Add(time.Minute); ; time.Sleep(2 * time.Millisecond) {
+		if _, err := os.Stat(path); err == nil {
+			return
+		}
+		if time.Now().After(deadline) {
+			t.Fatalf("%s does not come", path)
+		}
+	}
+}
+
 // flip flips a bit of a byte.
 func flip(text string, at int) string {
 	b := []byte(text)

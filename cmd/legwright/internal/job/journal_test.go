@@ -11,6 +11,7 @@ import (
 	"testing"
 	"time"
 
+	"legwright/cmd/legwright/internal/brief"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/opt"
 )
@@ -244,4 +245,52 @@ func studyOf(t *testing.T, text string) *Study {
 		t.Fatal(err)
 	}
 	return load(t, path)
+}
+
+// BenchmarkReplay measures what an evaluation of the embedded example costs when it comes from the log,
+// in wall time of one worker, beside what judging it costs.
+func BenchmarkReplay(b *testing.B) {
+	const evaluations = 4000
+	br, err := brief.Load(briefs+"tilt-table.yaml", *Known())
+	if err != nil {
+		b.Fatal(err)
+	}
+	s, err := New(br)
+	if err != nil {
+		b.Fatal(err)
+	}
+	f, err := study.Create(b.TempDir(), study.Intent{})
+	if err != nil {
+		b.Fatal(err)
+	}
+	defer f.Close()
+	search := func(fresh bool) time.Duration {
+		log, kept, err := f.OpenLog([32]byte{1}, fresh)
+		if err != nil {
+			b.Fatal(err)
+		}
+		defer log.Close()
+		j := NewJournal(log, kept, time.Hour, func(string) {})
+		p := s.problem(1)
+		set := opt.Settings{Evaluations: evaluations, Workers: 1}
+		j.attach(&p, &set, func() {})
+		begin := time.Now()
+		if _, err := opt.Search(context.Background(), p, set); err != nil {
+			b.Fatal(err)
+		}
+		d := time.Since(begin)
+		if err := j.Flush(); err != nil {
+			b.Fatal(err)
+		}
+		return d
+	}
+	var judged, replayed time.Duration
+	for b.Loop() {
+		judged += search(true)
+		replayed += search(false)
+	}
+	n := float64(b.N * evaluations)
+	b.ReportMetric(0, "ns/op")
+	b.ReportMetric(float64(judged.Microseconds())/n, "µs/judged")
+	b.ReportMetric(float64(replayed.Microseconds())/n, "µs/replayed")
 }

@@ -156,9 +156,10 @@ func (f *Folder) Close() error { return f.lock.free() }
 // Locked tells whether other processes are kept out: some file systems know no locks.
 func (f *Folder) Locked() bool { return f.lock != nil && f.lock.held }
 
-// tidy removes the log of a study that was finished by a process that was killed in its last moment.
+// tidy removes the log and the lock file of a study that was finished by a process that was killed in
+// its last moment.
 func (f *Folder) tidy() {
-	if !ownLog(f.dir) {
+	if _, err := os.Stat(filepath.Join(f.dir, lockFile)); err != nil && !ownLog(f.dir) {
 		return
 	}
 	l, err := takeLock(f.dir)
