@@ -31,7 +31,6 @@ type bench struct {
 	*subject
 	region *region
 	cases  []*payload // that occur in the region's zone
-	index  []int      // their numbers
 
 	e       kin.Enclosure
 	j, w    family
@@ -58,7 +57,7 @@ func newBench(s *subject) *bench {
 // enter prepares for boxes of the region.
 func (b *bench) enter(g *region) {
 	b.region = g
-	b.cases, b.index = cases(b.task, b.frame, g.zone)
+	b.cases = cases(b.task, b.frame, g.zone)
 }
 
 // prove tests the properties in open over the box and gives those that hold there, and the coordinate along which the box is

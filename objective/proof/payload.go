@@ -1,8 +1,6 @@
 package proof
 
 import (
-	"slices"
-
 	"legwright/kin"
 	"legwright/objective"
 )
@@ -138,18 +136,12 @@ func (z *payload) rate(j *[6]line, s *support) {
 	}
 }
 
-// moves tells whether the case has loads, or speeds.
-func (z *payload) loads() bool {
-	return len(z.d.Bodies)+len(z.d.Points) > 0 || z.d.Wrench != [6]float64{} || z.d.Spread != [6]float64{}
-}
-
 // cases makes the cases of a task ready that occur in the zone.
-func cases(t *objective.Task, f *kin.Frame, zone int) (out []*payload, index []int) {
+func cases(t *objective.Task, f *kin.Frame, zone int) (out []*payload) {
 	for c := range t.Cases {
 		if t.Cases[c].In(zone) {
 			out = append(out, newPayload(&t.Cases[c], f, t.Gravity))
-			index = append(index, c)
 		}
 	}
-	return slices.Clip(out), index
+	return out
 }

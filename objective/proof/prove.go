@@ -98,7 +98,7 @@ func newProver(ctx context.Context, s *subject, set Settings) *prover {
 
 // finish proves what the search has left in question.
 func (p *prover) finish(gap float64, left []string, progress func(Progress)) *Result {
-	res := &Result{Gap: gap, Left: left, props: p.props}
+	res := &Result{Gap: gap, Left: left}
 	for i := range p.task.Zones {
 		z := &p.task.Zones[i]
 		if z.Kind == objective.Listed {
@@ -132,16 +132,20 @@ func (p *prover) finish(gap float64, left []string, progress func(Progress)) *Re
 }
 
 // groups are the properties in question that are proved in one tree: those that need large boxes alone, those of
-// matrices, and the distance of the legs.
+// the Jacobian's matrix, the measure of another matrix, and the distance of the legs.
 func (p *prover) groups() (out []uint64) {
-	var g [3]uint64
+	var g [4]uint64
 	for i := range p.props {
 		k := 1
 		switch p.props[i].kind {
 		case reach, shortest, longest, regular, held, baseSwing, otherSwing, rate:
 			k = 0
+		case wrenches:
+			if !p.six {
+				k = 2
+			}
 		case apart:
-			k = 2
+			k = 3
 		}
 		g[k] |= 1 << i & p.alive
 	}

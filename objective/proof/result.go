@@ -86,7 +86,6 @@ type Result struct {
 	Worst       *Rest // of the boxes not settled the worst, nil where all are
 
 	trees []tree
-	props []Property
 }
 
 // Rest is a box that was not settled.
