@@ -4,6 +4,7 @@ import (
 	"context"
 
 	"legwright/cmd/legwright/internal/study"
+	"legwright/objective"
 	"legwright/opt"
 )
 
@@ -16,6 +17,20 @@ const provedAt = 0.75
 // poses that did so among the required ones begins with the front of the first.
 func (s *Study) searchProved(ctx context.Context, r Run) (*Found, error) {
 	book := &proofs{s: s, workers: r.Workers, tell: r.Proving, known: map[string]*proven{}}
+	found, err := s.searchJudged(ctx, r, book)
+	if found != nil {
+		found.book = book
+	}
+	return found, err
+}
+
+// judge proves the best n designs of a front, and gives the poses that refute some of them.
+type judge interface {
+	best(ctx context.Context, f *study.Front, n int) bool
+	counters(f *study.Front, n int) ([]objective.Further, []study.Counterexample)
+}
+
+func (s *Study) searchJudged(ctx context.Context, r Run, book judge) (*Found, error) {
 	first := r
 	share := r.Part.Share(r.Evaluations)
 	stop := share
@@ -69,9 +84,7 @@ func (s *Study) searchProved(ctx context.Context, r Run) (*Found, error) {
 		return s.broken(out, &r, f), nil
 	}
 	s.strokes(f)
-	found := s.found(out, &r, f)
-	found.book = book
-	return found, nil
+	return s.found(out, &r, f), nil
 }
 
 // leastFirst is the least first sample of a family.
