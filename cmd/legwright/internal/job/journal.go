@@ -224,7 +224,7 @@ func (j *Journal) attach(p *opt.Problem, set *opt.Settings, end func()) {
 	j.lost = end
 	j.window = mostAhead + int(max(0.05, set.Polish)*float64(set.Evaluations)) // jobs of a polish are recorded one after another
 	if set.Time > 0 {
-		set.Time = max(1, set.Time-j.before)
+		set.Time = max(1, set.Time-j.spent())
 	}
 	set.Record = j.record
 	evaluate := p.Evaluate
