@@ -211,3 +211,26 @@ func TestFamiliesByShapeAndWord(t *testing.T) {
 	}
 	p.quiet()
 }
+
+// A mark that warns or tells of a proof is no reason to be on the first screen: it stands in a row of its own.
+func TestWarningsAreNoReasons(t *testing.T) {
+	d := made(40, "Warnings")
+	i := d.First[0].Design
+	d.Designs[i].Marks = []string{"knee", "proved to 3 %", study.MarkCrosses}
+	d.Designs[i].Proof, d.Designs[i].Proved = "proved", "every limit is proved over the duty"
+	p := open(t, d, 1280, 800, false)
+	rows := eval[[][]string](p, `[...document.querySelectorAll(".few tbody tr")].map((r) => [...r.children].slice(0, 2).map((c) => c.textContent))`)
+	want := map[string]string{"why it is here": "knee", "checked": "proved to 3 %", "beyond the duty": "a singularity lies within its strokes"}
+	for _, r := range rows {
+		if w, ok := want[r[0]]; ok {
+			if r[1] != w {
+				t.Errorf("%s: %q, want %q", r[0], r[1], w)
+			}
+			delete(want, r[0])
+		}
+	}
+	if len(want) > 0 {
+		t.Errorf("rows missing: %v", want)
+	}
+	p.quiet()
+}

@@ -32,6 +32,20 @@ func TestOpensAlone(t *testing.T) {
 	}
 }
 
+// Where nothing is feasible the page says what would have to give, and shows no empty parts.
+func TestNothingFeasible(t *testing.T) {
+	d := made(0, "Nothing found")
+	d.Help = []string{"leg_force: raise the limit to 3100 N"}
+	p := open(t, d, 1280, 800, false)
+	if got := eval[string](p, `document.querySelector("#choose li").textContent`); got != d.Help[0] {
+		t.Errorf("the page advises %q, want %q", got, d.Help[0])
+	}
+	if got := eval[int](p, `[...document.querySelectorAll("main > section")].filter((s) => s.checkVisibility()).length`); got != 2 {
+		t.Errorf("%d parts are shown, want 2", got)
+	}
+	p.quiet()
+}
+
 // At both ends of the widths nothing but framed tables is broader than the window.
 func TestWidths(t *testing.T) {
 	for _, width := range []int64{360, 768, 2560} {

@@ -6,7 +6,7 @@ function firstView(store, place) {
   const { data } = model;
   const few = data.first.map((f) => {
     const d = model.designs[f.design];
-    return { d, figure: atPose(d, 0).figure, why: [...d.marks, ...(f.near || []).map((m) => `near ${m}`)] };
+    return { d, figure: atPose(d, 0).figure, why: [...d.marks.filter((m) => m !== CROSSES && !(d.proof && m.startsWith(d.proof))), ...(f.near || []).map((m) => `near ${m}`)] };
   });
   const drawings = thumbnails(few.map((c) => c.figure), few.some(({ d }) => usualView(d) === SLANTED) ? SLANTED : ABOVE, data.hanging, few.map(({ d }) => `${d.family} ${d.id} at home; all are drawn to one scale`));
   const picks = few.map(({ d }) => button(d.id, () => store.pick(d.index), { class: "pick big", "aria-pressed": "false", "data-pick": d.id, "aria-label": `design ${d.id}: open its sheet below` }));
@@ -37,6 +37,8 @@ function firstView(store, place) {
       row("tightest limit", few.map(({ d }) => h("td", {}, d.tightest
         ? [given(words(d.tightest.measure)), h("b", { class: d.tightest.holds ? "room" : "bad" }, marginText(d.tightest), h("small", {}, d.tightest.holds ? " left" : " short"))] : "no limit"))),
       row("checked", few.map(({ d }) => h("td", { class: `proof-${d.proof || "none"}` }, d.checked))),
+      few.some(({ d }) => d.crosses || d.raw.whole_stroke) ? row("beyond the duty", few.map(({ d }) => h("td", { class: d.crosses ? "bad" : "" },
+        d.crosses ? "a singularity lies within its strokes" : d.raw.whole_stroke ? "no singularity met within its strokes" : "not looked at"))) : null,
       neededFigures(model).map(figureRow)));
   add(place, [
     h("p", { class: "note" }, few.length > 1

@@ -24,6 +24,9 @@ function newModel(data) {
 // shellWord quotes a path so that it can be pasted into a shell.
 const shellWord = (path) => (/^[\w./-]+$/.test(path) ? path : `'${path.replaceAll("'", "'\\''")}'`);
 
+// CROSSES is the mark of designs that meet a singularity within their strokes, and a mark that warns.
+const CROSSES = "singular within strokes";
+
 // CHECKED says how far the limits of a design are known to hold.
 const CHECKED = { "": "not proved", proved: "proved", refuted: "refuted: a limit fails", undecided: "proof undecided" };
 
@@ -35,10 +38,10 @@ function newDesign(data, d, index) {
     return { measure: k.measure, origin: k.origin, shown: data.units[k.unit] || BARE, sense: k.at_least ? "at_least" : "at_most", bound, value, margin, holds: holds === 1 };
   });
   return {
-    raw: d, index, id: d.id, fam, family: fam.name, marks: d.marks || [], limits, legs: d.legs, range: d.range,
+    raw: d, index, id: d.id, fam, family: fam.name, marks: d.marks || [], crosses: (d.marks || []).includes(CROSSES), limits, legs: d.legs, range: d.range,
     measures: d.measures.map((v, k) => (v !== null ? v : unbounded.has(k) ? Infinity : NaN)),
     tightest: d.tightest >= 0 ? limits[d.tightest] : null,
-    checked: CHECKED[d.proof] || d.proof,
+    checked: (d.proof === "proved" && (d.marks || []).find((m) => m.startsWith("proved"))) || CHECKED[d.proof] || d.proof,
     proof: d.proof,
     detail: d.detail || null,
   };

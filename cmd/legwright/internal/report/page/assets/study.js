@@ -42,7 +42,7 @@ function footerView(model, place) {
 
 // helpView stands where no design holds every limit.
 function helpView(model, place) {
-  add(place, [h("h2", {}, "No design holds every limit"),
+  empty(place, h("h2", {}, "No design holds every limit"),
     h("p", {}, "What binds, and what would have to give:"),
-    h("ul", {}, (model.data.help || []).map((t) => h("li", {}, given(t))))]);
+    h("ul", {}, (model.data.help || []).map((t) => h("li", {}, given(t)))));
 }
