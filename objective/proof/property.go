@@ -113,6 +113,8 @@ func properties(t *objective.Task, p *objective.Plan, values []float64, f *kin.F
 		switch {
 		case l.Measure.Has != nil && !l.Measure.Has(p.Family):
 			continue
+		case l.Measure.Scan == nil: // of the design itself, or coverage, which the other properties are about
+			continue
 		case !ok || l.AtLeast != sense:
 			left = append(left, l.Measure.Name)
 			continue
