@@ -3,6 +3,7 @@ package main
 import (
 	"errors"
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -23,7 +24,8 @@ func newReport(c *common) *cobra.Command {
 		Long: `report writes report.html into a study folder: the front to filter and to weigh, and a
 sheet for each design. Sheets in full, with the machine's way through the duty, maps and
 sensitivities, are made of the best 20 designs and those with a mark; --detail adds
-others, with the maps of every pair of coordinates. All other files stay as they are.
+others, with the maps of every pair of coordinates, and writes their drawings, tables and
+schedules into designs/ID. All other files stay as they are.
 With --json the data of the page go to standard output too.`,
 		Example: "  legwright report out --detail 057",
 		Args:    cobra.ExactArgs(1),
@@ -54,6 +56,9 @@ With --json the data of the page go to standard output too.`,
 			if err := folder.SavePage(text); err != nil {
 				return err
 			}
+			if err := saveSheets(folder, s, front, sources, detail); err != nil {
+				return err
+			}
 			if c.json {
 				return printJSON(c.out, data)
 			}
@@ -63,6 +68,24 @@ With --json the data of the page go to standard output too.`,
 	}
 	cmd.Flags().StringSliceVar(&detail, "detail", nil, "ids of designs to show in full besides the best ones (may be repeated)")
 	return cmd
+}
+
+// saveSheets writes what is handed over of the designs with the ids.
+func saveSheets(folder *study.Folder, s *job.Study, front *study.Front, sources *study.Sources, ids []string) error {
+	for i := range front.Designs {
+		d := &front.Designs[i]
+		if !slices.Contains(ids, d.ID) {
+			continue
+		}
+		files, err := s.Sheets(*d, sources)
+		if err != nil {
+			return fmt.Errorf("design %s: %w", d.ID, err)
+		}
+		if err := folder.SaveSheets(d.ID, files); err != nil {
+			return err
+		}
+	}
+	return nil
 }
 
 // pageOf puts into the data what is said in words, and draws the page.

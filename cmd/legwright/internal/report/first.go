@@ -32,7 +32,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 		near[f.Designs[c.Index].ID] = c.Near
 	}
 	marks := d.text("marks", 0, func(r *study.Design) string {
-		out := append([]string(nil), r.Marks...)
+		out := marksOf(r)
 		for _, m := range near[r.ID] {
 			out = append(out, "near "+m)
 		}
@@ -68,6 +68,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	if d.limited() {
 		s.say(margins)
 	}
+	s.outside(d)
 	s.gap()
 	s.families(f)
 	s.steps(f)
@@ -77,7 +78,9 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 		s.gap()
 		s.item(fmt.Sprintf("all designs in order: %s", together(fmt.Sprintf("legwright rank %s --top %d", dir, len(f.Designs)))))
 		s.item(fmt.Sprintf("other weights: %s", together(fmt.Sprintf("legwright rank %s --weight %s=2", dir, study.Clean(f.Goals[0].Measure)))))
+		s.item(fmt.Sprintf("the page to choose by: %s", together(quote(p.Dir+"/report.html"))))
 		s.item(fmt.Sprintf("one design with every worst pose: %s", together("legwright appraise "+quote(p.Dir+"/designs/"+f.Designs[0].ID+".yaml"))))
+		s.item(fmt.Sprintf("its limits between the samples: %s", together("legwright prove "+quote(p.Dir+"/designs/"+f.Designs[0].ID+".yaml"))))
 	}
 	return s.to(w)
 }

@@ -25,7 +25,7 @@ func Table(w io.Writer, f *study.Front, top int, p Page) error {
 	for i := range n {
 		d.rows = append(d.rows, &f.Designs[i])
 	}
-	marks := d.text("marks", 48, func(r *study.Design) string { return strings.Join(r.Marks, ", ") })
+	marks := d.text("marks", 48, func(r *study.Design) string { return strings.Join(marksOf(r), ", ") })
 	marks.most = marksWidth
 	cols := []column{d.rank(), d.id(), d.score(47)}
 	if len(families(f)) > 1 {
@@ -43,6 +43,7 @@ func Table(w io.Writer, f *study.Front, top int, p Page) error {
 	if d.limited() && !among("margin", left) {
 		s.say(margins)
 	}
+	s.outside(d)
 	if len(f.Families) > 0 {
 		s.gap()
 		s.families(f)
