@@ -23,7 +23,7 @@ const (
 // encode appends a result to b.
 func encode(b []byte, r *opt.Result) []byte {
 	flags := byte(0)
-	if r.Violation != 0 {
+	if math.Float64bits(r.Violation) != 0 {
 		flags |= hasViolation
 	}
 	for _, v := range r.Goals {
