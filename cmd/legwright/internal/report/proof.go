@@ -67,7 +67,17 @@ func (s *sheet) proofAnswer(p *study.Proof) {
 		if p.Regions == 0 {
 			what = "at the single poses of the duty, which has no continuous zone"
 		}
-		s.say(fmt.Sprintf("Proved for this model, %s: %s, %s.", what, plural(all, "property", "properties"), plural(int(p.Boxes), "box", "boxes")))
+		gapped := 0
+		for i := range p.Properties {
+			if p.Properties[i].Gapped {
+				gapped++
+			}
+		}
+		near := ""
+		if gapped > 0 {
+			near = fmt.Sprintf(", %d of them to within %s of the limit", gapped, percent(p.Gap))
+		}
+		s.say(fmt.Sprintf("Proved for this model, %s: %s%s, %s.", what, plural(all, "property", "properties"), near, plural(int(p.Boxes), "box", "boxes")))
 	case "refuted":
 		s.b.WriteString(s.alarm(fmt.Sprintf("Refuted: %d of %d properties FAIL at a pose of the duty.", count["refuted"], all)) + "\n")
 	default:
