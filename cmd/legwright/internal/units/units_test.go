@@ -249,16 +249,30 @@ func TestKindText(t *testing.T) {
 	}
 }
 
+// A quantity that is read is finite and reads back to the same bits from what Exact writes of it. One that is not is
+// refused with what to write instead, in a text of bounded length.
 func FuzzParse(f *testing.F) {
-	for _, s := range []string{"650 mm", "1e400 m", "-.5e-3 N m", "nan deg", "0x1p-2", "1,5 mm", "µ"} {
+	for _, s := range []string{"650 mm", "1e400 m", "-.5e-3 N m", "nan deg", "0x1p-2", "1,5 mm", "µ", "-0 deg", "5e-324 m", "1.7976931348623157e308 rad",
+		"0.1 %", "90°", "12 kg·m²", "3 h", "20 N/µm", "1e9999 mm", "+1"} {
 		f.Add(s)
 	}
 	f.Fuzz(func(t *testing.T, text string) {
 		for k := range kinds {
-			v, _, err := Parse(text, k)
-			var e *Error
-			if err != nil && (!errors.As(err, &e) || e.Remedy == "") || err == nil && v-v != 0 {
-				t.Errorf("%q as %v: %v, %v", text, k, v, err)
+			v, got, err := Parse(text, k)
+			if err != nil {
+				var e *Error
+				if !errors.As(err, &e) || e.Problem == "" || e.Remedy == "" || len(err.Error()) > 1000 {
+					t.Errorf("%q as %v: %v", text, k, err)
+				}
+				continue
+			}
+			written := Exact(v, k)
+			back, _, err := Parse(written, k)
+			if v-v != 0 || got != k || err != nil || math.Float64bits(back) != math.Float64bits(v) {
+				t.Errorf("%q as %v is %v of %v, written %s, read back as %v: %v", text, k, v, got, written, back, err)
+			}
+			if Format(v, k, 6) == "" {
+				t.Errorf("%q as %v is shown as nothing", text, k)
 			}
 		}
 	})
