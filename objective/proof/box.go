@@ -99,7 +99,7 @@ func (b *bench) prove(box *enclose.Box, open uint64) (closed uint64, split int) 
 	if !b.j.take(&b.e.J, b.legs, b.own, b.region.moving) {
 		return closed, split
 	}
-	split = b.steepest()
+	split = b.steepest(box, split)
 	if hard {
 		closed |= b.matrices(open &^ closed)
 	}
@@ -110,7 +110,7 @@ func (b *bench) prove(box *enclose.Box, open uint64) (closed uint64, split int) 
 func (b *bench) widest(box *enclose.Box) int {
 	most, at := -1.0, 0
 	for _, q := range b.region.moving {
-		w := (box.High[q] - box.Low[q]) / (b.region.box.High[q] - b.region.box.Low[q])
+		w := b.part(box, q)
 		if w > most*(1+1e-9) {
 			most, at = w, q
 		}
@@ -118,15 +118,28 @@ func (b *bench) widest(box *enclose.Box) int {
 	return at
 }
 
-// steepest is the coordinate along which the inverse Jacobian changes most over the box.
-func (b *bench) steepest() int {
+// lopsided is how often, of its region, a box is wider along its widest coordinate than along the steepest before it is split
+// along the former all the same.
+const lopsided = 3
+
+// steepest is the coordinate along which the inverse Jacobian changes most over the box, unless the box is far wider along
+// another: a payload off the centre may turn by a coordinate that the Jacobian hardly depends on.
+func (b *bench) steepest(box *enclose.Box, wide int) int {
 	most, at := -1.0, 0
 	for k, q := range b.region.moving {
 		if g := b.j.g[k].norm2(); g > most*(1+1e-9) {
 			most, at = g, q
 		}
 	}
+	if b.part(box, wide) > lopsided*b.part(box, at) {
+		return wide
+	}
 	return at
+}
+
+// part is the box's width along coordinate q, over that of its region.
+func (b *bench) part(box *enclose.Box, q int) float64 {
+	return (box.High[q] - box.Low[q]) / (b.region.box.High[q] - b.region.box.Low[q])
 }
 
 // ranges proves the bound of the actuator coordinates.

@@ -2,7 +2,10 @@ package proof
 
 import (
 	"fmt"
+	"math/rand/v2"
 	"testing"
+
+	"legwright/kin"
 )
 
 // The growth of a proof of every limit, and of those without efforts and clearance, with the size of study A's box and
@@ -30,5 +33,24 @@ func BenchmarkGrowth(b *testing.B) {
 				})
 			}
 		}
+	}
+}
+
+// The proof of every limit of a design of each family over the starter's box, the limits 3 % beyond the true extremes.
+func BenchmarkFamilies(b *testing.B) {
+	for _, f := range kin.Families() {
+		b.Run(f.Name, func(b *testing.B) {
+			task, v := some(b, rand.New(rand.NewPCG(3, 14)), f, allMeasures...)
+			p := slackened(b, task, f.Name, v, 0.03, allMeasuresOf(f)...)
+			var r *Result
+			for b.Loop() {
+				r = prove(b, task, p, v, Settings{Workers: 1})
+			}
+			b.ReportMetric(float64(r.Boxes), "boxes")
+			b.ReportMetric(float64(b.Elapsed().Microseconds())/float64(b.N)/float64(r.Boxes), "µs/box")
+			if testing.Verbose() {
+				report(b, r)
+			}
+		})
 	}
 }

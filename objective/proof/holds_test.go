@@ -111,3 +111,17 @@ func allMeasuresOf(f *kin.Family) (out []string) {
 	}
 	return out
 }
+
+// A payload off the centre of a levelled arm turns by half a turn either way, on which the inverse Jacobian does not depend:
+// boxes are split along that coordinate too.
+func TestTurnOfPayloadIsSplit(t *testing.T) {
+	f := kin.FamilyNamed("level-arm")
+	task, values := some(t, rand.New(rand.NewPCG(3, 14)), f)
+	task.Tool = kin.Vec{}
+	p := slackened(t, task, f.Name, values, 0.03, "motor_torque", "leg_power")
+	r := prove(t, task, p, values, Settings{Workers: 1, Boxes: 3000})
+	if r.Answer != Proved {
+		report(t, r)
+		t.Error("it is not proved")
+	}
+}
