@@ -165,11 +165,7 @@ func resize(ctx context.Context, s *job.Subject, file string, flags *proveFlags)
 
 // checkProof replays a certificate.
 func checkProof(ctx context.Context, c *common, s *job.Subject, flags *proveFlags) error {
-	text, err := os.ReadFile(flags.check)
-	if err != nil {
-		return inputError{err}
-	}
-	cert, err := study.ReadCertificate(text)
+	cert, err := study.LoadCertificate(flags.check)
 	if err != nil {
 		return inputError{fmt.Errorf("--check %s: %w", flags.check, err)}
 	}

@@ -66,7 +66,7 @@ func inspect(dir string) (State, error) {
 	}
 	switch {
 	case has(checkpointFile):
-		if b, err := os.ReadFile(filepath.Join(dir, checkpointFile)); (err != nil || !own(b)) && !ownLog(dir) {
+		if b, err := readFile(filepath.Join(dir, checkpointFile), maxCheckpoint); (err != nil || !own(b)) && !ownLog(dir) {
 			return Foreign, nil
 		}
 		return Unfinished, nil

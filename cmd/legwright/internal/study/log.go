@@ -8,6 +8,7 @@ import (
 	"hash/crc32"
 	"io"
 	"io/fs"
+	"math"
 	"os"
 	"path/filepath"
 	"time"
@@ -222,8 +223,12 @@ func (b *Blocks) Next() ([]byte, error) {
 	if binary.LittleEndian.Uint32(h[16:]) != checksum(h[:16], payload) {
 		return nil, io.EOF
 	}
+	spent := binary.LittleEndian.Uint64(h[8:])
+	if spent > math.MaxInt64/uint64(time.Millisecond) { // no time that a run takes
+		return nil, io.EOF
+	}
 	b.records = int(binary.LittleEndian.Uint32(h[4:]))
-	b.spent = time.Duration(binary.LittleEndian.Uint64(h[8:])) * time.Millisecond
+	b.spent = time.Duration(spent) * time.Millisecond
 	return payload, nil
 }
 

@@ -2,8 +2,8 @@ package study
 
 import (
 	"bytes"
+	"encoding/binary"
 	"errors"
-	"fmt"
 	"io"
 	"os"
 	"path/filepath"
@@ -150,25 +150,15 @@ func TestLogOfAnotherRun(t *testing.T) {
 	}
 }
 
-// A length beyond all bounds asks for no memory.
-func FuzzLog(f *testing.F) {
-	head := append([]byte(logMagic), make([]byte, 32)...)
-	f.Add(head)
-	f.Add(append(bytes.Clone(head), 0xff, 0xff, 0xff, 0xff, 1, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0))
-	f.Fuzz(func(t *testing.T, text []byte) {
-		dir := t.TempDir()
-		os.WriteFile(filepath.Join(dir, logFile), text, 0o666)
-		l, k := openLog(t, dir, 0, false)
-		n := 0
-		for _, p := range blocks(t, l) {
-			n += len(p) + blockHead
-		}
-		if !k.Other && len(text) > 0 && int(k.Lost)+n+logHead != len(text) {
-			t.Errorf("%d bytes in blocks and %d lost of %d", n, k.Lost, len(text))
-		}
-		if err := l.Append([]byte(fmt.Sprint(n)), 1, 0); err != nil {
-			t.Fatal(err)
-		}
-		l.Close()
-	})
+// A block with a time beyond all bounds ends the log, rather than giving a run that has taken less than no time.
+func TestLogOfImpossibleTime(t *testing.T) {
+	text, ends := written(t)
+	binary.LittleEndian.PutUint64(text[ends[2]+8:], 1<<62)
+	copy(text[ends[2]+16:], binary.LittleEndian.AppendUint32(nil, checksum(text[ends[2]:ends[2]+16], text[ends[2]+blockHead:ends[3]])))
+	dir := t.TempDir()
+	os.WriteFile(filepath.Join(dir, logFile), text, 0o666)
+	l, k := openLog(t, dir, 7, false)
+	if got := blocks(t, l); !slices.Equal(got, payloads[:2]) || k.Spent != 2*time.Second || k.Lost != int64(len(text)-ends[2]) {
+		t.Errorf("blocks %q, kept %+v", got, k)
+	}
 }

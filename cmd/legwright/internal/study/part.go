@@ -5,7 +5,6 @@ import (
 	"errors"
 	"fmt"
 	"io/fs"
-	"os"
 	"path/filepath"
 
 	"legwright/opt"
@@ -165,16 +164,12 @@ func ReadPart(dir string) (*Part, error) {
 	case state == Foreign:
 		return nil, fmt.Errorf("%s: holds no study; give the folders that `legwright search --part` has written", Clean(dir))
 	}
-	info, err := os.Stat(path)
+	b, err := readFile(path, maxPart)
 	if errors.Is(err, fs.ErrNotExist) {
 		return nil, fmt.Errorf("%s: holds a whole study, not a part; give the folders that `legwright search --part` has written", Clean(dir))
 	}
-	if err == nil && info.Size() > maxPart {
-		return nil, fmt.Errorf("%s: has %d bytes, more than %d; search the part again", Clean(path), info.Size(), maxPart)
-	}
-	b, err := os.ReadFile(path)
 	if err != nil {
-		return nil, fmt.Errorf("%s: cannot be read (%w)", Clean(path), bare(err))
+		return nil, fmt.Errorf("%s: cannot be read (%w); search the part again", Clean(path), bare(err))
 	}
 	p, err := DecodePart(b)
 	if err != nil {

@@ -72,6 +72,11 @@ func TestDamagedPart(t *testing.T) {
 		{"part 3 of 900000000", func(p *Part) { p.Of = 900000000 }},
 		{"outcome", func(p *Part) { p.Outcome = nil }},
 		{"feasible", func(p *Part) { p.Outcome.Feasible = 90 }},
+		{"a count", func(p *Part) { p.Outcome.Evaluations = math.MaxInt }},
+		{"a count", func(p *Part) { p.Outcome.Evaluations, p.Outcome.Feasible, p.Outcome.Failures = 9, math.MaxInt, 2 }},
+		{"a count", func(p *Part) { p.Outcome.Polished = -1 }},
+		{"whole or budget", func(p *Part) { p.Whole = -1 }},
+		{"outcome.spaces[0]: a count", func(p *Part) { p.Outcome.Spaces[0].Feasible = math.MaxInt }},
 		{"status", func(p *Part) { p.Outcome.Status = 99 }},
 		{"spaces", func(p *Part) { p.Dimensions = nil }},
 		{"reference", func(p *Part) { p.Outcome.Reference = nil }},
@@ -142,16 +147,4 @@ func TestReadPart(t *testing.T) {
 	if _, err := os.Stat(filepath.Join(done, partFile)); err == nil {
 		t.Error("part.json is still there")
 	}
-}
-
-// No text makes reading or merging a part panic.
-func FuzzPart(f *testing.F) {
-	b, _ := json.Marshal(part())
-	f.Add(b)
-	f.Add([]byte(`{"format": "legwright-part/1", "number": 1, "of": 1, "outcome": {}}`))
-	f.Fuzz(func(t *testing.T, b []byte) {
-		if p, err := DecodePart(b); err == nil {
-			opt.Merge([]*opt.Outcome{p.Outcome.Outcome()}, 10, nil)
-		}
-	})
 }

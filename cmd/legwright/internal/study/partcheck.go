@@ -3,12 +3,17 @@ package study
 import (
 	"errors"
 	"fmt"
+	"math"
+	"slices"
 
 	"legwright/opt"
 )
 
 // MostParts bounds into how many parts a study may be cut.
 const MostParts = 100_000
+
+// mostCounted bounds what is counted of a part: the sums over all parts stay far from what an int holds.
+const mostCounted = math.MaxInt32
 
 // check looks for what merging relies on, so that a damaged part.json is refused rather than merged.
 func (p *Part) check() error {
@@ -18,7 +23,11 @@ func (p *Part) check() error {
 		return fmt.Errorf("part %d of %d makes no sense", p.Number, p.Of)
 	case o == nil:
 		return errors.New("outcome: is missing")
-	case o.Evaluations < 0 || o.Feasible < 0 || o.Failures < 0 || o.Evaluations < o.Feasible+o.Failures:
+	case !counts(p.Whole, p.Budget):
+		return fmt.Errorf("whole or budget is not from 0 to %d", mostCounted)
+	case !counts(o.Evaluations, o.Feasible, o.Failures, o.Population, o.Polished):
+		return fmt.Errorf("outcome: a count is not from 0 to %d", mostCounted)
+	case o.Evaluations < o.Feasible+o.Failures:
 		return fmt.Errorf("outcome: %d feasible and %d failed designs of %d", o.Feasible, o.Failures, o.Evaluations)
 	case o.Status < 0 || o.Status > int(opt.Stopped):
 		return fmt.Errorf("outcome.status: %d is unknown", o.Status)
@@ -44,6 +53,9 @@ func (p *Part) check() error {
 	}
 	for i := range o.Spaces {
 		s := &o.Spaces[i]
+		if !counts(s.Evaluations, s.Feasible) {
+			return fmt.Errorf("outcome.spaces[%d]: a count is not from 0 to %d", i, mostCounted)
+		}
 		if n := len(s.Best); n != 0 && n != goals {
 			return fmt.Errorf("outcome.spaces[%d].best: has %d designs for %d goals", i, n, goals)
 		}
@@ -55,6 +67,11 @@ func (p *Part) check() error {
 		}
 	}
 	return nil
+}
+
+// counts tells whether numbers may be counts.
+func counts(ns ...int) bool {
+	return !slices.ContainsFunc(ns, func(n int) bool { return n < 0 || n > mostCounted })
 }
 
 // designs checks a list; goals or limits below 0 are not looked at.

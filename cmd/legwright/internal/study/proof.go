@@ -28,6 +28,18 @@ type Certificate struct {
 	Record  *proof.Record `json:"record"`
 }
 
+// maxCertificate bounds what is read of a certificate, in bytes.
+const maxCertificate = 1 << 30
+
+// LoadCertificate reads the file of a certificate.
+func LoadCertificate(path string) (*Certificate, error) {
+	b, err := readFile(path, maxCertificate)
+	if err != nil {
+		return nil, fmt.Errorf("it cannot be read (%w); give the file that legwright prove has written", bare(err))
+	}
+	return ReadCertificate(b)
+}
+
 // ReadCertificate reads what Encode wrote.
 func ReadCertificate(b []byte) (*Certificate, error) {
 	c := new(Certificate)

@@ -13,12 +13,15 @@ import (
 	"regexp"
 )
 
+// maxFront bounds what is read of a front.json, in bytes.
+const maxFront = 1 << 30
+
 // Read reads the front of a study folder. Fields that it does not know are passed over; a file of
 // another format, a damaged one, or one whose designs lack what the front promises is an error that
 // names the file.
 func Read(dir string) (*Front, error) {
 	path := filepath.Join(dir, frontFile)
-	b, err := os.ReadFile(path)
+	b, err := readFile(path, maxFront)
 	switch {
 	case errors.Is(err, fs.ErrNotExist):
 		return nil, fmt.Errorf("%s: there is no front.json; give the folder that `legwright search -o` has written", Clean(dir))

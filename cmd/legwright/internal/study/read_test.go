@@ -108,23 +108,3 @@ func TestReadNamesTheFile(t *testing.T) {
 		t.Errorf("a file: %v", err)
 	}
 }
-
-func FuzzDecode(f *testing.F) {
-	b, _ := Encode(tilter())
-	f.Add(b)
-	f.Add([]byte("{}"))
-	f.Fuzz(func(t *testing.T, b []byte) {
-		front, err := Decode(b)
-		if err != nil {
-			return
-		}
-		Rank(front, nil) // whatever is read can be ranked, chosen from and written
-		Choose(front, 7)
-		if _, err := Encode(front); err != nil {
-			t.Errorf("read, but cannot be written: %v", err)
-		}
-		if err := writeTable(new(bytes.Buffer), front); err != nil {
-			t.Error(err)
-		}
-	})
-}

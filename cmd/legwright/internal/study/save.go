@@ -232,9 +232,12 @@ func (f *Folder) write(name string, b []byte) error {
 	return WriteFile(path, b)
 }
 
+// maxCheckpoint bounds what is read of a checkpoint.json, in bytes.
+const maxCheckpoint = 1 << 20
+
 // Checkpoint reads the checkpoint of an unfinished study; nil if there is none.
 func (f *Folder) Checkpoint() ([]byte, error) {
-	b, err := os.ReadFile(filepath.Join(f.dir, checkpointFile))
+	b, err := readFile(filepath.Join(f.dir, checkpointFile), maxCheckpoint)
 	if errors.Is(err, fs.ErrNotExist) {
 		return nil, nil
 	}
