@@ -154,10 +154,8 @@ func (x *enclosed) posture(f *kin.Family, m kin.Machine, e *kin.Enclosure, p *ki
 	x.each("BaseChord", e.BaseChord[:], s.BaseChord[:n])
 	x.each("PlatformChord", e.PlatformChord[:], s.PlatformChord[:n])
 	var rows [36]float64
-	if n < 6 {
-		kin.Wrenches(m, s, &rows)
-		x.each("Wrenches", e.Wrenches[:], rows[:])
-	}
+	kin.Wrenches(m, s, &rows)
+	x.each("Wrenches", e.Wrenches[:], rows[:])
 	settled := kin.Settle(m, p)
 	x.vec("P", 0, &e.P, settled.P)
 	x.each("R", e.R[:], settled.R[:])
@@ -200,6 +198,7 @@ func (x *enclosed) links(m kin.Machine, e *kin.Enclosure, p *kin.Pose, s *kin.St
 	}
 	least := math.Inf(1)
 	axes := make([]axis, len(e.Links))
+	first, apart := -1, kin.Vec{}
 	for k := range e.Links {
 		l := &e.Links[k]
 		if len(of[l.Leg]) == 0 {
@@ -210,6 +209,19 @@ func (x *enclosed) links(m kin.Machine, e *kin.Enclosure, p *kin.Pose, s *kin.St
 		of[l.Leg] = of[l.Leg][1:]
 		x.vec("Link.From", k, &l.From, axes[k].from)
 		x.vec("Link.To", k, &l.To, axes[k].to)
+		tip := l.Tip
+		switch l.Hold {
+		case kin.Turned:
+			tip = p.R.Apply(tip)
+		case kin.Loose:
+			continue
+		}
+		if first < 0 {
+			first, apart = k, r3.Sub(axes[k].to, tip)
+		}
+		if d := r3.Norm(r3.Sub(r3.Sub(axes[k].to, tip), apart)); !(d < 1e-12) {
+			x.t.Errorf("ends %d and %d are %g from where they should be to each other", first, k, d)
+		}
 	}
 	for i := range of {
 		if len(of[i]) > 0 {

@@ -22,8 +22,7 @@ type Enclosure struct {
 	J [36]enclose.Form // rows of the inverse Jacobian over (v, Lc·ω), as State.J
 
 	// Wrenches are the unit wrenches of the actuators and then of the constraints, rows of the 6×6 of the
-	// measure "regularity" (see Wrenches): forces [u, (r×u)/Lc], couples [0, m]. Filled only where the family has fewer
-	// than six freedoms, else J is that matrix up to the rows' lengths.
+	// measure "regularity" (see Wrenches): forces [u, (r×u)/Lc], couples [0, m].
 	Wrenches [36]enclose.Form
 
 	BaseChord, PlatformChord [6]enclose.Form // 2-2cos(swing), as in State
@@ -41,7 +40,19 @@ type Link struct {
 	Leg      int
 	From, To enclose.Vec // ends of its axis, base frame
 	Radius   float64
+	Hold     Hold
+	Tip      Vec // unless Loose: To at home, from the tool point, base axes
 }
+
+// Hold tells how the far end of a link goes with the platform: the difference of two such ends is enclosed by less than each.
+type Hold int
+
+// How ends go.
+const (
+	Loose   Hold = iota // not with the platform
+	Shifted             // with a platform that does not turn
+	Turned              // with one that turns as Enclosure.R
+)
 
 // Encloser is a machine that can enclose its postures over boxes of poses: every family's machines are.
 type Encloser interface {

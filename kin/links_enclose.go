@@ -1,6 +1,10 @@
 package kin
 
-import "legwright/kin/enclose"
+import (
+	"gonum.org/v1/gonum/spatial/r3"
+
+	"legwright/kin/enclose"
+)
 
 // Links of an enclosure are those of leg after leg: the crank, if there is one, and the rod, or both rods of a parallelogram.
 
@@ -17,7 +21,7 @@ func (ps *linkPairs) perLeg(crank bool) int {
 }
 
 // enclose adds the links of leg i.
-func (ps *linkPairs) enclose(e *Enclosure, m *rods, i int, o *loop) {
+func (ps *linkPairs) enclose(e *Enclosure, m *rods, i int, o *loop, hold Hold) {
 	l := &m.leg[i]
 	var from, to enclose.Vec
 	from.AddConst(from.Quads(&o.end), l.at)
@@ -27,13 +31,13 @@ func (ps *linkPairs) enclose(e *Enclosure, m *rods, i int, o *loop) {
 		e.Links[len(e.Links)-1].From.Const(l.at)
 	}
 	if !ps.twin {
-		e.Links = append(e.Links, Link{Leg: i, From: from, To: to, Radius: ps.rodRod / 2})
+		e.Links = append(e.Links, Link{Leg: i, From: from, To: to, Radius: ps.rodRod / 2, Hold: hold, Tip: l.b})
 		return
 	}
 	for _, k := range [2]float64{1, -1} {
-		e.Links = append(e.Links, Link{Leg: i, Radius: ps.rodRod / 2})
-		rod, s := &e.Links[len(e.Links)-1], ps.side[i]
-		s = Vec{X: k * s.X, Y: k * s.Y, Z: k * s.Z}
+		s := r3.Scale(k, ps.side[i])
+		e.Links = append(e.Links, Link{Leg: i, Radius: ps.rodRod / 2, Hold: hold, Tip: r3.Add(l.b, s)})
+		rod := &e.Links[len(e.Links)-1]
 		rod.From.AddConst(&from, s)
 		rod.To.AddConst(&to, s)
 	}

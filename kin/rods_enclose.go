@@ -35,7 +35,7 @@ func (m *turningRods) Enclose(b *enclose.Box, e *Enclosure) {
 		o.w.Add(&o.w, &arm)
 		l.enclose(&o)
 		e.leg(i, l, &o)
-		m.links.enclose(e, &m.rods, i, &o)
+		m.links.enclose(e, &m.rods, i, &o, Turned)
 
 		moment.Cross(&arm, &o.rate)
 		moment.Scale(&moment, m.invLc)
@@ -44,18 +44,14 @@ func (m *turningRods) Enclose(b *enclose.Box, e *Enclosure) {
 		dot.Scale(dot.Dot(&o.rod, &axis), l.invRod)
 		chord(&e.PlatformChord[i], e.PlatformChord[i].Quad(&dot), r3.Norm2(l.ub))
 
-		if m.n < 6 {
-			s := l.mode * l.invRod
-			if !l.crank {
-				s = -s
-			}
-			o.rod.Scale(&o.rod, s)
-			force(e.Wrenches[6*i:6*i+6], &o.rod, &arm, m.invLc)
+		s := l.mode * l.invRod
+		if !l.crank {
+			s = -s
 		}
+		o.rod.Scale(&o.rod, s)
+		force(e.Wrenches[6*i:6*i+6], &o.rod, &arm, m.invLc)
 	}
-	if m.n < 6 {
-		e.held(&m.frame)
-	}
+	e.held(&m.frame)
 	m.links.pairs(e, m.leg[0].crank)
 }
 
@@ -99,7 +95,7 @@ func (m *shiftingRods) shifted(i int, d *enclose.QuadVec, o *loop, u *enclose.Qu
 	o.w.AddConst(d, m.off[i])
 	l.enclose(o)
 	e.leg(i, l, o)
-	m.links.enclose(e, &m.rods, i, o)
+	m.links.enclose(e, &m.rods, i, o, Shifted)
 	u.Scale(&o.rod, l.invRod)
 	quads(e.Wrenches[6*i:6*i+3], u)
 	crossed(&v, r3.Scale(m.invLc, l.b), u)

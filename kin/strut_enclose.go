@@ -49,17 +49,15 @@ func (m *struts) Enclose(b *enclose.Box, e *Enclosure) {
 		p := &m.pairs.pair[k]
 		e.Pairs = append(e.Pairs, [2]int{p.i, p.j})
 	}
-	if m.n < 6 {
-		copy(e.Wrenches[:6*m.n], e.J[:6*m.n])
-		e.held(&m.frame)
-	}
+	copy(e.Wrenches[:6*m.n], e.J[:6*m.n])
+	e.held(&m.frame)
 }
 
 // encloseLeg fills what e says of leg i.
 func (m *struts) encloseLeg(i int, x *strutBox, e *Enclosure) {
 	l := &m.leg[i]
 	link := &e.Links[i]
-	link.Leg, link.Radius = i, m.pairs.diameter/2
+	link.Leg, link.Radius, link.Hold, link.Tip = i, m.pairs.diameter/2, Turned, l.b
 	link.From.Const(l.a)
 
 	var t strutTaylor

@@ -32,7 +32,7 @@ func (m *tripod) enclose(i int, t *tilt, e *Enclosure) {
 	from.Z += c*m.shift[1] + s*m.shift[3]
 	leg0.Along(&t.asm, from)
 	leg1.Add(&t.base[2], &r[2])
-	e.Links = append(e.Links, Link{Leg: i, Radius: m.pairs.diameter / 2})
+	e.Links = append(e.Links, Link{Leg: i, Radius: m.pairs.diameter / 2, Hold: Turned, Tip: l.b})
 	link := &e.Links[len(e.Links)-1]
 	link.From.Const(l.a)
 	link.To[0].Quad(dot.Scale(&leg0, c))
