@@ -43,7 +43,6 @@ type bench struct {
 	half    [6]line
 	rot     [9]line
 	tie     [36]line
-	unit    [36]enclose.Form
 	worst   []float64 // bound met by each property that the last test proved
 	ball    ball
 	corner  int // vertex at which a property seems to fail, -1 for none
@@ -246,12 +245,7 @@ func (b *bench) holds(m *family, k, floor float64) bool {
 
 // wrench tests a property of the 6×6 matrix of wrenches.
 func (b *bench) wrench(i int) bool {
-	forms := &b.e.Wrenches
-	if len(b.own) == 6 {
-		b.units()
-		forms = &b.unit
-	}
-	if !b.w.take(forms, 6, every, b.region.moving) || !b.inv.take(&b.w) {
+	if !b.w.take(&b.e.Wrenches, 6, every, b.region.moving) || !b.inv.take(&b.w) {
 		return false
 	}
 	b.polared = false
@@ -268,19 +262,4 @@ func (b *bench) wrench(i int) bool {
 		b.worst[i] = b.target[i]
 	}
 	return ok
-}
-
-// units fills unit with the rows of J as unit wrenches.
-func (b *bench) units() {
-	for i := range b.legs {
-		row := (*[6]enclose.Form)(b.e.J[6*i : 6*i+6])
-		out := (*[6]enclose.Form)(b.unit[6*i : 6*i+6])
-		var l enclose.Form
-		l.Norm((*enclose.Vec)(row[:3]))
-		l.Inv(&l)
-		(*enclose.Vec)(out[:3]).Unit((*enclose.Vec)(row[:3]))
-		for c := 3; c < 6; c++ {
-			out[c].Mul(&row[c], &l)
-		}
-	}
 }

@@ -33,11 +33,13 @@ func (b *bench) clear(i int) bool {
 func (b *bench) distance(u, v *kin.Link, enough float64) float64 {
 	moving := b.region.moving
 	p := pair{u: u, v: v, want: enough + u.Radius + v.Radius, moving: moving}
-	if b.frame.Rods == nil && b.frame.Rails == nil {
-		// prismatic legs end in joints of the platform, whose difference only turns
-		d := r3.Sub(b.frame.Platform[u.Leg], b.frame.Platform[v.Leg])
-		p.rigid = true
-		p.tips.Turn(&b.e.R, b.frame.HomeRot.Apply(d))
+	if p.rigid = u.Hold == v.Hold && u.Hold != kin.Loose; p.rigid { // the difference of their far ends turns at most
+		d := r3.Sub(u.Tip, v.Tip)
+		if u.Hold == kin.Turned {
+			p.tips.Turn(&b.e.R, d)
+		} else {
+			p.tips.Const(d)
+		}
 	}
 	s, t := between(&u.From, &u.To), between(&v.From, &v.To)
 	p.e = nearest(&u.From, &s, &v.From, &t)
