@@ -4,8 +4,9 @@
 // caller's business.
 //
 // The search is genetic, driven by eaopt: one population per Space, variation
-// by simulated binary crossover, differential evolution and coordinate resets
-// whose shares follow their success, survival by constrained domination and
+// by simulated binary crossover, differential evolution, coordinate resets and,
+// with few variables, steps that local linear models of goals and limits expect
+// most of, whose shares follow their success, survival by constrained domination and
 // exclusive hypervolume. The budget moves towards the spaces that still improve
 // the common front. Now and then gonum's Nelder-Mead polishes extremes,
 // knee and gaps of the front. Every feasible design that is not dominated is

@@ -11,6 +11,7 @@ type domain struct {
 	low, high []float64
 	free      []int // variables that can move
 	real      []int // those of them that are Real
+	discrete  []int // and those that are not
 }
 
 func newDomain(s *Space) *domain {
@@ -23,6 +24,8 @@ func newDomain(s *Space) *domain {
 			d.free = append(d.free, i)
 			if v.Kind == Real {
 				d.real = append(d.real, i)
+			} else {
+				d.discrete = append(d.discrete, i)
 			}
 		}
 	}

@@ -23,6 +23,7 @@ type genome struct {
 	rank   int     // 0 is the front; ahead of a larger one
 	crowd  float64 // larger is better among equals in rank
 	beaten bool    // by another that its population or the archive has met
+	pooled int     // round of the pool that holds it
 	young  bool    // made by the generation that is being selected
 	place  float64 // fitness in the first generation: eaopt's sort is unstable
 }

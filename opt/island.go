@@ -35,10 +35,9 @@ func newIsland(r *run, index int) *island {
 	l := &island{pending: new(batch), run: r, index: index, dom: newDomain(&p.Spaces[index]), pop: newPopulation(p.Goals)}
 	l.budget = r.set.Evaluations / len(p.Spaces)
 	rng := stream(r.set.Seed, streamSample, index, 0)
-	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, min(l.budget, 1<<16))}
-	for k := range l.breed.share {
-		l.breed.share[k] = 1.0 / bred
-	}
+	l.breed = breeder{dom: l.dom, space: index, goals: p.Goals, limits: p.Limits, rng: rng, seen: make(map[uint64]struct{}, min(l.budget, 1<<16)),
+		pop: l.pop, pool: pool{dom: l.dom}}
+	l.breed.begin()
 	xs := make([][]float64, r.start)
 	for i := range xs {
 		g := l.breed.blank(originSample)
@@ -75,6 +74,9 @@ func (l *island) collect(b *batch) (kids []*genome) {
 		}
 	}
 	l.fresh = append(l.fresh, kids...)
+	for _, g := range kids {
+		l.breed.pool.take(g)
+	}
 	b.designs = nil
 	return kids
 }

@@ -15,12 +15,13 @@ var operators = [...]operator{
 	{OriginDE2, func(b *breeder, op int) { b.trial(op, 0.2) }},
 	{OriginDE9, func(b *breeder, op int) { b.trial(op, 0.9) }},
 	{OriginReset, (*breeder).reset},
+	{OriginLocal, (*breeder).local},
 	{OriginSample, nil},
 	{OriginPolish, nil},
 }
 
 const (
-	bred         = 4 // operators that breed
+	bred         = 5 // operators that breed
 	originSample = bred
 	originPolish = bred + 1
 )
@@ -44,7 +45,15 @@ type breeder struct {
 	parents []*genome // best first
 	kids    []*genome
 	share   [bred]float64       // probability of each operator
+	ops     int                 // of them are in use, the first ones
 	seen    map[uint64]struct{} // fingerprints of all designs of the space
+
+	pop      *population
+	pool     pool
+	model    linear
+	weight   []float64 // scratch of local
+	expected []float64
+	corner   []float64
 }
 
 func (b *breeder) blank(origin int) *genome {
@@ -53,13 +62,26 @@ func (b *breeder) blank(origin int) *genome {
 	return g
 }
 
+// begin gives the operators even shares; the last one is for few variables only.
+func (b *breeder) begin() {
+	if b.ops = bred; !b.modelled() {
+		b.ops--
+	}
+	for k := range b.ops {
+		b.share[k] = 1 / float64(b.ops)
+	}
+}
+
 // breed makes n children, none of them a design that was made before; fewer
 // if the space seems to hold no other.
 func (b *breeder) breed(n int) []*genome {
 	b.kids = make([]*genome, 0, n+1)
+	if b.modelled() {
+		b.pool.fill(b.parents)
+	}
 	for tries := 0; len(b.kids) < n && tries < 4*n; tries++ {
 		u, op := b.rng.Float64(), 0
-		for op < bred-1 && u >= b.share[op] {
+		for op < b.ops-1 && u >= b.share[op] {
 			u -= b.share[op]
 			op++
 		}
@@ -180,13 +202,13 @@ func (b *breeder) credit(kids, alive []*genome) {
 	}
 	var merit [bred]float64
 	total := 0.0
-	for k := range merit {
+	for k := range b.ops {
 		merit[k] = (lived[k] + 0.5) / (made[k] + 1)
 		total += merit[k]
 	}
 	sum := 0.0
-	for k := range merit {
-		want := least + float64((1-bred*least)*merit[k]/total)
+	for k := range b.ops {
+		want := least + float64((1-float64(b.ops)*least)*merit[k]/total)
 		b.share[k] += float64(speed * (want - b.share[k]))
 		sum += b.share[k]
 	}

@@ -9,6 +9,7 @@ const (
 	OriginDE2    = "de2"    // differential evolution, few coordinates
 	OriginDE9    = "de9"    // differential evolution, most coordinates
 	OriginReset  = "reset"  // one coordinate drawn anew
+	OriginLocal  = "local"  // best step by a linear model of goals and limits
 	OriginPolish = "polish" // Nelder-Mead
 )
 
@@ -69,7 +70,7 @@ func (s Status) String() string {
 // Point is the state of a search after a number of evaluations.
 type Point struct {
 	Evaluations int
-	Hypervolume float64 // of the archive; with 4 goals or more of a subset picked from it
+	Hypervolume float64 // of the archive up to the reference of then; with 4 goals or more of a subset picked from it
 	Feasible    float64 // feasible share of all evaluations so far
 }
 
@@ -88,8 +89,10 @@ type Outcome struct {
 	// feasible designs are counted (at the first polish or at the end, if there
 	// are fewer): per goal the worst value among those of them that no other
 	// beats, plus half their range (half its magnitude, or 1, where the range
-	// is nothing), but no less than the upper quartile of all of them. nil when
-	// no design was feasible.
+	// is nothing), but no less than the upper quartile of all of them. Unless
+	// it was given it moves out, at History points, to a tenth of the range
+	// beyond all but the worst twentieth of the archive in each goal. nil when no
+	// design was feasible.
 	Reference []float64
 	// Hypervolume that Front covers up to Reference.
 	Hypervolume float64

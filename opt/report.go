@@ -9,6 +9,7 @@ const (
 
 // record adds a history point.
 func (r *run) record() {
+	r.widen()
 	p := Point{Evaluations: r.evaluations, Feasible: float64(r.feasible) / float64(r.evaluations)}
 	p.Hypervolume = r.volume()
 	r.history = append(r.history, p)
@@ -47,6 +48,7 @@ func (a *Archive) points() [][]float64 {
 // outcome sums the run up.
 func (r *run) outcome() *Outcome {
 	r.fixReference()
+	r.widen()
 	o := &Outcome{
 		Archive: r.archive.Len(), Reference: r.reference, Evaluations: r.evaluations, Feasible: r.feasible,
 		Population: r.start, Grown: r.grown(), Children: r.set.Children, Polished: r.polished,

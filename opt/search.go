@@ -177,31 +177,6 @@ func (r *run) merge() {
 	}
 }
 
-// referenceSample is the number of feasible designs that the reference is
-// fixed from, if so many are met.
-const referenceSample = 30
-
-// fixReference sets the reference, unless that was done: beyond the front so
-// far, and no nearer than most designs. The worst are left out: one next to a
-// singularity would carry the reference off.
-func (r *run) fixReference() {
-	if r.reference != nil || r.archive.Len() == 0 {
-		return
-	}
-	low, high := r.archive.bounds()
-	r.reference = make([]float64, r.problem.Goals)
-	column := make([]float64, len(r.early))
-	for k := range r.reference {
-		for i, g := range r.early {
-			column[i] = g[k]
-		}
-		slices.Sort(column)
-		quartile := column[len(column)*3/4]
-		r.reference[k] = max(margin(low[k], high[k], 0.5), quartile)
-	}
-	r.early = nil
-}
-
 // count takes one evaluated design into the books.
 func (r *run) count(g *genome) {
 	order := r.evaluations

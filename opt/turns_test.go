@@ -181,7 +181,8 @@ func TestSpacesTellWhatHappened(t *testing.T) {
 }
 
 // Searches of one space are what they were before spaces shared the budget by
-// merit: hashes of runs of the program as it was.
+// merit, but for the children that models make in spaces of few real variables,
+// which came later: hashes of runs of the program as it was.
 func TestOneSpaceIsUnchanged(t *testing.T) {
 	if runtime.GOARCH != "amd64" {
 		t.Skip("last bits differ where products are fused")
@@ -196,8 +197,8 @@ func TestOneSpaceIsUnchanged(t *testing.T) {
 	}{
 		{"ZDT1", problemOf(known.ZDT1(30)), 40, "e46fddd8f98555271cb9a86d4937a1c6"},
 		{"DTLZ2", problemOf(known.DTLZ2(3, 10)), 40, "1f8f7b02d1d96e1be9a682161037625d"},
-		{"mixed", first, 0, "f8a4cb31e5350f6b092a564c81f53084"},
-		{"one goal", single(), 0, "8d1af851cc0c5b7555fe5726a5df8748"},
+		{"mixed", first, 0, "eada3ae41adf3faafb1977f220ede289"},
+		{"one goal", single(), 0, "1b06fe3facf4ccbdfabf33c49333b3b8"},
 	} {
 		o := mustSearch(t, c.p, opt.Settings{Evaluations: 1500, Front: c.front, Seed: 3})
 		got := fmt.Sprintf("%.16x", sha256.Sum256(fmt.Appendf(nil, "%v %v %v %v %v %v %v",
