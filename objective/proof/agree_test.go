@@ -3,6 +3,7 @@ package proof
 import (
 	"context"
 	"fmt"
+	"io"
 	"strings"
 	"testing"
 )
@@ -107,7 +108,7 @@ func TestRecordsAreChecked(t *testing.T) {
 	spoil("another property", "none that", func(c *Record) { c.Claims[place["leg_force"]].Property = "leg_speed" })
 	spoil("a tree left out", "shown for no box", func(c *Record) { c.Trees = c.Trees[1:] })
 	spoil("other splits", "", func(c *Record) {
-		text, err := inflated(c.Trees[1].Splits)
+		text, err := io.ReadAll(inflate(c.Trees[1].Splits))
 		if err != nil {
 			t.Fatal(err)
 		}
@@ -117,7 +118,7 @@ func TestRecordsAreChecked(t *testing.T) {
 		}
 	})
 	spoil("branches cut off", "", func(c *Record) {
-		text, err := inflated(c.Trees[1].Splits)
+		text, err := io.ReadAll(inflate(c.Trees[1].Splits))
 		if err != nil {
 			t.Fatal(err)
 		}

@@ -5,6 +5,7 @@ import (
 	"encoding/binary"
 	"errors"
 	"fmt"
+	"io"
 	"math"
 
 	"legwright/kin"
@@ -36,12 +37,9 @@ func Check(ctx context.Context, t *objective.Task, plan *objective.Plan, values 
 			props |= 1 << rec.Claims[c].Place
 		}
 		covered[b.Region] |= props
-		n, err := p.replay(&all[b.Region], props, b.Splits)
+		n, err := p.replay(&all[b.Region], props, b.Splits, int64(b.Boxes))
 		if boxes += n; err != nil {
 			return boxes, fmt.Errorf("tree %d: %w", k+1, err)
-		}
-		if n != int64(b.Boxes) {
-			return boxes, fmt.Errorf("tree %d has %d boxes, not %d", k+1, n, b.Boxes)
 		}
 	}
 	for _, c := range rec.Claims {
@@ -62,25 +60,30 @@ func (p *prover) admit(rec *Record) error {
 	if !(rec.Gap >= 0 && rec.Gap <= 1) {
 		return fmt.Errorf("a gap of %g is none", rec.Gap)
 	}
+	seen := uint64(0)
 	for _, c := range rec.Claims {
 		if c.Place < 0 || c.Place >= len(p.props) || p.props[c.Place].Name != c.Property {
 			return fmt.Errorf("property %d, %q, is none that this design and brief ask for", c.Place, c.Property)
 		}
+		if seen>>c.Place&1 == 1 {
+			return fmt.Errorf("%s is claimed twice", c.Property)
+		}
+		seen |= 1 << c.Place
 		q := &p.props[c.Place]
 		if q.Bounded && (math.IsNaN(c.Target) || q.worse(c.Target, q.within(rec.Gap))) {
 			return fmt.Errorf("%s is claimed to %g, which is further from the limit %g than the gap of %g", q.Name, c.Target, q.Limit, rec.Gap)
 		}
 		p.aim(c.Place, c.Target)
+		if q.Bounded && q.worse(q.Limit, c.Target) { // more is claimed than was asked for: single poses must keep that, too
+			q.Limit = c.Target
+		}
 	}
 	return nil
 }
 
-// replay tests the boxes of one region.
-func (p *prover) replay(g *region, props uint64, splits string) (boxes int64, err error) {
-	text, err := inflated(splits)
-	if err != nil {
-		return 0, err
-	}
+// replay tests the boxes of one region, which are to be so many.
+func (p *prover) replay(g *region, props uint64, splits string, told int64) (boxes int64, err error) {
+	text := inflate(splits)
 	for _, b := range p.bench {
 		b.enter(g)
 	}
@@ -90,14 +93,15 @@ func (p *prover) replay(g *region, props uint64, splits string) (boxes int64, er
 	}
 	stack := []open{{g.box, props}}
 	for len(stack) > 0 || len(p.cells) > 0 {
-		if len(p.cells) == batch || len(stack) == 0 {
-			if p.stop() {
-				p.cells = p.cells[:0]
-				if err := p.ctx.Err(); err != nil {
-					return boxes, err
-				}
-				return boxes, errors.New("time is out")
+		full := len(p.cells) == batch || len(stack) == 0
+		if (full || boxes%batch == 0) && p.stop() {
+			p.cells = p.cells[:0]
+			if err := p.ctx.Err(); err != nil {
+				return boxes, err
 			}
+			return boxes, errors.New("time is out")
+		}
+		if full {
 			p.test(g, p.cells)
 			for i := range p.cells {
 				if want := p.cells[i].open; p.slots[i].closed&want != want {
@@ -111,18 +115,18 @@ func (p *prover) replay(g *region, props uint64, splits string) (boxes int64, er
 		}
 		at := stack[len(stack)-1]
 		stack = stack[:len(stack)-1]
-		boxes++
-		if len(text) == 0 {
-			return boxes, errors.New("it ends before its last box")
+		if boxes++; boxes > told {
+			return boxes, fmt.Errorf("it has more boxes than the %d that it tells of", told)
 		}
-		code := text[0]
-		text = text[1:]
+		code, err := text.ReadByte()
+		if err != nil {
+			return boxes, fmt.Errorf("it ends before its last box: %w", err)
+		}
 		if code&closes != 0 {
-			mask, n := binary.Uvarint(text)
-			if n <= 0 {
-				return boxes, errors.New("the claims of a box cannot be read")
+			mask, err := binary.ReadUvarint(text)
+			if err != nil {
+				return boxes, fmt.Errorf("the claims of a box cannot be read: %w", err)
 			}
-			text = text[n:]
 			closed := unpacked(mask, props)
 			at.left &^= closed
 			p.cells = append(p.cells, cell{box: at.box, open: closed, depth: 1})
@@ -149,8 +153,11 @@ func (p *prover) replay(g *region, props uint64, splits string) (boxes int64, er
 			return boxes, errors.New("a box has no known end")
 		}
 	}
-	if len(text) > 0 {
+	if _, err := text.ReadByte(); !errors.Is(err, io.EOF) {
 		return boxes, errors.New("it goes on after its last box")
+	}
+	if boxes != told {
+		return boxes, fmt.Errorf("it has %d boxes, not %d", boxes, told)
 	}
 	return boxes, nil
 }
