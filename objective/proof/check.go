@@ -63,7 +63,7 @@ func (p *prover) admit(rec *Record) error {
 	seen := uint64(0)
 	for _, c := range rec.Claims {
 		if c.Place < 0 || c.Place >= len(p.props) || p.props[c.Place].Name != c.Property {
-			return fmt.Errorf("property %d, %q, is none that this design and brief ask for", c.Place, c.Property)
+			return fmt.Errorf("property %d, %.60q, is none that this design and brief ask for", c.Place, c.Property)
 		}
 		if seen>>c.Place&1 == 1 {
 			return fmt.Errorf("%s is claimed twice", c.Property)

@@ -51,7 +51,7 @@ func ReadCheckpoint(b []byte) (*Checkpoint, error) {
 	}
 	c := new(Checkpoint)
 	if err := json.Unmarshal(b, c); err != nil {
-		return nil, fmt.Errorf("the checkpoint cannot be read (%w); begin anew with --force", err)
+		return nil, fmt.Errorf("the checkpoint cannot be read (%.200s); begin anew with --force", study.Clean(err.Error()))
 	}
 	return c, nil
 }
@@ -71,9 +71,9 @@ func (c *Checkpoint) Continues(old *Checkpoint) error {
 	case old.Part == Merging:
 		return fmt.Errorf("the study there is a merge that was broken off; merge again, or give --force to search anew")
 	case old.Program != c.Program:
-		return fmt.Errorf("the unfinished study there is by %s, this is %s; go on with that version, or give --force to begin anew", study.Clean(old.Program), c.Program)
+		return fmt.Errorf("the unfinished study there is by %.60s, this is %s; go on with that version, or give --force to begin anew", study.Clean(old.Program), c.Program)
 	case old.Part != c.Part:
-		return fmt.Errorf("the unfinished study there is %s, this run is %s; give the same --part, or --force to begin anew", part(old), part(c))
+		return fmt.Errorf("the unfinished study there is %.60s, this run is %s; give the same --part, or --force to begin anew", part(old), part(c))
 	case old.Brief != c.Brief:
 		return fmt.Errorf("the unfinished study there is of another brief; give that brief, or --force to begin anew")
 	case old.Seed != c.Seed:

@@ -27,7 +27,7 @@ func CheckParts(parts []*study.Part, at func(*study.Part) string) error {
 	for i, p := range parts {
 		switch {
 		case p.Program != Program():
-			return fmt.Errorf("%s: was made by %s, this is %s; search all parts with one version and merge them with it", study.Clean(at(p)), study.Clean(p.Program), Program())
+			return fmt.Errorf("%s: was made by %.60s, this is %s; search all parts with one version and merge them with it", study.Clean(at(p)), study.Clean(p.Program), Program())
 		case p.Brief != first.Brief:
 			return fmt.Errorf("%s: is a part of another brief than %s; merge parts of one brief only", study.Clean(at(p)), study.Clean(at(first)))
 		case p.Seed != first.Seed:

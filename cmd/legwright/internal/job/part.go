@@ -22,7 +22,7 @@ func ParsePart(text string) (Part, error) {
 	var rest string
 	n, _ := fmt.Sscanf(text, "%d/%d%s", &p.Number, &p.Of, &rest)
 	if n != 2 || fmt.Sprintf("%d/%d", p.Number, p.Of) != text || p.Of < 1 || p.Of > study.MostParts || p.Number < 1 || p.Number > p.Of {
-		return Part{}, fmt.Errorf("--part %s: write the number of the part and of how many, such as 3/16, with at most %d parts", study.Clean(text), study.MostParts)
+		return Part{}, fmt.Errorf("--part %.60s: write the number of the part and of how many, such as 3/16, with at most %d parts", study.Clean(text), study.MostParts)
 	}
 	return p, nil
 }

@@ -185,10 +185,10 @@ func BriefCopy(dir string) (string, error) { return (&Folder{dir: dir}).Brief() 
 func DecodePart(b []byte) (*Part, error) {
 	p := new(Part)
 	if err := json.Unmarshal(b, p); err != nil {
-		return nil, fmt.Errorf("%s: %w", place(b, err), err)
+		return nil, unreadable(b, err)
 	}
 	if p.Format != PartFormat {
-		return nil, fmt.Errorf("format is %q, not %q", Clean(p.Format), PartFormat)
+		return nil, fmt.Errorf("format is %.60q, not %q", Clean(p.Format), PartFormat)
 	}
 	return p, p.check()
 }

@@ -44,10 +44,10 @@ func LoadCertificate(path string) (*Certificate, error) {
 func ReadCertificate(b []byte) (*Certificate, error) {
 	c := new(Certificate)
 	if err := json.Unmarshal(b, c); err != nil {
-		return nil, fmt.Errorf("it is no certificate: %w", err)
+		return nil, fmt.Errorf("it is no certificate: %w", unreadable(b, err))
 	}
 	if c.Format != CertificateFormat || c.Record == nil {
-		return nil, fmt.Errorf("its format is %q; this program reads %q", Clean(c.Format), CertificateFormat)
+		return nil, fmt.Errorf("its format is %.60q; this program reads %q", Clean(c.Format), CertificateFormat)
 	}
 	return c, nil
 }

@@ -56,10 +56,10 @@ func CheckWeights(f *Front, weights map[string]float64) error {
 	slices.Sort(names)
 	for _, n := range names {
 		if !slices.Contains(goals, n) {
-			return fmt.Errorf("weight of %s: not a goal of this study; weigh %s", Clean(n), strings.Join(goals, ", "))
+			return fmt.Errorf("weight of %.60s: not a goal of this study; weigh %.400s", Clean(n), Clean(strings.Join(goals, ", ")))
 		}
 		if v := weights[n]; !(v >= 0) || math.IsInf(v, 0) {
-			return fmt.Errorf("weight of %s: %v is not a weight; write a number that is not negative", n, v)
+			return fmt.Errorf("weight of %.60s: %v is not a weight; write a number that is not negative", Clean(n), v)
 		}
 	}
 	for _, g := range goals {
@@ -67,7 +67,7 @@ func CheckWeights(f *Front, weights map[string]float64) error {
 			return nil
 		}
 	}
-	return fmt.Errorf("every weight is 0, which leaves nothing to order by; give at least one of %s a weight above 0", strings.Join(goals, ", "))
+	return fmt.Errorf("every weight is 0, which leaves nothing to order by; give at least one of %.400s a weight above 0", Clean(strings.Join(goals, ", ")))
 }
 
 // goalValues has a row for each design and a column for each goal. A value without bound is taken as

@@ -46,14 +46,14 @@ func Decode(b []byte) (*Front, error) {
 	}
 	f := new(Front)
 	if err := json.Unmarshal(b, &head); err != nil {
-		return nil, fmt.Errorf("%s: %w; %s", place(b, err), err, again)
+		return nil, fmt.Errorf("%w; %s", unreadable(b, err), again)
 	}
 	if head.Format != Format {
-		return nil, fmt.Errorf("format is %q, not %q; give a front.json that this program has written", Clean(head.Format), Format)
+		return nil, fmt.Errorf("format is %.60q, not %q; give a front.json that this program has written", Clean(head.Format), Format)
 	}
 	d := json.NewDecoder(bytes.NewReader(b))
 	if err := d.Decode(f); err != nil {
-		return nil, fmt.Errorf("%s: %w; %s", place(b, err), err, again)
+		return nil, fmt.Errorf("%w; %s", unreadable(b, err), again)
 	}
 	if _, err := d.Token(); err != io.EOF {
 		return nil, fmt.Errorf("there is more after the front; %s", again)
@@ -63,6 +63,11 @@ func Decode(b []byte) (*Front, error) {
 	}
 	f.restore()
 	return f, nil
+}
+
+// unreadable words an error of the JSON decoder, which may quote any length of the text, with its place.
+func unreadable(b []byte, err error) error {
+	return fmt.Errorf("%s: %.200s", place(b, err), Clean(err.Error()))
 }
 
 // place is the line of a fault in the text.
@@ -89,7 +94,7 @@ func (f *Front) check() error {
 	}
 	for i, g := range f.Goals {
 		if g.Measure == "" || g.Sense != Maximise && g.Sense != Minimise {
-			return fmt.Errorf("goals[%d]: a measure with the sense maximise or minimise is wanted, not %q %q", i, Clean(g.Sense), Clean(g.Measure))
+			return fmt.Errorf("goals[%d]: a measure with the sense maximise or minimise is wanted, not %.60q %.60q", i, Clean(g.Sense), Clean(g.Measure))
 		}
 	}
 	if n := len(f.ReferencePoint); n != 0 && n != len(f.Goals) {
@@ -100,7 +105,7 @@ func (f *Front) check() error {
 		d := &f.Designs[i]
 		switch {
 		case !idForm.MatchString(d.ID):
-			return fmt.Errorf("designs[%d].id: %q is not a number such as 001", i, Clean(d.ID))
+			return fmt.Errorf("designs[%d].id: %.60q is not a number such as 001", i, Clean(d.ID))
 		case seen[d.ID]:
 			return fmt.Errorf("designs[%d].id: %s is there twice", i, d.ID)
 		case d.Family == "":
@@ -109,7 +114,7 @@ func (f *Front) check() error {
 		seen[d.ID] = true
 		for _, g := range f.Goals {
 			if _, ok := d.Measures[g.Measure]; !ok {
-				return fmt.Errorf("designs[%d].measures: the goal %s is missing", i, Clean(g.Measure))
+				return fmt.Errorf("designs[%d].measures: the goal %.60s is missing", i, Clean(g.Measure))
 			}
 		}
 	}

@@ -108,3 +108,36 @@ func TestReadNamesTheFile(t *testing.T) {
 		t.Errorf("a file: %v", err)
 	}
 }
+
+// Words of a file are quoted in errors up to a bounded length.
+func TestErrorsAreBounded(t *testing.T) {
+	long := strings.Repeat("x", 100_000)
+	front, _ := Encode(tilter())
+	certificate := `{"format": "legwright-proof/1"}`
+	for what, read := range map[string]func() error{
+		"front's format": func() error { _, err := Decode([]byte(`{"format": "` + long + `"}`)); return err },
+		"part's format":  func() error { _, err := DecodePart([]byte(`{"format": "` + long + `"}`)); return err },
+		"certificate's format": func() error {
+			_, err := ReadCertificate([]byte(strings.Replace(certificate, "legwright", long, 1)))
+			return err
+		},
+		"id": func() error {
+			_, err := Decode(bytes.Replace(front, []byte(`"001"`), []byte(`"`+long+`"`), 1))
+			return err
+		},
+		"number": func() error {
+			_, err := Decode(bytes.Replace(front, []byte(`"evaluations": 900`), []byte(`"evaluations": 1`+strings.Repeat("0", len(long))), 1))
+			return err
+		},
+		"goal": func() error {
+			return CheckWeights(&Front{Goals: []Goal{{Measure: long}}}, map[string]float64{long: -1})
+		},
+	} {
+		err := read()
+		if err == nil {
+			t.Errorf("%s: is taken", what)
+		} else if len(err.Error()) > 1000 {
+			t.Errorf("%s: an error of %d bytes", what, len(err.Error()))
+		}
+	}
+}
