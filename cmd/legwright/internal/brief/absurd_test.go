@@ -7,6 +7,7 @@ import (
 	"runtime"
 	"strings"
 	"testing"
+	"unicode"
 )
 
 // aliasBomb is a YAML text of a few hundred bytes that stands for 9^9 values if aliases are followed.
@@ -100,6 +101,25 @@ func TestAbsurdFiles(t *testing.T) {
 			t.Errorf("got %v", err)
 		} else {
 			t.Log(err)
+		}
+	}
+}
+
+// Control characters of a file do not reach the terminal with an error.
+func TestFaultsPrint(t *testing.T) {
+	for _, c := range []struct{ file, text string }{
+		{"b.toml", "\x1b"}, {"b.toml", "\x1b[31m = 1"}, {"b.yaml", "\"\\e[31m\": 1"}, {"b.yaml", "family: \"\\e]0;x\\a\""},
+		{"b.json", "{\"\\u001b[31m\": 1}"}, {"b.json", "\x1b"}, {"b.json", "{\"\\u202e\\n\": 1}"}, {"b\n\x1b.json", "{"},
+	} {
+		_, err := Parse(c.file, []byte(c.text), known())
+		if err == nil {
+			t.Errorf("%s %q: is taken", c.file, c.text)
+			continue
+		}
+		for _, l := range strings.Split(err.Error(), "\n") {
+			if strings.IndexFunc(l, func(r rune) bool { return !unicode.IsPrint(r) }) >= 0 || !strings.Contains(l, ".") {
+				t.Errorf("%s %q: %q", c.file, c.text, l)
+			}
 		}
 	}
 }

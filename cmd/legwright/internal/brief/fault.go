@@ -6,6 +6,7 @@ import (
 	"math"
 	"slices"
 	"strings"
+	"unicode"
 )
 
 // Position is a place in a file; line and column count from 1, columns in characters. A zero line
@@ -40,7 +41,7 @@ type Fault struct {
 	Remedy  string   `json:"remedy"` // what to write instead
 }
 
-// Error is the fault on one line.
+// Error is the fault on one line. What would not print, of the texts of a file, shows as a question mark.
 func (f Fault) Error() string {
 	var b strings.Builder
 	b.WriteString(f.At.String())
@@ -51,7 +52,12 @@ func (f Fault) Error() string {
 	if f.Remedy != "" {
 		b.WriteString("; " + f.Remedy)
 	}
-	return b.String()
+	return strings.Map(func(r rune) rune {
+		if unicode.IsPrint(r) {
+			return r
+		}
+		return '?'
+	}, b.String())
 }
 
 // Faults are all the faults found in one go.
