@@ -65,21 +65,6 @@ func TestRecordsReadBack(t *testing.T) {
 	}
 }
 
-// No bytes make decoding panic, and what it takes it gives back.
-func FuzzRecord(f *testing.F) {
-	f.Add(encode(nil, &opt.Result{Goals: []float64{1, 2}, Excess: []float64{3}, Violation: 3}))
-	f.Add([]byte{7})
-	f.Fuzz(func(t *testing.T, b []byte) {
-		r := opt.Result{Goals: []float64{math.NaN(), math.NaN()}, Excess: make([]float64, 1)}
-		if decode(b, &r) {
-			again := opt.Result{Goals: []float64{math.NaN(), math.NaN()}, Excess: make([]float64, 1)}
-			if !decode(encode(nil, &r), &again) || again.Fault != r.Fault || math.Float64bits(again.Violation) != math.Float64bits(r.Violation) {
-				t.Errorf("%x reads as %+v, then as %+v", b, r, again)
-			}
-		}
-	})
-}
-
 const journalBrief = `
 title: Stage
 family: 3-RPR
