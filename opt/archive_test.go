@@ -169,6 +169,7 @@ func TestInnerLoopsDoNotAllocate(t *testing.T) {
 		cycle := func() {
 			s.remove(7)
 			s.add(p)
+			s.settle()
 		}
 		cycle()
 		if n := testing.AllocsPerRun(50, cycle); n != 0 {

@@ -6,7 +6,8 @@ import (
 )
 
 // shares keeps a set of mutually non-dominated points with the hypervolume
-// that each of them covers alone, up to date under insertion and removal.
+// that each of them covers alone, under insertion and removal. Volumes are
+// computed when they are asked for: a change only marks those that it touches.
 //
 // What a point p covers alone lies in the box between p and its upper corner
 // u, where u[k] is the least q[k] of the other points q that are no worse
@@ -22,7 +23,8 @@ type shares struct {
 	ref   []float64
 	pts   []float64 // m numbers per point, one after another
 	upper []float64 // likewise: corners of the boxes, the points themselves where alone is 0
-	alone []float64 // hypervolume that a point covers alone
+	alone []float64 // hypervolume that a point covers alone, as of when it was last computed
+	stale []bool    // the point's surroundings have changed since; its corner is not too low
 
 	vol   volume
 	solid []xyz
@@ -35,7 +37,7 @@ type shares struct {
 func (s *shares) reset(ref []float64) {
 	s.m = len(ref)
 	s.ref = append(s.ref[:0], ref...)
-	s.pts, s.upper, s.alone = s.pts[:0], s.upper[:0], s.alone[:0]
+	s.pts, s.upper, s.alone, s.stale = s.pts[:0], s.upper[:0], s.alone[:0], s.stale[:0]
 }
 
 // len returns the number of points.
@@ -56,15 +58,13 @@ func (s *shares) add(p []float64) int {
 	s.pts = slices.Insert(s.pts, i*m, p...)
 	s.upper = slices.Insert(s.upper, i*m, s.ref...)
 	s.alone = slices.Insert(s.alone, i, 0)
+	s.stale = slices.Insert(s.stale, i, true)
 	if s.plain {
 		return i
 	}
 	for j := next(s.upper, p, 0, true); j <= n; j = next(s.upper, p, j+1, true) {
-		if j != i {
-			s.update(j)
-		}
+		s.stale[j] = true
 	}
-	s.update(i)
 	return i
 }
 
@@ -75,13 +75,14 @@ func (s *shares) remove(i int) {
 	s.pts = slices.Delete(s.pts, i*m, (i+1)*m)
 	s.upper = slices.Delete(s.upper, i*m, (i+1)*m)
 	s.alone = slices.Delete(s.alone, i, i+1)
+	s.stale = slices.Delete(s.stale, i, i+1)
 	if s.plain {
 		return
 	}
 	n := s.len()
 	for j := next(s.upper, s.gone, 0, false); j < n; j = next(s.upper, s.gone, j+1, false) {
 		loosen(s.corner(j), s.gone, s.ref)
-		s.update(j)
+		s.stale[j] = true
 	}
 }
 
@@ -112,25 +113,46 @@ func (s *shares) move(ref []float64) {
 	for i := range s.alone {
 		u := s.corner(i)
 		for k, r := range ref {
-			if r != old[k] && (u[k] == old[k] || u[k] > r || s.alone[i] == 0) {
+			if r != old[k] && (u[k] == old[k] || u[k] > r || s.alone[i] == 0 || s.stale[i]) {
 				copy(u, ref)
-				s.update(i)
+				s.stale[i] = true
 				break
 			}
 		}
 	}
 }
 
-// least returns the index of the point that covers least alone, the last of
-// equals.
-func (s *shares) least() int {
-	b := 0
-	for i, v := range s.alone {
-		if v <= s.alone[b] {
-			b = i
-		}
+// settle computes what every point covers alone.
+func (s *shares) settle() {
+	for i := range s.stale {
+		s.exact(i)
 	}
-	return b
+}
+
+// exact returns what point i covers alone.
+func (s *shares) exact(i int) float64 {
+	if s.stale[i] && !s.plain {
+		s.update(i)
+	}
+	return s.alone[i]
+}
+
+// least returns the index of the point that covers least alone, the last of
+// equals. Points must only have been removed since all were settled: what the
+// others cover has not become less then, and few have to be computed anew.
+func (s *shares) least() int {
+	for {
+		b := 0
+		for i, v := range s.alone {
+			if v <= s.alone[b] {
+				b = i
+			}
+		}
+		if !s.stale[b] {
+			return b
+		}
+		s.update(b)
+	}
 }
 
 // next returns the first corner at or after index from that is beyond q: in
@@ -169,7 +191,9 @@ func within(q, u []float64) bool {
 
 // update computes what point i covers alone, and its corner, which must not be
 // too low before.
-func (s *shares) update(i int) { s.alone[i] = s.gain(s.point(i), i, s.corner(i)) }
+func (s *shares) update(i int) {
+	s.alone[i], s.stale[i] = s.gain(s.point(i), i, s.corner(i)), false
+}
 
 // gain computes what p covers that no point of the set but the one at skip
 // (-1 for none) covers, and lowers u to p's corner; the nearer u is to it

@@ -139,12 +139,42 @@ func TestSharesFollowTheSet(t *testing.T) {
 				set = append(set, s.point(i))
 			}
 			all := Hypervolume(set, ref)
+			if r.IntN(3) == 0 { // else what is stale stays so for a while
+				continue
+			}
 			for i := range set {
+				s.exact(i)
 				rest := slices.Delete(slices.Clone(set), i, i+1)
 				if want := all - Hypervolume(rest, ref); math.Abs(want-s.alone[i]) > 1e-12 {
 					t.Fatalf("%d goals, step %d: point %d of %v covers %v alone, want %v", m, step, i, set, s.alone[i], want)
 				}
 			}
+		}
+	}
+}
+
+// The point to leave out is the one that covers least, however many were left
+// out before; few volumes are computed for it.
+func TestLeastAfterRemovals(t *testing.T) {
+	r := rand.New(rand.NewPCG(7, 8))
+	for m := 2; m <= 4; m++ {
+		var s shares
+		ref := slices.Repeat([]float64{1.1}, m)
+		s.reset(ref)
+		for _, p := range sphere(r, 40, m) {
+			s.add(p)
+		}
+		s.settle()
+		for s.len() > 1 {
+			b := s.least()
+			all := s
+			all.pts, all.upper = slices.Clone(s.pts), slices.Clone(s.upper)
+			all.alone, all.stale = slices.Clone(s.alone), slices.Clone(s.stale)
+			all.settle()
+			if want := all.least(); want != b {
+				t.Fatalf("%d goals, %d points: left out %d, want %d", m, s.len(), b, want)
+			}
+			s.remove(b)
 		}
 	}
 }

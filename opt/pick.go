@@ -180,7 +180,7 @@ func (p *picker) exchange() {
 				continue
 			}
 			c := slices.Index(p.index, i)
-			lost := p.chosen.alone[c]
+			lost := p.chosen.exact(c)
 			b := p.leave(c)
 			if p.gains[top] > p.gains[b] {
 				b = top
@@ -208,7 +208,9 @@ func (p *picker) exchange() {
 
 // near reports whether the box of chosen point j reaches to point i.
 func (p *picker) near(j, i int) bool {
-	return within(p.pts[i], p.chosen.corner(slices.Index(p.index, j)))
+	c := slices.Index(p.index, j)
+	p.chosen.exact(c)
+	return within(p.pts[i], p.chosen.corner(c))
 }
 
 // scatter chooses k points that are far from each other: the best in each

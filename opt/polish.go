@@ -163,6 +163,7 @@ func (r *run) gaps(pts [][]float64) []int {
 	for _, i := range chosen {
 		s.add(pts[i]) // in ascending order of the last goal: index for index
 	}
+	s.settle()
 	var inner []int
 	for j, i := range chosen {
 		rim := false

@@ -38,6 +38,9 @@ func newPopulation(goals int) *population {
 // ranked returns all designs, best first. The slice is dst, reused.
 func (p *population) ranked(dst []*genome) []*genome {
 	dst = append(dst[:0], p.front...)
+	if p.m <= mostByVolume { // beyond, that some may cover a little more will do
+		p.share.settle()
+	}
 	for i, g := range p.front {
 		g.rank = 0
 		g.crowd = p.share.alone[i]
@@ -155,6 +158,7 @@ func (p *population) reduce(n int) {
 			p.leave(slices.Index(p.front, g))
 		}
 	}
+	p.share.settle()
 	for len(p.front) > n {
 		p.leave(p.share.least())
 	}
