@@ -70,15 +70,16 @@ func parseWeights(f *study.Front, given []string) (map[string]float64, error) {
 	}
 	for _, s := range given {
 		name, text, ok := strings.Cut(s, "=")
+		s = fmt.Sprintf("%.60s", study.Clean(s))
 		if !ok {
-			return nil, fmt.Errorf("--weight %s: write measure=number, as in --weight %s=2", s, names[0])
+			return nil, fmt.Errorf("--weight %s: write measure=number, as in --weight %.60s=2", s, study.Clean(names[0]))
 		}
 		if _, ok := out[name]; !ok {
-			return nil, fmt.Errorf("--weight %s: %q is no goal of this study; its goals are %s", s, name, strings.Join(names, ", "))
+			return nil, fmt.Errorf("--weight %s: %.60q is no goal of this study; its goals are %.400s", s, name, study.Clean(strings.Join(names, ", ")))
 		}
 		w, err := strconv.ParseFloat(text, 64)
 		if err != nil {
-			return nil, fmt.Errorf("--weight %s: %q is no weight; write a number of 0 or more", s, text)
+			return nil, fmt.Errorf("--weight %s: %.60q is no weight; write a number of 0 or more", s, text)
 		}
 		out[name] = w
 	}
