@@ -57,6 +57,17 @@ func related(set []float64, p []float64, from int) (at, relation int) {
 				return i / 3, 1
 			}
 		}
+	case 4:
+		p0, p1, p2, p3 := p[0], p[1], p[2], p[3]
+		for i := 4 * from; i+3 < len(set); i += 4 {
+			q0, q1, q2, q3 := set[i], set[i+1], set[i+2], set[i+3]
+			if int64(math.Float64bits(p0-q0)|math.Float64bits(p1-q1)|math.Float64bits(p2-q2)|math.Float64bits(p3-q3)) >= 0 {
+				return i / 4, -1
+			}
+			if int64(math.Float64bits(q0-p0)|math.Float64bits(q1-p1)|math.Float64bits(q2-p2)|math.Float64bits(q3-p3)) >= 0 {
+				return i / 4, 1
+			}
+		}
 	default:
 		for i := m * from; i < len(set); i += m {
 			if r := compare(set[i:i+m], p); r != 0 {

@@ -23,8 +23,8 @@ type shares struct {
 	ref   []float64
 	pts   []float64 // m numbers per point, one after another
 	upper []float64 // likewise: corners of the boxes, the points themselves where alone is 0
-	alone []float64 // hypervolume that a point covers alone, as of when it was last computed
-	stale []bool    // the point's surroundings have changed since; its corner is not too low
+	alone []float64 // hypervolume that a point covers alone, no more than that where it is stale
+	stale []bool    // the point's surroundings have changed; its corner is not too low
 
 	vol   volume
 	solid []xyz
@@ -63,9 +63,21 @@ func (s *shares) add(p []float64) int {
 		return i
 	}
 	for j := next(s.upper, p, 0, true); j <= n; j = next(s.upper, p, j+1, true) {
-		s.stale[j] = true
+		if j != i {
+			s.alone[j] = max(0, s.alone[j]-shared(s.point(j), p, s.corner(j)))
+			s.stale[j] = true
+		}
 	}
 	return i
+}
+
+// shared bounds what p loses of its box, up to u, to q: all that both cover.
+func shared(p, q, u []float64) float64 {
+	v := 1.0
+	for k, r := range u {
+		v *= r - max(p[k], q[k])
+	}
+	return v
 }
 
 // remove drops point i.
@@ -115,7 +127,7 @@ func (s *shares) move(ref []float64) {
 		for k, r := range ref {
 			if r != old[k] && (u[k] == old[k] || u[k] > r || s.alone[i] == 0 || s.stale[i]) {
 				copy(u, ref)
-				s.stale[i] = true
+				s.alone[i], s.stale[i] = 0, true
 				break
 			}
 		}
@@ -138,8 +150,7 @@ func (s *shares) exact(i int) float64 {
 }
 
 // least returns the index of the point that covers least alone, the last of
-// equals. Points must only have been removed since all were settled: what the
-// others cover has not become less then, and few have to be computed anew.
+// equals. Few have to be computed anew for that.
 func (s *shares) least() int {
 	for {
 		b := 0

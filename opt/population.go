@@ -158,7 +158,6 @@ func (p *population) reduce(n int) {
 			p.leave(slices.Index(p.front, g))
 		}
 	}
-	p.share.settle()
 	for len(p.front) > n {
 		p.leave(p.share.least())
 	}
