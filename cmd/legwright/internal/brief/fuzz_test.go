@@ -68,7 +68,10 @@ func faultsOnly(t *testing.T, file string, text []byte, none bool, err error) {
 	if !none || !errors.As(err, &fs) || len(fs) == 0 {
 		t.Fatalf("refused with %T: %v", err, err)
 	}
-	lines := 1 + bytes.Count(text, []byte("\n"))
+	lines := 1
+	for _, end := range []string{"\n", "\r", "\u0085", "\u2028", "\u2029"} { // all that ends a line of YAML
+		lines += bytes.Count(text, []byte(end))
+	}
 	for _, f := range fs {
 		if f.At.File == "" || f.Problem == "" || f.Remedy == "" {
 			t.Errorf("fault without a place, a problem or a remedy: %+v", f)
