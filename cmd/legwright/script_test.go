@@ -11,6 +11,8 @@ import (
 	"time"
 
 	"github.com/rogpeppe/go-internal/testscript"
+
+	"legwright/cmd/legwright/internal/study"
 )
 
 var update = flag.Bool("update", false, "write the expected texts again")
@@ -51,6 +53,13 @@ func TestScripts(t *testing.T) {
 				if err := cmd.Wait(); cmd.ProcessState.ExitCode() != exitInterrupted {
 					ts.Fatalf("status %d, want %d: %v", cmd.ProcessState.ExitCode(), exitInterrupted, err)
 				}
+			},
+			// repeat DONE OUT BRIEF BUDGET searches the evaluations that the study DONE reached, of the budget.
+			"repeat": func(ts *testscript.TestScript, neg bool, args []string) {
+				front, err := study.Read(ts.MkAbs(args[0]))
+				ts.Check(err)
+				ts.Check(ts.Exec("legwright", "search", args[2], "-o", args[1], "--quiet",
+					"--evaluations", strconv.Itoa(front.Evaluations), "--budget", args[3]))
 			},
 			"rc": func(ts *testscript.TestScript, neg bool, args []string) {
 				if neg || len(args) < 2 {
