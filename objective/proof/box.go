@@ -8,7 +8,7 @@ import (
 	"legwright/objective"
 )
 
-// subject is what a proof is about: constant while it runs.
+// subject is what a proof is about: constant while boxes are tested.
 type subject struct {
 	task    *objective.Task
 	plan    *objective.Plan
@@ -17,6 +17,7 @@ type subject struct {
 	frame   *kin.Frame
 	props   []Property
 	target  []float64 // what is proved of each property: its limit, or that less the gap; swings as chords
+	best    []float64 // what bounds of singular values are tried up to, NaN where only the target is asked for
 	own     []int     // columns of the own freedoms
 	six     bool      // J is the matrix of wrenches itself
 	legs    int
@@ -34,8 +35,10 @@ type bench struct {
 
 	e       kin.Enclosure
 	j, w    family
+	m       *family // of j and w the one in work, whose centre inv and, once polared, polar hold
 	inv     inverse
 	polar   polar
+	polared bool
 	cond    conditioner
 	rest    rests
 	s       [6]support
@@ -46,7 +49,6 @@ type bench struct {
 	worst   []float64 // bound met by each property that the last test proved
 	ball    ball
 	corner  int // vertex at which a property seems to fail, -1 for none
-	polared bool
 }
 
 func newBench(s *subject) *bench {
@@ -167,99 +169,4 @@ func (b *bench) swings(i int, chords *[6]enclose.Form) bool {
 	}
 	b.worst[i] = worst
 	return worst <= b.target[i]
-}
-
-// matrices tests the properties of the inverse Jacobian and gives those that hold.
-func (b *bench) matrices(open uint64) (closed uint64) {
-	b.polared = false
-	inverted := false
-	efforts, rates := false, false
-	for i := range b.props {
-		if open>>i&1 == 0 {
-			continue
-		}
-		k := b.props[i].kind
-		switch {
-		case k == held || k == wrenches && !b.six:
-			if b.wrench(i) {
-				closed |= 1 << i
-			}
-			continue
-		case k == rate || k == power:
-			rates = true
-		}
-		switch k {
-		case effort, push, pull, power:
-			efforts = true
-		}
-	}
-	if open&^closed == 0 {
-		return closed
-	}
-	inverted = b.inv.take(&b.j)
-	for i := range b.props {
-		if (open&^closed)>>i&1 == 0 || !inverted {
-			continue
-		}
-		ok := false
-		switch k := b.props[i].kind; {
-		case k == regular:
-			ok = b.inv.regular(&b.j, b.task.Singular) || b.axes() && b.holds(&b.j, 0, b.task.Singular*b.j.size)
-		case k == conditioned || k == wrenches && b.six:
-			ok = b.axes() && b.holds(&b.j, b.target[i], 0)
-		case k == slowest:
-			ok = b.axes()
-			if ok {
-				ok, b.corner = b.cond.below(&b.j, &b.polar, 1/b.target[i])
-			}
-		case k == fastest:
-			ok = b.axes() && b.holds(&b.j, 0, 1/b.target[i])
-		}
-		if ok {
-			closed |= 1 << i
-			b.worst[i] = b.target[i]
-		}
-	}
-	if rates || efforts {
-		closed |= b.loaded(open&^closed, efforts && inverted, rates)
-	}
-	return closed
-}
-
-// axes finds the polar decomposition of the centre, once.
-func (b *bench) axes() bool {
-	if !b.polared {
-		b.polared = b.polar.factor(b.j.n, &b.j.c, &b.inv.x, &b.inv.inverter)
-	}
-	return b.polared
-}
-
-// holds proves σmin ≥ k·σmax + floor.
-func (b *bench) holds(m *family, k, floor float64) bool {
-	ok, corner := b.cond.holds(m, &b.polar, k, floor)
-	if !ok && corner >= 0 {
-		b.corner = corner
-	}
-	return ok
-}
-
-// wrench tests a property of the 6×6 matrix of wrenches.
-func (b *bench) wrench(i int) bool {
-	if !b.w.take(&b.e.Wrenches, 6, every, b.region.moving) || !b.inv.take(&b.w) {
-		return false
-	}
-	b.polared = false
-	ok := false
-	if b.props[i].kind == held {
-		ok = b.inv.regular(&b.w, b.task.Singular)
-		if !ok && b.polar.factor(6, &b.w.c, &b.inv.x, &b.inv.inverter) {
-			ok = b.holds(&b.w, 0, b.task.Singular*b.w.size)
-		}
-	} else if b.polar.factor(6, &b.w.c, &b.inv.x, &b.inv.inverter) {
-		ok = b.holds(&b.w, b.target[i], 0)
-	}
-	if ok {
-		b.worst[i] = b.target[i]
-	}
-	return ok
 }

@@ -132,7 +132,7 @@ func TestGainsOfRailsAtRightAngles(t *testing.T) {
 		least, most float64
 		want        Answer
 		gapped      bool
-	}{{0.5, 2, Proved, true}, {0.49, 2.04, Proved, false}, {0.5001, 2, Refuted, true}, {0.5, 1.9999, Refuted, true}} {
+	}{{0.5, 2, Proved, true}, {0.49, 2.04, Proved, false}, {0.4, 2.5, Proved, false}, {0.5001, 2, Refuted, true}, {0.5, 1.9999, Refuted, true}} {
 		task := boxTask(objective.Box, kin.Coords{low, low, low}, kin.Coords{high, high, high})
 		task.Limits = []objective.Limit{limit("gain_least", c.least), limit("gain_most", c.most)}
 		task.Prepare()
@@ -154,6 +154,13 @@ func TestGainsOfRailsAtRightAngles(t *testing.T) {
 		if answer != c.want {
 			report(t, r)
 			t.Fatalf("gains in [%g, %g]: %v, want %v", c.least, c.most, answer, c.want)
+		}
+		for _, name := range []string{"gain_least", "gain_most"} { // the bound lies between the limit and the extreme
+			if o := outcome(t, r, name); o.Answer == Proved && !o.Gapped {
+				if x := o.Slack(o.Bound) / o.Slack(o.Found); !(x > 0.3 && x <= 1) {
+					t.Errorf("%s is proved to %g, %g of the way from the limit to the extreme", name, o.Bound, x)
+				}
+			}
 		}
 		if o := outcome(t, r, "gain_least"); o.Gapped != c.gapped || math.Abs(o.Found-0.5) > 1e-9 {
 			t.Errorf("the least gain is %.12g; proved to the gap: %v", o.Found, o.Gapped)
@@ -231,5 +238,25 @@ func TestRangesOfTranslations(t *testing.T) {
 	}
 	if math.Abs(r.MetLeast-least) > 1e-9 || math.Abs(r.MetMost-most) > 1e-9 {
 		t.Errorf("legs from %.12g to %.12g, and %.12g to %.12g are met", least, most, r.MetLeast, r.MetMost)
+	}
+}
+
+// How far a hexagonal platform is from singular as it yaws: one coordinate, on which a fine row of poses finds the least ratio of the
+// singular values. What is proved lies below it, and not far below.
+func TestDistanceFromSingular(t *testing.T) {
+	values := []float64{0.6, 0.4, 15 * deg, 12 * deg, 0.8, 0.1, 3}
+	task := boxTask(objective.Box, kin.Coords{5: -60 * deg}, kin.Coords{5: 60 * deg})
+	task.Prepare()
+	r := prove(t, task, planOf(task, "6-UPS", values), values, Settings{})
+	o := outcome(t, r, "regular")
+	v := newProber(mustSubject(task, "6-UPS", values))
+	least := math.Inf(1)
+	for k := range 2001 {
+		v.at(kin.Coords{5: (-60 + 0.06*float64(k)) * deg}, 0)
+		ratio, _ := v.Singular()
+		least = math.Min(least, ratio)
+	}
+	if o.Answer != Proved || !(o.Bound <= least && o.Bound > 0.1*least) {
+		t.Errorf("%v: a ratio of %g is proved, and %g is met", o.Answer, o.Bound, least)
 	}
 }

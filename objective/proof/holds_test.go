@@ -95,7 +95,7 @@ func TestPosesDoNotContradict(t *testing.T) {
 					continue
 				}
 				var c Counter
-				if v.refutes(i, &c) || o.Bounded && o.worse(c.Value, o.Bound) && o.worse(c.Value*(1-1e-12), o.Bound) && o.worse(c.Value*(1+1e-12), o.Bound) {
+				if v.refutes(i, &c) || o.worse(c.Value, o.Bound) && o.worse(c.Value*(1-1e-12), o.Bound) && o.worse(c.Value*(1+1e-12), o.Bound) {
 					t.Fatalf("%s: %s is proved to %.17g, and %.17g is met at %v", f.Name, o.Name, o.Bound, c.Value, c.Pose)
 				}
 			}

@@ -25,6 +25,10 @@ func newSubject(t *objective.Task, p *objective.Plan, values []float64) (*subjec
 	var left []string
 	s.props, left = properties(t, p, s.values, s.frame)
 	s.target = make([]float64, len(s.props))
+	s.best = make([]float64, len(s.props))
+	for i := range s.best {
+		s.best[i] = math.NaN()
+	}
 	return s, left
 }
 
@@ -34,6 +38,14 @@ func (s *subject) aim(i int, target float64) {
 		target = chord(target)
 	}
 	s.target[i] = target
+}
+
+// value is what the bound of a test says of the property.
+func (k kind) value(bound float64) float64 {
+	if k == baseSwing || k == otherSwing {
+		return swing(bound)
+	}
+	return bound
 }
 
 // chord is 2-2cos of a swing, rounded down; 4 for half a turn and more.
@@ -88,9 +100,11 @@ func newProver(ctx context.Context, s *subject, set Settings) *prover {
 		p.slots[i].counter = make([]Counter, len(s.props))
 	}
 	p.out = make([]Outcome, len(s.props))
+	p.leaves = make([]leaves, len(s.props))
 	for i := range p.out {
 		p.out[i].Property = s.props[i]
 		p.out[i].Bound = math.NaN()
+		p.leaves[i].property = &s.props[i]
 		p.alive |= 1 << i
 	}
 	return p
@@ -112,6 +126,7 @@ func (p *prover) finish(gap float64, left []string, progress func(Progress)) *Re
 	for i := range p.out {
 		o := &p.out[i]
 		p.aim(i, o.Target)
+		p.best[i] = o.Found
 		o.Left = float64(len(all))
 		if o.Answer == Refuted {
 			o.Left = 0
@@ -127,6 +142,10 @@ func (p *prover) finish(gap float64, left []string, progress func(Progress)) *Re
 		}
 	}
 	p.run(res.trees, progress)
+	if !p.late && !p.halted {
+		p.tighten(all)
+		p.late, p.halted = false, false // what was asked for is done, all the same
+	}
 	p.conclude(res)
 	return res
 }
@@ -194,10 +213,8 @@ func (p *prover) conclude(res *Result) {
 		if o.kind == regular && o.Answer == Proved && !p.sameSide(regions(p.task.Zones)) {
 			o.Answer = Undecided // no pose of the zones is singular, but which side of home they are on is in doubt
 		}
-		if k := o.kind; k == baseSwing || k == otherSwing {
-			o.Bound = swing(o.Bound)
-		}
-		if o.Answer != Proved || !o.Bounded || math.IsInf(o.Bound, 0) {
+		o.Bound = o.kind.value(o.Bound)
+		if o.Answer != Proved || !o.Bounded && o.kind != regular && o.kind != held || math.IsInf(o.Bound, 0) {
 			o.Bound = math.NaN()
 		}
 		switch {

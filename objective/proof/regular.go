@@ -48,10 +48,10 @@ func (z *inverse) take(m *family) bool {
 	return true
 }
 
-// regular proves that no matrix of the family is singular and that σmin/σmax ≥ least for all of them. With T = xJ - I
+// regular gives a lower bound of σmin/σmax over the family, 0 where some matrix may be singular. With T = xJ - I
 // bounded by whole, and a positive vector v such that whole·v ≤ θv with θ < 1, (I+T)⁻¹ is at most √n·max(v)/min(v)/(1-θ) long
 // (L. Collatz 1942; H. Wielandt 1950; from memory), and J⁻¹ = (I+T)⁻¹x.
-func (z *inverse) regular(m *family, least float64) bool {
+func (z *inverse) regular(m *family) float64 {
 	n := m.n
 	var v [6]float64
 	for i := range n {
@@ -66,7 +66,7 @@ func (z *inverse) regular(m *family, least float64) bool {
 		}
 		if worst*(1+slack) < 0.999 {
 			stretch := math.Sqrt(float64(n)) * high / low / (1 - worst*(1+slack)) * z.x.norm()
-			return stretch*m.size*(1+slack)*least <= 1
+			return 1 / (stretch * m.size * (1 + slack))
 		}
 		for i := range n {
 			y[i] += 0.3 * v[i]
@@ -76,5 +76,5 @@ func (z *inverse) regular(m *family, least float64) bool {
 			v[i] = y[i]/size + 1e-9
 		}
 	}
-	return false
+	return 0
 }

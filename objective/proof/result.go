@@ -65,7 +65,7 @@ type Outcome struct {
 	Gapped bool     // the target is not the limit itself
 	Found  float64  // worst value that the search met, in plain arithmetic
 	At     *Counter // where; for a refuted property the pose that refutes it
-	Bound  float64  // proved bound of the property over all zones, no worse than Target; NaN where it has none
+	Bound  float64  // proved bound of the property over all zones, no worse than Target; of regular and regular wrenches, of σmin/σmax; NaN where it has none
 	Boxes  int64    // boxes that were tested for it
 	Left   float64  // share of the regions' volume in which it is not settled
 	Needs  string   // name of the property without which this one means nothing, and which failed

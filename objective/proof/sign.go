@@ -21,7 +21,7 @@ func newCertifier(s *subject) *certifier { return &certifier{subject: s} }
 // it is singular, all have the sign of its centre, whose determinant is worked out without rounding.
 func (z *certifier) sign(c kin.Coords) int {
 	z.machine.Enclose(&enclose.Box{Low: c, High: c}, &z.e)
-	if z.e.Reach == kin.NoReach || !z.j.take(&z.e.J, z.legs, z.own, nil) || !z.inv.take(&z.j) || !z.inv.regular(&z.j, 0) {
+	if z.e.Reach == kin.NoReach || !z.j.take(&z.e.J, z.legs, z.own, nil) || !z.inv.take(&z.j) || !(z.inv.regular(&z.j) > 0) {
 		return 0
 	}
 	return determinant(z.j.n, &z.j.c)
