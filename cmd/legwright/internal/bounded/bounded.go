@@ -12,7 +12,7 @@ import (
 // what would never end, on a busy machine too.
 const (
 	memory  = 64 << 20 // bytes allocated in all, whatever the size
-	perByte = 8 << 10  // bytes more for each byte of the input
+	perByte = 1 << 10  // bytes more for each byte of the input
 	longest = 20 * time.Second
 )
 

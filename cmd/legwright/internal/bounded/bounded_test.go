@@ -17,7 +17,7 @@ var kept []byte
 
 // A reader that takes more memory than its input allows is told of, one that takes less is not.
 func TestRead(t *testing.T) {
-	for _, c := range []struct{ n, take, want int }{{10, 1 << 20, 0}, {10, 80 << 20, 1}, {1 << 20, 80 << 20, 0}} {
+	for _, c := range []struct{ n, take, want int }{{10, 1 << 20, 0}, {10, 80 << 20, 1}, {1 << 20, 80 << 20, 0}, {1 << 10, 80 << 20, 1}} {
 		got := &told{TB: t}
 		Read(got, c.n, func() { kept = make([]byte, c.take) })
 		if got.n != c.want {

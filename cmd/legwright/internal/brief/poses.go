@@ -8,12 +8,14 @@ import (
 	"io"
 	"slices"
 	"strings"
+	"unicode/utf8"
 
 	"legwright/cmd/legwright/internal/units"
 )
 
 const (
 	maxPoseFile   = 64 << 20 // bytes of a pose file
+	maxPoseLine   = 1000     // bytes of a line: six numbers take far fewer
 	maxPoseFaults = 20       // faults of rows that are told one by one
 )
 
@@ -40,6 +42,9 @@ func parsePoses(file string, data []byte, families []*KnownFamily) ([][6]float64
 	if i := firstBad(data); i >= 0 {
 		return nil, Faults{{position(file, data, i), "", fmt.Sprintf("byte 0x%02x is not UTF-8 text", data[i]), "save the file as UTF-8 CSV"}}
 	}
+	if f := oddLine(file, data); f != nil {
+		return nil, Faults{*f}
+	}
 	p := &poseReader{file: file, csv: csv.NewReader(bytes.NewReader(data))}
 	p.csv.FieldsPerRecord = -1
 	p.csv.ReuseRecord = true
@@ -61,6 +66,22 @@ func parsePoses(file string, data []byte, families []*KnownFamily) ([][6]float64
 		return nil, p.faults
 	}
 	return poses, nil
+}
+
+// oddLine finds a line that is too long, or a quoted field that goes over lines, so that no row holds more than a line.
+func oddLine(file string, data []byte) *Fault {
+	n := 0
+	for line := range bytes.Lines(data) {
+		n++
+		switch {
+		case len(line) > maxPoseLine:
+			return &Fault{Position{file, n, 1}, "", fmt.Sprintf("a line of more than %d bytes", maxPoseLine), "write one line per pose, with a number for each heading"}
+		case bytes.Count(line, []byte{'"'})%2 == 1:
+			at := utf8.RuneCount(line[:bytes.IndexByte(line, '"')])
+			return &Fault{Position{file, n, at + 1}, "", "a quotation mark without its other", "write plain numbers between commas, without quotes"}
+		}
+	}
+	return nil
 }
 
 // broken notes an error of the CSV text itself.

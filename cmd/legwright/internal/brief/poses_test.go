@@ -68,7 +68,7 @@ func TestPosesRefused(t *testing.T) {
 		{"unit in the cell", "x_mm\n10 mm\n", nil, `p.csv:2:1: x_mm: "10 mm" is not a finite number`},
 		{"short row", "x_mm,y_mm\n1,2\n3\n", nil, "p.csv:3:1: 1 numbers below 2 headings"},
 		{"long row", "x_mm,y_mm\n1,2,3\n", nil, "p.csv:2:1: 3 numbers below 2 headings"},
-		{"quote", "x_mm,y_mm\n1,\"2\n", nil, "p.csv:2:6: not readable as CSV"},
+		{"quote", "x_mm,y_mm\n1,\"2\n", nil, "p.csv:2:3: a quotation mark without its other"},
 		{"latin-1", "x_mm,y_mm\n1,\xe4\n", nil, "p.csv:2:3: byte 0xe4 is not UTF-8 text"},
 		{"far turn", "yaw_deg\n1000\n", nil, "p.csv:2:1: yaw_deg: 1000 is beyond half a turn"},
 		{"no such freedom", "x_mm,z_mm\n1,0\n2,3\n", planar, "p.csv:3:3: z_mm: 3-RPR does not move in z; leave the column out or write 0"},
