@@ -68,7 +68,7 @@ func faultsOnly(t *testing.T, file string, text []byte, none bool, err error) {
 	if !none || !errors.As(err, &fs) || len(fs) == 0 {
 		t.Fatalf("refused with %T: %v", err, err)
 	}
-	lines := 2 // what is missing at the end is missing after the last line
+	lines := 2                                                               // what is missing at the end is missing after the last line
 	for _, end := range []string{"\n", "\r", "\u0085", "\u2028", "\u2029"} { // all that ends a line of YAML
 		lines += bytes.Count(text, []byte(end))
 	}
