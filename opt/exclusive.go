@@ -234,7 +234,7 @@ func (s *shares) gain(p []float64, skip int, u []float64) float64 {
 		for k := range u {
 			flat = append(flat, max(p[k], q[k]))
 		}
-		lim = append(lim, flat[at:len(flat):len(flat)])
+		lim = insert(lim, flat[at:len(flat):len(flat)])
 	}
 	s.flat, s.lim = flat, lim
 	return max(0, box(p, u)-s.vol.sweep(lim, u))

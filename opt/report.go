@@ -4,7 +4,7 @@ import "slices"
 
 const (
 	historyPoints = 50
-	historySubset = 50 // designs that stand for the archive with 4 goals or more
+	historySubset = 40 // designs that stand for the archive with 4 goals or more
 )
 
 // record adds a history point.

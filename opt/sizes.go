@@ -7,7 +7,7 @@ package opt
 const (
 	usualStart = 30
 	costOfOne  = 33 // evaluations per variable, design and dimension of the front
-	mostOf4    = 60 // volumes of four goals are dear
+	mostOf4    = 30 // volumes of four goals are dear, and more designs gained nothing
 )
 
 // startSize returns the population per space at the start of a search: with
