@@ -335,3 +335,35 @@ func FuzzProof(f *testing.F) {
 		}
 	})
 }
+
+// A front of any text is refused, is none of the brief, or gives the data of a page and the sheets of its designs.
+func FuzzSheet(f *testing.F) {
+	s, _ := studied(f, journalBrief)
+	for _, name := range []string{"front.json", "infeasible.json"} {
+		text, err := os.ReadFile("../study/testdata/" + name)
+		if err != nil {
+			f.Fatal(err)
+		}
+		f.Add(text)
+	}
+	sources := &study.Sources{Brief: study.File{Name: "brief.yaml", Bytes: []byte(journalBrief)}}
+	f.Fuzz(func(t *testing.T, b []byte) {
+		front, err := study.Decode(b)
+		if err != nil || len(front.Designs) > 3 {
+			t.Skip()
+		}
+		data, err := s.Sheet(front, SheetRun{Sources: sources, Folder: "out", Workers: 1})
+		if err != nil {
+			line(t, err)
+			return
+		}
+		if _, err := json.Marshal(data); err != nil {
+			t.Error(err)
+		}
+		for i := range front.Designs {
+			if _, err := s.Sheets(front.Designs[i], sources); err != nil {
+				line(t, err)
+			}
+		}
+	})
+}
