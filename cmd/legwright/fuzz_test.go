@@ -1,10 +1,14 @@
 package main
 
 import (
+	"bytes"
 	"math"
+	"os"
 	"strings"
 	"testing"
+	"unicode"
 
+	"legwright/cmd/legwright/internal/report"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
@@ -83,5 +87,39 @@ func FuzzWeight(f *testing.F) {
 				t.Errorf("weights %v give a score of %v", w, s)
 			}
 		}
+	})
+}
+
+// A front of any text is refused, or is ranked and shown; nothing in it reaches the terminal that does not print.
+func FuzzScreens(f *testing.F) {
+	for _, name := range []string{"front.json", "infeasible.json"} {
+		text, err := os.ReadFile("internal/study/testdata/" + name)
+		if err != nil {
+			f.Fatal(err)
+		}
+		f.Add(text, uint8(80))
+		f.Add(text, uint8(0))
+	}
+	f.Fuzz(func(t *testing.T, b []byte, width uint8) {
+		front, err := study.Decode(b)
+		if err != nil {
+			line(t, err)
+			return
+		}
+		study.Rank(front, nil)
+		var out bytes.Buffer
+		page := report.PageOf(&out)
+		page.Width, page.Dir = int(width), "out"
+		if err := report.FirstScreen(&out, front, page); err != nil {
+			t.Error(err)
+		}
+		if err := report.Table(&out, front, 3, page); err != nil {
+			t.Error(err)
+		}
+		if i := strings.IndexFunc(out.String(), func(r rune) bool { return r != '\n' && unicode.IsControl(r) }); i >= 0 {
+			t.Errorf("%q is shown", out.String()[max(0, i-40):min(out.Len(), i+40)])
+		}
+		report.Steps(front)
+		report.Shortfall(front)
 	})
 }
