@@ -19,6 +19,9 @@ import (
 // exitUndecided is the status of a proof that ran out of time.
 const exitUndecided = 4
 
+// mostGap is the widest gap: what is further from a limit says nothing of it.
+const mostGap = 0.1
+
 // proveFlags are the flags of prove.
 type proveFlags struct {
 	brief, check, out string
@@ -63,8 +66,8 @@ leaves to the duty to what all poses need for certain, and writes the widened de
 
 func prove(ctx context.Context, c *common, file string, flags *proveFlags) error {
 	switch {
-	case !(flags.set.Gap > 0 && flags.set.Gap < 1):
-		return inputError{fmt.Errorf("--gap %g: a gap is above 0 and below 1, such as 0.01", flags.set.Gap)}
+	case !(flags.set.Gap > 0 && flags.set.Gap <= mostGap):
+		return inputError{fmt.Errorf("--gap %g: a gap is a share above 0 and at most %g, such as 0.01 for 1 %%", flags.set.Gap, mostGap)}
 	case flags.set.Time <= 0:
 		return inputError{fmt.Errorf("--time %v: give a time above 0, such as 60s", flags.set.Time)}
 	case flags.out != "" && !flags.resize:
@@ -99,7 +102,7 @@ func prove(ctx context.Context, c *common, file string, flags *proveFlags) error
 	r := s.Prove(ctx, flags.set)
 	bar.Done()
 	p := study.FromProof(s.Task, s.Plan.Family.Name, r)
-	p.Resized = resized
+	p.Resized, p.Own = resized, s.Own()
 	p.Notes = study.LeftOut(0)[1:]
 	if s.Task.Coverage < 1 || s.Task.CoverageGoal {
 		p.Notes = append(p.Notes, "the brief lets poses fail (coverage); the proof is about all of them")
@@ -117,7 +120,7 @@ func prove(ctx context.Context, c *common, file string, flags *proveFlags) error
 	switch {
 	case err != nil:
 		return err
-	case r.Answer == proof.Refuted:
+	case r.Answer == proof.Refuted || len(p.Broken()) > 0:
 		return status(exitLimit)
 	case r.Interrupted:
 		return status(exitInterrupted)

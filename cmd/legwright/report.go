@@ -39,6 +39,7 @@ With --json the data of the page go to standard output too.`,
 			if err != nil {
 				return inputError{err}
 			}
+			folder.Certified(front, job.SourcesHash(sources))
 			for i, id := range detail {
 				if len(id) < 3 {
 					detail[i] = strings.Repeat("0", 3-len(id)) + id

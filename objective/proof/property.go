@@ -18,6 +18,8 @@ const (
 	held                   // nor is the 6×6 of actuation and constraint wrenches
 	baseSwing              // joints' swing
 	otherSwing             // the same at the platform
+	drift                  // parasitic_motion
+	twist                  // parasitic_turn
 	apart                  // legs keep their distance
 	conditioned
 	wrenches // the measure regularity
@@ -28,6 +30,7 @@ const (
 	pull
 	rate
 	power
+	buckling
 )
 
 // measured are the measures of poses that can be proved.
@@ -36,6 +39,7 @@ var measured = map[string]kind{
 	"conditioning": conditioned, "regularity": wrenches, "gain_least": slowest, "gain_most": fastest,
 	"leg_force": effort, "motor_torque": effort, "push_force": push, "pull_force": pull,
 	"leg_speed": rate, "motor_speed": rate, "leg_power": power,
+	"buckling_margin": buckling, "parasitic_motion": drift, "parasitic_turn": twist,
 }
 
 // Property is one thing to be proved for every pose of every zone.
@@ -82,6 +86,12 @@ func (p *Property) worse(a, b float64) bool {
 
 // matrix tells whether the test looks at the inverse Jacobian's matrix as a whole.
 func (k kind) matrix() bool { return k == regular || k == held || k >= conditioned && k != rate }
+
+// Properties lists what Prove shows of a design with the dimension values, all of which must be known.
+func Properties(t *objective.Task, p *objective.Plan, values []float64) []Property {
+	s, _ := newSubject(t, p, values)
+	return s.props
+}
 
 // properties lists what is to be proved of a design, and what the brief asks for that cannot be.
 func properties(t *objective.Task, p *objective.Plan, values []float64, f *kin.Frame) (out []Property, left []string) {

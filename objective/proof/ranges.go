@@ -70,7 +70,8 @@ func Ranges(ctx context.Context, t *objective.Task, plan *objective.Plan, values
 		if again {
 			continue
 		}
-		out.Least, out.Most = min(r.Outcomes[1].Bound, out.MetLeast), max(r.Outcomes[2].Bound, out.MetMost)
+		// No tighter than what a proof of the range takes as it is, without its gap.
+		out.Least, out.Most = min(r.Outcomes[1].Bound, out.MetLeast-room/2), max(r.Outcomes[2].Bound, out.MetMost+room/2)
 		out.Unproved = r.Answer != Proved
 		if r.Regions == 0 {
 			out.Least, out.Most = out.MetLeast, out.MetMost

@@ -34,6 +34,9 @@ func (c *Checkpoint) Key() [32]byte {
 	return sha256.Sum256(fmt.Appendf(nil, "%s\n%s\n%d\n%d\n%s\n%d", c.Program, c.Brief, c.Seed, c.Budget, c.Part, c.Prove))
 }
 
+// SourcesHash is the SHA-256 of the brief and its pose files, in hex, as certificates name it.
+func SourcesHash(s *study.Sources) string { return sourcesHash(s) }
+
 // sourcesHash is the SHA-256 of the brief and its pose files, in hex.
 func sourcesHash(s *study.Sources) string {
 	h := sha256.New()

@@ -97,6 +97,7 @@ func (b *proofs) prove(ctx context.Context, d *study.Design, i, of int) *proven 
 	}
 	out.result = proof.Prove(ctx, t, fixed(t, plan, values), values, set)
 	p := study.FromProof(t, d.Family, out.result)
+	p.Own = study.OwnLimits(objective.Appraise(t, fixed(t, plan, values), values))
 	out.record.Proof = &p
 	return out
 }
@@ -114,6 +115,9 @@ func (b *proofs) widen(ctx context.Context, t *objective.Task, plan *objective.P
 	}
 	wide := slices.Clone(values)
 	plan.Resize(&t.Actuator, r.Least, r.Most, wide)
+	if stock := t.Actuator.Strokes; len(stock) > 0 && wide[span] > stock[len(stock)-1]*(1+objective.Tolerance) {
+		return nil // nothing that can be bought: the limit is then proved to the gap
+	}
 	return wide
 }
 

@@ -100,11 +100,13 @@ func certificate(t *objective.Task, family, designHash, briefHash string, r *pro
 		return nil, err
 	}
 	c := &study.Certificate{Format: study.CertificateFormat, Program: Program(), Family: family,
-		Design: designHash, Brief: briefHash, Boxes: r.Boxes, Record: rec}
-	p := study.FromProof(t, family, r)
-	for _, l := range p.Properties {
-		if l.Answer == proof.Proved.String() {
-			c.Claims = append(c.Claims, l)
+		Design: designHash, Brief: briefHash, Answer: r.Answer.String(), Record: rec}
+	for _, b := range rec.Trees {
+		c.Boxes += int64(b.Boxes)
+	}
+	for i := range r.Outcomes {
+		if o := &r.Outcomes[i]; o.Answer == proof.Proved {
+			c.Claims = append(c.Claims, study.NewCertLine(&o.Property, o.Target))
 		}
 	}
 	return c, nil
@@ -118,7 +120,28 @@ func (s *Subject) Check(ctx context.Context, c *study.Certificate, set proof.Set
 	case c.Brief != s.briefHash:
 		return 0, fmt.Errorf("it is of another brief, or that was changed since: prove the design again")
 	}
-	return proof.Check(ctx, s.Task, s.Plan, s.Values, c.Record, set)
+	if boxes, err = proof.Check(ctx, s.Task, s.Plan, s.Values, c.Record, set); err != nil {
+		return boxes, err
+	}
+	all := proof.Properties(s.Task, s.Plan, s.Values)
+	words := fmt.Errorf("its words are not those of what it proves: prove the design again")
+	if len(c.Claims) != len(c.Record.Claims) || c.Boxes != boxes || c.Family != s.Plan.Family.Name {
+		return boxes, words
+	}
+	for i, q := range c.Record.Claims {
+		if !c.Claims[i].Equal(study.NewCertLine(&all[q.Place], q.Target)) {
+			return boxes, words
+		}
+	}
+	if whole := len(c.Claims) == len(all); whole != (c.Answer == proof.Proved.String()) {
+		return boxes, words
+	}
+	return boxes, nil
+}
+
+// Own are the limits on the design itself, of which no pose decides.
+func (s *Subject) Own() []study.Limit {
+	return study.OwnLimits(objective.Appraise(s.Task.Strict(), s.Plan, s.Values))
 }
 
 // Resize widens the design's actuator range, where the brief leaves it to the duty, to the proved enclosure of what the
@@ -142,6 +165,10 @@ func (s *Subject) Resize(ctx context.Context, out string, set proof.Settings) (*
 	}
 	least, span := p.RangeOf()
 	p.Resize(&s.Task.Actuator, r.Least, r.Most, s.Values)
+	if stock := s.Task.Actuator.Strokes; len(stock) > 0 && s.Values[span] > stock[len(stock)-1]*(1+objective.Tolerance) {
+		return nil, nil, fmt.Errorf("%s: the duty needs a stroke of %.6g mm for certain, reserve included, and the longest stock stroke is %.6g mm; search with a little more reserve, or add a stock stroke",
+			study.Clean(s.file), 1e3*s.Values[span], 1e3*stock[len(stock)-1])
+	}
 	f := p.Family
 	for _, i := range []int{least, span} {
 		d := &f.Dimensions[i]

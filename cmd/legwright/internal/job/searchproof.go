@@ -52,7 +52,7 @@ func (s *Study) searchJudged(ctx context.Context, r Run, book judge) (*Found, er
 	poses, counters := book.counters(f, r.Prove)
 	left := stop - out.Evaluations
 	switch {
-	case left < leastFirst*len(s.Plans) || out.Status != opt.Stopped: // nothing left, or ended by another rule
+	case left <= 0 || out.Status != opt.Stopped || len(poses) > 0 && left < leastFirst*len(s.Plans): // nothing left to go on with, or ended by another rule
 	case len(poses) == 0:
 		if r.Journal != nil {
 			r.Journal.Rewind()

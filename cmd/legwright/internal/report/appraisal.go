@@ -82,7 +82,7 @@ func (s *sheet) measures(d *study.Design, poses *gazetteer) {
 	}
 	for _, n := range d.MeasureNames() {
 		c := measureScale(d.Family, n)
-		v := c.number(float64(d.Measures[n]), manyDigits)
+		v := c.exact(float64(d.Measures[n]), manyDigits)
 		if d.Unbounded[n] {
 			v = "unbounded"
 		}

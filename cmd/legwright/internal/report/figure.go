@@ -59,6 +59,16 @@ func (c scale) number(si float64, digits int) string {
 	return units.Digits(v, digits)
 }
 
+// exact is number for a figure that may be small without being nothing, such as an angle of error: with three significant
+// digits at least.
+func (c scale) exact(si float64, digits int) string {
+	v := c.in(si)
+	if most := c.finest(); most >= 0 && math.Abs(v) < math.Pow10(2-most) && math.Abs(v) > math.Pow10(-most-6) {
+		return units.Digits(v, 3)
+	}
+	return c.number(si, digits)
+}
+
 // finest is the number of decimals beyond which a quantity means nothing to a designer (0.1 µm, 3.6″),
 // -1 for any.
 func (c scale) finest() int {

@@ -68,6 +68,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 	if d.limited() {
 		s.say(margins)
 	}
+	s.proofs(f)
 	s.outside(d)
 	s.gap()
 	s.families(f)

@@ -18,7 +18,14 @@ func Proof(w io.Writer, p *study.Proof, page Page) error {
 	s.gap()
 	poses := new(gazetteer)
 	s.proofTable(p)
-	s.gap()
+	if broken := p.Broken(); len(broken) > 0 {
+		s.gap()
+		s.b.WriteString(s.alarm(fmt.Sprintf("%s on the design itself, of which no pose decides, FAIL:", plural(len(broken), "limit", "limits"))) + "\n")
+		s.limits(&study.Design{Limits: broken})
+	} else {
+		s.gap()
+	}
+	s.item("a proved bound is as tight as its limit asked for; the true worst lies between it and the worst met")
 	for i := range p.Properties {
 		s.proofLine(&p.Properties[i], p.Gap, poses)
 	}
@@ -95,7 +102,7 @@ func (s *sheet) proofAnswer(p *study.Proof) {
 // proofTable has a line for each property.
 func (s *sheet) proofTable(p *study.Proof) {
 	cols := []column{
-		{head: "property", left: true}, {head: "", left: true}, {head: "limit", left: true}, {head: "proved", left: true},
+		{head: "property", left: true}, {head: "", left: true}, {head: "limit", left: true}, {head: "proved bound", left: true},
 		{head: "margin"}, {head: "worst met", left: true}, {head: "boxes", name: "boxes", keep: 1}, {head: "from", name: "from", left: true, keep: 1},
 	}
 	for i := range p.Properties {
@@ -114,7 +121,7 @@ func (s *sheet) proofTable(p *study.Proof) {
 			if l.Answer == "proved" && l.Bound != nil {
 				bound = c.text(float64(*l.Bound), manyDigits)
 				if l.Margin != nil {
-					room = signed(coarse(100*float64(*l.Margin))) + " %"
+					room = margin(&study.Limit{Measure: l.Property, Unit: l.Unit, Sense: l.Sense, Bound: *l.Limit, Value: *l.Bound, Margin: *l.Margin, Holds: true})
 				}
 			}
 		}
@@ -155,8 +162,12 @@ func (s *sheet) proofLine(l *study.ProofLine, gap float64, poses *gazetteer) {
 		if l.At != nil && l.At.Pose != nil {
 			where = " at pose " + poses.label(l.At.Pose)
 		}
-		s.item(fmt.Sprintf("%s: proved to within %s, that is to %s, since %s is met%s, too near to the limit or at it",
-			name, percent(gap), c.text(float64(*l.Target), manyDigits+1), c.text(float64(*l.Found), manyDigits+1), where))
+		of := ""
+		if strings.HasSuffix(l.Property, "needed") {
+			of = " of the stroke"
+		}
+		s.item(fmt.Sprintf("%s: proved to within %s%s, that is to %s, since %s is met%s, too near to the limit or at it",
+			name, percent(gap), of, c.text(float64(*l.Target), manyDigits+1), c.text(float64(*l.Found), manyDigits+1), where))
 	}
 }
 
@@ -207,16 +218,17 @@ func Checked(w io.Writer, cert *study.Certificate, boxes int64, page Page) error
 	s := page.sheet()
 	s.heading(cert.Family)
 	s.say(fmt.Sprintf("The certificate holds: %s replayed, each tested anew. It shows for this model:", plural(int(boxes), "box", "boxes")))
-	for i := range cert.Record.Claims {
-		q := &cert.Record.Claims[i]
-		t := study.Clean(q.Property)
-		for k := range cert.Claims {
-			if l := &cert.Claims[k]; l.Property == q.Property && l.Target != nil && float64(*l.Target) == q.Target {
-				t += ": " + sense(l.Sense) + limitScale(l.Property, l.Unit).text(q.Target, manyDigits+1)
-				break
+	for i := range cert.Claims {
+		l := &cert.Claims[i]
+		t := study.Clean(l.Property)
+		if l.Target != nil && l.Limit != nil {
+			c := limitScale(l.Property, l.Unit)
+			t += ": " + sense(l.Sense) + c.text(float64(*l.Target), manyDigits+1)
+			if l.Gapped() {
+				t += fmt.Sprintf(", which is not the limit of %s but nearly", c.text(float64(*l.Limit), manyDigits+1))
 			}
 		}
-		if what, ok := proofWords[q.Property]; ok {
+		if what, ok := proofWords[l.Property]; ok {
 			t += ": " + what
 		}
 		s.item(t)

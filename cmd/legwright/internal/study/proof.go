@@ -24,7 +24,8 @@ type Certificate struct {
 	Design  string        `json:"design"` // SHA-256 of the design file
 	Brief   string        `json:"brief"`  // SHA-256 of the brief, its pose files after it
 	Boxes   int64         `json:"boxes"`
-	Claims  []ProofLine   `json:"properties"` // what was proved, in words
+	Answer  string        `json:"answer"`     // of the whole proof: proved, or undecided
+	Claims  []CertLine    `json:"properties"` // what was proved, in words
 	Record  *proof.Record `json:"record"`
 }
 
@@ -38,6 +39,51 @@ func LoadCertificate(path string) (*Certificate, error) {
 		return nil, fmt.Errorf("it cannot be read (%w); give the file that legwright prove has written", bare(err))
 	}
 	return ReadCertificate(b)
+}
+
+// CertLine is one property of a certificate: what was asked for, and what was proved.
+type CertLine struct {
+	Property string  `json:"property"`
+	Origin   string  `json:"origin"`
+	Unit     string  `json:"unit,omitempty"`
+	Sense    string  `json:"sense,omitempty"`
+	Limit    *Number `json:"limit,omitempty"`
+	Target   *Number `json:"target,omitempty"` // the bound that was proved: the limit, or that less the gap
+}
+
+// NewCertLine is the line of a property that was proved to the target.
+func NewCertLine(p *proof.Property, target float64) CertLine {
+	l := CertLine{Property: p.Name, Origin: p.Origin}
+	if p.Bounded {
+		if l.Sense = "at_most"; p.AtLeast {
+			l.Sense = "at_least"
+		}
+		l.Unit = UnitKind(p.Unit).SI()
+		l.Limit, l.Target = number(p.Limit), number(target)
+	}
+	return l
+}
+
+// Gapped tells whether less than the limit was proved.
+func (l *CertLine) Gapped() bool {
+	return l.Limit != nil && l.Target != nil && (*l.Target > *l.Limit) == (l.Sense == AtMost) && *l.Target != *l.Limit
+}
+
+// Equal tells whether two lines say the same.
+func (l CertLine) Equal(m CertLine) bool {
+	same := func(a, b *Number) bool { return a == b || a != nil && b != nil && *a == *b }
+	return l.Property == m.Property && l.Origin == m.Origin && l.Unit == m.Unit && l.Sense == m.Sense && same(l.Limit, m.Limit) && same(l.Target, m.Target)
+}
+
+// Proof is what a certificate says of its design, without the figures of the search.
+func (c *Certificate) Proof() *Proof {
+	p := &Proof{Family: c.Family, Answer: c.Answer, Gap: c.Record.Gap, NotCovered: []string{}, Boxes: c.Boxes, Regions: 1, Outside: OutsideModel()}
+	for i := range c.Claims {
+		l := &c.Claims[i]
+		p.Properties = append(p.Properties, ProofLine{Property: l.Property, Origin: l.Origin, Answer: proof.Proved.String(),
+			Unit: l.Unit, Sense: l.Sense, Limit: l.Limit, Target: l.Target, Gapped: l.Gapped()})
+	}
+	return p
 }
 
 // ReadCertificate reads what Encode wrote.
@@ -66,9 +112,32 @@ type Proof struct {
 	Interrupted bool        `json:"interrupted"`
 	WorstBox    *ProofBox   `json:"worst_box,omitempty"` // the largest that was not settled
 	Resized     *Resized    `json:"resized,omitempty"`
+	Own         []Limit     `json:"own_limits,omitempty"`  // limits on the design itself, of which no pose decides
 	Certificate string      `json:"certificate,omitempty"` // path
 	Outside     []string    `json:"outside_model"`
 	Notes       []string    `json:"notes,omitempty"`
+}
+
+// OwnLimits are the limits of an appraised design that no pose decides: on joint spacing, dead length, footprint and the like.
+func OwnLimits(a *objective.Appraisal) (out []Limit) {
+	for i := range a.Verdicts {
+		v := &a.Verdicts[i]
+		m := objective.MeasureNamed(v.Name)
+		if v.Name == "dead length" || v.Name == "stock stroke" || m != nil && m.Design != nil {
+			out = append(out, limitOf(v))
+		}
+	}
+	return out
+}
+
+// Broken are the limits on the design itself that do not hold.
+func (p *Proof) Broken() (out []Limit) {
+	for _, l := range p.Own {
+		if !l.Holds {
+			out = append(out, l)
+		}
+	}
+	return out
 }
 
 // Mark is the word for the answer among a design's marks: proved, "proved to 1 %" where limits were proved less the gap,
