@@ -14,9 +14,7 @@ func bucklingMargin() *Measure {
 		Inputs: []string{"legs.rod_diameter", "legs.modulus"}, Has: legged,
 		Start: inf(), Lost: 0,
 		Scan: func(v *View, w *Worst) {
-			l := &v.task.Legs
-			d2 := l.RodDiameter * l.RodDiameter
-			k := math.Pi * math.Pi * l.Modulus * math.Pi * d2 * d2 / 64 / (l.EndFixity * l.EndFixity)
+			k := v.task.Legs.Euler()
 			for _, c := range v.active[v.pose.Zone] {
 				for i := 0; i < v.n && i < 6; i++ {
 					push, q := v.push(c, i), v.rod(i)
@@ -30,6 +28,12 @@ func bucklingMargin() *Measure {
 			}
 		},
 	}
+}
+
+// Euler is the Euler load of a rod times the square of its length, N·m².
+func (l *Legs) Euler() float64 {
+	d2 := l.RodDiameter * l.RodDiameter
+	return math.Pi * math.Pi * l.Modulus * math.Pi * d2 * d2 / 64 / (l.EndFixity * l.EndFixity)
 }
 
 // push is the largest push in leg i's rod in case c: the effort of a prismatic leg, else the effort over the

@@ -21,7 +21,8 @@ type subject struct {
 	own     []int     // columns of the own freedoms
 	six     bool      // J is the matrix of wrenches itself
 	legs    int
-	ranged  int // actuators whose range is bounded
+	pushes  [6]float64 // sign of efforts that push, see pushes
+	ranged  int        // actuators whose range is bounded
 }
 
 // every is the column of each freedom.
@@ -88,6 +89,10 @@ func (b *bench) prove(box *enclose.Box, open uint64) (closed uint64, split int) 
 			ok = b.swings(i, &b.e.BaseChord)
 		case otherSwing:
 			ok = b.swings(i, &b.e.PlatformChord)
+		case drift:
+			ok = b.drifts(i)
+		case twist:
+			ok = b.twists(i)
 		case apart:
 			ok = b.clear(i)
 		default:

@@ -31,7 +31,7 @@ func some(t testing.TB, r *rand.Rand, f *kin.Family, measures ...string) (*objec
 		}
 		task := boxTask(objective.Box, low, f.Starter.Box)
 		task.Cases, task.Gravity = loads(), kin.Vec{Z: -objective.Gravity}
-		task.Legs.Diameter = 0.5 * f.Starter.Diameter
+		task.Legs = objective.Legs{Diameter: 0.5 * f.Starter.Diameter, RodDiameter: 0.02, Modulus: 210e9, EndFixity: 1}
 		limited(task, f, measures...)
 		v := newProber(mustSubject(task, f.Name, values))
 		good := v.home != 0
@@ -54,7 +54,7 @@ func some(t testing.TB, r *rand.Rand, f *kin.Family, measures ...string) (*objec
 }
 
 var allMeasures = []string{"base_swing", "platform_swing", "leg_clearance", "conditioning", "regularity", "gain_least", "gain_most",
-	"leg_force", "motor_torque", "push_force", "pull_force", "leg_speed", "motor_speed", "leg_power"}
+	"leg_force", "motor_torque", "push_force", "pull_force", "leg_speed", "motor_speed", "leg_power", "buckling_margin", "parasitic_motion", "parasitic_turn"}
 
 // Poses of a zone never contradict what was proved of it. The limits are 3 % beyond the worst that the search meets.
 func TestPosesDoNotContradict(t *testing.T) {

@@ -13,10 +13,12 @@ func (b *bench) loaded(open uint64, efforts, rates bool) uint64 {
 			continue
 		}
 		switch b.props[i].kind {
-		case effort, push, pull, power:
+		case effort, push, pull, power, buckling:
 			if efforts {
 				left |= 1 << i
-				b.worst[i] = math.Inf(-1)
+				if b.worst[i] = math.Inf(-1); b.props[i].AtLeast {
+					b.worst[i] = math.Inf(1)
+				}
 			}
 		case rate:
 			left |= 1 << i
@@ -90,8 +92,11 @@ func (b *bench) load(c *payload, left uint64) uint64 {
 		}
 		return false
 	}
-	if want(effort, push, pull, power) {
+	if want(effort, push, pull, power, buckling) {
 		left = b.efforts(c, left)
+	}
+	if want(buckling) {
+		left = b.buckles(left)
 	}
 	if want(rate, power) {
 		left = b.speeds(c, left)
@@ -142,7 +147,7 @@ func (b *bench) efforts(c *payload, left uint64) uint64 {
 			}
 		}
 	}
-	// For the power: bounds of the efforts as lines.
+	// For power and buckling: bounds of the efforts as lines.
 	for i := range b.legs {
 		b.half[i].r += rest[i]
 	}

@@ -22,6 +22,7 @@ func newSubject(t *objective.Task, p *objective.Plan, values []float64) (*subjec
 		s.own = append(s.own, int(q))
 	}
 	s.six = s.legs == 6 && s.frame.Rods == nil && s.frame.Rails == nil
+	s.pushes = pushes(s.machine)
 	var left []string
 	s.props, left = properties(t, p, s.values, s.frame)
 	s.target = make([]float64, len(s.props))
@@ -157,7 +158,7 @@ func (p *prover) groups() (out []uint64) {
 	for i := range p.props {
 		k := 1
 		switch p.props[i].kind {
-		case reach, shortest, longest, regular, held, baseSwing, otherSwing, rate:
+		case reach, shortest, longest, regular, held, baseSwing, otherSwing, drift, twist, rate:
 			k = 0
 		case wrenches:
 			if !p.six {

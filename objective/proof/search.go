@@ -104,7 +104,7 @@ func (p *prover) search(gap float64) {
 		}
 		o.Target, o.Gapped = o.Limit, false
 		near := gap
-		if o.kind <= longest || o.kind == baseSwing || o.kind == otherSwing || o.kind == rate {
+		if o.kind <= longest || o.kind == baseSwing || o.kind == otherSwing || o.kind == drift || o.kind == twist || o.kind == rate {
 			near = min(gap, easyGap)
 		}
 		if o.Bounded && o.off(o.Found) > -near {

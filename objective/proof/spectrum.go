@@ -13,7 +13,7 @@ func (b *bench) matrices(open uint64) (closed uint64) {
 		case k == held || k == wrenches && !b.six:
 			whole = true
 			continue
-		case k == effort || k == push || k == pull:
+		case k == effort || k == push || k == pull || k == buckling:
 			efforts = true
 		case k == rate:
 			rates = true
