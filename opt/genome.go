@@ -20,18 +20,20 @@ type genome struct {
 	done      bool
 	recalled  bool // Result.Recalled
 
-	rank   int     // 0 is the front; ahead of a larger one
-	crowd  float64 // larger is better among equals in rank
-	beaten bool    // by another that its population or the archive has met
-	pooled int     // round of the pool that holds it
-	young  bool    // made by the generation that is being selected
-	place  float64 // fitness in the first generation: eaopt's sort is unstable
+	rank   int       // 0 is the front; ahead of a larger one
+	crowd  float64   // larger is better among equals in rank
+	beaten bool      // by another that its population or the archive has met
+	pooled int       // round of the pool that holds it
+	unit   []float64 // real variables as pools hold them, once one does
+	young  bool      // made by the generation that is being selected
+	place  float64   // fitness in the first generation: eaopt's sort is unstable
 }
 
 func newGenome(dom *domain, space int, goals, limits int) *genome {
 	n := len(dom.vars)
-	b := make([]float64, n+goals+limits)
-	return &genome{dom: dom, space: space, x: b[:n:n], goals: b[n : n+goals : n+goals], excess: b[n+goals:]}
+	end := n + goals + limits
+	b := make([]float64, end, end+len(dom.real))
+	return &genome{dom: dom, space: space, x: b[:n:n], goals: b[n : n+goals : n+goals], excess: b[n+goals : end : end], unit: b[end:]}
 }
 
 // Evaluate returns the place that the search gave the genome. The search

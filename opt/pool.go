@@ -40,7 +40,10 @@ func (p *pool) fill(population []*genome) {
 			}
 			g.pooled = p.round
 			p.all = append(p.all, g)
-			p.x = p.dom.unit(p.x, g.x)
+			if len(g.unit) == 0 {
+				g.unit = p.dom.unit(g.unit, g.x)
+			}
+			p.x = append(p.x, g.unit...)
 		}
 	}
 }

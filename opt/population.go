@@ -21,8 +21,16 @@ type population struct {
 	ref   []float64 // reference of the whole search, nil at first
 
 	beaten, unfit []*genome // scratch of selectBest
+	order         []placed  // scratch of ranked
 	low, high     []float64
 	at            []float64
+}
+
+// placed is a design under sorting.
+type placed struct {
+	g     *genome
+	crowd float64
+	at    int
 }
 
 func newPopulation(goals int) *population {
@@ -48,7 +56,22 @@ func (p *population) ranked(dst []*genome) []*genome {
 	if p.share.plain && len(dst) > 0 {
 		crowding(dst)
 	}
-	slices.SortStableFunc(dst, func(a, b *genome) int { return cmp.Compare(b.crowd, a.crowd) })
+	p.order = p.order[:0]
+	for i, g := range dst {
+		p.order = append(p.order, placed{g, g.crowd, i})
+	}
+	slices.SortFunc(p.order, func(a, b placed) int {
+		switch {
+		case a.crowd > b.crowd:
+			return -1
+		case a.crowd < b.crowd:
+			return 1
+		}
+		return a.at - b.at
+	})
+	for i := range dst {
+		dst[i] = p.order[i].g
+	}
 	return append(dst, p.rest...)
 }
 

@@ -41,9 +41,16 @@ func (r *run) widen() {
 	}
 	m := r.problem.Goals
 	column := make([]float64, n)
+	low, _ := r.archive.bounds()
 	for k := range m {
+		near, beyond := low[k]+(r.reference[k]-low[k])/1.1, 0
 		for i := range column {
-			column[i] = r.archive.goals[i*m+k]
+			if column[i] = r.archive.goals[i*m+k]; column[i] > near {
+				beyond++
+			}
+		}
+		if beyond <= int(outlying*float64(n)) {
+			continue // the usual case: nothing to sort
 		}
 		slices.Sort(column)
 		if at := margin(column[0], column[n-1-int(outlying*float64(n))], 0.1); at > r.reference[k] {
