@@ -2,6 +2,7 @@ package main
 
 import (
 	"context"
+	"errors"
 	"fmt"
 	"os"
 	"path/filepath"
@@ -19,13 +20,11 @@ import (
 // exitUndecided is the status of a proof that ran out of time.
 const exitUndecided = 4
 
-// mostGap is the widest gap: what is further from a limit says nothing of it.
-const mostGap = 0.1
-
 // proveFlags are the flags of prove.
 type proveFlags struct {
 	brief, check, out string
 	resize, force     bool
+	timed             bool // --time was given
 	set               proof.Settings
 }
 
@@ -49,12 +48,13 @@ one, without any search. --resize first widens an actuator range that the brief
 leaves to the duty to what all poses need for certain, and writes the widened design.`,
 		Args: cobra.ExactArgs(1),
 		RunE: func(cmd *cobra.Command, args []string) error {
+			flags.timed = cmd.Flags().Changed("time")
 			return prove(cmd.Context(), c, args[0], &flags)
 		},
 	}
 	f := cmd.Flags()
 	f.StringVar(&flags.brief, "brief", "", "brief to prove by, in place of the one that the design file names")
-	f.DurationVar(&flags.set.Time, "time", time.Minute, "time after which to stop undecided")
+	f.DurationVar(&flags.set.Time, "time", time.Minute, "time after which to stop undecided; a --check takes what it needs unless this is given")
 	f.Float64Var(&flags.set.Gap, "gap", proof.DefaultGap, "relative distance to which a limit that is met, or nearly, is proved")
 	f.IntVar(&flags.set.Workers, "workers", 0, "boxes tested side by side (default: all processors); never changes the answer")
 	f.BoolVar(&flags.resize, "resize", false, "widen the actuator range to the proved one first, and write the widened design")
@@ -66,8 +66,8 @@ leaves to the duty to what all poses need for certain, and writes the widened de
 
 func prove(ctx context.Context, c *common, file string, flags *proveFlags) error {
 	switch {
-	case !(flags.set.Gap > 0 && flags.set.Gap <= mostGap):
-		return inputError{fmt.Errorf("--gap %g: a gap is a share above 0 and at most %g, such as 0.01 for 1 %%", flags.set.Gap, mostGap)}
+	case !(flags.set.Gap > 0 && flags.set.Gap <= proof.MostGap):
+		return inputError{fmt.Errorf("--gap %g: a gap is a share above 0 and at most %g, such as 0.01 for 1 %%", flags.set.Gap, proof.MostGap)}
 	case flags.set.Time <= 0:
 		return inputError{fmt.Errorf("--time %v: give a time above 0, such as 60s", flags.set.Time)}
 	case flags.out != "" && !flags.resize:
@@ -80,6 +80,9 @@ func prove(ctx context.Context, c *common, file string, flags *proveFlags) error
 	bar := report.NewProgress(c.err, -1, c.quiet)
 	flags.set.Progress = func(p proof.Progress) { bar.Show(report.Settled(p.Settled, p.Boxes)) }
 	if flags.check != "" {
+		if !flags.timed {
+			flags.set.Time = 0
+		}
 		err := checkProof(ctx, c, s, flags)
 		bar.Done()
 		return err
@@ -176,11 +179,18 @@ func checkProof(ctx context.Context, c *common, s *job.Subject, flags *proveFlag
 	switch {
 	case ctx.Err() != nil:
 		return status(exitInterrupted)
+	case errors.Is(err, proof.ErrTime):
+		c.hint("--check %s: time is out before all boxes were replayed; nothing is shown. Give more with --time, or leave it out.", flags.check)
+		return status(exitUndecided)
 	case err != nil:
 		return inputError{fmt.Errorf("--check %s: the certificate is refused: %w", flags.check, err)}
 	}
 	if c.json {
 		return printJSON(c.out, map[string]any{"certificate": flags.check, "holds": true, "boxes": boxes, "properties": cert.Claims, "outside_model": study.OutsideModel()})
 	}
-	return report.Checked(c.out, cert, boxes, report.PageOf(c.out))
+	if err := report.Checked(c.out, cert, boxes, report.PageOf(c.out)); err != nil || cert.Answer == proof.Proved.String() {
+		return err
+	}
+	c.hint("the certificate is of a proof that left other properties of the design undecided")
+	return status(exitUndecided)
 }

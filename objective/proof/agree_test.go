@@ -103,8 +103,8 @@ func TestRecordsAreChecked(t *testing.T) {
 	for i, c := range rec.Claims {
 		place[c.Property] = i
 	}
-	spoil("a stronger claim", "does not keep", func(c *Record) { c.Claims[place["conditioning"]].Target *= 1.06 })
-	spoil("a weaker claim", "further from the limit", func(c *Record) { c.Claims[place["leg_force"]].Target *= 1.02 })
+	spoil("a stronger claim", "neither the limit", func(c *Record) { c.Claims[place["conditioning"]].Target *= 1.06 })
+	spoil("a weaker claim", "neither the limit", func(c *Record) { c.Claims[place["leg_force"]].Target *= 1.02 })
 	spoil("another property", "none that", func(c *Record) { c.Claims[place["leg_force"]].Property = "leg_speed" })
 	spoil("a tree left out", "shown for no box", func(c *Record) { c.Trees = c.Trees[1:] })
 	spoil("other splits", "", func(c *Record) {

@@ -23,6 +23,8 @@ type subject struct {
 	legs    int
 	pushes  [6]float64 // sign of efforts that push, see pushes
 	ranged  int        // actuators whose range is bounded
+	rotary  bool       // their coordinates are angles, within half a turn of home
+	origin  [6]float64 // coordinates at home
 }
 
 // every is the column of each freedom.
@@ -156,10 +158,14 @@ func (b *bench) ranges(i int) bool {
 		worst = math.Inf(1)
 	}
 	for l := range b.ranged {
+		least, most := b.lower(&b.e.Q[l]), b.upper(&b.e.Q[l])
+		if b.rotary && !(most-b.origin[l] < math.Pi && b.origin[l]-least < math.Pi) {
+			return false // angles count within half a turn of home, and the enclosure does not jump there
+		}
 		if low {
-			worst = min(worst, b.lower(&b.e.Q[l]))
+			worst = min(worst, least)
 		} else {
-			worst = max(worst, b.upper(&b.e.Q[l]))
+			worst = max(worst, most)
 		}
 	}
 	b.worst[i] = worst

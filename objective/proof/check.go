@@ -6,12 +6,14 @@ import (
 	"errors"
 	"fmt"
 	"io"
-	"math"
 
 	"legwright/kin"
 	"legwright/kin/enclose"
 	"legwright/objective"
 )
+
+// ErrTime says that the time of Check was over first: it has shown nothing.
+var ErrTime = errors.New("time is out")
 
 // Check replays a record for the design: it looks for nothing and splits no box by itself, but tests anew, on every box of
 // the record, what is said to be proved there, and that the boxes leave no part of any region out. It gives the number of
@@ -57,8 +59,11 @@ func Check(ctx context.Context, t *objective.Task, plan *objective.Plan, values 
 
 // admit sets the targets that the record claims, if the gap allows them.
 func (p *prover) admit(rec *Record) error {
-	if !(rec.Gap >= 0 && rec.Gap <= 1) {
+	if !(rec.Gap >= 0 && rec.Gap <= MostGap) {
 		return fmt.Errorf("a gap of %g is none", rec.Gap)
+	}
+	if len(rec.Claims) == 0 {
+		return errors.New("it claims nothing")
 	}
 	seen := uint64(0)
 	for _, c := range rec.Claims {
@@ -70,13 +75,10 @@ func (p *prover) admit(rec *Record) error {
 		}
 		seen |= 1 << c.Place
 		q := &p.props[c.Place]
-		if q.Bounded && (math.IsNaN(c.Target) || q.worse(c.Target, q.within(rec.Gap))) {
-			return fmt.Errorf("%s is claimed to %g, which is further from the limit %g than the gap of %g", q.Name, c.Target, q.Limit, rec.Gap)
+		if c.Target != q.Limit && !(q.Bounded && c.Target == q.within(rec.Gap)) {
+			return fmt.Errorf("%s is claimed to %g, which is neither the limit %g nor that less the gap of %g", q.Name, c.Target, q.Limit, rec.Gap)
 		}
 		p.aim(c.Place, c.Target)
-		if q.Bounded && q.worse(q.Limit, c.Target) { // more is claimed than was asked for: single poses must keep that, too
-			q.Limit = c.Target
-		}
 	}
 	return nil
 }
@@ -99,7 +101,7 @@ func (p *prover) replay(g *region, props uint64, splits string, told int64) (box
 			if err := p.ctx.Err(); err != nil {
 				return boxes, err
 			}
-			return boxes, errors.New("time is out")
+			return boxes, ErrTime
 		}
 		if full {
 			p.test(g, p.cells)
@@ -173,8 +175,8 @@ func (p *prover) single(rec *Record) error {
 			if zone < 0 && o.kind > regular {
 				continue
 			}
-			if v.refutes(q.Place, &at) {
-				return fmt.Errorf("%s does not hold at the pose %v", q.Property, c)
+			if v.refutes(q.Place, &at) || o.kind == regular && v.doubtful() {
+				return fmt.Errorf("%s does not hold at the pose %v, or is in doubt there", q.Property, c)
 			}
 		}
 		return nil

@@ -140,7 +140,7 @@ func (b *bench) efforts(c *payload, left uint64) uint64 {
 				high[i], low[i], room[i] = min(high[i], h), min(low[i], l), 0
 				value = sided(k, high[i], low[i]) + rest[i]
 			}
-			b.worst[p] = max(b.worst[p], value*(1+slack))
+			b.worst[p] = max(b.worst[p], 0, value+slack*math.Abs(value))
 			if !(b.worst[p] <= b.target[p]) {
 				left &^= 1 << p
 				break

@@ -14,7 +14,10 @@ import (
 func newSubject(t *objective.Task, p *objective.Plan, values []float64) (*subject, []string) {
 	t = t.Strict()
 	s := &subject{task: t, plan: p, values: append([]float64(nil), values...)}
-	s.machine = objective.NewProbe(t, p, values).Machine().(kin.Encloser)
+	probe := objective.NewProbe(t, p, values)
+	s.machine = probe.Machine().(kin.Encloser)
+	s.origin, _ = probe.Home()
+	s.rotary = p.Family.Drive == kin.Rotary
 	s.frame = s.machine.Frame()
 	s.legs = s.frame.Legs()
 	s.ranged = s.legs - p.Family.Free
@@ -51,8 +54,11 @@ func (k kind) value(bound float64) float64 {
 
 // chord is 2-2cos of a swing, rounded down; 4 for half a turn and more.
 func chord(swing float64) float64 {
-	if swing >= math.Pi {
+	switch {
+	case swing >= math.Pi:
 		return 4.1
+	case !(swing >= 0):
+		return -1
 	}
 	h := math.Sin(swing / 2)
 	return 4 * h * h * (1 - 1e-14)
@@ -207,7 +213,8 @@ func (p *prover) conclude(res *Result) {
 			o.Left /= float64(res.Regions)
 		}
 		if o.Answer != Refuted {
-			if o.Left = max(o.Left, 0); o.Left < 1e-12 && o.Needs == "" {
+			// A share of the volume says nothing: what is left may be too small for it.
+			if o.Left = max(o.Left, 0); p.unsettled>>i&1 == 0 && o.Needs == "" {
 				o.Left, o.Answer = 0, Proved
 			}
 		}

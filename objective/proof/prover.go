@@ -31,20 +31,21 @@ type slot struct {
 // prover runs the tests of one design.
 type prover struct {
 	*subject
-	bench  []*bench
-	probe  []*prober
-	slots  []slot
-	cells  []cell
-	alive  uint64 // properties in question
-	leaves []leaves
-	out    []Outcome
-	boxes  int64
-	most   int64
-	end    time.Time
-	ctx    context.Context
-	late   bool
-	halted bool
-	rest   *Rest
+	bench     []*bench
+	probe     []*prober
+	slots     []slot
+	cells     []cell
+	alive     uint64 // properties in question
+	unsettled uint64 // properties that are open in some box or at some single pose
+	leaves    []leaves
+	out       []Outcome
+	boxes     int64
+	most      int64
+	end       time.Time
+	ctx       context.Context
+	late      bool
+	halted    bool
+	rest      *Rest
 }
 
 // run tests all trees by turns until each is settled or it is time to stop.

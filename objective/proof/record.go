@@ -92,6 +92,9 @@ func (t *tree) encode(props uint64) (boxes int, out []byte) {
 		if open == 0 {
 			code = settled
 		}
+		if code == unsettled {
+			panic("proof: a record of a box that is not settled")
+		}
 		if closed != 0 {
 			out = append(out, code|closes)
 			out = binary.AppendUvarint(out, packed(closed, props))

@@ -37,6 +37,9 @@ type Settings struct {
 	Progress func(Progress)
 }
 
+// MostGap is the widest gap: what is further from a limit says nothing of it.
+const MostGap = 0.1
+
 // DefaultGap is the gap where none is set.
 const DefaultGap = 0.01
 

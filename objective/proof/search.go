@@ -77,6 +77,32 @@ func (v *prober) refutes(i int, c *Counter) bool {
 	return p.off(w.Value) > objective.Tolerance
 }
 
+// doubtful tells whether the determinant at the pose, which has a posture, is not beyond doubt of the same sign as at home.
+func (v *prober) doubtful() bool {
+	return v.reached && (v.home == 0 || v.signs.sign(v.pose) != v.home)
+}
+
+// signsOf looks at the listed poses of a zone, and at that of one in which nothing moves, for the sign of the determinant: one that
+// is in doubt leaves property i open.
+func (p *prover) signsOf(i, zone int, v *prober) {
+	z := &p.task.Zones[zone]
+	poses := z.Poses
+	if z.Kind != objective.Listed {
+		if len(z.Moving()) > 0 {
+			return
+		}
+		poses = []kin.Coords{z.Resting()}
+	}
+	for _, c := range poses {
+		if v.at(c, zone); v.reached {
+			p.meet(i, v)
+			if v.doubtful() {
+				p.unsettled |= 1 << i
+			}
+		}
+	}
+}
+
 // easyGap is the relative distance from which on limits of coordinates, swings and rates are proved as they are,
 // whatever the gap: few boxes do.
 const easyGap = 1e-4
@@ -91,7 +117,14 @@ func (p *prover) search(gap float64) {
 		o := &p.out[i]
 		o.Found = math.NaN()
 		for z := range p.task.Zones {
+			if p.props[i].kind == regular {
+				p.signsOf(i, z, v)
+			}
 			for _, q := range p.drives(&p.props[i]) {
+				if p.stop() {
+					p.unsettled |= p.alive // not looked at: single poses are not looked at elsewhere
+					break
+				}
 				if e, ok := r.Worst(z, q); ok {
 					v.at(e.Sample.Coords, z)
 					p.meet(i, v)

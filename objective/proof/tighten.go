@@ -56,7 +56,7 @@ func (p *prover) tighten(all []region) {
 	var todo []int
 	for i := range p.out {
 		l := &p.leaves[i]
-		if o := &p.out[i]; p.alive>>i&1 == 1 && o.Bounded && o.Left <= 1e-12 && !l.many && len(l.leaf) > 0 {
+		if o := &p.out[i]; p.alive>>i&1 == 1 && o.Bounded && p.unsettled>>i&1 == 0 && !l.many && len(l.leaf) > 0 {
 			todo = append(todo, i)
 		}
 	}

@@ -28,7 +28,8 @@ type node struct {
 const (
 	settled = 6 + iota // every property in question is proved
 	outside            // no pose of the region is in the box
-	unsettled
+
+	unsettled = 255 // not tested, or too small to be split
 )
 
 // tree is the record of the boxes of one region, tested for some of the properties.
@@ -111,8 +112,9 @@ func (p *prover) leave(t *tree) {
 	}
 }
 
-// keep notes a box that is not settled if it is larger than the one noted.
+// keep notes that properties are not settled in a box, however small, and the box if it is larger than the one noted.
 func (p *prover) keep(g *region, c *cell, open uint64) {
+	p.unsettled |= open
 	share := math.Ldexp(1, -int(c.depth))
 	if open == 0 || p.rest != nil && p.rest.Share >= share {
 		return
