@@ -7,6 +7,7 @@ import (
 	"os/exec"
 	"path/filepath"
 	"strconv"
+	"strings"
 	"testing"
 	"time"
 
@@ -53,6 +54,14 @@ func TestScripts(t *testing.T) {
 				if err := cmd.Wait(); cmd.ProcessState.ExitCode() != exitInterrupted {
 					ts.Fatalf("status %d, want %d: %v", cmd.ProcessState.ExitCode(), exitInterrupted, err)
 				}
+			},
+			// spoil FILE COPY OLD NEW copies a file with one piece of text replaced.
+			"spoil": func(ts *testscript.TestScript, neg bool, args []string) {
+				text := ts.ReadFile(args[0])
+				if !strings.Contains(text, args[2]) {
+					ts.Fatalf("%s does not hold %q", args[0], args[2])
+				}
+				ts.Check(os.WriteFile(ts.MkAbs(args[1]), []byte(strings.Replace(text, args[2], args[3], 1)), 0o666))
 			},
 			// repeat DONE OUT BRIEF BUDGET searches the evaluations that the study DONE reached, of the budget.
 			"repeat": func(ts *testscript.TestScript, neg bool, args []string) {
