@@ -1,7 +1,6 @@
 package job
 
 import (
-	"errors"
 	"fmt"
 	"math"
 	"runtime"
@@ -42,8 +41,10 @@ func (s *Study) Sheet(f *study.Front, r SheetRun) (*sheet.Data, error) {
 	d.Designs = make([]sheet.Design, len(f.Designs))
 	faults := make([]error, len(f.Designs))
 	each(len(f.Designs), r.Workers, func(i int) { faults[i] = b.design(d, i) })
-	if err := errors.Join(faults...); err != nil {
-		return nil, err
+	for _, err := range faults { // one says enough
+		if err != nil {
+			return nil, err
+		}
 	}
 	sheet.Fit(d, sheetBytes, r.Detail)
 	return d, nil
