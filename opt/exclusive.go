@@ -310,7 +310,10 @@ func (s *shares) gain3(p xyz, skip int, u *xyz) float64 {
 		}
 		switch {
 		case q0 <= p0 && q1 <= p1:
-			u2 = q2
+			if u2 = q2; q2 <= p2 { // p is beaten
+				*u = p
+				return 0
+			}
 		case q0 <= p0 && q2 <= p2:
 			u1 = q1
 		case q1 <= p1 && q2 <= p2:

@@ -10,7 +10,7 @@ import (
 const mostModelled = 8
 
 // strides is the number of steps that a model judges for each child.
-const strides = 20
+const strides = 16
 
 // mostByVolume is the largest number of goals for which expected goals are
 // rated by hypervolume; beyond, that takes too long to do for every step.
