@@ -59,7 +59,7 @@ func workingMode(text string) Dimension {
 func crankRange(what string, least, most, narrow, wide float64) []Dimension {
 	return []Dimension{
 		{Name: "angle_min", Unit: Radian, Role: Least, Low: least, High: most, Text: "least angle of each " + what},
-		{Name: "angle_range", Unit: Radian, Role: Span, Low: narrow, High: wide, Text: "angle through which a " + what + " can turn from there"},
+		{Name: "angle_range", Unit: Radian, Role: Span, Low: narrow, High: wide, Text: "angle through which each " + what + " can turn from there"},
 	}
 }
 

@@ -9,6 +9,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"legwright/cmd/legwright/internal/brief"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
 	"legwright/kin"
@@ -54,7 +55,7 @@ func family(name string) (*kin.Family, error) {
 		}
 		names = append(names, f.Name)
 	}
-	return nil, inputError{fmt.Errorf("unknown family %q; the families are %s", name, strings.Join(names, ", "))}
+	return nil, inputError{fmt.Errorf("unknown family %q; %s (legwright families lists them)", name, brief.Suggest(name, names))}
 }
 
 // describe prints everything that a person needs to fill in a family's dimensions.

@@ -74,7 +74,9 @@ its share of the evaluations; legwright merge joins the parts.`,
 // readBrief reads the text of a brief; the reader of briefs judges it.
 func readBrief(name string) ([]byte, error) {
 	info, err := os.Stat(name)
-	if err == nil && !info.Mode().IsRegular() {
+	if errors.Is(err, os.ErrNotExist) {
+		err = fmt.Errorf("there is no file %s; give the path of a brief, or none for the embedded example", study.Clean(name))
+	} else if err == nil && !info.Mode().IsRegular() {
 		err = fmt.Errorf("%s is not a plain file; give the path of a brief", name)
 	}
 	if err != nil {

@@ -110,6 +110,9 @@ func (d decoder) Decode(data []byte, out map[string]any) error {
 }
 
 func unknownFormat(file string) error {
+	if info, err := os.Stat(file); err == nil && info.IsDir() {
+		return Faults{{Position{File: file}, "", "is a folder", "give a file in it, such as " + filepath.Join(file, "designs", "001.yaml") + " of a study"}}
+	}
 	return Faults{{Position{File: file}, "", fmt.Sprintf("%q is no known ending", filepath.Ext(file)), "name the file .yaml, .toml or .json"}}
 }
 

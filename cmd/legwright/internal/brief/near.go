@@ -16,6 +16,9 @@ func near(word string, names []string) string {
 	return best
 }
 
+// Suggest words what to write in place of an unknown name, of the names that there are.
+func Suggest(word string, names []string) string { return suggest(word, names) }
+
 // suggest words what to write in place of an unknown name.
 func suggest(word string, names []string) string {
 	if n := near(word, names); n != "" {
