@@ -125,6 +125,12 @@ func (s *sheet) proofTable(p *study.Proof) {
 				}
 			}
 		}
+		if l.Limit == nil && l.Bound != nil && l.Answer == "proved" {
+			bound = "1/kappa " + units.Digits(float64(*l.Bound), manyDigits)
+			if l.Found != nil {
+				found = units.Digits(float64(*l.Found), manyDigits)
+			}
+		}
 		for k, t := range []string{study.Clean(l.Property), answer, limit, bound, room, found, strconv.FormatInt(l.Boxes, 10), study.Clean(l.Origin)} {
 			cols[k].cells = append(cols[k].cells, t)
 		}

@@ -234,6 +234,9 @@ func proofLine(t *objective.Task, o *proof.Outcome) ProofLine {
 			l.Margin = number(o.Slack(o.Bound))
 		}
 	}
+	if !o.Bounded && !math.IsNaN(o.Bound) { // least 1/kappa of a matrix that is nowhere singular
+		l.Bound, l.Found = number(o.Bound), number(o.Found)
+	}
 	if o.Bounded || o.Answer == proof.Refuted && o.Name != "reach" {
 		l.Found = number(o.Found)
 	}
