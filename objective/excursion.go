@@ -20,23 +20,17 @@ const (
 )
 
 // Excurse finds the single-axis excursions of an appraised design. They are not
-// reachable together. The march along each axis has steps of 0.09° and of 1/2000
-// of five times the longest leg (with rotary drives: the base's diameter in plan or the
-// platform's distance from the base origin); a failure narrower than that may be stepped over.
+// reachable together. The march along each axis has steps of 0.09° and of 1/2000 of five times the longest leg at home
+// (with rotary drives and rails: the radius of the base in plan, the platform's distance from the base origin, or a rod and
+// the rail that its carriage has); a failure narrower than that may be stepped over.
 func Excurse(t *Task, a *Appraisal) []Excursion {
 	v := newView(t)
 	v.serve(a.Plan.Family)
 	v.begin(a.Machine)
 	d := Design{Family: a.Plan.Family, Values: a.Values, Machine: a.Machine}
 	l := newPoseLimits(t, v, a.Plan, &d)
-	most := 0.0
-	for i := range v.n {
-		most = math.Max(most, v.homeQ[i])
-	}
 	f := a.Machine.Frame()
-	if a.Plan.Family.Drive == kin.Rotary {
-		most = math.Max(enclosing(f.Base), norm(f.Home))
-	}
+	most := l.farthest(f)
 	var out []Excursion
 	for _, q := range f.Freedoms {
 		far := 5 * most
@@ -51,6 +45,33 @@ func Excurse(t *Task, a *Appraisal) []Excursion {
 	return out
 }
 
+// farthest is a fifth of the length that no axis of the machine could follow.
+func (l *poseLimits) farthest(f *kin.Frame) float64 {
+	v, p := l.v, l.plan
+	most := 0.0
+	if p.Family.Drive != kin.Rotary && f.Rails == nil {
+		for _, q := range v.homeQ[:v.n] {
+			most = math.Max(most, q)
+		}
+		return most
+	}
+	most = math.Max(enclosing(f.Base), norm(f.Home))
+	if f.Rails == nil {
+		return most
+	}
+	rail := 0.0 // the farthest that a carriage goes from where its coordinate is 0
+	low, high := l.d.Values[p.least], l.d.Values[p.least]+l.d.Values[p.span]
+	for _, q := range append([]float64{low, high}, v.homeQ[:v.n]...) {
+		if !math.IsInf(q, 0) && !math.IsNaN(q) {
+			rail = math.Max(rail, math.Abs(q))
+		}
+	}
+	for _, rod := range f.Rods {
+		most = math.Max(most, rod+rail)
+	}
+	return most
+}
+
 // excurse marches coordinate q from home towards far.
 func excurse(l *poseLimits, q kin.Freedom, far float64, zone int) (reach float64, fails string) {
 	try := func(x float64) string {
@@ -60,6 +81,9 @@ func excurse(l *poseLimits, q kin.Freedom, far float64, zone int) (reach float64
 	}
 	if f := try(0); f != "" {
 		return 0, f
+	}
+	if far == 0 {
+		panic("objective: an excursion with nowhere to go")
 	}
 	good := 0.0
 	for k := 1; k <= excursionSteps; k++ {

@@ -69,6 +69,63 @@ func TestExcursionsByBisection(t *testing.T) {
 	})
 }
 
+// Where the carriages stand below the points from which they are counted, an excursion ends where stepping by the pose
+// limits ends it: the last step before holds, the first one after fails. With upright rails all carriages rise
+// as the platform does, so that the way up and down is the range left over: 1e-9 m.
+func TestExcursionsFromBelowTheRails(t *testing.T) {
+	for _, f := range kin.Families() {
+		if !f.Rails {
+			continue
+		}
+		t.Run(f.Name, func(t *testing.T) {
+			d := soundDesign(f)
+			d[f.Index("mode")], d[f.Index("home_height")] = -1, 0.1
+			if i := f.Index("rail_slope"); i >= 0 {
+				d[i] = 90 * deg
+			} else {
+				d[f.Index("rail_slant")] = 0
+			}
+			task := atHome()
+			z := Zone{Name: "work", Kind: Box, Samples: 40}
+			z.Low[kin.X], z.High[kin.X], z.Low[kin.Z], z.High[kin.Z] = -0.02, 0.02, -0.03, 0.05
+			task.Zones = []Zone{z}
+			task.Prepare()
+			a := appraise(task, f, d)
+			for i := range a.Legs {
+				if q := a.Legs[i].Home; q >= 0 {
+					t.Fatalf("home coordinate %g is not below 0", q)
+				}
+			}
+			const step = 1e-4
+			for _, e := range Excurse(task, a) {
+				for _, end := range [2]float64{e.Low, e.High} {
+					if math.IsInf(end, 0) || end == 0 {
+						t.Errorf("%s ends at %g", e.Freedom, end)
+						continue
+					}
+					var poses []kin.Coords
+					for k := range int(math.Abs(end)/step) + 2 {
+						var c kin.Coords
+						c[e.Freedom] = math.Copysign(float64(k)*step, end)
+						poses = append(poses, c)
+					}
+					for k, s := range Standings(task, a, poses) {
+						if last := k == len(poses)-1; (s.Fails != "") != last {
+							t.Errorf("%s ends at %g, step to %g fails %q", e.Freedom, end, poses[k][e.Freedom], s.Fails)
+							break
+						}
+					}
+				}
+				if e.Freedom == kin.Z {
+					low, home := a.Values[a.Plan.least], a.Legs[0].Home
+					near(t, "down", e.Low, low-home, 1e-9)
+					near(t, "up", e.High, low+a.Values[a.Plan.span]-home, 1e-9)
+				}
+			}
+		})
+	}
+}
+
 // Without anything that could fail an excursion has no bound: a planar stage far wider than its
 // singular circle (H6) is needed, so the singular test is off and no range is given. With H6's circle the
 // excursion along x ends there, at √(Ra² + Rb² - 2 Ra Rb cos φ), 1e-9.
