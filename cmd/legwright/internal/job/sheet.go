@@ -33,7 +33,7 @@ func (s *Study) Sheet(f *study.Front, r SheetRun) (*sheet.Data, error) {
 	if err := s.belongs(f, r.Detail); err != nil {
 		return nil, err
 	}
-	b := &sheetBuilder{study: s, front: f, run: &r, twins: study.Twins(f)}
+	b := &sheetBuilder{study: s, front: f, run: &r}
 	d := b.head()
 	b.families(d)
 	limitKinds(d, f)
@@ -120,7 +120,6 @@ type sheetBuilder struct {
 	study *Study
 	front *study.Front
 	run   *SheetRun
-	twins []int
 	path  *objective.Way
 	scout []kin.Coords
 	full  []bool // designs that are shown in full

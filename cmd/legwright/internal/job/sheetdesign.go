@@ -44,7 +44,7 @@ func (b *sheetBuilder) design(d *sheet.Data, i int) error {
 	v := &d.Designs[i]
 	*v = sheet.Design{
 		ID: r.ID, Rank: r.Rank, Score: sheet.Exact(r.Score), Family: plan, Feasible: r.Feasible, Marks: append([]string{}, r.Marks...),
-		Twins: b.twins[i], Notes: r.Notes, Tightest: -1,
+		Sheets: b.full[i], Notes: r.Notes, Tightest: -1,
 	}
 	if r.Proof != nil {
 		v.Proof, v.Proved = r.Proof.Answer, report.ProofSentence(r.Proof)

@@ -161,7 +161,6 @@ func (b *sheetBuilder) change(d *sheet.Data, v *sheet.Design, p *objective.Plan,
 		}
 		low, high := relative(&s.Down), relative(&s.Up)
 		out.Lower, out.Higher = append(out.Lower, share(low)), append(out.Higher, share(high))
-		out.Mean = append(out.Mean, share((high-low)/2))
 	}
 	return out
 }

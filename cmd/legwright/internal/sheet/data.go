@@ -102,7 +102,7 @@ type Column struct {
 	Form string  `json:"form,omitempty"`
 	Low  *Num    `json:"low,omitempty"`
 	High *Num    `json:"high,omitempty"`
-	Step float64 `json:"step,omitempty"` // of "steps"
+	Step float64 `json:"step,omitempty"` // of "steps": between neighbouring values
 }
 
 // LimitKind is a limit; its bound may differ from design to design (of the actuator range) and is in Design.Limits.

@@ -9,7 +9,7 @@ type Design struct {
 	Family   int      `json:"family"`
 	Feasible bool     `json:"feasible"`
 	Marks    []string `json:"marks"`        // "knee", "best conditioning", …
-	Twins    int      `json:"twins"`        // index of the design, of better rank or itself, that stands for its group of near-twins
+	Sheets   bool     `json:"sheets"`       // whether the study folder holds its plans and tables
 	Proof    string   `json:"proof"`        // "" not proved, "proved", "refuted", "undecided"
 	Proved   string   `json:"proved"`       // the same in words, with what was shown or where it fails; "" where Proof is
 	Stroke   string   `json:"whole_stroke"` // what was found of the whole actuator range, in words; "" if not looked at
@@ -113,7 +113,6 @@ type Change struct {
 	Up        Num    `json:"up"`
 	Lower     []Num  `json:"lower"` // by goal, moved down; null where it has no value there: unreachable, or without bound
 	Higher    []Num  `json:"higher"`
-	Mean      []Num  `json:"mean"` // by goal: half of Higher - Lower, the central difference; null unless both are there
 
 	LowerFails  string `json:"lower_fails,omitempty"` // the limit broken worst there, "" where all hold
 	HigherFails string `json:"higher_fails,omitempty"`

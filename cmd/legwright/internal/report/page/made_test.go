@@ -42,7 +42,7 @@ func made(n int, title string) *sheet.Data {
 	for i := range n {
 		t := (float64(i) + 0.5) / float64(n)
 		base, platform, height := 0.4+0.8*t, 0.25+0.3*rnd.Float64(), 0.9+0.2*rnd.Float64()
-		g := sheet.Design{ID: fmt.Sprintf("%03d", i+1), Rank: i + 1, Score: sheet.Exact(1 - t), Family: i % 7 / 5, Feasible: true, Marks: []string{}, Twins: i, Tightest: 1,
+		g := sheet.Design{ID: fmt.Sprintf("%03d", i+1), Rank: i + 1, Score: sheet.Exact(1 - t), Family: i % 7 / 5, Feasible: true, Marks: []string{}, Sheets: i < 20, Tightest: 1,
 			Dimensions: []sheet.Exact{sheet.Exact(base), sheet.Exact(platform), sheet.Exact(height), 0.88, 0.7},
 			Measures:   []sheet.Exact{sheet.Exact(0.15 + 0.25*math.Sqrt(t) + 0.01*rnd.Float64()), sheet.Exact(2300 + 1500*(1-t)*(1-t) + 30*rnd.Float64()), sheet.Exact(2 * base), sheet.Exact(0.03 * (1 + rnd.Float64()))},
 			Limits:     [][5]sheet.Num{{0, 0.01, 0.03, 2, 1}, {1, 1.57, 1.56, 0.006, 1}},
@@ -129,5 +129,5 @@ func madeDetail(d *sheet.Data, height float64) *sheet.Detail {
 	return &sheet.Detail{Path: track(d.Path), Corners: track(d.Corners), Maps: []sheet.Map{m},
 		Excursions:  []sheet.Excursion{{Coordinate: "x", Unit: "m", Low: &num, LowFails: "actuator range", High: nil}},
 		Together:    []sheet.Together{{Zone: 0, Factor: &num, Fails: "actuator range"}},
-		Sensitivity: []sheet.Change{{Dimension: 0, Text: "±1 %", Down: 0.01, Up: 0.01, Lower: []sheet.Num{-0.01, 0.02, -0.01}, Higher: []sheet.Num{0.01, -0.02, 0.01}, Mean: []sheet.Num{0.01, -0.02, 0.01}}}}
+		Sensitivity: []sheet.Change{{Dimension: 0, Text: "±1 %", Down: 0.01, Up: 0.01, Lower: []sheet.Num{-0.01, 0.02, -0.01}, Higher: []sheet.Num{0.01, -0.02, 0.01}}}}
 }

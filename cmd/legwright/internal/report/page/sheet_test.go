@@ -8,6 +8,7 @@ import (
 	"strings"
 	"testing"
 
+	"legwright/cmd/legwright/internal/sheet"
 	"legwright/cmd/legwright/internal/study"
 
 	"github.com/chromedp/chromedp"
@@ -201,21 +202,40 @@ func TestPoseControl(t *testing.T) {
 	p.quiet()
 }
 
-// The files that the page links to are those that a study holds, for the designs that have them.
+// The files that the page links to are those that a study holds: of the designs that a search hands over, and of those that
+// --detail names. The others show the command.
 func TestHandOverLinks(t *testing.T) {
 	s := need(t, tilt)
-	p := open(t, s.data, 1280, 900, false)
 	has := map[int]bool{}
 	for _, i := range s.front.HandedOver() {
 		has[i] = true
 	}
-	names := study.SheetNames()
-	slices.Sort(names)
-	for i, d := range s.data.Designs {
+	other := 0 // the first without sheets
+	for has[other] {
+		other++
+	}
+	if other >= len(s.front.Designs)-1 {
+		t.Fatal("hardly a design is without sheets, which tests nothing")
+	}
+	asked, err := s.again(s.front.Designs[other].ID)
+	if err != nil {
+		t.Fatal(err)
+	}
+	checkLinks(t, s.data, has)
+	has[other] = true
+	checkLinks(t, asked, has)
+}
+
+func checkLinks(t *testing.T, data *sheet.Data, has map[int]bool) {
+	t.Helper()
+	p := open(t, data, 1280, 900, false)
+	for i, d := range data.Designs {
 		links := eval[[]string](p, fmt.Sprintf(`legwright.store.pick(%d), [...document.querySelectorAll(".files a")].map((a) => a.getAttribute("href"))`, i))
 		want := []string{"designs/" + d.ID + ".yaml"}
+		command := []string{"legwright report out --detail " + d.ID}
 		if has[i] {
-			for _, n := range names {
+			command = []string{}
+			for _, n := range study.SheetNames() {
 				want = append(want, "designs/"+d.ID+"/"+n)
 			}
 		}
@@ -224,9 +244,9 @@ func TestHandOverLinks(t *testing.T) {
 		if !slices.Equal(links, want) {
 			t.Fatalf("design %s: links %q, want %q", d.ID, links, want)
 		}
-	}
-	if len(has) == len(s.data.Designs) {
-		t.Error("every design has sheets, which tests nothing")
+		if got := eval[[]string](p, `[...document.querySelectorAll("#files code")].map((c) => c.textContent)`); !slices.Equal(got, command) {
+			t.Fatalf("design %s: commands %q, want %q", d.ID, got, command)
+		}
 	}
 	p.quiet()
 }

@@ -17,7 +17,8 @@ import (
 type searched struct {
 	front *study.Front
 	data  *sheet.Data
-	tool  [3]float64 // of the brief
+	tool  [3]float64                                  // of the brief
+	again func(detail ...string) (*sheet.Data, error) // the data with these designs in full
 }
 
 // tilt is the example brief, searched with a small budget; once for all tests.
@@ -47,8 +48,11 @@ func search(name string, evaluations int) (*searched, error) {
 		return nil, err
 	}
 	sources := &study.Sources{Brief: study.File{Name: path, Bytes: text}}
-	d, err := s.Sheet(found.Front, job.SheetRun{Sources: sources, Folder: "out"})
-	return &searched{found.Front, d, b.Tool}, err
+	data := func(detail ...string) (*sheet.Data, error) {
+		return s.Sheet(found.Front, job.SheetRun{Sources: sources, Folder: "out", Detail: detail})
+	}
+	d, err := data()
+	return &searched{found.Front, d, b.Tool, data}, err
 }
 
 // need gives a study or ends the test.

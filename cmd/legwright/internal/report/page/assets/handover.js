@@ -11,22 +11,17 @@ const SHEETS = [
   ["heights.csv", "lowest and highest platform, collapsed height"],
 ];
 
-// BEST is the number of best designs that have sheets; marked designs and those of the first screen have them too.
-const BEST = 20;
-
-const hasSheets = (model, d) => d.index < BEST || d.marks.length > 0 || model.data.first.some((f) => f.design === d.index);
-
 function handoverView(store, place) {
   const { model } = store;
   const link = (path, text) => h("li", {}, h("a", { href: path }, path), h("small", {}, ` ${text}`));
   function draw() {
     const d = model.designs[store.picked], at = `designs/${d.id}`;
-    const sheets = hasSheets(model, d);
+    const { sheets } = d.raw;
     empty(place,
       h("p", {}, "Design ", h("b", {}, d.id), ". The files lie in the study folder beside this page. Not for construction until checked."),
       h("ul", { class: "files" }, link(`${at}.yaml`, "design file, for legwright appraise, prove and locate"),
         sheets ? SHEETS.map(([name, text]) => link(`${at}/${name}`, text)) : null),
-      sheets ? null : h("p", { class: "note" }, `Plans and tables are written for the best ${BEST} designs, the marked ones and those of the first table above.`));
+      sheets ? null : h("p", { class: "note" }, "Its plans and tables are not written yet. This writes them, and shows them here: ", h("code", {}, `legwright report ${model.folder} --detail ${d.id}`)));
   }
   store.on("pick", draw);
   draw();

@@ -61,8 +61,9 @@ function dimensionsView(model, d, place) {
     const unit = model.unit(c.unit), v = d.raw.dimensions[k];
     const range = c.low !== undefined && c.high !== undefined && c.low !== null && c.high !== null && c.low !== c.high
       ? `${quantity(c.low, unit)} to ${withUnit(c.high, unit)}` : how[c.form] || "";
+    const by = c.step ? `, in steps of ${withUnit(c.step, unit)}` : "";
     const edge = v !== null && c.low !== c.high && (v === c.low || v === c.high) ? ", at its end" : "";
-    return [h("span", { title: c.text }, given(words(c.name))), num(withUnit(v ?? NaN, unit, 6)), given(range + edge)];
+    return [h("span", { title: c.text }, given(words(c.name))), num(withUnit(v ?? NaN, unit, 6)), given(range + by + edge)];
   });
   add(place, [h("h3", {}, "Dimensions"), table(d.fam.text, ["dimension", num("value"), "allowed"], rows)]);
 }
