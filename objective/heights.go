@@ -24,15 +24,26 @@ type End struct {
 	Fails  string  // why it cannot take it
 }
 
-// Collapsed is the lower of the two ends that the machine can take, or nil.
+// Collapsed is the lower of the two ends, or nil where that is not known: the machine can take only one of them, which is
+// not below the duty's lowest height.
 func (h *Heights) Collapsed() *End {
-	var low *End
-	for i := range h.Ends {
-		if e := &h.Ends[i]; e.Fails == "" && (low == nil || math.Abs(e.Height) < math.Abs(low.Height)) {
-			low = e
-		}
+	a, b := &h.Ends[0], &h.Ends[1]
+	if a.Fails != "" {
+		a, b = b, a
 	}
-	return low
+	switch {
+	case a.Fails != "":
+		return nil
+	case b.Fails != "":
+		known := h.Lowest <= h.Highest // some pose counts
+		if known && (h.Lowest > 0 && a.Height < h.Lowest || h.Highest < 0 && a.Height > h.Highest) {
+			return a
+		}
+		return nil
+	case math.Abs(b.Height) < math.Abs(a.Height):
+		return b
+	}
+	return a
 }
 
 // PlatformHeights finds the heights of an appraised design.
@@ -107,7 +118,7 @@ func (a *Appraisal) end(v *View, part float64) End {
 		}
 		var ok bool
 		if here, ok = kin.Locate(a.Machine, q, at); !ok || here.Determinant*float64(v.homeSign) <= 0 {
-			e.Fails = "there is no posture on the way there, or a singular one"
+			e.Fails = "no posture on the way there, or a singular one"
 			return e
 		}
 		at = here.Pose

@@ -29,6 +29,30 @@ func TestCollapsedHeightOfAPrism(t *testing.T) {
 	}
 }
 
+// Legs that draw in to less than the distance of their joints in plan have no posture there: what is left, the platform
+// drawn out, is not the collapsed height. Drawn in to a height below the duty's lowest it is, whatever lies beyond.
+func TestCollapsedHeightThatIsNotKnown(t *testing.T) {
+	f := kin.FamilyNamed("6-UPS")
+	task := loadedTask(511, f)
+	d := soundDesign(f)
+	d[5], d[6] = 0.5*math.Sqrt(d[0]*d[0]+d[1]*d[1]-2*d[0]*d[1]*math.Cos(60*deg-d[2]-d[3])), 1.5
+	h := PlatformHeights(task, Appraise(task, fixedRange(task, f, d), d))
+	if h.Ends[0].Fails == "" || h.Ends[1].Fails != "" {
+		t.Fatalf("ends %+v", h.Ends)
+	}
+	if c := h.Collapsed(); c != nil {
+		t.Errorf("collapsed to %g m, but the duty's lowest is %g m", c.Height, h.Lowest)
+	}
+	h.Ends[0], h.Ends[1] = End{Height: h.Lowest - 0.01}, h.Ends[0]
+	if c := h.Collapsed(); c != &h.Ends[0] {
+		t.Errorf("below the duty's lowest, yet %v", c)
+	}
+	h.Lowest, h.Highest = math.Inf(1), math.Inf(-1)
+	if c := h.Collapsed(); c != nil {
+		t.Errorf("no pose counts, yet %v", c)
+	}
+}
+
 // Over a box of heights without rotation, the platform origin is lowest and highest at its ends, and so are the
 // joints: exactly.
 func TestHeightsOfALift(t *testing.T) {

@@ -27,16 +27,39 @@ func (d *design) heights() []byte {
 	put("platform origin, highest over the duty", h.Highest, "", h.HighAt)
 	put("platform joint centres, lowest over the duty", h.Under, "", nil)
 	put("platform joint centres, highest over the duty", h.Over, "", nil)
+	planar := !d.a.Plan.Family.Has(kin.Z)
 	for i, what := range [2]string{"platform origin, all actuators at their least", "platform origin, all actuators at their most"} {
 		e := &h.Ends[i]
-		put(what, e.Height, endRemark(e), nil)
+		remark := endRemark(e)
+		if planar {
+			remark = notApply
+		}
+		put(what, e.Height, remark, nil)
 	}
-	if c := h.Collapsed(); c != nil {
-		put("platform origin, collapsed", c.Height, "the lower of these two; "+endRemark(c), nil)
-	} else {
-		put("platform origin, collapsed", math.NaN(), "no such posture", nil)
+	const collapsed = "platform origin, collapsed"
+	switch c := h.Collapsed(); {
+	case planar:
+		put(collapsed, math.NaN(), notApply, nil)
+	case c == nil:
+		put(collapsed, math.NaN(), "not known: "+notKnown(&h), nil)
+	case h.Ends[0].Fails != "" || h.Ends[1].Fails != "":
+		put(collapsed, c.Height, "the end that is known, below the lowest over the duty; "+endRemark(c), nil)
+	default:
+		put(collapsed, c.Height, "the lower of these two; "+endRemark(c), nil)
 	}
 	return t.bytes()
+}
+
+const notApply = "does not apply: the platform moves in its plane alone"
+
+// notKnown is why an end of the range has no height.
+func notKnown(h *objective.Heights) string {
+	for i := range h.Ends {
+		if f := h.Ends[i].Fails; f != "" {
+			return f
+		}
+	}
+	panic("handover: both ends are known")
 }
 
 func endRemark(e *objective.End) string {
