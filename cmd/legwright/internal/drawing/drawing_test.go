@@ -24,7 +24,7 @@ func sample() *Drawing {
 	return d
 }
 
-const hostile = "</text><script>alert(1)</script> ]]> & 100% %%c %%% ^J \\U+0041 \\P € Ä ±5° 𝄞 x\x00\x07y\u202e end"
+const hostile = "</text><script>alert(1)</script> ]]> & 100% %%c %%% ^J \\U+0041 \\P € Ä ±5° 3%° %Ø %± 𝄞 x\x00\x07y\u202e end"
 
 // near fails the test where got is farther than tol from want.
 func near(t *testing.T, what string, got, want, tol float64) {

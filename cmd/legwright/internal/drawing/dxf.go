@@ -194,8 +194,6 @@ func dxfText(s string) string {
 			c = "%%c"
 		case r == '±':
 			c = "%%p"
-		case r == '%' && last == '%':
-			c = " %" // two of them begin a code
 		case r == '^':
 			c = "^ " // the same
 		case r == '\\':
@@ -206,6 +204,9 @@ func dxfText(s string) string {
 			c = "?"
 		case r > '~':
 			c = fmt.Sprintf(`\U+%04X`, r)
+		}
+		if last == '%' && c[0] == '%' {
+			c = " " + c // two of them begin a code
 		}
 		if b.Len()+len(c) > dxfLongest {
 			break

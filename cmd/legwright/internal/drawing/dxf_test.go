@@ -230,5 +230,6 @@ func asDXFShows(s string) string {
 	for strings.Contains(s, "%%") {
 		s = strings.ReplaceAll(s, "%%", "% %")
 	}
+	s = strings.NewReplacer("%°", "% °", "%Ø", "% Ø", "%±", "% ±").Replace(s) // these begin with two per cent signs
 	return strings.NewReplacer("\x00", " ", "\x07", " ", "𝄞", "?").Replace(s)
 }
