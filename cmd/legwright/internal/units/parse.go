@@ -6,12 +6,21 @@ import (
 	"regexp"
 	"strconv"
 	"strings"
+	"unicode"
 )
 
 // Error says what is wrong with a quantity and what to write instead.
 type Error struct{ Problem, Remedy string }
 
-func (e *Error) Error() string { return e.Problem + "; " + e.Remedy }
+// Error is one line. What would not print, of the text that was read, shows as a question mark.
+func (e *Error) Error() string {
+	return strings.Map(func(r rune) rune {
+		if unicode.IsPrint(r) {
+			return r
+		}
+		return '?'
+	}, e.Problem+"; "+e.Remedy)
+}
 
 // based is a number in hexadecimal, octal or binary.
 var based = regexp.MustCompile(`^[+-]?0[xXoObB][0-9a-fA-F]`)

@@ -7,6 +7,7 @@ import (
 	"math/rand/v2"
 	"strings"
 	"testing"
+	"unicode"
 )
 
 // Factors from the SI Brochure (9th edition, 2019); the inch is 25.4 mm and standard gravity
@@ -276,4 +277,14 @@ func FuzzParse(f *testing.F) {
 			}
 		}
 	})
+}
+
+// Control characters of a text do not reach the terminal with an error.
+func TestErrorsPrint(t *testing.T) {
+	for _, text := range []string{"0BB\n\x87", "1,5 \x1b[31m", "\x1b", "5 \u202emm", "1_0\n"} {
+		_, _, err := Parse(text, Length)
+		if err == nil || strings.IndexFunc(err.Error(), func(r rune) bool { return !unicode.IsPrint(r) }) >= 0 {
+			t.Errorf("%q: %v", text, err)
+		}
+	}
 }
