@@ -9,7 +9,7 @@ import (
 )
 
 // actuators is the actuator schedule: what each leg's actuator must do over the duty, and the range that it has.
-func (d *design) actuators() []byte {
+func (d *design) actuators() *table {
 	f := d.a.Plan.Family
 	coordinate, effort, rate := study.DriveKinds(f.Name)
 	c, e, r := units.Suffix(coordinate), units.Suffix(effort), units.Suffix(rate)
@@ -58,7 +58,7 @@ func (d *design) actuators() []byte {
 	if least, _ := f.Range(); least >= 0 {
 		line("all", w, "", 0)
 	}
-	return t.bytes()
+	return t
 }
 
 // rangeOf is the range of a leg's actuator, NaN without one.

@@ -2,6 +2,7 @@ package handover
 
 import (
 	"math"
+	"slices"
 	"strconv"
 
 	"legwright/cmd/legwright/internal/units"
@@ -31,17 +32,14 @@ func (d *design) loads() []objective.CaseLoads {
 
 // forces is the table of the largest joint forces: for each case and joint the least and the greatest of each component, and
 // the largest resultant with its components at that moment.
-func (d *design) forces() []byte {
+func (d *design) forces() *table {
 	heads := []string{"case", "point", "plate", "part"}
 	for k, c := range componentHeads {
 		s := units.Suffix(componentUnit(k))
 		heads = append(heads, c+"_least_"+s, c+"_most_"+s)
 	}
 	heads = append(heads, "resultant_N", "resultant_is")
-	for k, c := range componentHeads {
-		heads = append(heads, c+"_then_"+units.Suffix(componentUnit(k)))
-	}
-	t := d.sheet("joint forces, largest", append(heads, poseHeads...)...)
+	t := d.sheet("joint forces, largest", slices.Concat(heads, thenHeads(), poseHeads)...)
 	t.note("forces", signs)
 	t.note("least and most", "of each component over the case's sets, the sampled poses in its zones and the worst poses found between them: exact at each pose, each load's sets taken independently; not simultaneous, and not a proof for all poses")
 	t.note("resultant", "largest size of the force (fx fy fz), with the components then and the pose about home; exact: the joint's force has one direction at a pose; found: it has not, a climb over the sets found this one")
@@ -73,7 +71,15 @@ func (d *design) forces() []byte {
 			t.row(append(append(cells, components(&j.Then, j.Moments)...), d.pose(j.At)...)...)
 		}
 	}
-	return t.bytes()
+	return t
+}
+
+// thenHeads head the components at the moment of the largest resultant.
+func thenHeads() (heads []string) {
+	for k, c := range componentHeads {
+		heads = append(heads, c+"_then_"+units.Suffix(componentUnit(k)))
+	}
+	return heads
 }
 
 // components are the six cells of a load.
@@ -97,7 +103,7 @@ func tidy(x float64) float64 {
 
 // together is the table of joint forces that act at one moment: for each case, that at which the joint with the largest
 // resultant has its largest.
-func (d *design) together() []byte {
+func (d *design) together() *table {
 	heads := []string{"case", "point", "plate", "part"}
 	for k, c := range componentHeads {
 		heads = append(heads, c+"_"+units.Suffix(componentUnit(k)))
@@ -119,7 +125,7 @@ func (d *design) together() []byte {
 		}
 		t.row(append(append([]string{d.caseName(c), "", onPlatform, "sum, about the tool point"}, components(&c.Wrench, true)...), pose...)...)
 	}
-	return t.bytes()
+	return t
 }
 
 // open notes what the figures do not tell.

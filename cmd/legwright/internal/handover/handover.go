@@ -38,14 +38,14 @@ func Files(t *objective.Task, a *objective.Appraisal, title Title) map[string][]
 	d := &design{task: t, a: a, title: title, plan: newModel(a)}
 	base, platform := d.basePlan(), d.platformPlan()
 	return map[string][]byte{
-		study.JointsSheet:           d.joints(),
-		study.AxesSheet:             d.axes(),
-		study.LinksSheet:            d.links(),
-		study.HolesSheet:            d.holes(),
-		study.ActuatorsSheet:        d.actuators(),
-		study.ForcesSheet:           d.forces(),
-		study.TogetherSheet:         d.together(),
-		study.HeightsSheet:          d.heights(),
+		study.JointsSheet:           d.joints().bytes(),
+		study.AxesSheet:             d.axes().bytes(),
+		study.LinksSheet:            d.links().bytes(),
+		study.HolesSheet:            d.holes().bytes(),
+		study.ActuatorsSheet:        d.actuators().bytes(),
+		study.ForcesSheet:           d.forces().bytes(),
+		study.TogetherSheet:         d.together().bytes(),
+		study.HeightsSheet:          d.heights().bytes(),
 		study.BasePlan + ".svg":     base.SVG(),
 		study.BasePlan + ".dxf":     base.DXF(),
 		study.PlatformPlan + ".svg": platform.SVG(),

@@ -9,7 +9,7 @@ import (
 )
 
 // heights is the table of how high the platform stands.
-func (d *design) heights() []byte {
+func (d *design) heights() *table {
 	t := d.sheet("heights of the platform", append([]string{"what", "height_mm", "remark"}, poseHeads...)...)
 	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top; over the sampled poses of the duty and the worst poses found between them, not a proof")
 	if f := d.a.Plan.Family; !f.Has(kin.Z) {
@@ -47,7 +47,7 @@ func (d *design) heights() []byte {
 	default:
 		put(collapsed, c.Height, "the lower of these two; "+endRemark(c), nil)
 	}
-	return t.bytes()
+	return t
 }
 
 const notApply = "does not apply: the platform moves in its plane alone"

@@ -9,7 +9,7 @@ import (
 
 // joints is the table of joint centres: all in the base frame with the machine at home, those of the
 // platform also in its own frame.
-func (d *design) joints() []byte {
+func (d *design) joints() *table {
 	t := d.sheet("joint coordinates at home", "point", "plate", "leg", "what",
 		"base_frame_x_mm", "base_frame_y_mm", "base_frame_z_mm", "platform_frame_x_mm", "platform_frame_y_mm", "platform_frame_z_mm")
 	roll, pitch, yaw := d.plan.rot.RPY()
@@ -26,7 +26,7 @@ func (d *design) joints() []byte {
 		}
 		t.row(cells...)
 	}
-	return t.bytes()
+	return t
 }
 
 // vector is the three cells of a point.
@@ -35,7 +35,7 @@ func vector(v kin.Vec) []string {
 }
 
 // axes is the table of directions: hinges, mounting axes, rails.
-func (d *design) axes() []byte {
+func (d *design) axes() *table {
 	t := d.sheet("axes of joints at home", "point", "axis", "frame", "x", "y", "z", "azimuth_deg", "elevation_deg",
 		"base_frame_x", "base_frame_y", "base_frame_z", "base_frame_azimuth_deg", "base_frame_elevation_deg")
 	t.note("axes", "unit vectors in the frame of the plate; azimuth from +x in the plate's x-y plane, counter-clockwise seen from +z, elevation from that plane towards +z; swing is measured from mounting axes, a hinge is what a part turns about")
@@ -44,7 +44,7 @@ func (d *design) axes() []byte {
 		cells := append([]string{a.point, text(a.what), a.frame}, direction(a.dir)...)
 		t.row(append(cells, direction(a.base)...)...)
 	}
-	return t.bytes()
+	return t
 }
 
 // direction is the five cells of a unit vector. A vertical one has the azimuth 0.
@@ -69,16 +69,16 @@ func azimuth(x, y float64) float64 {
 }
 
 // links is the table of lengths.
-func (d *design) links() []byte {
+func (d *design) links() *table {
 	t := d.sheet("lengths between joint centres", "leg", "what", "from", "to", "length_mm")
 	for _, l := range d.plan.links {
 		t.row(legName(l.leg), text(l.what), l.from, l.to, number(l.length, units.Length))
 	}
-	return t.bytes()
+	return t
 }
 
 // holes is the hole table.
-func (d *design) holes() []byte {
+func (d *design) holes() *table {
 	t := d.sheet("hole table", "hole", "plate", "x_mm", "y_mm", "z_mm", "radius_mm", "angle_deg", "diameter_mm", "for")
 	t.note("holes", "joint centres, projected along z onto the plate; base holes in the base frame, platform holes in the platform frame; the joints' own bolt patterns and the diameters are to be chosen with the joints")
 	for _, p := range d.plan.points {
@@ -92,5 +92,5 @@ func (d *design) holes() []byte {
 		t.row(append(append([]string{p.name, p.plate}, vector(v)...),
 			number(math.Hypot(v.X, v.Y), units.Length), number(azimuth(v.X, v.Y), units.Angle), "to be chosen", text(p.what))...)
 	}
-	return t.bytes()
+	return t
 }

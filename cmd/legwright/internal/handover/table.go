@@ -16,6 +16,8 @@ import (
 // table is a CSV sheet: first the title block, rows of a key that begins with # and a text, then the headings and
 // the rows. Readers that know comments skip the block (encoding/csv with Comment '#'), spreadsheets show it.
 type table struct {
+	name  string
+	notes [][2]string // what this table says besides what all say
 	block [][2]string
 	heads []string
 	rows  [][]string
@@ -23,13 +25,10 @@ type table struct {
 
 // sheet begins a table with its title block.
 func (d *design) sheet(name string, heads ...string) *table {
-	t := &table{heads: heads}
-	t.note("sheet", name)
-	for _, r := range d.block() {
-		t.note(r[0], r[1])
-	}
-	t.note("units", unitsText)
-	t.note("datum", datumText)
+	t := &table{name: name, heads: heads}
+	t.block = append(t.block, [2]string{"sheet", name})
+	t.block = append(t.block, d.block()...)
+	t.block = append(t.block, [2]string{"units", unitsText}, [2]string{"datum", datumText})
 	return t
 }
 
@@ -65,7 +64,7 @@ func orDash(s string) string {
 }
 
 // note adds a row to the title block.
-func (t *table) note(key, value string) { t.block = append(t.block, [2]string{key, value}) }
+func (t *table) note(key, value string) { t.notes = append(t.notes, [2]string{key, value}) }
 
 // row adds a row; cells that are wanting at its end stay empty.
 func (t *table) row(cells ...string) {
@@ -76,7 +75,7 @@ func (t *table) row(cells ...string) {
 func (t *table) bytes() []byte {
 	var b bytes.Buffer
 	w := csv.NewWriter(&b)
-	for _, r := range t.block {
+	for _, r := range append(t.block, t.notes...) {
 		w.Write([]string{"# " + r[0], text(r[1])})
 	}
 	w.Write(t.heads)

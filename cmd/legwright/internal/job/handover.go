@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"legwright/cmd/legwright/internal/handover"
+	"legwright/cmd/legwright/internal/sheet"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/objective"
 )
@@ -12,18 +13,50 @@ import (
 // Sheets gives the sheets by which a design of the study's front is handed over: tables and plan drawings, by the names
 // of study.SheetNames. The design is judged anew by its dimensions.
 func (s *Study) Sheets(r study.Design, sources *study.Sources) (map[string][]byte, error) {
+	t, a, err := s.judgedAnew(&r)
+	if err != nil {
+		return nil, err
+	}
+	return handover.Files(t, a, s.sheetTitle(&r, sources)), nil
+}
+
+// judgedAnew appraises a design of the front by its dimensions.
+func (s *Study) judgedAnew(r *study.Design) (*objective.Task, *objective.Appraisal, error) {
 	k := s.planOf(r.Family)
 	if k < 0 {
-		return nil, fmt.Errorf("the family %s is not in the brief; put the brief back that the front was found with", study.Clean(r.Family))
+		return nil, nil, fmt.Errorf("the family %s is not in the brief; put the brief back that the front was found with", study.Clean(r.Family))
 	}
 	f := s.Plans[k].Family
-	values := dimensionsOf(s.Plans[k], &r)
+	values := dimensionsOf(s.Plans[k], r)
 	for i, v := range values {
 		if math.IsNaN(v) || math.IsInf(v, 0) {
-			return nil, fmt.Errorf("the dimension %s is missing; search again", f.Dimensions[i].Name)
+			return nil, nil, fmt.Errorf("the dimension %s is missing; search again", f.Dimensions[i].Name)
 		}
 	}
 	t := s.Tasks[k]
-	a := objective.Appraise(t, fixed(t, s.Plans[k], values), values)
-	return handover.Files(t, a, handover.Title{Program: Program(), Design: r.ID, Brief: s.Brief.Title, Hash: sourcesHash(sources)}), nil
+	return t, objective.Appraise(t, fixed(t, s.Plans[k], values), values), nil
+}
+
+func (s *Study) sheetTitle(r *study.Design, sources *study.Sources) handover.Title {
+	return handover.Title{Program: Program(), Design: r.ID, Brief: s.Brief.Title, Hash: sourcesHash(sources)}
+}
+
+// handover is what the page shows of the sheets of a design.
+func (b *sheetBuilder) handover(r *study.Design) (*sheet.Handover, error) {
+	t, a, err := b.study.judgedAnew(r)
+	if err != nil {
+		return nil, fmt.Errorf("design %s: %w", r.ID, err)
+	}
+	h := handover.Summarize(t, a, b.study.sheetTitle(r, b.run.Sources))
+	out := &sheet.Handover{Base: h.Base, Platform: h.Platform}
+	for _, v := range []struct {
+		file  string
+		table handover.Table
+	}{
+		{study.JointsSheet, h.Joints}, {study.AxesSheet, h.Axes}, {study.ActuatorsSheet, h.Actuators},
+		{study.ForcesSheet, h.Forces}, {study.HeightsSheet, h.Heights},
+	} {
+		out.Tables = append(out.Tables, sheet.Table{Name: v.table.Name, File: v.file, Notes: v.table.Notes, Heads: v.table.Heads, Rows: v.table.Rows})
+	}
+	return out, nil
 }

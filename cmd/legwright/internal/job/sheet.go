@@ -8,6 +8,7 @@ import (
 	"strings"
 	"sync"
 
+	"legwright/cmd/legwright/internal/handover"
 	"legwright/cmd/legwright/internal/sheet"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
@@ -136,7 +137,7 @@ func (b *sheetBuilder) head() *sheet.Data {
 		Caution:     study.Caution, Cautions: study.FullCaution,
 		LeftOut: study.LeftOut(f.Poses), Notes: []string{},
 		Hanging: s.Brief.Mount == "ceiling", Folder: b.run.Folder, Units: unitTable(),
-		First: []sheet.First{}, Steps: []string{},
+		First: []sheet.First{}, Steps: []string{}, SheetUnits: handover.Units, SheetDatum: handover.Datum,
 	}
 	for _, n := range f.Notes {
 		if !slices.Contains(d.LeftOut, n) {

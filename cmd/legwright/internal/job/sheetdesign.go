@@ -38,7 +38,8 @@ func (b *sheetBuilder) design(d *sheet.Data, i int) error {
 	plan := b.study.planOf(r.Family)
 	p := b.study.Plans[plan]
 	a, outline := b.machine(plan, r)
-	if err := sameJoints(a.Machine.Frame(), r); err != nil {
+	err := sameJoints(a.Machine.Frame(), r)
+	if err != nil {
 		return err
 	}
 	v := &d.Designs[i]
@@ -79,6 +80,9 @@ func (b *sheetBuilder) design(d *sheet.Data, i int) error {
 	b.poses(d, v, r, a, outline)
 	if b.full[i] {
 		b.detail(d, v, plan, a, outline)
+		if v.Detail.Handover, err = b.handover(r); err != nil {
+			return err
+		}
 	}
 	return nil
 }

@@ -53,6 +53,10 @@ type Data struct {
 	Corners []int  `json:"corners"`    // poses of the duty that lie farthest out, at most 64, and the centres of zones
 	Hash    string `json:"brief_hash"` // SHA-256 of the brief and its pose files, in hex
 
+	// The words of every sheet of the hand-over: units and datum.
+	SheetUnits string `json:"sheet_units"`
+	SheetDatum string `json:"sheet_datum"`
+
 	Help []string `json:"help,omitempty"` // where no design holds every limit: what binds and what would have to give
 }
 

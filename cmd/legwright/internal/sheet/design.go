@@ -54,6 +54,23 @@ type Detail struct {
 	Together    []Together  `json:"together"`
 	Maps        []Map       `json:"maps"`
 	Sensitivity []Change    `json:"sensitivity"`
+	Handover    *Handover   `json:"handover,omitempty"`
+}
+
+// Handover is what the page shows of the sheets in the study folder: about 10 kB, and 30 kB of plans.
+type Handover struct {
+	Tables   []Table `json:"tables"`
+	Base     []byte  `json:"base,omitempty"`     // plan of the base, SVG in base64; nil where the page would grow too large
+	Platform []byte  `json:"platform,omitempty"` // plan of the platform
+}
+
+// Table is a table of cells as they are shown.
+type Table struct {
+	Name  string     `json:"name"`
+	File  string     `json:"file"` // in the design's folder, which has all its digits and columns
+	Notes []string   `json:"notes"`
+	Heads []string   `json:"heads"` // words joined by "_", the last one the unit if there is one
+	Rows  [][]string `json:"rows"`
 }
 
 // Track holds postures at a list of poses, without the least digits: good for drawing.

@@ -5,9 +5,10 @@ import (
 	"slices"
 )
 
-// Fit makes the data small enough, as far as it can, without touching the designs kept: first designs that are not
-// shown in full lose the poses that decide none of the goals, the last of them first; then unmarked designs lose all maps
-// but one, then their detail, the last of them first. The page shows the command that brings it back.
+// Fit makes the data small enough, as far as it can, without touching the designs kept: first designs that are not on the
+// first screen lose their plans, which lie in the study folder too, the last of them first; then designs that are not
+// shown in full lose the poses that decide none of the goals; then unmarked designs lose all maps but one, then their detail.
+// The page shows the command that brings it back.
 func Fit(d *Data, bytes int, keep []string) {
 	designs := d.Designs
 	d.Designs = []Design{}
@@ -23,6 +24,12 @@ func Fit(d *Data, bytes int, keep []string) {
 		n := size(&designs[i]) + 1
 		total += n - sizes[i]
 		sizes[i] = n
+	}
+	first := func(i int) bool { return slices.ContainsFunc(d.First, func(f First) bool { return f.Design == i }) }
+	for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
+		if v := &designs[i]; v.Detail != nil && v.Detail.Handover != nil && !first(i) && !slices.Contains(keep, v.ID) {
+			shrink(i, func(v *Design) { v.Detail.Handover.Base, v.Detail.Handover.Platform = nil, nil })
+		}
 	}
 	for i := len(designs) - 1; i >= 0 && total > bytes; i-- {
 		if designs[i].Detail == nil {
