@@ -9,7 +9,7 @@ import (
 type Joint struct {
 	Plate string // "base" or "platform": what the force acts on
 	Leg   int    // 0-based, -1 for all legs together
-	Part  string // "joint", "hinge", "crank pivot", "carriage", "rod a", "rod b", "shaft", …
+	Part  string // "joint", "hinge", "crank pivot", "arm pivot", "carriage", "rod a", "rod b", "shaft", …
 
 	Moments bool // it also carries moments, about its own centre
 	One     bool // its force has one direction at each pose, along its leg: the largest is then exact
@@ -51,6 +51,8 @@ func newEquilibrium(f *kin.Family, m kin.Machine) *equilibrium {
 	switch {
 	case s.frame.Tied:
 		part, moments = "hinge", true
+	case f.Drive == kin.Rotary && s.twin:
+		part, moments = "arm pivot", true
 	case f.Drive == kin.Rotary:
 		part, moments = "crank pivot", true
 	case s.frame.Rails != nil:
@@ -80,7 +82,7 @@ func NotDetermined(f *kin.Family) []string {
 	case !legged(f):
 		return []string{"how links and couplers of the parallelograms share the force: the figures are those of sections through the whole arm"}
 	case f.Free > 0:
-		return []string{"the sideways forces of a leaning shaft's universal joints; of the shaft only the moment about z is given"}
+		return []string{"the sideways forces of a leaning shaft's universal joints: of the shaft only the moment about z is given"}
 	case !f.Has(kin.Z) && !f.Has(kin.Roll):
 		out := []string{"forces along z and moments about x and y, which joints and guides of the plane share: they are in the row of the whole base alone"}
 		if !f.Has(kin.Yaw) {

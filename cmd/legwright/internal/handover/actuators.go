@@ -19,27 +19,30 @@ func (d *design) actuators() *table {
 	}
 	t := d.sheet("actuator schedule", "leg", "range_least_"+c, "range_most_"+c, "stroke_"+c, "shortest_"+c, "home_"+c, "longest_"+c,
 		"used_"+c, "reserve_low_"+c, "reserve_high_"+c, names[0]+e, names[1]+e, "speed_"+r)
-	t.note("figures", "worst over home, the sampled poses of the duty and the worst poses found between them, not a proof; legs, arms and rods are massless, without friction, play and terms in ω²")
+	t.note("figures", "worst over home, the sampled poses of the duty and the worst poses found between them, not a proof. Legs, arms and rods are massless, without friction, play and terms in ω²")
 	t.note("reserve", "wanted free at each end of the stroke: "+number(d.task.Actuator.Reserve, coordinate)+" "+units.Display(coordinate).Symbol)
 	switch {
 	case f.Drive == kin.Rotary:
-		t.note("coordinate", "angle of the crank, counter-clockwise about its hinge (axis table); shortest is the least angle needed, longest the greatest; a positive torque acts with growing angle")
+		t.note("coordinate", "angle of the "+d.turning()+", counter-clockwise about its hinge (axis table). Shortest is the least angle needed, longest the greatest. A positive torque acts with growing angle")
 	case f.Rails:
-		t.note("coordinate", "distance of the carriage along its rail from the point where it is 0 (joint table); push acts on the carriage with growing coordinate")
+		t.note("coordinate", "distance of the carriage along its rail from the point where it is 0 (joint table). Push acts on the carriage with growing coordinate")
 	default:
-		t.note("coordinate", "distance between the leg's joint centres; push: the leg is in compression")
+		t.note("coordinate", "distance between the leg's joint centres. Push: the leg is in compression")
 	}
 	bounded := len(d.a.Legs) - f.Free
 	if f.Free > 0 {
 		t.note("range", "the last actuator turns the tool and has no range of this kind")
 	}
 	if f.Index("upper_arm") >= 0 {
-		t.note("range", "of the two links, by their own stops; the elbow's stops may bind first; column and tool turn within half a turn of home")
+		t.note("range", "of the two links, by their own stops. The elbow's stops may bind first. Column and tool turn within half a turn of home")
 	}
 	type worst struct{ least, most, push, pull, speed float64 }
 	w := worst{least: math.Inf(1), most: math.Inf(-1)}
 	line := func(name string, x worst, home string, leg int) {
 		low, high := d.rangeOf(leg)
+		if x.least > x.most { // neither home nor a pose of the duty is reached
+			x.least, x.most, home = math.NaN(), math.NaN(), ""
+		}
 		cells := []string{name, "", "", "", number(x.least, coordinate), home, number(x.most, coordinate), number(x.most-x.least, coordinate), "", "", figure(x.push, effort), figure(x.pull, effort), figure(x.speed, rate)}
 		if !math.IsNaN(low) {
 			cells[1], cells[2], cells[3] = number(low, coordinate), number(high, coordinate), number(high-low, coordinate)
@@ -59,6 +62,17 @@ func (d *design) actuators() *table {
 		line("all", w, "", 0)
 	}
 	return t
+}
+
+// turning is what a rotary actuator turns.
+func (d *design) turning() string {
+	switch f := d.a.Plan.Family; {
+	case f.Index("upper_arm") >= 0:
+		return "column, link or tool"
+	case f.Index("rod_spacing") >= 0:
+		return "arm"
+	}
+	return "crank"
 }
 
 // rangeOf is the range of a leg's actuator, NaN without one.

@@ -7,6 +7,8 @@ import (
 
 	"legwright/cmd/legwright/internal/units"
 	"legwright/objective"
+
+	"gonum.org/v1/gonum/spatial/r3"
 )
 
 var componentHeads = [6]string{"fx", "fy", "fz", "mx", "my", "mz"}
@@ -20,7 +22,7 @@ func componentUnit(k int) units.Kind {
 }
 
 // signs says what the forces are.
-const signs = "what the leg exerts on the plate, components along the axes of the base frame; moments about the joint's own centre, of joints that carry any; payload only: legs, arms and rods are massless, without friction, play and terms in ω²"
+const signs = "what the leg exerts on the plate, components along the axes of the base frame. Moments are about the joint's own centre, of joints that carry any. Payload only: legs, arms and rods are massless, without friction, play and terms in ω²"
 
 // loads computes the joint forces once.
 func (d *design) loads() []objective.CaseLoads {
@@ -41,11 +43,12 @@ func (d *design) forces() *table {
 	heads = append(heads, "resultant_N", "resultant_is")
 	t := d.sheet("joint forces, largest", slices.Concat(heads, thenHeads(), poseHeads)...)
 	t.note("forces", signs)
-	t.note("least and most", "of each component over the case's sets, the sampled poses in its zones and the worst poses found between them: exact at each pose, each load's sets taken independently; not simultaneous, and not a proof for all poses")
-	t.note("resultant", "largest size of the force (fx fy fz), with the components then and the pose about home; exact: the joint's force has one direction at a pose; found: it has not, a climb over the sets found this one")
+	t.note("least and most", "of each component over the case's sets, the sampled poses in its zones and the worst poses found between them: exact at each pose, each load's sets taken independently. They are not simultaneous, and not a proof for all poses")
+	t.note("resultant", "largest size of the force (fx fy fz), with the components then and the pose about home. Exact: the joint's force has one direction at a pose. Found: it has not, and a climb over the sets found this one")
 	d.open(t)
 	cases := d.loads()
 	for i := range cases {
+		zero := d.zero(&cases[i])
 		for k := range cases[i].Joints {
 			j := &cases[i].Joints[k]
 			cells := []string{d.caseName(&cases[i]), d.jointName(&j.Joint), j.Plate, text(j.Part)}
@@ -58,7 +61,7 @@ func (d *design) forces() *table {
 					cells = append(cells, "", "")
 					continue
 				}
-				cells = append(cells, figure(j.Least[q], componentUnit(q)), figure(j.Most[q], componentUnit(q)))
+				cells = append(cells, figure(zero.tidy(j.Least[q], q), componentUnit(q)), figure(zero.tidy(j.Most[q], q), componentUnit(q)))
 			}
 			is := "found"
 			switch {
@@ -68,7 +71,7 @@ func (d *design) forces() *table {
 				is = "exact"
 			}
 			cells = append(cells, figure(j.Largest, units.Force), is)
-			t.row(append(append(cells, components(&j.Then, j.Moments)...), d.pose(j.At)...)...)
+			t.row(append(append(cells, components(&j.Then, j.Moments, zero)...), d.pose(j.At)...)...)
 		}
 	}
 	return t
@@ -83,19 +86,43 @@ func thenHeads() (heads []string) {
 }
 
 // components are the six cells of a load.
-func components(load *[6]float64, moments bool) []string {
+func components(load *[6]float64, moments bool, zero noise) []string {
 	out := make([]string, 6)
 	for q, x := range load {
 		if q < 3 || moments {
-			out[q] = figure(tidy(x), componentUnit(q))
+			out[q] = figure(zero.tidy(x, q), componentUnit(q))
 		}
 	}
 	return out
 }
 
+// noise is what forces and moments may be by rounding alone.
+type noise struct{ force, moment float64 }
+
+// zero is the noise of a case: 1e-7 of its largest force, acting at the machine's size for moments. Where a platform is held
+// badly, forces lose that many digits.
+func (d *design) zero(c *objective.CaseLoads) noise {
+	most := 0.0
+	for i := range c.Joints {
+		for q := range 3 {
+			for _, x := range [2]float64{c.Joints[i].Least[q], c.Joints[i].Most[q]} {
+				if !math.IsInf(x, 0) {
+					most = math.Max(most, math.Abs(x))
+				}
+			}
+		}
+	}
+	fr := d.a.Machine.Frame()
+	return noise{1e-7 * most, 1e-7 * most * (r3.Norm(fr.Home) + fr.Length)}
+}
+
 // tidy makes what is zero but for rounding zero.
-func tidy(x float64) float64 {
-	if math.Abs(x) < 1e-9 {
+func (n noise) tidy(x float64, component int) float64 {
+	least := n.force
+	if component > 2 {
+		least = n.moment
+	}
+	if math.Abs(x) <= least {
 		return 0
 	}
 	return x
@@ -110,22 +137,37 @@ func (d *design) together() *table {
 	}
 	t := d.sheet("joint forces, together", append(heads, poseHeads...)...)
 	t.note("forces", signs)
-	t.note("moment", "of each case that at which the largest resultant of all joints acts; the last row of a case is what the legs exert on the platform together, moments about the tool point")
+	t.note("moment", "of each case that at which the largest resultant of all joints acts. The last row of a case is what the legs exert on the platform together, moments about the tool point")
 	d.open(t)
 	cases := d.loads()
 	for i := range cases {
 		c := &cases[i]
-		if c.Decides < 0 || math.IsInf(c.Joints[c.Decides].Largest, 0) {
+		if why := notTogether(c); why != "" {
+			t.note("left out", d.task.Cases[c.Case].Name+": "+why)
 			continue
 		}
+		zero := d.zero(c)
 		pose := d.pose(c.Joints[c.Decides].At)
 		for k := range c.Joints {
 			j := &c.Joints[k].Joint
-			t.row(append(append([]string{d.caseName(c), d.jointName(j), j.Plate, text(j.Part)}, components(&c.Together[k], j.Moments)...), pose...)...)
+			t.row(append(append([]string{d.caseName(c), d.jointName(j), j.Plate, text(j.Part)}, components(&c.Together[k], j.Moments, zero)...), pose...)...)
 		}
-		t.row(append(append([]string{d.caseName(c), "", onPlatform, "sum, about the tool point"}, components(&c.Wrench, true)...), pose...)...)
+		t.row(append(append([]string{d.caseName(c), "", onPlatform, "sum, about the tool point"}, components(&c.Wrench, true, zero)...), pose...)...)
 	}
 	return t
+}
+
+// notTogether is why a case has no forces that act at one moment, or "".
+func notTogether(c *objective.CaseLoads) string {
+	for i := range c.Joints {
+		if math.IsInf(c.Joints[i].Largest, 0) {
+			return "the legs cannot hold the platform at a pose of the case (joint forces, largest: singular)"
+		}
+	}
+	if c.Decides < 0 {
+		return "no pose of the case counts"
+	}
+	return ""
 }
 
 // open notes what the figures do not tell.

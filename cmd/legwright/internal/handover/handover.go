@@ -20,7 +20,7 @@ type Title struct {
 const (
 	unitsText  = "mm, degrees, N, N m, mm/s, rad/s"
 	statusText = "not for construction until checked"
-	datumText  = "base frame: origin at the centre of the base joints' circle (level-arm: on the column's axis at floor level), z from base to platform; platform frame: origin at the centre of the platform joints' circle, at home as the joint table gives it; angles counter-clockwise seen from +z"
+	datumText  = "base frame: origin at the centre of the base joints' circle (level-arm: on the column's axis at floor level), z from base to platform. Platform frame: origin at the centre of the platform joints' circle, at home as the joint table gives it. Angles counter-clockwise seen from +z"
 )
 
 // design is one design with what its sheets say.

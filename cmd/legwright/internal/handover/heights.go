@@ -11,7 +11,7 @@ import (
 // heights is the table of how high the platform stands.
 func (d *design) heights() *table {
 	t := d.sheet("heights of the platform", append([]string{"what", "height_mm", "remark"}, poseHeads...)...)
-	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top; over the sampled poses of the duty and the worst poses found between them, not a proof")
+	t.note("heights", "along z of the base frame, above the base origin, of joint centres and the platform's origin: plates, motors and payload come on top. They are over the sampled poses of the duty and the worst poses found between them, not a proof")
 	if f := d.a.Plan.Family; !f.Has(kin.Z) {
 		t.note("plane", "the platform moves in its plane alone")
 	}
@@ -43,9 +43,9 @@ func (d *design) heights() *table {
 	case c == nil:
 		put(collapsed, math.NaN(), "not known: "+notKnown(&h), nil)
 	case h.Ends[0].Fails != "" || h.Ends[1].Fails != "":
-		put(collapsed, c.Height, "the end that is known, below the lowest over the duty; "+endRemark(c), nil)
+		put(collapsed, c.Height, "the end that is known, below the lowest over the duty, "+endRemark(c), nil)
 	default:
-		put(collapsed, c.Height, "the lower of these two; "+endRemark(c), nil)
+		put(collapsed, c.Height, "the lower of these two, "+endRemark(c), nil)
 	}
 	return t
 }

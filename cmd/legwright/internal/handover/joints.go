@@ -14,10 +14,10 @@ func (d *design) joints() *table {
 		"base_frame_x_mm", "base_frame_y_mm", "base_frame_z_mm", "platform_frame_x_mm", "platform_frame_y_mm", "platform_frame_z_mm")
 	roll, pitch, yaw := d.plan.rot.RPY()
 	o := d.plan.origin
-	t.note("platform frame at home", "origin at "+number(o.X, units.Length)+", "+number(o.Y, units.Length)+", "+number(o.Z, units.Length)+
-		" mm in the base frame, turned by roll "+number(roll, units.Angle)+", pitch "+number(pitch, units.Angle)+", yaw "+number(yaw, units.Angle)+" deg (Rz Ry Rx)")
+	t.note("platform frame at home", "origin at "+exact(o.X, units.Length)+", "+exact(o.Y, units.Length)+", "+exact(o.Z, units.Length)+
+		" mm in the base frame, turned by roll "+exact(roll, units.Angle)+", pitch "+exact(pitch, units.Angle)+", yaw "+exact(yaw, units.Angle)+" deg (Rz Ry Rx)")
 	if !d.plan.home {
-		t.note("home", "the machine does not reach home: crank ends, carriages and lengths there are left out")
+		t.note("home", "the machine does not reach home: ends of cranks or arms, carriages and lengths there are left out")
 	}
 	for _, p := range d.plan.points {
 		cells := append([]string{p.name, p.plate, legName(p.leg), text(p.what)}, vector(p.base)...)
@@ -31,15 +31,17 @@ func (d *design) joints() *table {
 
 // vector is the three cells of a point.
 func vector(v kin.Vec) []string {
-	return []string{number(v.X, units.Length), number(v.Y, units.Length), number(v.Z, units.Length)}
+	return []string{exact(v.X, units.Length), exact(v.Y, units.Length), exact(v.Z, units.Length)}
 }
 
 // axes is the table of directions: hinges, mounting axes, rails.
 func (d *design) axes() *table {
 	t := d.sheet("axes of joints at home", "point", "axis", "frame", "x", "y", "z", "azimuth_deg", "elevation_deg",
 		"base_frame_x", "base_frame_y", "base_frame_z", "base_frame_azimuth_deg", "base_frame_elevation_deg")
-	t.note("axes", "unit vectors in the frame of the plate; azimuth from +x in the plate's x-y plane, counter-clockwise seen from +z, elevation from that plane towards +z; swing is measured from mounting axes, a hinge is what a part turns about")
-	t.note("with a crank", "the mounting axis at the crank's end turns with the crank and is given for the machine at home")
+	t.note("axes", "unit vectors in the frame of the plate. Azimuth from +x in the plate's x-y plane, counter-clockwise seen from +z, elevation from that plane towards +z. Swing is measured from mounting axes, a hinge is what a part turns about")
+	if fr := d.a.Machine.Frame(); fr.Rods != nil && fr.Rails == nil && d.a.Plan.Family.Has(kin.Roll) {
+		t.note("with a crank", "the mounting axis at the crank's end turns with the crank and is given for the machine at home")
+	}
 	for _, a := range d.plan.axes {
 		cells := append([]string{a.point, text(a.what), a.frame}, direction(a.dir)...)
 		t.row(append(cells, direction(a.base)...)...)
@@ -49,8 +51,8 @@ func (d *design) axes() *table {
 
 // direction is the five cells of a unit vector. A vertical one has the azimuth 0.
 func direction(v kin.Vec) []string {
-	return []string{decimals(v.X, 12), decimals(v.Y, 12), decimals(v.Z, 12),
-		number(azimuth(v.X, v.Y), units.Angle), number(math.Atan2(v.Z, math.Hypot(v.X, v.Y)), units.Angle)}
+	return []string{decimals(v.X, 9), decimals(v.Y, 9), decimals(v.Z, 9),
+		exact(azimuth(v.X, v.Y), units.Angle), exact(math.Atan2(v.Z, math.Hypot(v.X, v.Y)), units.Angle)}
 }
 
 // azimuth is the angle of a place or direction in plan, from 0 to below 2π; 0 on the axis.
@@ -72,7 +74,7 @@ func azimuth(x, y float64) float64 {
 func (d *design) links() *table {
 	t := d.sheet("lengths between joint centres", "leg", "what", "from", "to", "length_mm")
 	for _, l := range d.plan.links {
-		t.row(legName(l.leg), text(l.what), l.from, l.to, number(l.length, units.Length))
+		t.row(legName(l.leg), text(l.what), l.from, l.to, exact(l.length, units.Length))
 	}
 	return t
 }
@@ -80,7 +82,7 @@ func (d *design) links() *table {
 // holes is the hole table.
 func (d *design) holes() *table {
 	t := d.sheet("hole table", "hole", "plate", "x_mm", "y_mm", "z_mm", "radius_mm", "angle_deg", "diameter_mm", "for")
-	t.note("holes", "joint centres, projected along z onto the plate; base holes in the base frame, platform holes in the platform frame; the joints' own bolt patterns and the diameters are to be chosen with the joints")
+	t.note("holes", "joint centres, projected along z onto the plate. Base holes in the base frame, platform holes in the platform frame. The joints' own bolt patterns and the diameters are to be chosen with the joints")
 	for _, p := range d.plan.points {
 		if !p.hole {
 			continue
@@ -90,7 +92,7 @@ func (d *design) holes() *table {
 			v = p.own
 		}
 		t.row(append(append([]string{p.name, p.plate}, vector(v)...),
-			number(math.Hypot(v.X, v.Y), units.Length), number(azimuth(v.X, v.Y), units.Angle), "to be chosen", text(p.what))...)
+			exact(math.Hypot(v.X, v.Y), units.Length), exact(azimuth(v.X, v.Y), units.Angle), "to be chosen", text(p.what))...)
 	}
 	return t
 }

@@ -26,7 +26,7 @@ func place(t *testing.T, row map[string]string, frame string) kin.Vec {
 
 // The joint table has the machine's joints: base ones as they are, platform ones in their own frame, and in the base frame
 // at home, where the link table's distances lie between them. Crank ends and carriages are as far as the
-// machine's own coordinates at home put them. Tables are written to 1e-9 mm.
+// machine's own coordinates at home put them. Tables are written to 1e-6 mm.
 func TestJointsAndLinks(t *testing.T) {
 	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
 		fr := d.a.Machine.Frame()
@@ -37,7 +37,7 @@ func TestJointsAndLinks(t *testing.T) {
 			if row["plate"] == onPlatform {
 				own := r3.Scale(1e-3, place(t, row, "platform_frame"))
 				home := r3.Scale(1000, r3.Add(fr.Home, fr.HomeRot.Apply(own)))
-				near(t, row["point"]+" at home", r3.Norm(r3.Sub(at[row["point"]], home)), 0, 3e-9)
+				near(t, row["point"]+" at home", r3.Norm(r3.Sub(at[row["point"]], home)), 0, 2e-6)
 			}
 		}
 		if d.a.Plan.Family.Name != "level-arm" {
@@ -47,11 +47,11 @@ func TestJointsAndLinks(t *testing.T) {
 			ends := kin.Ends(d.a.Machine, s.Q[:fr.Legs()])
 			for i := range fr.Legs() {
 				n := legName(i)
-				near(t, "B"+n, r3.Norm(r3.Sub(at["B"+n], r3.Scale(1000, fr.Base[i]))), 0, 3e-9)
+				near(t, "B"+n, r3.Norm(r3.Sub(at["B"+n], r3.Scale(1000, fr.Base[i]))), 0, 1e-6)
 				p := r3.Scale(1000, r3.Add(fr.Home, fr.HomeRot.Apply(fr.Platform[i])))
-				near(t, "P"+n, r3.Norm(r3.Sub(at["P"+n], p)), 0, 3e-9)
+				near(t, "P"+n, r3.Norm(r3.Sub(at["P"+n], p)), 0, 1e-6)
 				if k, ok := at["K"+n]; ok {
-					near(t, "K"+n, r3.Norm(r3.Sub(k, r3.Scale(1000, ends[i]))), 0, 3e-9)
+					near(t, "K"+n, r3.Norm(r3.Sub(k, r3.Scale(1000, ends[i]))), 0, 1e-6)
 				} else if fr.Rods != nil && i < d.legs() {
 					t.Errorf("K%s is missing", n)
 				}
@@ -67,7 +67,7 @@ func TestJointsAndLinks(t *testing.T) {
 			case strings.HasPrefix(row["what"], "wrist_offset"), strings.HasPrefix(row["what"], "base_offset"):
 				want = math.Hypot(to.X-from.X, to.Y-from.Y)
 			}
-			near(t, row["what"], math.Abs(cell(t, row, "length_mm")), want, 1e-8)
+			near(t, row["what"], math.Abs(cell(t, row, "length_mm")), want, 3e-6)
 		}
 		if len(links) < d.legs() {
 			t.Errorf("%d links", len(links))
@@ -75,7 +75,8 @@ func TestJointsAndLinks(t *testing.T) {
 	})
 }
 
-// Axes are unit vectors, their angles are theirs, and those of platforms are turned to base axes. 1e-9.
+// Axes are unit vectors, their angles are theirs, and those of platforms are turned to base axes. Directions are written
+// to 1e-9, angles to 1e-6°.
 func TestAxes(t *testing.T) {
 	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
 		_, _, rows := read(t, files["axes.csv"])
@@ -85,11 +86,11 @@ func TestAxes(t *testing.T) {
 				near(t, "length", r3.Norm(v), 1, 1e-9)
 				sin, cos := math.Sincos(cell(t, row, frame+"azimuth_deg") * math.Pi / 180)
 				up, level := math.Sincos(cell(t, row, frame+"elevation_deg") * math.Pi / 180)
-				near(t, "azimuth and elevation", r3.Norm(r3.Sub(v, kin.Vec{X: level * cos, Y: level * sin, Z: up})), 0, 1e-9)
+				near(t, "azimuth and elevation", r3.Norm(r3.Sub(v, kin.Vec{X: level * cos, Y: level * sin, Z: up})), 0, 2e-8)
 				if row["frame"] == onPlatform && frame == "" {
 					w := d.a.Machine.Frame().HomeRot.Apply(v)
-					near(t, "in base axes", w.X, cell(t, row, "base_frame_x"), 1e-9)
-					near(t, "in base axes", w.Y, cell(t, row, "base_frame_y"), 1e-9)
+					near(t, "in base axes", w.X, cell(t, row, "base_frame_x"), 2e-9)
+					near(t, "in base axes", w.Y, cell(t, row, "base_frame_y"), 2e-9)
 				}
 			}
 		}
@@ -99,7 +100,8 @@ func TestAxes(t *testing.T) {
 	})
 }
 
-// A hole has the radius and the angle of its place; each hole's number is that of a point of the joint table.
+// A hole has the radius and the angle of its place; each hole's number is that of a point of the joint table. Angles are written to
+// 1e-6°, which is 2e-8 of the radius.
 func TestHoles(t *testing.T) {
 	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
 		_, _, joints := read(t, files["joints.csv"])
@@ -107,8 +109,8 @@ func TestHoles(t *testing.T) {
 		for _, h := range holes {
 			x, y := cell(t, h, "x_mm"), cell(t, h, "y_mm")
 			sin, cos := math.Sincos(cell(t, h, "angle_deg") * math.Pi / 180)
-			near(t, "x", cell(t, h, "radius_mm")*cos, x, 1e-8)
-			near(t, "y", cell(t, h, "radius_mm")*sin, y, 1e-8)
+			near(t, "x", cell(t, h, "radius_mm")*cos, x, 2e-5)
+			near(t, "y", cell(t, h, "radius_mm")*sin, y, 2e-5)
 			found := false
 			for _, j := range joints {
 				frame := "base_frame"

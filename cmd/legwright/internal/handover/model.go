@@ -85,7 +85,7 @@ func newModel(a *objective.Appraisal) model {
 }
 
 // words are what a family's joints are called.
-type words struct{ base, drive, platform string }
+type words struct{ base, drive, platform, link string }
 
 func wordsOf(f *kin.Family, fr *kin.Frame) words {
 	planar := !f.Has(kin.Z) && !f.Has(kin.Roll)
@@ -99,13 +99,13 @@ func wordsOf(f *kin.Family, fr *kin.Frame) words {
 	case f.Index("rod_spacing") >= 0 && fr.Rails != nil:
 		return words{base: "rail, coordinate 0", drive: "carriage at home", platform: "middle between the two rods"}
 	case f.Index("rod_spacing") >= 0:
-		return words{base: "arm pivot (revolute)", drive: "knee at home", platform: "middle between the two rods"}
+		return words{base: "arm pivot (revolute)", drive: "knee at home", platform: "middle between the two rods", link: "arm"}
 	case fr.Rails != nil:
 		return words{base: "rail, coordinate 0", drive: "carriage at home, universal joint", platform: "spherical joint"}
 	case planar:
-		return words{base: "crank pivot (revolute)", drive: "elbow at home, revolute joint", platform: "revolute joint"}
+		return words{base: "crank pivot (revolute)", drive: "elbow at home, revolute joint", platform: "revolute joint", link: "crank"}
 	}
-	return words{base: "crank pivot (revolute)", drive: "crank end at home, universal joint", platform: "spherical joint"}
+	return words{base: "crank pivot (revolute)", drive: "crank end at home, universal joint", platform: "spherical joint", link: "crank"}
 }
 
 // leg adds the points, axes and links of one leg.
@@ -125,7 +125,7 @@ func (m *model) leg(i int, fr *kin.Frame, s *kin.State, mt *kin.Mounting, w *wor
 		start = k
 		m.points = append(m.points, point{name: k, plate: onDrive, leg: i, what: w.drive, base: s.End[i]})
 		if fr.Rails == nil {
-			m.links = append(m.links, link{i, "crank", b, k, r3.Norm(r3.Sub(s.End[i], fr.Base[i]))})
+			m.links = append(m.links, link{i, w.link, b, k, r3.Norm(r3.Sub(s.End[i], fr.Base[i]))})
 		} else {
 			m.links = append(m.links, link{i, "carriage's coordinate at home", b, k, s.Q[i]})
 		}

@@ -13,7 +13,7 @@ type plan struct {
 	holes  []mark    // numbered on the drawing and in its table
 	ring   []mark    // the joint centres of the legs, on a common circle or not
 	radius float64   // of that circle, 0 for none
-	lines  [][2]mark // cranks, rails and the short sides of parallelograms
+	lines  [][2]mark // cranks, arms, rails and the short sides of parallelograms
 	hinges []axis
 	ends   [2]drawing.Point // of the axes x and y
 }
@@ -58,7 +58,7 @@ func (d *design) basePlan() *drawing.Drawing {
 	what := ""
 	for _, l := range d.plan.links {
 		switch l.what {
-		case "crank", "upper arm", "forearm":
+		case "crank", "arm", "upper arm", "forearm":
 			if from, to := at[l.from], at[l.to]; from.name != "" && to.name != "" {
 				p.lines, what = append(p.lines, [2]mark{from, to}), "Lines from the joints: cranks or arms at home."
 			}
@@ -104,7 +104,11 @@ func (d *design) platformPlan() *drawing.Drawing {
 			p.lines = append(p.lines, [2]mark{a, b})
 		}
 	}
-	d.draw(p, "Platform plan", "platform origin O", 60, []string{"Platform frame, seen from +z (the joints lie on the side away from the viewer where the platform is above the base)."})
+	note := "Platform frame, seen from +z (the joints lie on the side away from the viewer where the platform is above the base)."
+	if f := d.a.Plan.Family; !f.Has(kin.Z) && !f.Has(kin.Roll) {
+		note = "Platform frame, seen from +z."
+	}
+	d.draw(p, "Platform plan", "platform origin O", 60, []string{note})
 	return p.Drawing
 }
 

@@ -97,20 +97,27 @@ func text(s string) string {
 	return s
 }
 
-// number is a value in the unit of its column, to 1e-9 of it.
+// number is a length to 1e-4 mm or an angle to 1e-6 deg.
 func number(si float64, k units.Kind) string {
-	return decimals(units.Display(k).From(si), 9)
+	if k == units.Length {
+		return decimals(units.Display(k).From(si), 4)
+	}
+	return exact(si, k)
 }
 
-// decimals is a number with at most so many decimals; nothing for NaN, inf or -inf for infinite ones.
+// exact is a value that others are derived from, joint centres foremost: to 1e-6 of its unit.
+func exact(si float64, k units.Kind) string { return decimals(units.Display(k).From(si), 6) }
+
+// unbounded stands for what is infinite. It is a word, as a spreadsheet would take -inf for a formula.
+const unbounded = "unbounded"
+
+// decimals is a number with at most so many decimals; nothing for NaN.
 func decimals(v float64, most int) string {
 	switch {
 	case math.IsNaN(v):
 		return ""
-	case math.IsInf(v, 1):
-		return "inf"
-	case math.IsInf(v, -1):
-		return "-inf"
+	case math.IsInf(v, 0):
+		return unbounded
 	}
 	s := strconv.FormatFloat(v, 'f', most, 64)
 	if strings.Contains(s, ".") {
@@ -122,12 +129,12 @@ func decimals(v float64, most int) string {
 	return s
 }
 
-// figure is a force, moment, speed or the like: nine significant digits.
+// figure is a force, moment, speed or the like: six significant digits.
 func figure(si float64, k units.Kind) string {
 	if math.IsInf(si, 0) || math.IsNaN(si) {
 		return decimals(si, 0)
 	}
-	return units.Digits(units.Display(k).From(si), 9)
+	return units.Digits(units.Display(k).From(si), 6)
 }
 
 // pose is the six cells of a pose about home, and its zone.

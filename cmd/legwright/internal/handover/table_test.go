@@ -7,6 +7,7 @@ import (
 	"os"
 	"os/exec"
 	"path/filepath"
+	"regexp"
 	"slices"
 	"strconv"
 	"strings"
@@ -133,6 +134,71 @@ func TestNoCellIsAFormula(t *testing.T) {
 							}
 						}
 					}
+				}
+			}
+		}
+	})
+}
+
+// No text of the sheets' own has a semicolon, which would become a comma. The caution is one that other outputs have too.
+func TestNotesHaveNoSemicolons(t *testing.T) {
+	everyFamily(t, func(t *testing.T, d *design, _ map[string][]byte) {
+		own := *d
+		own.title = Title{Program: "p", Design: "d", Brief: "b", Hash: "h"}
+		for _, s := range []*table{own.joints(), own.axes(), own.links(), own.holes(), own.actuators(), own.forces(), own.together(), own.heights()} {
+			for _, r := range slices.Concat(s.block, s.notes) {
+				if r[0] != "caution" && strings.Contains(r[1], ";") {
+					t.Errorf("%s: %s", r[0], r[1])
+				}
+			}
+		}
+	})
+}
+
+// Every cell of a column of numbers is one, or empty, or says that there is no bound or that it is to be chosen.
+func TestCellsOfNumbers(t *testing.T) {
+	plain := regexp.MustCompile(`^(-?[0-9]+(\.[0-9]+)?(e[-+][0-9]+)?|unbounded|to be chosen|)$`)
+	column := regexp.MustCompile(`_(mm|deg|N|Nm|mm_s|rad_s|x|y|z)$|^[xyz]$`)
+	everyFamily(t, func(t *testing.T, _ *design, files map[string][]byte) {
+		for name, b := range files {
+			if filepath.Ext(name) != ".csv" {
+				continue
+			}
+			_, heads, rows := read(t, b)
+			seen := 0
+			for _, row := range rows {
+				for _, h := range heads {
+					if !column.MatchString(h) {
+						continue
+					}
+					seen++
+					if !plain.MatchString(row[h]) {
+						t.Errorf("%s: %s is %q", name, h, row[h])
+					}
+				}
+			}
+			if seen == 0 {
+				t.Errorf("%s has no columns of numbers: %v", name, heads)
+			}
+		}
+	})
+}
+
+// One family calls the same part by one word in all its sheets.
+func TestOneWordForAPart(t *testing.T) {
+	everyFamily(t, func(t *testing.T, d *design, files map[string][]byte) {
+		other := "arm"
+		if strings.HasPrefix(d.a.Plan.Family.Name, "delta") {
+			other = "crank"
+		} else if d.a.Plan.Family.Name == "level-arm" {
+			return
+		}
+		word := regexp.MustCompile(`(?i)\b` + other + `s?\b`)
+		for _, name := range []string{"joints.csv", "links.csv", "forces.csv", "forces-together.csv"} {
+			_, _, rows := read(t, files[name])
+			for _, row := range rows {
+				if s := row["what"] + " " + row["part"]; word.MatchString(s) {
+					t.Errorf("%s: %q", name, s)
 				}
 			}
 		}
