@@ -91,7 +91,7 @@ func TestScreenAgreesOnLimits(t *testing.T) {
 		seen := map[bool]int{}
 		rounds := 60
 		if testing.Short() {
-			rounds = 12
+			rounds = 5
 		}
 		for k := range rounds {
 			task := richTask(rng, f)

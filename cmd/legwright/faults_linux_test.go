@@ -43,6 +43,9 @@ func exit(t *testing.T, cmd *exec.Cmd) int {
 // A search whose disk is full goes on, says so, writes no half file and ends with an error; once there is
 // room, it goes on from its checkpoint to the files of a search that always had room.
 func TestFullDisk(t *testing.T) {
+	if testing.Short() {
+		t.Skip("searches for some seconds")
+	}
 	root := t.TempDir()
 	roomy, small := filepath.Join(root, "roomy"), filepath.Join(root, "small")
 	os.Mkdir(roomy, 0o777)

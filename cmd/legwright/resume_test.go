@@ -70,7 +70,7 @@ func tree(t *testing.T, dir string) map[string]string {
 func TestKilledSearchGoesOn(t *testing.T) {
 	kills, evaluations := 50, "20000"
 	if testing.Short() {
-		kills, evaluations = 4, "4000"
+		kills, evaluations = 2, "2000"
 	}
 	root := t.TempDir()
 	whole, cut := filepath.Join(root, "whole"), filepath.Join(root, "cut")
@@ -179,6 +179,9 @@ func sameFiles(t *testing.T, got, want map[string]string) {
 // A damaged checkpoint is gone on with as far as it is whole, and says what was lost; every damage ends
 // with the files of a search that was left alone.
 func TestDamagedCheckpoint(t *testing.T) {
+	if testing.Short() {
+		t.Skip("searches for some seconds")
+	}
 	root := t.TempDir()
 	if err := os.WriteFile(filepath.Join(root, "stage.yaml"), []byte(resumeBrief), 0o666); err != nil {
 		t.Fatal(err)

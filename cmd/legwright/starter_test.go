@@ -12,9 +12,9 @@ import (
 // The starter brief of every family runs as it is and finds feasible designs within
 // 600 evaluations; the design files that it leaves are read back and hold.
 func TestStarterFindsDesigns(t *testing.T) {
-	for i, f := range kin.Families() {
+	for _, f := range kin.Families() {
 		t.Run(f.Name, func(t *testing.T) {
-			if testing.Short() && i > 0 {
+			if testing.Short() && f.Name != "five-bar" {
 				t.Skip("one family is enough for short runs")
 			}
 			t.Chdir(t.TempDir())
