@@ -29,7 +29,9 @@ type Verdict struct {
 	Margin  float64 // relative to the bound; negative where it does not hold
 }
 
-// Leg is what one leg must do, over the required poses that count (Task.Coverage), and home for the coordinates.
+// Leg is what one leg must do, over the required poses that count (Task.Coverage), and home for the coordinates. These, Push
+// and Pull are searched between the samples for every leg; Speed and the swings only for the leg that is worst, of the
+// others they are those of the samples and of the poses found for anything else.
 type Leg struct {
 	Least, Home, Most        float64 // actuator coordinate
 	LeastAt, MostAt          *Sample // nil for home
@@ -113,7 +115,7 @@ next:
 // Appraise judges a design completely. values holds every dimension; those that
 // the plan derives from the duty are overwritten. Excursions are left to Excurse.
 // Worst values over boxes, ellipsoids and single excursions are driven beyond the sampled poses (see Refiner), but not
-// where a sampled pose fails, nor in a task in which poses may fail. Coverage and means are over the samples.
+// where a sampled pose fails, nor in a task in which poses may fail. So are the push and the pull of every leg. Coverage and means are over the samples.
 // It costs some microseconds per pose and some milliseconds for the refinement.
 func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 	a := &Appraisal{Plan: p, Values: append([]float64(nil), values...), Poses: len(t.samples)}
@@ -132,6 +134,9 @@ func Appraise(t *Task, p *Plan, values []float64) *Appraisal {
 			ts = append(ts, tracker{m: m})
 			need |= m.Need
 		}
+	}
+	if t.refined() {
+		ts = append(ts, ownEfforts(v.n)...)
 	}
 	for i := range ts {
 		ts[i].reset()

@@ -13,11 +13,17 @@ func (r *Refiner) extend(ts []tracker) bool {
 	if !r.stretch() {
 		return false
 	}
+	try := r.try
 	for i := range ts {
+		r.try = try
+		if ts[i].own {
+			r.try = quick()
+		}
 		if !r.worsen(ts, i) {
 			return false
 		}
 	}
+	r.try = try
 	return true
 }
 
@@ -42,7 +48,8 @@ func (r *Refiner) prepare(ts []tracker) {
 	for k := range t.samples {
 		s := &t.samples[k]
 		z := &t.Zones[s.Zone]
-		if !z.refinable() || k >= t.scouts && z.Kind != Axes && !r.known(ts, k) {
+		all := k < t.scouts || z.Kind == Axes || r.known(ts, k)
+		if !z.refinable() || !all && !r.knownToOwn(ts, k) {
 			continue
 		}
 		r.here = *s
@@ -51,29 +58,41 @@ func (r *Refiner) prepare(ts []tracker) {
 		}
 		by := r.rankings(s.Zone)
 		for i := range ts {
-			if m := ts[i].m; m.perPose() {
+			if m := ts[i].m; m.perPose() && (all || ts[i].own) {
 				if bad, ok := r.scan(m); ok {
 					by[i].enter(bad, k)
 				}
 			}
 		}
 		legs := by[len(ts):]
-		for i := range v.n {
+		for i := 0; i < v.n && all; i++ {
 			legs[2*i].enter(-v.S.Q[i], k)
 			legs[2*i+1].enter(v.S.Q[i], k)
 		}
 	}
 }
 
-// known tells whether the walk has found the sample to be the worst of anything.
+// known tells whether the walk has found the sample to be the worst of anything that concerns all legs, or an extreme
+// coordinate.
 func (r *Refiner) known(ts []tracker, sample int) bool {
 	for i := range ts {
-		if ts[i].w.Pose == sample {
+		if ts[i].w.Pose == sample && !ts[i].own {
 			return true
 		}
 	}
 	for i := range r.v.n {
 		if r.v.leastAt[i] == sample || r.v.mostAt[i] == sample {
+			return true
+		}
+	}
+	return false
+}
+
+// knownToOwn tells whether the sample is the worst of what concerns one leg. It is a start for that alone, so that what
+// is found of all legs is what a search finds, which does not ask for single ones.
+func (r *Refiner) knownToOwn(ts []tracker, sample int) bool {
+	for i := range ts {
+		if ts[i].own && ts[i].w.Pose == sample {
 			return true
 		}
 	}

@@ -163,7 +163,8 @@ func inf() float64 { return math.Inf(1) }
 type tracker struct {
 	m    *Measure
 	w    Worst
-	spot // where the worst value lies, if not at a sample
+	own  bool // of one leg: what is known of all together is searched for thoroughly, this in short
+	spot      // where the worst value lies, if not at a sample
 }
 
 func (t *tracker) reset() {

@@ -19,7 +19,11 @@ func (d *design) actuators() *table {
 	}
 	t := d.sheet("actuator schedule", "leg", "range_least_"+c, "range_most_"+c, "stroke_"+c, "shortest_"+c, "home_"+c, "longest_"+c,
 		"used_"+c, "reserve_low_"+c, "reserve_high_"+c, names[0]+e, names[1]+e, "speed_"+r)
-	t.note("figures", "worst over home, the sampled poses of the duty and the worst poses found between them, not a proof. Legs, arms and rods are massless, without friction, play and terms in ω²")
+	searched := " Between the samples every leg's coordinates and efforts are searched for, of speeds only the largest of all legs."
+	if d.task.Coverage < 1 || d.task.CoverageGoal {
+		searched = ""
+	}
+	t.note("figures", "worst over home, the sampled poses of the duty and the worst poses found between them, not a proof."+searched+" Legs, arms and rods are massless, without friction, play and terms in ω²")
 	t.note("reserve", "wanted free at each end of the stroke: "+number(d.task.Actuator.Reserve, coordinate)+" "+units.Display(coordinate).Symbol)
 	switch {
 	case f.Drive == kin.Rotary:
