@@ -39,6 +39,9 @@ func (a *Appraisal) notes(t *Task, l *poseLimits) {
 			}
 		}
 	}
+	if text := a.oddStroke(t); text != "" {
+		note("stroke %s is not one of the stock strokes", text)
+	}
 	for c := range t.Cases {
 		if leg, left, effort := a.spinning(&t.Cases[c], c, t, l); left > 0.05*effort {
 			unit := "N"
@@ -49,6 +52,24 @@ func (a *Appraisal) notes(t *Task, l *poseLimits) {
 				t.Cases[c].Name, left, unit, leg+1, effort, unit)
 		}
 	}
+}
+
+// oddStroke writes the design's stroke where it is given rather than sized and none of the stock strokes, else "".
+func (a *Appraisal) oddStroke(t *Task) string {
+	p := a.Plan
+	if len(t.Actuator.Strokes) == 0 || p.span < 0 || p.Specs[p.span].Kind == Sized {
+		return ""
+	}
+	stroke := a.Values[p.span]
+	for _, s := range t.Actuator.Strokes {
+		if math.Abs(stroke-s) <= Tolerance*s {
+			return ""
+		}
+	}
+	if p.Family.Drive == kin.Rotary {
+		return fmt.Sprintf("%.5g°", stroke*180/math.Pi)
+	}
+	return fmt.Sprintf("%.5g mm", 1000*stroke)
 }
 
 // poseText writes the coordinates of a pose that are not 0.

@@ -121,3 +121,37 @@ func TestNoteOnSpinningInThePlane(t *testing.T) {
 		t.Error("a note on turning about x and y")
 	}
 }
+
+// A stroke that is given and none of the stock strokes is noted; one of them, or one that the duty sizes, is not.
+func TestNoteOnAnOddStroke(t *testing.T) {
+	f := kin.FamilyNamed("6-UPS")
+	_, span := f.Range()
+	for _, c := range []struct {
+		stroke float64
+		sized  bool
+		want   string
+	}{
+		{0.7123, false, "stroke 712.3 mm is not one of the stock strokes"},
+		{0.8, false, ""}, {1.2, false, ""},
+		{0.7123, true, ""},
+	} {
+		task := atHome()
+		task.Actuator.Strokes = []float64{0.4, 0.8, 1.2}
+		task.Prepare()
+		d := soundDesign(f)
+		d[span] = c.stroke
+		p := fixedRange(task, f, d)
+		if c.sized {
+			p = sizedPlan(task, f, d)
+		}
+		got := ""
+		for _, n := range Appraise(task, p, d).Notes {
+			if strings.Contains(n, "stock") {
+				got = n
+			}
+		}
+		if got != c.want {
+			t.Errorf("stroke %g, sized %v: note %q, want %q", c.stroke, c.sized, got, c.want)
+		}
+	}
+}
