@@ -6,10 +6,10 @@ import (
 	"legwright/kin"
 )
 
-// JointLoad is what one joint exerts on its plate in one case, over the sampled poses that count
-// (Task.Coverage) in the case's zones, and the poses that decide the appraisal's worst values: three forces (N) and three moments about the joint's centre (N m), base
-// axes. Least and Most are exact at each pose, for each load's sets taken independently. They are infinite where
-// a pose is singular.
+// JointLoad is what one joint exerts on its plate in one case, over the sampled poses that count (Task.Coverage) in the
+// case's zones, and the poses that decide the appraisal's worst values: three forces (N) and three moments about the
+// joint's centre (N m), base axes. Least and Most are exact at each pose, for each load's sets taken independently. They are
+// infinite where a pose is singular.
 type JointLoad struct {
 	Joint
 	Least, Most [6]float64
