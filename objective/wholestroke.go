@@ -32,7 +32,7 @@ type WholeStroke struct {
 
 // The rule of following a platform by its actuators.
 const (
-	strokeStep  = 1.0 / 48 // of a way, at most
+	strokeStep  = 1.0 / 48 // of a way, at most; reports name it
 	strokeLeast = 1e-10    // of a way: where a shorter step would be needed, the way ends
 	strokeCuts  = 8        // Newton steps
 	strokeExact = 1e-12    // of the largest coordinate
@@ -44,8 +44,8 @@ const (
 // home is singular. Each way is followed from home by continuation: a step along the tangent, corrected by Newton's method
 // on the actuator coordinates (E. L. Allgower and K. Georg 1990, Numerical Continuation Methods, from memory), in the working
 // mode of home, and ends where the next step, however short, meets a singularity: there the platform could go either
-// way. Singular means that the determinant changes its sign or that 1/kappa falls below Task.Singular. Worst values are those of at
-// least 48 poses on each way. Actuators without a range (kin.Family.Free) stay at home. It costs some milliseconds.
+// way. Singular means that the determinant changes its sign or that 1/kappa falls below Task.Singular. Worst values are those of poses
+// at most 1/48 of a way apart, as far as each way goes. Actuators without a range (kin.Family.Free) stay at home. It costs some milliseconds.
 func Strokes(t *Task, p *Plan, values []float64) (*WholeStroke, bool) {
 	m := p.build(t, values)
 	v := newView(t)

@@ -50,7 +50,7 @@ func (s *sheet) wholeStroke(d *study.Design) {
 	default:
 		s.say(fmt.Sprintf("Parked, all actuators at their shortest, is not reached from home: the way ends after %.3g %%, %s.", 100*float64(p.Share), stopped(p.Stops)))
 	}
-	s.say("Other ways, on which actuators do not start and arrive together, are not looked at.")
+	s.say("Each way is followed in steps of 1/48 of it or less, and worst values are those of these poses. Other ways, on which actuators do not start and arrive together, are not looked at.")
 	s.gap()
 }
 
