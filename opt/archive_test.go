@@ -73,10 +73,10 @@ func sphere(r *rand.Rand, n, m int) [][]float64 {
 // thousandth at most.
 func TestArchiveLimitLosesNothingThatShows(t *testing.T) {
 	r := rand.New(rand.NewPCG(2, 2))
-	for _, m := range []int{2, 3} {
+	for _, m := range []int{2, 3, 4} {
 		pts := sphere(r, 6000, m)
 		ref := slices.Repeat([]float64{1.1}, m)
-		all, few := Archive{}, Archive{Limit: archiveLimit(200)}
+		all, few := Archive{}, Archive{Limit: archiveLimit(200, m)}
 		for _, p := range pts {
 			all.Add(feasibleDesign(p...))
 			few.Add(feasibleDesign(p...))

@@ -41,7 +41,10 @@ func Merge(parts []*Outcome, front int, reference []float64) *Outcome {
 		o.Status = BudgetSpent
 	}
 	slices.SortFunc(kept, inOrder)
-	a := Archive{Limit: archiveLimit(front)}
+	a := Archive{}
+	if len(kept) > 0 {
+		a.Limit = archiveLimit(front, len(kept[0].Goals))
+	}
 	for i := range kept {
 		a.Add(kept[i])
 	}

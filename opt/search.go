@@ -66,7 +66,7 @@ type run struct {
 func newRun(ctx context.Context, p *Problem, s Settings) *run {
 	r := &run{ctx: ctx, problem: p, set: s, phase: "sample"}
 	r.ev = newEvaluator(ctx, p, s.Workers)
-	r.archive.Limit = archiveLimit(s.Front)
+	r.archive.Limit = archiveLimit(s.Front, p.Goals)
 	r.misses = misses{limit: s.NearMisses, single: make([][]miss, p.Limits)}
 	r.reference = slices.Clone(s.Reference)
 	r.start, r.left = startSize(p, &s), s.StopAt
@@ -78,8 +78,14 @@ func newRun(ctx context.Context, p *Problem, s Settings) *run {
 }
 
 // archiveLimit bounds what a newcomer costs: enough designs that the choice of
-// the front loses nothing that shows.
-func archiveLimit(front int) int { return max(1000, 7*front) }
+// the front loses a thousandth of its hypervolume at most.
+func archiveLimit(front, goals int) int {
+	limit := max(1000, 7*front)
+	if goals > mostByVolume {
+		limit *= 2
+	}
+	return limit
+}
 
 // evolve lets eaopt run the generations: one population per space, which it
 // sets up, applies the model to side by side, and orders.
