@@ -103,11 +103,6 @@ func at(z *enclose.Form, t *[6]float64) float64 {
 	return v
 }
 
-// vecAt is at for a vector.
-func vecAt(z *enclose.Vec, t *[6]float64) kin.Vec {
-	return kin.Vec{X: at(&z[0], t), Y: at(&z[1], t), Z: at(&z[2], t)}
-}
-
 // enclosed checks true values against forms at one pose.
 type enclosed struct {
 	t    *testing.T

@@ -197,7 +197,7 @@ func TestJournalOnAFullDisk(t *testing.T) {
 		t.Errorf("told %q, %v", told, err)
 	}
 	j.record(0, []float64{2}, &r)
-	log, kept, err = f.OpenLog([32]byte{1}, false)
+	log, _, err = f.OpenLog([32]byte{1}, false)
 	if err != nil {
 		t.Fatal(err)
 	}
