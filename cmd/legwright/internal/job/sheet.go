@@ -9,6 +9,7 @@ import (
 	"sync"
 
 	"legwright/cmd/legwright/internal/handover"
+	"legwright/cmd/legwright/internal/report"
 	"legwright/cmd/legwright/internal/sheet"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/cmd/legwright/internal/units"
@@ -168,6 +169,9 @@ func (b *sheetBuilder) head() *sheet.Data {
 			near = []string{}
 		}
 		d.First = append(d.First, sheet.First{Design: c.Index, Near: near})
+	}
+	for _, n := range report.Nearest(f) {
+		d.Nearest = append(d.Nearest, sheet.Nearest(n))
 	}
 	b.zones(d)
 	return d

@@ -25,9 +25,9 @@ func infeasible(w io.Writer, f *study.Front, p Page) error {
 	s.families(f)
 	if h := f.Help; h != nil {
 		s.binding(h)
-		number, first := numbers(h.Nearest)
+		number, _ := numbers(h.Nearest)
 		s.relaxations(h, number)
-		s.nearest(h, first)
+		s.nearest(Nearest(f))
 		s.advice(h)
 	}
 	s.leftOut(f.Poses, f.Notes, study.Caution)
@@ -121,38 +121,51 @@ func relaxed(r *study.Relaxation, n int) string {
 		name, where, word, c.text(needed, manyDigits), c.text(bound, manyDigits), n, by)
 }
 
-func (s *sheet) nearest(h *study.Help, first []int) {
-	if len(first) == 0 {
+// Near is a design that came near to holding every limit.
+type Near struct {
+	Number int         // from 1, as Shortfall counts
+	Text   string      // its family and dimensions
+	Broken [][4]string // of each limit that it breaks: name, value, what is wanted, margin
+}
+
+// Nearest are the designs that came nearest where no design holds every limit, each of the same figures once.
+func Nearest(f *study.Front) (out []Near) {
+	if f.Help == nil {
+		return nil
+	}
+	_, first := numbers(f.Help.Nearest)
+	for n, i := range first {
+		d := &f.Help.Nearest[i]
+		v := Near{Number: n + 1, Text: inWords(d)}
+		for _, l := range d.Broken() {
+			c := limitScale(l.Measure, l.Unit)
+			v.Broken = append(v.Broken, [4]string{study.Clean(l.Measure), c.text(float64(l.Value), manyDigits), wanted(&l), margin(&l)})
+		}
+		out = append(out, v)
+	}
+	return out
+}
+
+func (s *sheet) nearest(near []Near) {
+	if len(near) == 0 {
 		return
 	}
 	s.heading("The designs that came nearest")
 	cols := []column{
 		{head: "design"}, {head: "limit it breaks", left: true}, {head: "value"}, {head: "wanted", left: true}, {head: "margin"},
 	}
-	for n, i := range first {
-		d := &h.Nearest[i]
-		number := strconv.Itoa(n + 1)
-		broken := 0
-		for k := range d.Limits {
-			if !d.Limits[k].Holds {
-				broken++
-			}
-		}
-		for k := range d.Limits {
-			l := &d.Limits[k]
-			if l.Holds || l.Measure == "coverage" && broken > 1 { // it falls short because of the others
-				continue
-			}
-			c := limitScale(l.Measure, l.Unit)
-			for j, t := range []string{number, study.Clean(l.Measure), c.text(float64(l.Value), manyDigits), wanted(l), margin(l)} {
+	for _, d := range near {
+		number := strconv.Itoa(d.Number)
+		for _, cells := range d.Broken {
+			for j, t := range append([]string{number}, cells[:]...) {
 				cols[j].cells = append(cols[j].cells, t)
 			}
 			number = ""
 		}
 	}
 	s.grid(cols)
-	for n, i := range first {
-		s.item(fmt.Sprintf("design %d: %s", n+1, inWords(&h.Nearest[i])))
+	for _, d := range near {
+		s.item(fmt.Sprintf("design %d: %s", d.Number, d.Text))
 	}
 	s.gap()
 }

@@ -57,7 +57,15 @@ type Data struct {
 	SheetUnits string `json:"sheet_units"`
 	SheetDatum string `json:"sheet_datum"`
 
-	Help []string `json:"help,omitempty"` // where no design holds every limit: what binds and what would have to give
+	Help    []string  `json:"help,omitempty"`    // where no design holds every limit: what binds and what would have to give
+	Nearest []Nearest `json:"nearest,omitempty"` // and the designs that came nearest, which Help numbers
+}
+
+// Nearest is a design that breaks some limits.
+type Nearest struct {
+	Number int         `json:"number"` // from 1
+	Text   string      `json:"text"`   // its family and dimensions
+	Broken [][4]string `json:"broken"` // limit, value, wanted, margin
 }
 
 // Step is the step of the counts in tracks and of pose coordinates: m or rad.

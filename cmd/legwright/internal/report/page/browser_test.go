@@ -28,7 +28,7 @@ type tab struct {
 
 	mu       sync.Mutex
 	faults   []string // console errors, exceptions, log entries
-	requests []string // asked for, but for the page itself
+	requests []string // asked for, but for the page itself and what it holds
 }
 
 // chromium finds a browser. Without one the test is skipped, but fails where the variable
@@ -113,7 +113,7 @@ func (p *tab) hear(event any) {
 	defer p.mu.Unlock()
 	switch e := event.(type) {
 	case *network.EventRequestWillBeSent:
-		if e.Request.URL != "file://"+p.path {
+		if e.Request.URL != "file://"+p.path && !strings.HasPrefix(e.Request.URL, "data:image/svg+xml;base64,") { // drawings of the page itself
 			p.requests = append(p.requests, e.Request.URL)
 		}
 	case *runtime.EventExceptionThrown:

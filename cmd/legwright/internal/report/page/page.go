@@ -21,7 +21,7 @@ var assets embed.FS
 var (
 	styles  = []string{"paper.css", "drawing.css", "print.css"}
 	scripts = []string{"dom.js", "quantity.js", "topsis.js", "model.js", "store.js", "signs.js", "camera.js", "posture.js",
-		"machine.js", "first.js", "study.js", "scatter.js", "rail.js", "parallel.js", "weights.js", "ranked.js", "poses.js",
+		"machine.js", "first.js", "study.js", "scatter.js", "rail.js", "parallel.js", "weights.js", "windowed.js", "ranked.js", "poses.js",
 		"legs.js", "limits.js", "excursions.js", "map.js", "sheet.js", "compare.js", "handover.js", "main.js"}
 )
 

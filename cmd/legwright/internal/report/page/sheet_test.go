@@ -270,6 +270,18 @@ func TestCompare(t *testing.T) {
 	}
 	for i, want := range []float64{1000 * u, 1000 * v, 1000 * (v - u)} {
 		text, _, _ := strings.Cut(strings.ReplaceAll(row[i+1], "−", "-"), "(")
+		if _, after, ok := strings.Cut(text, ","); ok { // ▲ better, or ▼ worse
+			word := "worse"
+			if v < u { // less footprint is better
+				word = "better"
+			}
+			if !strings.Contains(row[i+1], word) {
+				t.Errorf("the difference from %g to %g is %q, want %s", u, v, row[i+1], word)
+			}
+			text = after
+		} else if i == 2 {
+			t.Errorf("the difference %q says neither better nor worse", row[i+1])
+		}
 		got, err := strconv.ParseFloat(strings.TrimSpace(text), 64)
 		if err != nil || math.Abs(got-want) > 0.5+0.005*math.Abs(want) {
 			t.Errorf("column %d of the footprint: %q, want %g", i+1, row[i+1], want)

@@ -40,7 +40,7 @@ function compareView(store, place) {
     empty(legend, h("b", { class: "ina" }, `${a.id} full lines`), ", ", h("b", { class: "inb" }, `${b.id} dashed`), path.hidden ? "; both at home, on one base frame" : "; on one base frame");
     view.look(usualView(a));
     show([...allPoints(model, a), ...allPoints(model, b)]);
-    empty(numbers, table("Differences are those from the first to the second; ▲ better, ▼ worse", ["", num(a.id), num(b.id), num("difference"), ""], differences(model, a, b), { class: "differences" }));
+    empty(numbers, table("Differences are those from the first to the second; ▲ better, ▼ worse", ["", num(a.id), num(b.id), num("difference")], differences(model, a, b), { class: "differences" }));
   }
   store.on("pick", draw);
   draw();
@@ -55,15 +55,16 @@ function differences(model, a, b) {
     const [s, t] = column([u, v], unit, 4);
     const d = v - u, there = Number.isFinite(d);
     const equal = there && Math.abs(d) <= 1e-9 * Math.max(Math.abs(u), Math.abs(v));
-    const word = there && !equal && better ? ((d > 0) === (better > 0) ? "▲ better" : "▼ worse") : "";
+    const word = there && !equal && better ? ((d > 0) === (better > 0) ? "better" : "worse") : "";
     rows.push([given(label + (unit.symbol ? `, ${unit.symbol}` : "")), num(s), num(t),
-      num(!there ? "–" : equal ? "same" : `${d > 0 ? "+" : ""}${quantity(d, unit, 3)}${u !== 0 ? ` (${share(d / Math.abs(u))})` : ""}`), { node: word, class: word.startsWith("▲") ? "room" : "bad" }]);
+      num([sign(word), !there ? "–" : equal ? "same" : `${d > 0 ? "+" : ""}${quantity(d, unit, 3)}${u !== 0 ? ` (${share(d / Math.abs(u))})` : ""}`])]);
   };
+  const sign = (word) => (word ? h("span", { class: word === "better" ? "room" : "bad", title: word }, word === "better" ? "▲" : "▼", h("span", { class: "hide" }, ` ${word},`), " ") : "");
   const isGoal = new Set(model.goals.map((g) => g.measure));
-  if (a.family !== b.family) rows.push(["family", a.family, b.family, "", ""]);
+  if (a.family !== b.family) rows.push(["family", a.family, b.family, ""]);
   for (const g of model.goals) row(g.label, a.measures[g.measure], b.measures[g.measure], g.shown, g.more ? 1 : -1);
-  if (a.tightest && b.tightest) rows.push(["tightest limit", num([given(words(a.tightest.measure)), " ", marginText(a.tightest)]), num([given(words(b.tightest.measure)), " ", marginText(b.tightest)]), "", ""]);
-  if (a.proof !== b.proof) rows.push(["checked", a.checked, b.checked, "", ""]);
+  if (a.tightest && b.tightest) rows.push(["tightest limit", num([given(words(a.tightest.measure)), " ", marginText(a.tightest)]), num([given(words(b.tightest.measure)), " ", marginText(b.tightest)]), ""]);
+  if (a.proof !== b.proof) rows.push(["checked", a.checked, b.checked, ""]);
   const named = new Map(a.fam.dimensions.map((c, k) => [c.name, a.raw.dimensions[k] ?? NaN]));
   const other = new Map(b.fam.dimensions.map((c, k) => [c.name, b.raw.dimensions[k] ?? NaN]));
   const unitOf = (name) => model.unit((a.fam.dimensions.find((c) => c.name === name) || b.fam.dimensions.find((c) => c.name === name)).unit);

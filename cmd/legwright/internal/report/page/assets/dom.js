@@ -57,7 +57,13 @@ function choice(label, options, value, pick) {
 const button = (text, press, attrs) => h("button", { type: "button", onclick: press, ...attrs }, text);
 
 // wide puts a table or a drawing that may be broader than the page into a frame that scrolls.
-const wide = (label, node) => h("div", { class: "wide", role: "region", tabindex: "0", "aria-label": label }, node);
+function wide(label, node) {
+  const frame = h("div", { class: "wide", role: "region", tabindex: "0", "aria-label": label }, node);
+  const look = new ResizeObserver(() => frame.classList.toggle("over", frame.scrollWidth > frame.clientWidth + 1));
+  look.observe(frame);
+  look.observe(node);
+  return frame;
+}
 
 // onWidth calls draw with the width of a node, now and whenever it changes.
 function onWidth(node, draw) {

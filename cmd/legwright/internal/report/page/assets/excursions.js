@@ -8,7 +8,7 @@ function excursionsView(model, d, place) {
     add(place, [table("All coordinates of a zone at the same time: how much of it is reached, beyond 1 if it could be larger",
       ["zone", num("reachable"), "what fails beyond", "towards"],
       d.detail.together.map((t) => [given(model.zone(t.zone)), num(t.factor === null ? "3 and more" : `${(Math.floor(t.factor * 100 + 1e-6) / 100).toFixed(2)} of the zone`),
-        given(words(t.fails)), given(t.factor === null ? "" : poseText(model, d, t.at))]))]);
+        given(words(t.fails)), { node: given(t.factor === null ? "" : poseText(model, d, t.at)), class: "prose" }]))]);
   }
   const alone = d.detail ? d.detail.excursions : [];
   if (alone.length) {

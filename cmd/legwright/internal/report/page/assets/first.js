@@ -37,8 +37,7 @@ function firstView(store, place) {
       row("tightest limit", few.map(({ d }) => h("td", {}, d.tightest
         ? [given(words(d.tightest.measure)), h("b", { class: d.tightest.holds ? "room" : "bad" }, marginText(d.tightest), h("small", {}, d.tightest.holds ? " left" : " short"))] : "no limit"))),
       row("checked", few.map(({ d }) => h("td", { class: `proof-${d.proof || "none"}` }, d.checked))),
-      few.some(({ d }) => d.crosses || d.raw.whole_stroke) ? row("beyond the duty", few.map(({ d }) => h("td", { class: d.crosses ? "bad" : "" },
-        d.crosses ? "a singularity lies within its strokes" : d.raw.whole_stroke ? "no singularity met within its strokes" : "not looked at"))) : null,
+      row("singularity within its strokes", few.map(({ d }) => h("td", { class: d.crosses ? "bad" : "" }, beyond(d)))),
       neededFigures(model).map(figureRow)));
   add(place, [
     h("p", { class: "note" }, few.length > 1

@@ -16,13 +16,15 @@ function limitsView(model, d, place, showPose) {
     return g ? h("small", {}, " goal") : "";
   };
   const rows = [];
-  const sorted = [...d.limits].sort((x, y) => (x.margin ?? Infinity) - (y.margin ?? Infinity));
+  // Coverage falls short because of the others: it has no room of its own.
+  const room = (l) => (l === d.tightest ? -Infinity : l.measure === "coverage" ? Infinity : l.margin ?? Number.MAX_VALUE);
+  const sorted = [...d.limits].sort((x, y) => (room(x) < room(y) ? -1 : room(x) > room(y) ? 1 : 0));
   for (const l of sorted) {
     const m = byName.get(l.measure), unit = l.shown;
     if (m) rest.delete(m.index);
     rows.push([[given(words(l.measure)), goalText(m)], num(withUnit(l.value ?? (m ? d.measures[m.index] : NaN), unit, 5)),
       num(`${l.sense === "at_least" ? "at least" : "at most"} ${withUnit(l.bound, unit, 5)}`),
-      { node: [l.holds ? "holds " : "fails ", marginText(l)], class: l.holds ? "num" : "num bad" },
+      { node: [l.holds ? "holds " : "fails ", l.measure === "coverage" ? "" : marginText(l)], class: l.holds ? "num" : "num bad" },
       where(m ? m.index : undefined)]);
   }
   for (const m of model.measures) {

@@ -27,6 +27,9 @@ const shellWord = (path) => (/^[\w./-]+$/.test(path) ? path : `'${path.replaceAl
 // CROSSES is the mark of designs that meet a singularity within their strokes, and a mark that warns.
 const CROSSES = "singular within strokes";
 
+// beyond says what is known of singularities within the strokes of a design.
+const beyond = (d) => (d.crosses ? "met" : d.raw.whole_stroke ? "none found" : "not looked at");
+
 // CHECKED says how far the limits of a design are known to hold.
 const CHECKED = { "": "not proved", proved: "proved", refuted: "refuted: a limit fails", undecided: "proof undecided" };
 

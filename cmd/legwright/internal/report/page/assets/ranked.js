@@ -12,7 +12,8 @@ function rankedView(store, place) {
   const open = new Set();
   const proofs = model.designs.some((d) => d.proof); // else all are as checked as each other
   const count = h("p", { class: "note", "aria-live": "polite" });
-  const body = h("tbody", {});
+  const looked = model.designs.some((d) => beyond(d) !== "not looked at");
+  const body = windowed();
   const heads = new Map();
   const head = (key, name, attrs) => {
     const th = h("th", { scope: "col", ...attrs }, key === null ? name : button(name, () => sort(key), { class: "sort" }));
@@ -25,8 +26,8 @@ function rankedView(store, place) {
       model.families.length > 1 ? head(null, "family") : null, head(null, "marks"),
       head("score", "score", { class: "num" }),
       columns.map((a) => head(a.key, a.label + (a.unit.symbol ? `, ${a.unit.symbol}` : ""), { class: "num" })),
-      head("margin", "tightest limit"), proofs ? head(null, "checked") : null)),
-    body);
+      head("margin", "tightest limit"), proofs ? head(null, "checked") : null, looked ? head(null, "singularity within strokes") : null)));
+  body.of(grid);
 
   const rows = model.designs.map((d, i) => {
     const pick = button(d.id, () => store.pick(i), { class: "pick", "aria-pressed": "false", "data-pick": d.id });
@@ -36,10 +37,10 @@ function rankedView(store, place) {
     const node = h("tr", { "data-design": i }, rank,
       h("th", { scope: "row" }, pick, " ", against, " ", twin),
       model.families.length > 1 ? h("td", {}, familyTag(model, d.family)) : null,
-      h("td", { class: "marked" }, given(d.marks.map(words).join(", "))),
+      h("td", { class: "marked" }, given(d.marks.filter((m) => m !== CROSSES).map(words).join(", "))),
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null);
+      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null, looked ? h("td", { class: d.crosses ? "bad" : "" }, beyond(d)) : null);
     return { node, rank, score, pick, against, twin };
   });
 
@@ -81,7 +82,9 @@ function rankedView(store, place) {
     }
     const now = out.slice(0, most);
     if (now.length !== listed.length || now.some((i, k) => i !== listed[k])) { // a table is slow to lay out
-      body.replaceChildren(...now.map((i) => rows[i].node));
+      body.rows(now.map((i) => rows[i].node));
+      grid.setAttribute("aria-rowcount", now.length + 1);
+      now.forEach((i, k) => rows[i].node.setAttribute("aria-rowindex", k + 2));
       listed = now;
     }
     for (const i of now) {

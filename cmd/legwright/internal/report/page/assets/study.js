@@ -44,5 +44,14 @@ function footerView(model, place) {
 function helpView(model, place) {
   empty(place, h("h2", {}, "No design holds every limit"),
     h("p", {}, "What binds, and what would have to give:"),
-    h("ul", {}, (model.data.help || []).map((t) => h("li", {}, given(t)))));
+    h("ul", {}, (model.data.help || []).map((t) => h("li", {}, given(t)))), nearestView(model.data.nearest || []));
+}
+
+// nearestView lists the designs that came nearest, with what each breaks.
+function nearestView(near) {
+  if (!near.length) return null;
+  return [h("h3", {}, "The designs that came nearest"),
+    table("Each with the limits that it breaks", ["design", "limit it breaks", num("value"), "wanted", num("margin")],
+      near.flatMap((d) => d.broken.map(([limit, value, wanted, margin], k) => [k ? "" : d.number, given(limit), num(value), wanted, num(margin)])), { class: "nearest" }),
+    h("ul", {}, near.map((d) => h("li", {}, `Design ${d.number}: `, given(d.text))))];
 }
