@@ -36,7 +36,11 @@ func TestOpensAlone(t *testing.T) {
 func TestNothingFeasible(t *testing.T) {
 	d := made(0, "Nothing found")
 	d.Help = []string{"leg_force: raise the limit to 3100 N"}
+	d.Nearest = []sheet.Nearest{{Number: 3, Text: "6-UPS, base_radius 700 mm", Broken: [][4]string{{"leg_force", "3100 N", "at most 3000 N", "-3.3 %"}}}}
 	p := open(t, d, 1280, 800, false)
+	if got, want := eval[string](p, `[...document.querySelectorAll(".nearest tbody td, .nearest tbody th")].map((c) => c.textContent).join("; ")`), "3; "+strings.Join(d.Nearest[0].Broken[0][:], "; "); got != want {
+		t.Errorf("nearest designs %q, want %q", got, want)
+	}
 	if got := eval[string](p, `document.querySelector("#choose li").textContent`); got != d.Help[0] {
 		t.Errorf("the page advises %q, want %q", got, d.Help[0])
 	}

@@ -51,6 +51,6 @@ function plansView(d, shown) {
 function sheetTable(d, t) {
   const figures = t.heads.map((_, k) => k > 0 && t.rows.every((r) => r[k] === "" || r[k] === "unbounded" || Number.isFinite(Number(r[k]))));
   const set = (k, text) => (figures[k] ? num(minus(text)) : given(text));
-  return [h("h3", {}, t.name), table(`Rounded; in full in designs/${d.id}/${t.file}`, t.heads.map((head, k) => set(k, words(head))), t.rows.map((r) => r.map((c, k) => set(k, c))), { class: "handed" }),
+  return [h("h3", {}, t.name[0].toUpperCase() + t.name.slice(1)), table(`Rounded; in full in designs/${d.id}/${t.file}`, t.heads.map((head, k) => set(k, words(head))), t.rows.map((r) => r.map((c, k) => set(k, c))), { class: "handed" }),
     t.notes.length ? h("ul", { class: "note" }, t.notes.map((n) => h("li", {}, given(n)))) : null];
 }
