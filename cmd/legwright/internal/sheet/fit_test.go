@@ -64,7 +64,23 @@ func TestFit(t *testing.T) {
 			t.Errorf("%d bytes: %+v", c.bytes, last)
 		}
 	}
+	// Plans go first, but for those of the first screen and of designs kept; tables stay.
 	d := many()
+	d.First = []First{{Design: 1}}
+	for i := range 10 {
+		d.Designs[i].Detail.Handover = &Handover{Tables: []Table{{Name: "t"}}, Base: make([]byte, 900), Platform: make([]byte, 900)}
+	}
+	Fit(d, size(d)-8*2400, []string{d.Designs[4].ID})
+	for i := range 10 {
+		h := d.Designs[i].Detail.Handover
+		if stay := i == 1 || i == 4; (h.Base != nil) != stay || (h.Platform != nil) != stay || len(h.Tables) != 1 {
+			t.Errorf("design %d: plans of %d and %d bytes, %d tables", i, len(h.Base), len(h.Platform), len(h.Tables))
+		}
+	}
+	if n := len(d.Designs[99].Poses); n != 4 {
+		t.Errorf("poses are lost before plans: %d", n)
+	}
+	d = many()
 	for i := range d.Designs[10:] {
 		d.Designs[10+i].thin(d.Goals)
 	}

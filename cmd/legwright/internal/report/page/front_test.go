@@ -233,5 +233,16 @@ func TestWarningsAreNoReasons(t *testing.T) {
 	if len(want) > 0 {
 		t.Errorf("rows missing: %v", want)
 	}
+	// The table says the same in a column of its own, with three states.
+	d.Designs[1].Stroke = "no singularity was met"
+	p = open(t, d, 1280, 800, false)
+	for j, w := range map[int]string{i: "met", 1: "none found", 2: "not looked at"} {
+		got := eval[string](p, fmt.Sprintf(`dispatchEvent(new Event("beforeprint")), [...document.querySelectorAll("#ranked button")].filter((b) => b.textContent === "list all").forEach((b) => b.click()),
+			[...document.querySelectorAll(".twin:not([hidden])")].filter((b) => b.getAttribute("aria-expanded") === "false").forEach((b) => b.click()),
+			document.querySelector('.ranked [data-design="%d"] .beyond').textContent`, j))
+		if got != w {
+			t.Errorf("design %d: %q, want %q", j, got, w)
+		}
+	}
 	p.quiet()
 }

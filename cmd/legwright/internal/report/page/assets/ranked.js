@@ -23,10 +23,10 @@ function rankedView(store, place) {
   const grid = h("table", { class: "ranked", "aria-label": "designs in the order of rank under the weights" },
     h("thead", {}, h("tr", {},
       head("", "rank", { class: "num" }), head(null, "design"),
-      model.families.length > 1 ? head(null, "family") : null, head(null, "marks"),
+      model.families.length > 1 ? head(null, "family") : null, head(null, "marks"), looked ? head(null, "singular within strokes") : null,
       head("score", "score", { class: "num" }),
       columns.map((a) => head(a.key, a.label + (a.unit.symbol ? `, ${a.unit.symbol}` : ""), { class: "num" })),
-      head("margin", "tightest limit"), proofs ? head(null, "checked") : null, looked ? head(null, "singularity within strokes") : null)));
+      head("margin", "tightest limit"), proofs ? head(null, "checked") : null)));
   body.of(grid);
 
   const rows = model.designs.map((d, i) => {
@@ -38,9 +38,10 @@ function rankedView(store, place) {
       h("th", { scope: "row" }, pick, " ", against, " ", twin),
       model.families.length > 1 ? h("td", {}, familyTag(model, d.family)) : null,
       h("td", { class: "marked" }, given(d.marks.filter((m) => m !== CROSSES).map(words).join(", "))),
+      looked ? h("td", { class: d.crosses ? "beyond bad" : "beyond" }, beyond(d)) : null,
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null, looked ? h("td", { class: d.crosses ? "bad" : "" }, beyond(d)) : null);
+      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null);
     return { node, rank, score, pick, against, twin };
   });
 
