@@ -41,7 +41,7 @@ function rankedView(store, place) {
       looked ? h("td", { class: d.crosses ? "beyond bad" : "beyond" }, beyond(d)) : null,
       score,
       columns.map((a) => h("td", { class: "num" }, text.get(a.key)[i])),
-      h("td", {}, tightest(d)), proofs ? h("td", {}, d.checked) : null);
+      h("td", { class: "tight" }, tightest(d)), proofs ? h("td", {}, d.checked) : null);
     return { node, rank, score, pick, against, twin };
   });
 
