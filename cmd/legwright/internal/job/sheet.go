@@ -163,7 +163,7 @@ func (b *sheetBuilder) head() *sheet.Data {
 		}
 		d.Goals = append(d.Goals, sheet.Goal{Measure: at, More: g.Sense == study.Maximise, Weight: w})
 	}
-	for _, c := range study.Choose(f, firstScreen) {
+	for _, c := range study.Choose(f, study.FirstShown) {
 		near := c.Near
 		if near == nil {
 			near = []string{}
@@ -176,9 +176,6 @@ func (b *sheetBuilder) head() *sheet.Data {
 	b.zones(d)
 	return d
 }
-
-// firstScreen is the number of designs that one looks at first.
-const firstScreen = 7
 
 // zones are those of the brief, with the cases that occur in each.
 func (b *sheetBuilder) zones(d *sheet.Data) {

@@ -103,7 +103,7 @@ func drawn(v *sheet.Design, p *sheet.Pose) []kin.Vec {
 func TestSheetOfEveryFamily(t *testing.T) {
 	for _, f := range kin.Families() {
 		t.Run(f.Name, func(t *testing.T) {
-			if testing.Short() && f.Name != "6-UPS" && f.Name != "delta-4" && f.Name != "3-RPS" {
+			if testing.Short() && f.Name != "3-RRR" {
 				t.Skip("short")
 			}
 			s, front, sources := searched(t, startOf(f), 300)
@@ -257,13 +257,16 @@ func checkTracks(t *testing.T, s *Study, d *sheet.Data) {
 	if len(x.Excursions) != len(s.Plans[0].Family.Freedoms) || len(x.Together) != 1 || len(x.Sensitivity) == 0 {
 		t.Errorf("%d excursions, %d together, %d sensitivities", len(x.Excursions), len(x.Together), len(x.Sensitivity))
 	}
-	if *x.Together[0].Factor < 1-1e-6 {
-		t.Errorf("the zone as asked is not held: %v %s", *x.Together[0].Factor, x.Together[0].Fails)
+	if f := x.Together[0].Factor; f != nil && *f < 1-1e-6 { // nil: nothing fails up to three times the zone
+		t.Errorf("the zone as asked is not held: %v %s", *f, x.Together[0].Fails)
 	}
 }
 
 // The same bytes for any number of workers, and for a front read back from its file.
 func TestSheetBytes(t *testing.T) {
+	if testing.Short() {
+		t.Skip("searches for some seconds")
+	}
 	s, front, sources := searched(t, startOf(kin.FamilyNamed("6-UPS")), 300)
 	one := encoded(t, sheetOf(t, s, front, SheetRun{Sources: sources, Workers: 1}))
 	if four := encoded(t, sheetOf(t, s, front, SheetRun{Sources: sources, Workers: 4})); !bytes.Equal(one, four) {

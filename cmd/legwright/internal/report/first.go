@@ -11,7 +11,6 @@ import (
 )
 
 const (
-	shown      = 7  // designs of the first screen
 	marksWidth = 18 // columns for the marks: "best conditioning,"
 )
 
@@ -27,7 +26,7 @@ func FirstScreen(w io.Writer, f *study.Front, p Page) error {
 
 	d := &designs{front: f}
 	near := map[string][]string{}
-	for _, c := range study.Choose(f, shown) {
+	for _, c := range study.Choose(f, study.FirstShown) {
 		d.rows = append(d.rows, &f.Designs[c.Index])
 		near[f.Designs[c.Index].ID] = c.Near
 	}

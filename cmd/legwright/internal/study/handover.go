@@ -43,12 +43,12 @@ func (f *Front) HandedOver() []int {
 	return out
 }
 
-// firstShown is the number of designs of the first screen.
-const firstShown = 7
+// FirstShown is the number of designs of the first screen.
+const FirstShown = 7
 
 // First are the places of the designs of the first screen.
 func (f *Front) First() (out []int) {
-	for _, c := range Choose(f, firstShown) {
+	for _, c := range Choose(f, FirstShown) {
 		out = append(out, c.Index)
 	}
 	return out

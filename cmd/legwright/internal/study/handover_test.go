@@ -121,7 +121,7 @@ func TestHandedOver(t *testing.T) {
 	}
 	f.Designs[30].Marks = []string{MarkKnee}
 	got := f.HandedOver()
-	if !slices.IsSorted(got) || !slices.Contains(got, 30) || len(got) < 21 || len(got) > 20+1+firstShown {
+	if !slices.IsSorted(got) || !slices.Contains(got, 30) || len(got) < 21 || len(got) > 20+1+FirstShown {
 		t.Errorf("handed over: %v", got)
 	}
 	for i := range 20 {
@@ -129,7 +129,7 @@ func TestHandedOver(t *testing.T) {
 			t.Errorf("%d is left out", i)
 		}
 	}
-	for _, c := range Choose(f, firstShown) {
+	for _, c := range Choose(f, FirstShown) {
 		if !slices.Contains(got, c.Index) {
 			t.Errorf("%d, of the first screen, is left out", c.Index)
 		}
