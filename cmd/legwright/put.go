@@ -10,6 +10,10 @@ import (
 
 // put writes all files of a study into its folder, the page before front.json, which comes last.
 func put(folder *study.Folder, s *job.Study, sources *study.Sources, found *job.Found, dir string, workers int) error {
+	sheets, err := s.AllSheets(found.Front, sources, workers)
+	if err != nil {
+		return err
+	}
 	pageErr := savePage(folder, s, found.Front, job.SheetRun{Sources: sources, Folder: dir, Workers: workers})
 	return errors.Join(pageErr, folder.Save(&study.Result{
 		Front: found.Front, History: found.History, Sources: *sources, Part: found.Part, Unfinished: found.Interrupted(),
@@ -19,7 +23,7 @@ func put(folder *study.Folder, s *job.Study, sources *study.Sources, found *job.
 		Encode: func(d study.Design) ([]byte, error) {
 			return job.EncodeDesign(d, "../"+sources.BriefName()), nil
 		},
-		Sheets: func(d study.Design) (map[string][]byte, error) { return s.Sheets(d, sources) },
+		Sheets: func(d study.Design) (map[string][]byte, error) { return sheets[d.ID], nil },
 	}))
 }
 

@@ -10,6 +10,23 @@ import (
 	"legwright/objective"
 )
 
+// AllSheets gives the sheets of the designs that are handed over, by id, side by side.
+func (s *Study) AllSheets(f *study.Front, sources *study.Sources, workers int) (map[string]map[string][]byte, error) {
+	places := f.HandedOver()
+	files, errs := make([]map[string][]byte, len(places)), make([]error, len(places))
+	each(len(places), workers, func(i int) {
+		files[i], errs[i] = s.Sheets(f.Designs[places[i]], sources)
+	})
+	out := map[string]map[string][]byte{}
+	for i, p := range places {
+		if errs[i] != nil {
+			return nil, fmt.Errorf("design %s: %w", f.Designs[p].ID, errs[i])
+		}
+		out[f.Designs[p].ID] = files[i]
+	}
+	return out, nil
+}
+
 // Sheets gives the sheets by which a design of the study's front is handed over: tables and plan drawings, by the names
 // of study.SheetNames. The design is judged anew by its dimensions.
 func (s *Study) Sheets(r study.Design, sources *study.Sources) (map[string][]byte, error) {

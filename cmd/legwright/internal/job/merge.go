@@ -58,6 +58,7 @@ func (s *Study) Merge(parts []*study.Part, workers int) (*Found, error) {
 	first := parts[0]
 	out := opt.Merge(outs, s.Brief.Search.Front, s.reference())
 	f := s.front(out, &Run{Evaluations: first.Whole, Seed: first.Seed, Workers: workers})
+	s.strokes(f, workers)
 	f.StoppedBy, f.Status = "", ""
 	f.Parts = &study.Parts{Of: first.Of, Present: []study.PartLine{}, Missing: []int{}}
 	there := map[int]bool{}

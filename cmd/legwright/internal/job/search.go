@@ -62,7 +62,7 @@ func (s *Study) Search(ctx context.Context, r Run) (*Found, error) {
 		return nil, err
 	}
 	f := s.front(out, &r)
-	s.strokes(f)
+	s.strokes(f, r.Workers)
 	return s.found(out, &r, f), nil
 }
 

@@ -83,7 +83,7 @@ func (s *Study) searchJudged(ctx context.Context, r Run, book judge) (*Found, er
 	if out.Status == opt.Interrupted || !book.best(ctx, f, r.Prove) {
 		return s.broken(out, &r, f), nil
 	}
-	s.strokes(f)
+	s.strokes(f, r.Workers)
 	return s.found(out, &r, f), nil
 }
 

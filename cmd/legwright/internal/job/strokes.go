@@ -6,9 +6,10 @@ import (
 )
 
 // strokes follows the designs shown first through their strokes, and marks those that meet a singularity.
-func (s *Study) strokes(f *study.Front) {
-	for _, i := range f.First() {
-		d := &f.Designs[i]
+func (s *Study) strokes(f *study.Front, workers int) {
+	first := f.First()
+	each(len(first), workers, func(i int) {
+		d := &f.Designs[first[i]]
 		for k, p := range s.Plans {
 			if p.Family.Name != d.Family {
 				continue
@@ -18,6 +19,6 @@ func (s *Study) strokes(f *study.Front) {
 				d.WholeStroke = study.WholeStrokeOf(w)
 			}
 		}
-	}
+	})
 	study.Rank(f, f.Weights) // for the marks
 }
