@@ -231,25 +231,53 @@ func TestCSVReadByAnother(t *testing.T) {
 		}
 		t.Skip("no python3: install it to have the tables read by another program")
 	}
+	readBy(t, exec.Command(python, "-c", readBack))
+}
+
+// readBackPapa reads tables with Papa Parse (MIT) from the npm registry and writes their cells as JSON.
+const readBackPapa = `
+const fs = require('fs'), papa = require('papaparse');
+const out = {};
+for (const f of process.argv.slice(1)) out[f] = papa.parse(fs.readFileSync(f, 'utf8'), {skipEmptyLines: true}).data;
+process.stdout.write(JSON.stringify(out));`
+
+// LEGWRIGHT_NPM names a folder with node_modules/papaparse in it.
+func TestCSVReadByPapaParse(t *testing.T) {
+	dir := os.Getenv("LEGWRIGHT_NPM")
+	node, err := exec.LookPath("node")
+	if dir == "" || err != nil {
+		t.Skip("npm install --prefix DIR papaparse@5.5.3 and LEGWRIGHT_NPM=DIR have the tables read by a third program")
+	}
+	cmd := exec.Command(node, "-e", readBackPapa)
+	cmd.Env = append(os.Environ(), "NODE_PATH="+filepath.Join(dir, "node_modules"))
+	readBy(t, cmd)
+}
+
+// readBy has a program read the tables of every family and compares the cells; the files' names are added to the command.
+func readBy(t *testing.T, program *exec.Cmd) {
 	everyFamily(t, func(t *testing.T, _ *design, files map[string][]byte) {
 		dir := t.TempDir()
-		args := []string{"-c", readBack}
+		cmd := exec.Command(program.Path, program.Args[1:]...)
+		cmd.Env = program.Env
 		for name, b := range files {
 			if filepath.Ext(name) == ".csv" {
 				path := filepath.Join(dir, name)
 				if err := os.WriteFile(path, b, 0o666); err != nil {
 					t.Fatal(err)
 				}
-				args = append(args, path)
+				cmd.Args = append(cmd.Args, path)
 			}
 		}
-		out, err := exec.Command(python, args...).Output()
+		out, err := cmd.Output()
 		if err != nil {
 			t.Fatal(err)
 		}
 		var got map[string][][]string
 		if err := json.Unmarshal(out, &got); err != nil {
 			t.Fatal(err)
+		}
+		if len(got) == 0 {
+			t.Fatal("nothing was read")
 		}
 		for path, rows := range got {
 			r := csv.NewReader(bytes.NewReader(files[filepath.Base(path)]))
