@@ -26,7 +26,7 @@ const Merging = "merge"
 
 // NewCheckpoint is the checkpoint of a run that has not begun.
 func NewCheckpoint(s *study.Sources, r Run) *Checkpoint {
-	return &Checkpoint{Program: Program(), Brief: sourcesHash(s), Seed: r.Seed, Budget: r.Evaluations, Part: r.Part.String(), Prove: r.Prove}
+	return &Checkpoint{Program: Program(), Brief: SourcesHash(s), Seed: r.Seed, Budget: r.Evaluations, Part: r.Part.String(), Prove: r.Prove}
 }
 
 // Key tells apart the runs that a log may belong to.
@@ -34,11 +34,8 @@ func (c *Checkpoint) Key() [32]byte {
 	return sha256.Sum256(fmt.Appendf(nil, "%s\n%s\n%d\n%d\n%s\n%d", c.Program, c.Brief, c.Seed, c.Budget, c.Part, c.Prove))
 }
 
-// SourcesHash is the SHA-256 of the brief and its pose files, in hex, as certificates name it.
-func SourcesHash(s *study.Sources) string { return sourcesHash(s) }
-
-// sourcesHash is the SHA-256 of the brief and its pose files, in hex.
-func sourcesHash(s *study.Sources) string {
+// SourcesHash is the SHA-256 of the brief and its pose files, in hex, as checkpoints, sheets and certificates name it.
+func SourcesHash(s *study.Sources) string {
 	h := sha256.New()
 	h.Write(s.Brief.Bytes)
 	for _, p := range s.Poses {

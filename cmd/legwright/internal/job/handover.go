@@ -55,7 +55,7 @@ func (s *Study) judgedAnew(r *study.Design) (*objective.Task, *objective.Apprais
 }
 
 func (s *Study) sheetTitle(r *study.Design, sources *study.Sources) handover.Title {
-	return handover.Title{Program: Program(), Design: r.ID, Brief: s.Brief.Title, Hash: sourcesHash(sources)}
+	return handover.Title{Program: Program(), Design: r.ID, Brief: s.Brief.Title, Hash: SourcesHash(sources)}
 }
 
 // handover is what the page shows of the sheets of a design.

@@ -78,7 +78,7 @@ func TestSheetsAreThoseOfTheRecord(t *testing.T) {
 		near("longest", legs[n]["longest_mm"], 1000*float64(r.Legs[i].Longest), 6e-5)
 		near("push", legs[n]["push_N"], float64(r.Legs[i].Push), 5e-6*float64(r.Legs[i].Push))
 	}
-	if !strings.Contains(string(files[study.HolesSheet]), sourcesHash(sources)) {
+	if !strings.Contains(string(files[study.HolesSheet]), SourcesHash(sources)) {
 		t.Error("the hole table does not name the brief's hash")
 	}
 

@@ -155,7 +155,7 @@ func (f *Found) Certificate(d study.Design, text []byte, sources *study.Sources)
 		return nil, nil
 	}
 	sum := sha256.Sum256(text)
-	return certificate(f.book.s.Tasks[f.book.s.planOf(d.Family)], d.Family, hex.EncodeToString(sum[:]), sourcesHash(sources), p.result)
+	return certificate(f.book.s.Tasks[f.book.s.planOf(d.Family)], d.Family, hex.EncodeToString(sum[:]), SourcesHash(sources), p.result)
 }
 
 // designKey tells designs apart by family and dimensions.

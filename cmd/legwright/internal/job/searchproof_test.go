@@ -7,7 +7,6 @@ import (
 	"slices"
 	"testing"
 
-	"legwright/cmd/legwright/internal/brief"
 	"legwright/cmd/legwright/internal/study"
 	"legwright/kin"
 	"legwright/objective"
@@ -34,19 +33,6 @@ goals:
 search: {evaluations: 600, seed: 3, front: 30}
 `
 
-func smallStudy(t *testing.T, text string) *Study {
-	t.Helper()
-	b, err := brief.Parse("brief.yaml", []byte(text), *Known())
-	if err != nil {
-		t.Fatal(err)
-	}
-	s, err := New(b)
-	if err != nil {
-		t.Fatal(err)
-	}
-	return s
-}
-
 func frontBytes(t *testing.T, f *study.Front) []byte {
 	t.Helper()
 	b, err := study.Encode(f)
@@ -59,7 +45,7 @@ func frontBytes(t *testing.T, f *study.Front) []byte {
 // Proofs that refute nothing leave the front as it is without them, but for the ranges, which are wide enough for certain; the
 // best designs are proved, and their certificates hold for the files that are written.
 func TestSearchWithProofs(t *testing.T) {
-	s := smallStudy(t, smallStage)
+	s := studyOf(t, smallStage)
 	r := Settings(s.Brief)
 	plain, err := s.Search(context.Background(), r)
 	if err != nil {
@@ -132,7 +118,7 @@ func (o *once) counters(*study.Front, int) ([]objective.Further, []study.Counter
 
 // A pose that refutes a design joins the duty: the front found with the rest of the budget holds there, and says so.
 func TestCounterexampleJoinsTheDuty(t *testing.T) {
-	s := smallStudy(t, smallStage)
+	s := studyOf(t, smallStage)
 	r := Settings(s.Brief)
 	r.Workers = 2
 	far := objective.Further{Zone: 0, Coords: kin.Coords{kin.X: 0.12, kin.Y: -0.1}}

@@ -132,7 +132,7 @@ func (b *sheetBuilder) head() *sheet.Data {
 	s, f := b.study, b.front
 	d := &sheet.Data{
 		Format: sheet.Format, Title: s.Brief.Title, Program: strings.TrimPrefix(f.Program, "legwright "),
-		Brief: s.inWords(b.run.Sources.BriefName()), Hash: sourcesHash(b.run.Sources),
+		Brief: s.inWords(b.run.Sources.BriefName()), Hash: SourcesHash(b.run.Sources),
 		Seed: f.Seed, Status: f.Status, Evaluations: f.Evaluations, Budget: f.Budget, Feasible: f.Feasible, Poses: f.Poses,
 		Hypervolume: sheet.Num(f.Hypervolume),
 		Caution:     study.Caution, Cautions: study.FullCaution,
